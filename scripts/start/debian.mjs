@@ -1,0 +1,75 @@
+// @ts-check
+import { spawnSync } from 'node:child_process'
+import { accessSync, constants } from 'node:fs'
+import { join } from 'node:path'
+import { StepFailure } from '#scripts/start/steps.mjs'
+
+const FOLDERS = [
+  ...(process.env.PATH ?? '').split(':'),
+  '/usr/local/sbin',
+  '/usr/sbin',
+  '/sbin',
+  '/usr/local/bin',
+  '/usr/bin',
+]
+
+/**
+ * @param {string} program
+ * @returns {string | undefined} its path; daemons are found although `/usr/sbin` is not in a user's PATH
+ */
+export function findProgram(program) {
+  return FOLDERS.filter(Boolean)
+    .map((folder) => join(folder, program))
+    .find((path) => {
+      try {
+        accessSync(path, constants.X_OK)
+        return true
+      } catch {
+        return false
+      }
+    })
+}
+
+/**
+ * Leaves the programs installed, or says the one line that installs them.
+ * @param {{ programs: string[], packages: string[] }} wanted
+ * @returns {string} what was done, for the step's line
+ */
+export function ensurePrograms({ programs, packages }) {
+  if (programs.every(findProgram)) return 'present'
+  const install = ['apt-get', 'install', '-y', '--no-install-recommends', ...packages]
+  if (findProgram('apt-get') === undefined || process.getuid?.() !== 0) {
+    const missing = programs.filter((program) => findProgram(program) === undefined)
+    throw new StepFailure(
+      `${missing.join(', ')} not found. Install once, then run this again:\n` +
+        `  sudo apt-get update && sudo ${install.join(' ')}`,
+    )
+  }
+  // Another package run may hold the lock for a while; apt waits for it.
+  const patience = ['-o', 'DPkg::Lock::Timeout=180', '-q']
+  run('apt-get', ['update', ...patience])
+  run('apt-get', [...install.slice(1), ...patience])
+  const still = programs.filter((program) => findProgram(program) === undefined)
+  if (still.length > 0) throw new StepFailure(`${packages.join(' ')} came without ${still.join()}`)
+  return `installed ${packages.join(', ')}`
+}
+
+/**
+ * @param {string} program
+ * @param {string[]} args
+ */
+function run(program, args) {
+  const done = spawnSync(program, args, {
+    encoding: 'utf8',
+    maxBuffer: 64 * 1024 * 1024,
+    env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive', LC_ALL: 'C' },
+  })
+  if (done.status !== 0) {
+    const said = `${done.stdout ?? ''}${done.stderr ?? ''}`
+      .trim()
+      .split('\n')
+      .slice(-12)
+      .join('\n  ')
+    throw new StepFailure(`${program} ${args.join(' ')} failed:\n  ${said}`)
+  }
+}
