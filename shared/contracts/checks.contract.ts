@@ -1,0 +1,167 @@
+import * as z from 'zod'
+import { cursorSchema, idSchema, instantSchema, limitSchema, systemParams } from './fields.ts'
+import {
+  advisorySchema,
+  countsSchema,
+  engineSchema,
+  findingExample,
+  findingSchema,
+  verdictSchema,
+} from './findings.ts'
+import { pairInputSchema } from './pairs.contract.ts'
+import { READ_PROBLEMS, WRITE_PROBLEMS } from './problems.ts'
+import { defineContract } from './route.ts'
+
+export const checkSourceSchema = z
+  .strictObject({
+    repository: z.string().trim().min(1).max(255).optional(),
+    branch: z.string().trim().min(1).max(255).optional(),
+    commit: z.string().trim().min(1).max(64).optional(),
+    pipelineUrl: z
+      .url({ protocol: /^https?$/ })
+      .max(2000)
+      .optional(),
+  })
+  .meta({
+    id: 'CheckSource',
+    example: { repository: 'larkhaven/timetable', branch: 'main', commit: '4be1d02' },
+  })
+
+/** A DTCG document; read by shared/formats, which names every fault in it. */
+const documentSchema = z
+  .record(z.string(), z.unknown())
+  .meta({ id: 'TokenDocument', description: 'Design Tokens Format Module 2025.10' })
+
+export const createCheckBody = z
+  .strictObject({
+    against: z
+      .string()
+      .regex(/^head$/, 'Only head can be named: nothing has been released')
+      .default('head')
+      .meta({ description: 'What a candidate is merged over and compared with', example: 'head' }),
+    tokens: documentSchema.optional(),
+    mode: z
+      .enum(['merge', 'replace'])
+      .default('merge')
+      .meta({ description: 'replace: the document is the whole set of tokens' }),
+    pairs: z
+      .array(pairInputSchema)
+      .max(20_000)
+      .optional()
+      .meta({ description: 'Added to the declared ones' }),
+    newOnly: z
+      .boolean()
+      .default(false)
+      .meta({ description: 'A breach that the compared one has, and is no lower now, is known' }),
+    source: checkSourceSchema.optional(),
+  })
+  .meta({ id: 'CreateCheck' })
+export type CreateCheckBody = z.input<typeof createCheckBody>
+
+const summary = {
+  id: idSchema,
+  number: z.int().min(1).meta({ description: 'Counts up within the system' }),
+  verdict: verdictSchema,
+  counts: countsSchema,
+  engine: engineSchema,
+  against: z.strictObject({ revision: z.int().min(0) }),
+  source: checkSourceSchema.optional(),
+  at: instantSchema,
+}
+
+export const checkSummarySchema = z.strictObject(summary).meta({ id: 'CheckSummary' })
+
+export const checkSchema = z
+  .strictObject({
+    ...summary,
+    findings: z.array(findingSchema),
+    advisories: z.array(advisorySchema),
+  })
+  .meta({ id: 'Check', description: 'One evaluation. A failing check is an answer, not an error.' })
+export type CheckWire = z.infer<typeof checkSchema>
+
+const summaryExample = {
+  id: 'chk_01jd5w7k2m',
+  number: 4413,
+  verdict: 'fail',
+  counts: { pass: 1480, breach: 1, waived: 0, exempt: 96, known: 0 },
+  engine: {
+    version: '1.0.0',
+    gamutMap: 'css-color-4-binary-search-local-minde',
+    ruleSet: 'wcag-2.2/1',
+  },
+  against: { revision: 214 },
+  at: '2026-11-24T09:12:00.000Z',
+} as const
+const checkExample = { ...summaryExample, findings: [findingExample], advisories: [] } as const
+
+const findingsQuery = z.strictObject({
+  findings: z.enum(['short', 'all']).default('short').meta({ description: 'short: all but pass' }),
+})
+
+export const createCheck = defineContract({
+  operationId: 'createCheck',
+  method: 'POST',
+  path: '/v1/systems/{system}/checks',
+  feature: 'checks',
+  summary: 'Measures every pair, of the head or of a candidate, and gives the verdict',
+  description:
+    'Without tokens and pairs it checks against as it stands. Contrast is one criterion; a verdict is no statement of conformity.',
+  params: systemParams,
+  query: findingsQuery,
+  body: createCheckBody,
+  bodyExample: {
+    tokens: {
+      action: {
+        board: {
+          fill: {
+            $type: 'color',
+            $value: { colorSpace: 'oklch', components: [0.6, 0.128, 243] },
+          },
+        },
+      },
+    },
+    newOnly: true,
+    source: { repository: 'larkhaven/timetable', branch: 'main' },
+  },
+  success: { status: 200, body: checkSchema, example: checkExample },
+  problems: [...WRITE_PROBLEMS, 'system-unresolvable', 'not-acceptable', 'requests-too-many'],
+  access: 'checks:write',
+})
+
+export const listChecks = defineContract({
+  operationId: 'listChecks',
+  method: 'GET',
+  path: '/v1/systems/{system}/checks',
+  feature: 'checks',
+  summary: 'The checks, newest first',
+  params: systemParams,
+  query: z.strictObject({
+    verdict: verdictSchema.optional(),
+    repository: z.string().max(255).optional(),
+    branch: z.string().max(255).optional(),
+    limit: limitSchema(200, 50),
+    cursor: cursorSchema,
+  }),
+  success: {
+    status: 200,
+    body: z.strictObject({ items: z.array(checkSummarySchema) }),
+    example: { items: [summaryExample] },
+  },
+  problems: READ_PROBLEMS,
+  access: 'checks:read',
+})
+
+export const getCheck = defineContract({
+  operationId: 'getCheck',
+  method: 'GET',
+  path: '/v1/systems/{system}/checks/{id}',
+  feature: 'checks',
+  summary: 'One check with its findings that are not pass',
+  description: 'Findings that pass are not kept with a check.',
+  params: systemParams.extend({ id: idSchema }),
+  success: { status: 200, body: checkSchema, example: checkExample },
+  problems: READ_PROBLEMS,
+  access: 'checks:read',
+  conditional: true,
+})

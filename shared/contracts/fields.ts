@@ -1,0 +1,151 @@
+import * as z from 'zod'
+import { DERIVED_STATES, LEVELS, STATES } from '#shared/checks/model.ts'
+
+/** Slug of a system or a theme: no dot, so that a theme's file name splits at its first dot. */
+export const slugSchema = z
+  .string()
+  .min(1)
+  .max(63)
+  .regex(/^[a-z0-9]+(-[a-z0-9]+)*$/)
+  .meta({ description: 'Lower-case letters, digits and single hyphens', example: 'larkhaven' })
+
+const NAME_PATTERN = /^(?![$])[^.{}\p{Cc}]+(\.(?:\$root|(?![$])[^.{}\p{Cc}]+))*$/u
+
+/** Dot path of a token. @see Design Tokens Format Module 2025.10, Name and value */
+export const tokenNameSchema = z
+  .string()
+  .min(1)
+  .max(255)
+  .regex(
+    NAME_PATTERN,
+    'Segments are non-empty, without { } or control characters, not starting with $',
+  )
+  .refine((name) => !/^state-(rest|hover|active|focus|disabled)(\.|$)/.test(name), {
+    message: 'Names beginning with a state- group are reserved',
+  })
+  .meta({ description: 'Dot path, at most 255 characters', example: 'action.board.fill' })
+
+export const aliasSchema = z
+  .string()
+  .regex(/^\{[^{}]{1,255}\}$/)
+  .meta({ description: 'A token name in braces', example: '{sand.1}' })
+
+export const stateSchema = z.enum(STATES).meta({ id: 'State', example: 'hover' })
+export const derivedStateSchema = z.enum(DERIVED_STATES).meta({ example: 'hover' })
+export const levelSchema = z.enum(LEVELS).meta({ id: 'Level', example: 'AA' })
+export const idSchema = z.string().min(1).max(64).meta({ example: 'tok_01jd5w7k2m' })
+export const instantSchema = z.iso
+  .datetime({ offset: false, precision: 3 })
+  .meta({ description: 'RFC 3339, UTC', example: '2026-11-24T09:12:00.000Z' })
+export const etagSchema = z
+  .string()
+  .meta({ description: 'Strong validator, as in the ETag field', example: '"9c3e1f20"' })
+export const messageSchema = z
+  .string()
+  .trim()
+  .max(500)
+  .optional()
+  .meta({ description: 'Why; stands on the revision', example: 'Lighter board button' })
+
+const component = z.union([z.number(), z.enum(['none'])])
+
+/** Spaces of the Design Tokens Color Module 2025.10. */
+export const COLOR_SPACES = [
+  'srgb',
+  'srgb-linear',
+  'hsl',
+  'hwb',
+  'lab',
+  'lch',
+  'oklab',
+  'oklch',
+  'display-p3',
+  'a98-rgb',
+  'prophoto-rgb',
+  'rec2020',
+  'xyz-d65',
+  'xyz-d50',
+] as const
+
+export const dtcgColorSchema = z
+  .strictObject({
+    colorSpace: z.enum(COLOR_SPACES),
+    components: z.array(component).length(3),
+    alpha: z.number().min(0).max(1).optional(),
+    hex: z
+      .string()
+      .regex(/^#[0-9a-fA-F]{6}$/)
+      .optional(),
+  })
+  .meta({
+    id: 'Color',
+    description: 'Colour value of the Design Tokens Color Module 2025.10',
+    example: { colorSpace: 'oklch', components: [0.585, 0.128, 243], alpha: 1 },
+  })
+export type DtcgColorWire = z.infer<typeof dtcgColorSchema>
+
+export const derivedValueSchema = z
+  .strictObject({
+    derive: aliasSchema,
+    lightness: z.number().min(-1).max(1).optional(),
+    chroma: z.number().min(0).max(10).optional(),
+    hue: z.number().min(-360).max(360).optional(),
+    alpha: z.number().min(0).max(1).optional(),
+  })
+  .meta({
+    id: 'DerivedValue',
+    description: 'Lightness and hue are added, chroma and alpha multiplied',
+    example: { derive: '{action.board.fill}', lightness: 0.1, chroma: 0.5 },
+  })
+
+/** What an answer gives as a token's value. */
+export const valueSchema = z
+  .union([dtcgColorSchema, aliasSchema, derivedValueSchema])
+  .meta({ id: 'Value' })
+export type ValueWire = z.infer<typeof valueSchema>
+
+/** What a write takes: also any CSS Color 4 string. */
+export const valueInputSchema = z
+  .union([z.string().trim().min(1).max(255), dtcgColorSchema, derivedValueSchema])
+  .meta({
+    id: 'ValueInput',
+    description: 'A CSS Color 4 string, a colour object, a token name in braces, or a derivation',
+    example: 'oklch(0.585 0.128 243)',
+  })
+export type ValueInput = z.infer<typeof valueInputSchema>
+
+const perState = <S extends z.ZodType>(schema: S) =>
+  z.strictObject({
+    rest: schema.optional(),
+    hover: schema.optional(),
+    active: schema.optional(),
+    focus: schema.optional(),
+    disabled: schema.optional(),
+  })
+
+export const stateValuesSchema = perState(valueSchema).meta({ id: 'StateValues' })
+export const stateValuesInputSchema = perState(valueInputSchema).meta({ id: 'StateValuesInput' })
+
+/** Values by theme key, then by state. */
+export const themeValuesSchema = z.record(slugSchema, stateValuesSchema)
+export const themeValuesInputSchema = z.record(slugSchema, stateValuesInputSchema)
+
+export const limitSchema = (most: number, fallback: number) =>
+  z.coerce
+    .number()
+    .int()
+    .min(1)
+    .max(most)
+    .default(fallback)
+    .meta({ type: 'integer', description: `At most ${most}` })
+export const cursorSchema = z
+  .string()
+  .max(512)
+  .optional()
+  .meta({ description: 'From the rel="next" link of the page before' })
+
+export const systemParams = z.object({ system: slugSchema })
+
+export const personSchema = z
+  .strictObject({ id: idSchema, name: z.string() })
+  .meta({ id: 'Person', example: { id: 'usr_01jd5w7k2m', name: 'Ines Marrow' } })

@@ -1,0 +1,90 @@
+import type * as z from 'zod'
+import type { Permission } from './permissions.ts'
+import type { ProblemCode } from './problems.ts'
+
+export type Method = 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE'
+
+/** Who may call: anyone, anyone known (session or key), or the holders of one permission. */
+export type Access = 'anyone' | 'known' | Permission
+
+/** A successful answer: JSON of one shape, text of some media types, or nothing. */
+export type Success =
+  | { readonly status: 200 | 201 | 202; readonly body: z.ZodType; readonly example: unknown }
+  | {
+      readonly status: 200
+      readonly media: readonly string[]
+      readonly body: z.ZodString
+      readonly example: string
+    }
+  | { readonly status: 204; readonly body?: undefined }
+
+/**
+ * One operation, said once: the router mounts it, the document describes it, the client calls it and the
+ * guard tests attack it.
+ */
+export interface Contract {
+  /** Equals the export's and the test file's name. */
+  readonly operationId: string
+  readonly method: Method
+  /** OpenAPI template, `/v1/systems/{system}/tokens`. */
+  readonly path: string
+  /** The feature's word; groups the document. */
+  readonly feature: string
+  readonly summary: string
+  readonly description?: string
+  readonly params?: z.ZodObject
+  readonly query?: z.ZodObject
+  readonly body?: z.ZodType
+  /** Example of the body, and of each query parameter that an example needs. */
+  readonly bodyExample?: unknown
+  readonly success: Success
+  readonly problems: readonly ProblemCode[]
+  readonly access: Access
+  /** `required`: 428 without If-Match. `create`: PUT that takes `If-None-Match: *` or If-Match. */
+  readonly precondition?: 'required' | 'create'
+  /** The answer carries a strong ETag and `If-None-Match` is honoured with 304. */
+  readonly conditional?: boolean
+}
+
+/** Keeps the literal types of a contract while checking its shape. */
+export function defineContract<const C extends Contract>(contract: C): C {
+  return contract
+}
+
+type Part<C, K extends string, Out extends 'input' | 'output'> =
+  C extends Record<K, infer S extends z.ZodType>
+    ? Out extends 'input'
+      ? z.input<S>
+      : z.output<S>
+    : undefined
+
+/** What a caller hands in. */
+export type InputOf<C extends Contract> = (C extends { params: z.ZodObject }
+  ? { params: Part<C, 'params', 'input'> }
+  : { params?: undefined }) &
+  (C extends { query: z.ZodObject }
+    ? { query?: Part<C, 'query', 'input'> }
+    : { query?: undefined }) &
+  (C extends { body: z.ZodType } ? { body: Part<C, 'body', 'input'> } : { body?: undefined }) &
+  (C extends { precondition: 'required' }
+    ? { ifMatch: string }
+    : C extends { precondition: 'create' }
+      ? { ifMatch?: string; ifNoneMatch?: '*' }
+      : { ifMatch?: undefined })
+
+/** What a handler receives after parsing. */
+export interface ParsedOf<C extends Contract> {
+  readonly params: Part<C, 'params', 'output'>
+  readonly query: Part<C, 'query', 'output'>
+  readonly body: Part<C, 'body', 'output'>
+}
+
+/** What a caller gets back; `undefined` for 204. */
+export type OutputOf<C extends Contract> = C['success'] extends { body: infer S extends z.ZodType }
+  ? z.output<S>
+  : undefined
+
+/** What a handler must answer. */
+export type AnswerOf<C extends Contract> = C['success'] extends { body: infer S extends z.ZodType }
+  ? z.input<S>
+  : undefined
