@@ -1,0 +1,48 @@
+import { differenceCiede2000 } from 'culori/fn'
+import { toLibraryLab65 } from './color-library.ts'
+import type { Oklch } from './oklch.ts'
+
+/** CIE Lab with white D65. */
+export interface LabD65 {
+  readonly l: number
+  readonly a: number
+  readonly b: number
+}
+
+const ciede2000 = differenceCiede2000()
+
+/**
+ * Measures ΔE OK, the straight distance in OKLab; 0.02 is about one just noticeable difference. Alpha is left out.
+ * @returns 0 or more, unrounded.
+ * @see https://www.w3.org/TR/css-color-4/#color-difference-OK
+ */
+export function deltaEOk(first: Oklch, second: Oklch): number {
+  const p = (Math.PI / 180) * (first.h ?? 0)
+  const q = (Math.PI / 180) * (second.h ?? 0)
+  const c1 = first.c ?? 0
+  const c2 = second.c ?? 0
+  return Math.hypot(
+    (first.l ?? 0) - (second.l ?? 0),
+    c1 * Math.cos(p) - c2 * Math.cos(q),
+    c1 * Math.sin(p) - c2 * Math.sin(q),
+  )
+}
+
+/**
+ * Measures CIEDE2000 with unit weights.
+ * @returns 0 or more, unrounded.
+ * @see https://doi.org/10.1002/col.20070 Sharma, Wu, Dalal 2005
+ */
+export function deltaE2000(first: LabD65, second: LabD65): number {
+  return ciede2000({ mode: 'lab65', ...first }, { mode: 'lab65', ...second })
+}
+
+/**
+ * Converts an sRGB colour to CIE Lab, white D65.
+ * @param r Byte 0 to 255; `g` and `b` alike.
+ * @returns L 0 to 100, a, b; unrounded.
+ */
+export function labOfBytes(r: number, g: number, b: number): LabD65 {
+  const { l, a, b: blue } = toLibraryLab65({ mode: 'rgb', r: r / 255, g: g / 255, b: b / 255 })
+  return { l, a, b: blue }
+}
