@@ -1,0 +1,121 @@
+import {
+  type DerivedState,
+  STATES,
+  type SourceValue,
+  type State,
+  type SystemModel,
+  type TokenModel,
+} from './model.ts'
+import { createRuleScopes, hasFields, type RuleScopes } from './rule-scopes.ts'
+
+/** A model by position instead of id; -1 stands for what is missing. */
+export interface ModelGraph {
+  readonly model: SystemModel
+  readonly rules: RuleScopes
+  readonly tokenAt: ReadonlyMap<string, number>
+  readonly themeAt: ReadonlyMap<string, number>
+  /** By theme position; -1 for the base. */
+  readonly parents: readonly number[]
+  /** By theme position: token position of its ground and ink. */
+  readonly grounds: readonly number[]
+  readonly inks: readonly number[]
+  /** By token position: the states it lists or has from its target. */
+  readonly states: readonly (readonly DerivedState[])[]
+}
+
+/** The position of every theme's parent: the base has none, absent means the base. */
+function parentsOf(model: SystemModel, themeAt: ReadonlyMap<string, number>): number[] {
+  return model.themes.map((theme, position) => {
+    if (position === 0) return -1
+    return theme.from === undefined ? 0 : (themeAt.get(theme.from) ?? 0)
+  })
+}
+
+/** An alias that lists no states has its target's; the chain is walked once for all on it. */
+function listedStates(
+  tokens: readonly TokenModel[],
+  tokenAt: ReadonlyMap<string, number>,
+): (readonly DerivedState[])[] {
+  const listed: (readonly DerivedState[] | undefined)[] = new Array(tokens.length)
+  for (let start = 0; start < tokens.length; start++) {
+    const path: number[] = []
+    let at: number | undefined = start
+    let states: readonly DerivedState[] = []
+    while (at !== undefined && listed[at] === undefined) {
+      const token: TokenModel = tokens[at]!
+      path.push(at)
+      listed[at] = []
+      if (token.states.length > 0) {
+        states = token.states
+        break
+      }
+      at = token.value.kind === 'alias' ? tokenAt.get(token.value.token) : undefined
+      if (at !== undefined && listed[at] !== undefined) states = listed[at]!
+    }
+    for (const position of path) listed[position] = states
+  }
+  return listed.map((states) => states ?? [])
+}
+
+/** Reads a model into positions; the references it holds may be missing. */
+export function createModelGraph(model: SystemModel): ModelGraph {
+  const tokenAt = new Map(model.tokens.map((token, position) => [token.id, position]))
+  const themeAt = new Map(model.themes.map((theme, position) => [theme.id, position]))
+  return {
+    model,
+    rules: createRuleScopes(model),
+    tokenAt,
+    themeAt,
+    parents: parentsOf(model, themeAt),
+    grounds: model.themes.map((theme) => tokenAt.get(theme.ground) ?? -1),
+    inks: model.themes.map((theme) => tokenAt.get(theme.ink) ?? -1),
+    states: listedStates(model.tokens, tokenAt),
+  }
+}
+
+/** A value and the position of the theme that sets it. */
+export interface FoundValue {
+  readonly theme: number
+  readonly value: SourceValue
+}
+
+/**
+ * The value set for a token's state in the nearest theme from the given one towards the base. A state's value
+ * counts only where no nearer theme sets the token's rest.
+ */
+export function findValue(
+  graph: ModelGraph,
+  token: TokenModel,
+  where: { readonly theme: number; readonly state: State },
+): FoundValue | undefined {
+  let theme = where.theme
+  while (graph.parents[theme]! >= 0) {
+    const set = token.values[graph.model.themes[theme]!.id]
+    const value = set?.[where.state]
+    if (value !== undefined) return { theme, value }
+    if (set?.rest !== undefined) return undefined
+    theme = graph.parents[theme]!
+  }
+  if (where.state === 'rest') return { theme, value: token.value }
+  const value = token.values[graph.model.themes[theme]!.id]?.[where.state]
+  return value === undefined ? undefined : { theme, value }
+}
+
+/** Whether an alias found in one theme still holds in another: no theme rule on the token itself lies between. */
+export function isLive(
+  graph: ModelGraph,
+  token: TokenModel,
+  span: { readonly from: number; readonly to: number },
+): boolean {
+  const own = token.rules?.themes
+  if (own === undefined) return true
+  for (let theme = span.to; theme !== span.from; theme = graph.parents[theme]!) {
+    if (hasFields(own[graph.model.themes[theme]!.id])) return false
+  }
+  return true
+}
+
+/** Position of a state in STATES. */
+export function stateAt(state: State): number {
+  return STATES.indexOf(state)
+}
