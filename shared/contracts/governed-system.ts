@@ -1,0 +1,105 @@
+import type { ItemEdits, SystemEdits } from '#shared/checks/edits.ts'
+import type {
+  PairModel,
+  SystemModel,
+  ThemeModel,
+  ThemeRule,
+  TokenModel,
+} from '#shared/checks/model.ts'
+import type { Fault, ProblemCode } from './problems.ts'
+import type { ModelNames, WireNames } from './wire-values.ts'
+
+/** That a token is going away; the replacement by id, so that a rename moves nothing. */
+export interface Deprecation {
+  readonly reason?: string
+  readonly replacement?: string
+  /** Calendar date, `YYYY-MM-DD`. */
+  readonly sunset?: string
+}
+
+/** A token with what a revision governs beyond the engine's part. */
+export interface GovernedToken extends TokenModel {
+  readonly description?: string
+  readonly locked: boolean
+  readonly deprecated?: Deprecation
+}
+
+/** A theme with what a revision governs beyond the engine's part. */
+export interface GovernedTheme extends ThemeModel {
+  readonly name: string
+  readonly rule: ThemeRule
+}
+
+/** A system at one revision, whole; the engine takes it as it is. */
+export interface GovernedSystem extends SystemModel {
+  readonly themes: readonly GovernedTheme[]
+  readonly tokens: readonly GovernedToken[]
+}
+
+/** Edits of a governed system. */
+export interface GovernedEdits extends SystemEdits {
+  readonly tokens?: ItemEdits<GovernedToken>
+  readonly themes?: readonly GovernedTheme[]
+}
+
+/** A governed system that can be looked up in. */
+export interface SystemIndex {
+  readonly model: GovernedSystem
+  readonly tokensById: ReadonlyMap<string, GovernedToken>
+  readonly tokensByName: ReadonlyMap<string, GovernedToken>
+  readonly themesById: ReadonlyMap<string, GovernedTheme>
+  readonly themesByKey: ReadonlyMap<string, GovernedTheme>
+  readonly pairsById: ReadonlyMap<string, PairModel>
+  /** Names to ids and back; an id that is not there any more answers with itself. */
+  readonly names: WireNames & ModelNames
+}
+
+/** Makes the look-ups of a system, in time linear in its items. */
+export function indexSystem(model: GovernedSystem): SystemIndex {
+  const tokensById = new Map(model.tokens.map((token) => [token.id, token]))
+  const tokensByName = new Map(model.tokens.map((token) => [token.name, token]))
+  const themesById = new Map(model.themes.map((theme) => [theme.id, theme]))
+  const themesByKey = new Map(model.themes.map((theme) => [theme.key, theme]))
+  return {
+    model,
+    tokensById,
+    tokensByName,
+    themesById,
+    themesByKey,
+    pairsById: new Map(model.pairs.map((pair) => [pair.id, pair])),
+    names: {
+      tokenId: (name) => tokensByName.get(name)?.id,
+      themeId: (key) => themesByKey.get(key)?.id,
+      tokenName: (id) => tokensById.get(id)?.name ?? id,
+      themeKey: (id) => themesById.get(id)?.key ?? id,
+    },
+  }
+}
+
+/** Why a write is refused. */
+export interface Refusal {
+  readonly code: ProblemCode
+  readonly detail?: string
+  readonly faults?: readonly Fault[]
+}
+
+/** What a write comes to on a system as it stands: edits, or a refusal. */
+export type Decision =
+  | { readonly ok: true; readonly edits: GovernedEdits }
+  | { readonly ok: false; readonly refusal: Refusal }
+
+/** A refusal as the outcome of a decision. */
+export function refuse(
+  code: ProblemCode,
+  detail?: string,
+  faults?: readonly Fault[],
+): { readonly ok: false; readonly refusal: Refusal } {
+  return {
+    ok: false,
+    refusal: { code, ...(detail === undefined ? {} : { detail }), ...(faults ? { faults } : {}) },
+  }
+}
+
+/** The refusal of a body that was read and has faults. */
+export const refuseFaults = (faults: readonly Fault[]) =>
+  refuse('request-invalid', undefined, faults)
