@@ -1,7 +1,7 @@
 // @ts-check
-import { spawnSync } from 'node:child_process'
 import { accessSync, constants } from 'node:fs'
 import { join } from 'node:path'
+import { runProgram } from '#scripts/start/run-program.mjs'
 import { StepFailure } from '#scripts/start/steps.mjs'
 
 const FOLDERS = [
@@ -33,9 +33,9 @@ export function findProgram(program) {
 /**
  * Leaves the programs installed, or says the one line that installs them.
  * @param {{ programs: string[], packages: string[] }} wanted
- * @returns {string} what was done, for the step's line
+ * @returns {Promise<string>} what was done, for the step's line
  */
-export function ensurePrograms({ programs, packages }) {
+export async function ensurePrograms({ programs, packages }) {
   if (programs.every(findProgram)) return 'present'
   const install = ['apt-get', 'install', '-y', '--no-install-recommends', ...packages]
   if (findProgram('apt-get') === undefined || process.getuid?.() !== 0) {
@@ -47,29 +47,10 @@ export function ensurePrograms({ programs, packages }) {
   }
   // Another package run may hold the lock for a while; apt waits for it.
   const patience = ['-o', 'DPkg::Lock::Timeout=180', '-q']
-  run('apt-get', ['update', ...patience])
-  run('apt-get', [...install.slice(1), ...patience])
+  const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive', LC_ALL: 'C' }
+  await runProgram('apt-get', ['update', ...patience], { env })
+  await runProgram('apt-get', [...install.slice(1), ...patience], { env })
   const still = programs.filter((program) => findProgram(program) === undefined)
   if (still.length > 0) throw new StepFailure(`${packages.join(' ')} came without ${still.join()}`)
   return `installed ${packages.join(', ')}`
-}
-
-/**
- * @param {string} program
- * @param {string[]} args
- */
-function run(program, args) {
-  const done = spawnSync(program, args, {
-    encoding: 'utf8',
-    maxBuffer: 64 * 1024 * 1024,
-    env: { ...process.env, DEBIAN_FRONTEND: 'noninteractive', LC_ALL: 'C' },
-  })
-  if (done.status !== 0) {
-    const said = `${done.stdout ?? ''}${done.stderr ?? ''}`
-      .trim()
-      .split('\n')
-      .slice(-12)
-      .join('\n  ')
-    throw new StepFailure(`${program} ${args.join(' ')} failed:\n  ${said}`)
-  }
 }

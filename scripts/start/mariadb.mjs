@@ -1,5 +1,5 @@
 // @ts-check
-import { spawn, spawnSync } from 'node:child_process'
+import { spawn } from 'node:child_process'
 import {
   closeSync,
   existsSync,
@@ -16,13 +16,14 @@ import { setTimeout as delay } from 'node:timers/promises'
 import { ensurePrograms, findProgram } from '#scripts/start/debian.mjs'
 import { freePort } from '#scripts/start/free-port.mjs'
 import { endProcess, findProcesses } from '#scripts/start/processes.mjs'
+import { runProgram } from '#scripts/start/run-program.mjs'
 import { StepFailure } from '#scripts/start/steps.mjs'
 
 /**
  * @typedef {object} Mariadb a private server, listening on 127.0.0.1 and on a socket of its own
  * @property {number} port
  * @property {number} pid
- * @property {(sql: string) => string} asRoot runs statements over the socket, the only way in for its root
+ * @property {(sql: string) => Promise<string>} asRoot runs statements over the socket, the only way in for its root
  * @property {Promise<void>} exited
  * @property {() => Promise<void>} stop
  */
@@ -40,7 +41,7 @@ const THROW_AWAY = [
 ]
 const DURABLE = ['--innodb-flush-log-at-trx-commit=1']
 
-/** @returns {string} what was done, for the step's line */
+/** @returns {Promise<string>} what was done, for the step's line */
 export function ensureMariadb() {
   return ensurePrograms({
     programs: ['mariadbd', 'mariadb-install-db', 'mariadb'],
@@ -56,7 +57,7 @@ export function ensureMariadb() {
  */
 export async function startMariadb({ folder, port, throwAway = false }) {
   await endMariadb(folder)
-  createDataFolder(folder)
+  await createDataFolder(folder)
   const socketFolder = mkdtempSync(join(shortTemporaryFolder(), 'dyw-'))
   const socket = join(socketFolder, 's')
   const log = `${folder}.log`
@@ -121,39 +122,40 @@ export async function endMariadb(folder) {
  * Root comes in over the socket alone, proved by the operating system's user: it has no password to lose.
  * @param {string} folder
  */
-function createDataFolder(folder) {
+async function createDataFolder(folder) {
   if (existsSync(folder)) return
   const unfinished = `${folder}.tmp`
   rmSync(unfinished, { recursive: true, force: true })
   mkdirSync(dirname(folder), { recursive: true })
-  const done = spawnSync(
-    program('mariadb-install-db'),
-    [
-      '--no-defaults',
-      '--auth-root-authentication-method=socket',
-      `--auth-root-socket-user=${userInfo().username}`,
-      '--skip-test-db',
-      ...AS_ROOT,
-      `--datadir=${unfinished}`,
-    ],
-    { encoding: 'utf8' },
-  )
-  if (done.status !== 0) {
-    throw new StepFailure(`mariadb-install-db failed:\n${done.stdout ?? ''}${done.stderr ?? ''}`)
-  }
+  await runProgram(program('mariadb-install-db'), [
+    '--no-defaults',
+    '--auth-root-authentication-method=socket',
+    `--auth-root-socket-user=${userInfo().username}`,
+    '--skip-test-db',
+    ...AS_ROOT,
+    `--datadir=${unfinished}`,
+  ])
   renameSync(unfinished, folder)
 }
 
 /** @param {{ socket: string, isRunning: () => boolean, log: string }} server */
 async function untilReady({ socket, isRunning, log }) {
   const deadline = Date.now() + READY_WITHIN_MS
-  while (true) {
+  while (isRunning() && Date.now() < deadline) {
     await delay(50)
-    if (existsSync(socket) && client(socket, 'select 1').status === 0) return
-    if (!isRunning() || Date.now() > deadline) {
-      const tail = readFileSync(log, 'utf8').trim().split('\n').slice(-15).join('\n  ')
-      throw new StepFailure(`MariaDB did not start. The end of ${log}:\n  ${tail}`)
-    }
+    if (existsSync(socket) && (await answers(socket))) return
+  }
+  const tail = readFileSync(log, 'utf8').trim().split('\n').slice(-15).join('\n  ')
+  throw new StepFailure(`MariaDB did not start. The end of ${log}:\n  ${tail}`)
+}
+
+/** @param {string} socket */
+async function answers(socket) {
+  try {
+    await runAsRoot(socket, 'select 1')
+    return true
+  } catch {
+    return false
   }
 }
 
@@ -161,28 +163,13 @@ async function untilReady({ socket, isRunning, log }) {
  * @param {string} socket
  * @param {string} sql goes through standard input: arguments can be read by every user of the machine
  */
-function client(socket, sql) {
-  return spawnSync(
-    program('mariadb'),
-    [
-      '--no-defaults',
-      `--socket=${socket}`,
-      `--user=${userInfo().username}`,
-      '--batch',
-      '--skip-column-names',
-    ],
-    { encoding: 'utf8', input: sql },
-  )
-}
-
-/**
- * @param {string} socket
- * @param {string} sql
- */
 function runAsRoot(socket, sql) {
-  const done = client(socket, sql)
-  if (done.status !== 0) throw new StepFailure(`MariaDB refused: ${done.stderr.trim()}`)
-  return done.stdout
+  const login = [`--socket=${socket}`, `--user=${userInfo().username}`]
+  return runProgram(
+    program('mariadb'),
+    ['--no-defaults', ...login, '--batch', '--skip-column-names'],
+    { input: sql },
+  )
 }
 
 /** @returns {string} a folder in which a socket's path stays within the limit */

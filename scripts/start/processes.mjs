@@ -49,6 +49,37 @@ export function findProcesses(...wanted) {
 }
 
 /**
+ * Processes that were started for another one which is gone: each carries, in a variable of its
+ * environment, the identity of the process it serves.
+ * @param {string} variable
+ * @returns {number[]}
+ */
+export function findOrphans(variable) {
+  return listPids().filter((pid) => {
+    const owner = environment(pid).get(variable)
+    return owner !== undefined && processIdentity(Number.parseInt(owner, 10)) !== owner
+  })
+}
+
+/**
+ * @param {number} pid
+ * @returns {Map<string, string>} empty when the process is gone or another user's
+ */
+function environment(pid) {
+  try {
+    const entries = readFileSync(`/proc/${pid}/environ`, 'utf8').split('\0')
+    return new Map(
+      entries.map((entry) => {
+        const at = entry.indexOf('=')
+        return [entry.slice(0, at), entry.slice(at + 1)]
+      }),
+    )
+  } catch {
+    return new Map()
+  }
+}
+
+/**
  * Asks a process to end and insists when it does not.
  * @param {number} pid
  * @param {{ patienceMs?: number }} [options]

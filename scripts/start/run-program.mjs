@@ -1,0 +1,46 @@
+// @ts-check
+import { spawn } from 'node:child_process'
+import { endProcess } from '#scripts/start/processes.mjs'
+import { StepFailure } from '#scripts/start/steps.mjs'
+
+const KEPT_LINES = 15
+
+/** @type {Set<number>} */
+const running = new Set()
+
+/**
+ * Runs a program to its end, quietly; what it said is shown when it fails.
+ * @param {string} program
+ * @param {string[]} args
+ * @param {{ cwd?: string, env?: NodeJS.ProcessEnv, input?: string }} [options]
+ * @returns {Promise<string>} its standard output
+ */
+export function runProgram(program, args, { cwd, env = process.env, input = '' } = {}) {
+  return new Promise((resolve, reject) => {
+    const child = spawn(program, args, { cwd, env, stdio: 'pipe' })
+    let stdout = ''
+    let said = ''
+    child.stdout.setEncoding('utf8').on('data', (text) => {
+      stdout += text
+      said += text
+    })
+    child.stderr.setEncoding('utf8').on('data', (text) => {
+      said += text
+    })
+    child.stdin.on('error', () => {})
+    child.stdin.end(input)
+    child.once('error', (error) => reject(new StepFailure(`${program}: ${error.message}`)))
+    if (child.pid !== undefined) running.add(child.pid)
+    child.once('close', (code) => {
+      running.delete(/** @type {number} */ (child.pid))
+      if (code === 0) return resolve(stdout)
+      const tail = said.trim().split('\n').slice(-KEPT_LINES).join('\n  ')
+      reject(new StepFailure(`${[program, ...args].join(' ')} failed:\n  ${tail}`))
+    })
+  })
+}
+
+/** Ends every program that is still at work. */
+export async function endRunning() {
+  await Promise.all([...running].map((pid) => endProcess(pid)))
+}
