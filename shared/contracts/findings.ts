@@ -93,6 +93,7 @@ export const advisorySchema = z
     state: stateSchema.optional(),
   })
   .meta({ id: 'Advisory', description: 'Worth a look; never a breach' })
+export type AdvisoryWire = z.infer<typeof advisorySchema>
 
 /** What a direct write did to the head. */
 export const effectSchema = z

@@ -1,0 +1,39 @@
+import type { Advisory, Finding } from '#shared/checks/model.ts'
+import type { AdvisoryWire, FindingWire } from './findings.ts'
+import type { ModelNames } from './wire-values.ts'
+
+/**
+ * A finding as every answer gives it: tokens and theme by name, the ratio as measured. The identity, which
+ * holds ids alone, serves as the fingerprint, so that it outlives renames and thresholds.
+ */
+export function presentFinding(finding: Finding, names: ModelNames): FindingWire {
+  const { foregroundState, backgroundState, reason, tight, waiver } = finding
+  return {
+    foreground: names.tokenName(finding.foreground),
+    background: names.tokenName(finding.background),
+    theme: names.themeKey(finding.theme),
+    state: `${foregroundState}/${backgroundState}`,
+    use: finding.use,
+    ratio: finding.ratio,
+    required: finding.required,
+    basis: finding.basis,
+    outcome: finding.outcome,
+    ...(reason === undefined ? {} : { reason }),
+    ...(tight === undefined ? {} : { tight }),
+    gating: finding.gating,
+    rendered: finding.rendered,
+    ...(waiver === undefined ? {} : { waiver: { id: waiver.id, endsAt: waiver.endsAt } }),
+    fingerprint: finding.identity,
+  }
+}
+
+/** An advisory with token and theme by name. */
+export function presentAdvisory(advisory: Advisory, names: ModelNames): AdvisoryWire {
+  const { code, token, theme, state } = advisory
+  return {
+    code,
+    token: names.tokenName(token),
+    ...(theme === undefined ? {} : { theme: names.themeKey(theme) }),
+    ...(state === undefined ? {} : { state }),
+  }
+}
