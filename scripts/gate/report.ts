@@ -1,0 +1,127 @@
+import type { CheckWire } from '#shared/contracts/checks.contract.ts'
+import type { FindingWire } from '#shared/contracts/findings.ts'
+import { painterFor } from './paint.ts'
+import { folded, plain } from './terminal-text.ts'
+
+/** How the reader sees it: whether colour may be used, and how many columns there are. */
+export interface Surface {
+  readonly hasColor: boolean
+  readonly columns: number
+}
+
+const WORDS = 'no one two three four five six seven eight nine ten eleven twelve'.split(' ')
+
+/** Numbers as words to twelve. */
+const counted = (count: number, one: string, many = one): string =>
+  `${WORDS[count] ?? count} ${count === 1 ? one : many}`
+
+const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)
+
+/** Four decimals, cut off and never rounded, so that 4.49999 never reads 4.5000. */
+export function truncatedRatio(ratio: number): string {
+  const [whole, decimals = ''] = String(ratio).split('.')
+  return `${whole}.${decimals.slice(0, 4).padEnd(4, '0')}`
+}
+
+/** `fg/bg` as one word where both agree, else `hover on rest`. */
+export function stateText(state: string): string {
+  const [foreground, background] = state.split('/')
+  return foreground === background ? `${foreground}` : `${foreground} on ${background}`
+}
+
+const shortfall = ({ ratio, required }: FindingWire): number => ratio / required
+
+const groupsOf = (breaches: readonly FindingWire[]): FindingWire[][] => {
+  const groups = new Map<string, FindingWire[]>()
+  for (const finding of breaches) {
+    const subject = JSON.stringify([finding.foreground, finding.background, finding.use])
+    groups.set(subject, [...(groups.get(subject) ?? []), finding])
+  }
+  const worst = (group: readonly FindingWire[]) => Math.min(...group.map(shortfall))
+  return [...groups.values()].sort((a, b) => worst(a) - worst(b))
+}
+
+const remarksOn = (finding: FindingWire): string[] => [
+  ...(finding.basis === 'p3' ? ['measured in Display P3'] : []),
+  ...(finding.reason ? [finding.reason.replaceAll('-', ' ')] : []),
+  ...(finding.tight ? ['one level of a translucent layer would flip it'] : []),
+  ...(finding.gating ? [] : ['its theme only reports']),
+]
+
+const MOST_THEME_COLUMNS = 16
+const STATE_COLUMNS = 'disabled on active'.length
+
+const tableOf = (breaches: readonly FindingWire[], { hasColor, columns }: Surface): string[] => {
+  const paint = painterFor(hasColor)
+  const widest = Math.max(5, ...breaches.map(({ theme }) => plain(theme).length))
+  const themeColumns = Math.min(MOST_THEME_COLUMNS, widest)
+  const lead = (theme: string, state: string) =>
+    `  ${theme.padEnd(themeColumns)}  ${state.padEnd(STATE_COLUMNS)}`
+  const rowsOf = (finding: FindingWire): string[] => {
+    const themes = folded(plain(finding.theme), themeColumns)
+    const foreground = plain(finding.rendered.foreground)
+    const background = plain(finding.rendered.background)
+    const measured = `${truncatedRatio(finding.ratio).padStart(7)}  ${`${finding.required}`.padStart(8)}`
+    const sample = paint.sample(foreground, background)
+    const row = `${lead(themes[0] ?? '', stateText(plain(finding.state)))}  ${paint.short(measured)}  ${sample}${foreground} on ${background}`
+    const remarks = remarksOn(finding).map(plain).join('; ')
+    return [
+      row,
+      ...themes.slice(1).map((rest) => `  ${rest}`),
+      ...(remarks ? folded(remarks, columns - 4).map((line) => `    ${line}`) : []),
+    ]
+  }
+  const groups = groupsOf(breaches).flatMap((group) => {
+    const [first] = group
+    if (!first) return []
+    const name = plain(`${first.foreground} on ${first.background}, ${first.use}`)
+    const heading = folded(name, columns - 2).map((line, at) =>
+      paint.strong(at ? `  ${line}` : line),
+    )
+    return [...heading, ...group.flatMap(rowsOf)]
+  })
+  const head =
+    `${lead('Theme', 'State')}    Ratio  Required  ${hasColor ? '    ' : ''} Colours`.trimEnd()
+  return [paint.soft(head), ...groups]
+}
+
+const countsText = ({ counts }: CheckWire): string =>
+  capital(
+    [
+      counted(counts.breach, 'breach', 'breaches'),
+      ...(counts.known > 0 ? [counted(counts.known, 'known')] : []),
+      ...(counts.waived > 0 ? [counted(counts.waived, 'waived')] : []),
+      counted(counts.exempt, 'exempt'),
+      counted(counts.pass, 'passing', 'passing'),
+    ].join(', '),
+  )
+
+/**
+ * The check as a build log shows it: verdict, a table of breaches (furthest short first), counts, engine.
+ * Colour only ever doubles what the text says. Nothing from the wire reaches the terminal unstripped.
+ */
+export function reportOf(check: CheckWire, system: string, surface: Surface): string {
+  const paint = painterFor(surface.hasColor)
+  const breaches = check.findings.filter(({ outcome }) => outcome === 'breach')
+  const verdict = check.verdict === 'fail' ? paint.short('fails') : 'passes'
+  const { version, gamutMap, ruleSet } = check.engine
+  const lines = [
+    `Check ${check.number} of ${plain(system)} ${verdict}, against revision ${check.against.revision}.`,
+    `${countsText(check)}.`,
+    ...(breaches.length > 0 ? ['', ...tableOf(breaches, surface)] : []),
+    '',
+    ...(check.advisories.length > 0
+      ? [
+          `${capital(counted(check.advisories.length, 'advisory', 'advisories'))} besides; the json format lists them.`,
+        ]
+      : []),
+    ...folded(`Engine ${plain(version)}, ${plain(gamutMap)}, ${plain(ruleSet)}.`, surface.columns),
+    'Contrast is one criterion; this is no verdict of conformity.',
+  ]
+  return `${lines.join('\n')}\n`
+}
+
+/** The check as the service answered it. */
+export function jsonOf(check: CheckWire): string {
+  return `${JSON.stringify(check, null, 2)}\n`
+}
