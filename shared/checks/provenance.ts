@@ -54,7 +54,9 @@ function referenceText(reference: Reference, nameOf: (id: string) => string): st
 function adjustmentText(adjustment: Adjustment): string[] {
   const { lightness = 0, chroma = 1, hue = 0, alpha = 1 } = adjustment
   return [
-    ...(lightness === 0 ? [] : [`lightness ${lightness > 0 ? '+' : '−'} ${plain(Math.abs(lightness))}`]),
+    ...(lightness === 0
+      ? []
+      : [`lightness ${lightness > 0 ? '+' : '−'} ${plain(Math.abs(lightness))}`]),
     ...factorsText(chroma, hue, alpha),
   ]
 }

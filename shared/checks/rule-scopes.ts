@@ -49,63 +49,70 @@ export interface RuleScopes {
   themeRuleOf(token: TokenModel, theme: string): MergedThemeRule
 }
 
+/** What all tokens under the same prefixes have in common, merged once. */
+interface SharedRules {
+  readonly states: Map<DerivedState, MergedStateRule>
+  readonly themes: Map<string, MergedThemeRule>
+  readonly scopes: readonly RuleScope[]
+}
+
+/** Finds the shared rules of a name; the longest prefix that covers it stands for all that do. */
+function createSharedRules(prefixes: readonly PrefixRules[]): (name: string) => SharedRules {
+  const scopesOfPrefix = new Map<string, PrefixRules[]>()
+  for (const rules of prefixes) {
+    scopesOfPrefix.set(rules.prefix, [...(scopesOfPrefix.get(rules.prefix) ?? []), rules])
+  }
+  const sharedOfPrefix = new Map<string, SharedRules>()
+  const sharedOfName = new Map<string, SharedRules>()
+  return (name) => {
+    const known = sharedOfName.get(name)
+    if (known) return known
+    const covering = segmentPrefixes(name).filter((prefix) => scopesOfPrefix.has(prefix))
+    const longest = covering.at(-1) ?? ''
+    let shared = sharedOfPrefix.get(longest)
+    if (shared === undefined) {
+      const scopes = covering.flatMap((prefix) => scopesOfPrefix.get(prefix)!)
+      shared = { states: new Map(), themes: new Map(), scopes }
+      sharedOfPrefix.set(longest, shared)
+    }
+    sharedOfName.set(name, shared)
+    return shared
+  }
+}
+
+/** `a`, `a.b` and `a.b.c` for `a.b.c`. */
+function segmentPrefixes(name: string): string[] {
+  const prefixes: string[] = []
+  for (let end = name.indexOf('.'); end >= 0; end = name.indexOf('.', end + 1)) {
+    prefixes.push(name.slice(0, end))
+  }
+  return [...prefixes, name]
+}
+
 /** Reads the rules of a model; what tokens have in common is merged once. */
 export function createRuleScopes(model: SystemModel): RuleScopes {
-  const prefixScopes = new Map<string, PrefixRules[]>()
-  for (const rules of model.prefixes) {
-    const same = prefixScopes.get(rules.prefix)
-    if (same) same.push(rules)
-    else prefixScopes.set(rules.prefix, [rules])
-  }
+  const sharedOf = createSharedRules(model.prefixes)
   const systemThemeRules = new Map(model.themes.map((theme) => [theme.id, theme.rule]))
-  const stateRules = new Map<string, MergedStateRule>()
-  const themeRules = new Map<string, MergedThemeRule>()
-  const scopesOf = new Map<string, { key: string; scopes: readonly RuleScope[] }>()
-
-  /** The prefixes that cover a name, and the longest of them, which stands for all. */
-  const covering = (name: string) => {
-    const known = scopesOf.get(name)
-    if (known) return known
-    const scopes: RuleScope[] = []
-    let key = ''
-    if (prefixScopes.size > 0) {
-      for (let end = name.indexOf('.'); ; end = name.indexOf('.', end + 1)) {
-        const prefix = end < 0 ? name : name.slice(0, end)
-        const found = prefixScopes.get(prefix)
-        if (found) {
-          scopes.push(...found)
-          key = prefix
-        }
-        if (end < 0) break
-      }
-    }
-    const result = { key, scopes }
-    scopesOf.set(name, result)
-    return result
-  }
-
   return {
     stateRuleOf(token, state) {
-      const { key, scopes } = covering(token.name)
-      const sharedKey = `${state} ${key}`
-      let shared = stateRules.get(sharedKey)
-      if (shared === undefined) {
-        shared = over(DEFAULT_STATE_RULES[state], model.states[state])
-        for (const scope of scopes) shared = over(shared, scope.states?.[state])
-        stateRules.set(sharedKey, shared)
+      const shared = sharedOf(token.name)
+      let rule = shared.states.get(state)
+      if (rule === undefined) {
+        rule = over(DEFAULT_STATE_RULES[state], model.states[state])
+        for (const scope of shared.scopes) rule = over(rule, scope.states?.[state])
+        shared.states.set(state, rule)
       }
-      return over(shared, token.rules?.states?.[state])
+      return over(rule, token.rules?.states?.[state])
     },
     themeRuleOf(token, theme) {
-      const { key, scopes } = covering(token.name)
-      const sharedKey = `${theme} ${key}`
-      let shared = themeRules.get(sharedKey)
-      if (shared === undefined) {
-        shared = over(KEEP, systemThemeRules.get(theme))
-        for (const scope of scopes) shared = over(shared, scope.themes?.[theme])
-        themeRules.set(sharedKey, shared)
+      const shared = sharedOf(token.name)
+      let rule = shared.themes.get(theme)
+      if (rule === undefined) {
+        rule = over(KEEP, systemThemeRules.get(theme))
+        for (const scope of shared.scopes) rule = over(rule, scope.themes?.[theme])
+        shared.themes.set(theme, rule)
       }
-      return over(shared, token.rules?.themes?.[theme])
+      return over(rule, token.rules?.themes?.[theme])
     },
   }
 }

@@ -1,4 +1,11 @@
-import type { Adjustment, DerivedState, Reference, SourceValue, State, TokenModel } from './model.ts'
+import type {
+  Adjustment,
+  DerivedState,
+  Reference,
+  SourceValue,
+  State,
+  TokenModel,
+} from './model.ts'
 import { type FoundValue, findValue, isLive, type ModelGraph, stateAt } from './model-graph.ts'
 import { STATE_COUNT } from './resolved.ts'
 import { hasFields, type MergedStateRule, type MergedThemeRule } from './rule-scopes.ts'

@@ -1,0 +1,131 @@
+import { sameOklch } from './color-arithmetic.ts'
+import { editFaults, modelFaults } from './model-faults.ts'
+import { createModelGraph, type ModelGraph } from './model-graph.ts'
+import type { ModelFault, PairModel, SystemModel } from './model.ts'
+import {
+  type ResolvedCell,
+  type ResolvedSystem,
+  type ResolvedToken,
+  STATE_COUNT,
+} from './resolved.ts'
+import { spanFaults } from './theme-faults.ts'
+import { namedTokens } from './value-edges.ts'
+import { passValues } from './value-pass.ts'
+
+/** A resolved model, or every reason why it cannot be resolved. */
+export type Resolution =
+  | { readonly ok: true; readonly resolved: ResolvedSystem }
+  | { readonly ok: false; readonly faults: readonly ModelFault[] }
+
+type Row = readonly (ResolvedCell | undefined)[]
+
+/** Faults that leave no order in which themes could be computed. */
+function barsThePass(fault: ModelFault): boolean {
+  return fault.code === 'theme-cycle'
+}
+
+function spansOf(graph: ModelGraph, cells: readonly Row[]): ModelFault[] {
+  return graph.model.themes.flatMap((theme, position) => {
+    const ground = cells[graph.grounds[position]!]?.[position * STATE_COUNT]
+    const ink = cells[graph.inks[position]!]?.[position * STATE_COUNT]
+    return ground && ink ? spanFaults(theme, ground.color.rendered, ink.color.rendered) : []
+  })
+}
+
+/** A row without gaps: what a token does not list holds rest's cell. */
+function completeRow(row: Row): readonly ResolvedCell[] {
+  return row.map((cell, offset) => cell ?? row[offset - (offset % STATE_COUNT)]!)
+}
+
+function toResolvedToken(graph: ModelGraph, position: number, row: Row): ResolvedToken {
+  return {
+    token: graph.model.tokens[position]!,
+    states: ['rest', ...graph.states[position]!],
+    cells: completeRow(row),
+  }
+}
+
+/**
+ * Computes every token in every theme and state.
+ * @returns the values with their provenance, or all faults of the model at once
+ */
+export function resolveSystem(model: SystemModel): Resolution {
+  if (model.themes.length === 0) {
+    const detail = 'The system has no theme'
+    return { ok: false, faults: [{ code: 'theme-unset', detail }] }
+  }
+  const graph = createModelGraph(model)
+  const faults = modelFaults(graph)
+  if (faults.some(barsThePass)) return { ok: false, faults }
+  const all = model.tokens.map((_, position) => position)
+  const pass = passValues(graph, all, [])
+  faults.push(...pass.faults, ...spansOf(graph, pass.cells))
+  if (faults.length > 0) return { ok: false, faults }
+  const tokens = new Map<string, ResolvedToken>()
+  for (const [position, token] of model.tokens.entries()) {
+    tokens.set(token.id, toResolvedToken(graph, position, pass.cells[position]!))
+  }
+  return { ok: true, resolved: { model, themes: graph.themeAt, tokens } }
+}
+
+/** By token id, the tokens whose values or rules name it. Ground and ink, which all depend on, are left out. */
+export function dependentsOf(resolved: ResolvedSystem): Map<string, readonly string[]> {
+  const graph = createModelGraph(resolved.model)
+  const dependents = new Map<string, string[]>()
+  for (const [position, token] of resolved.model.tokens.entries()) {
+    for (const named of namedTokens(graph, token, position)) {
+      const known = dependents.get(named)
+      if (known) known.push(token.id)
+      else dependents.set(named, [token.id])
+    }
+  }
+  return dependents
+}
+
+/** Keeps the previous colour objects where a value came out the same, so that nothing is measured again for it. */
+function keepSameColors(
+  row: readonly ResolvedCell[],
+  before: ResolvedToken,
+): readonly ResolvedCell[] {
+  return row.map((cell, offset) => {
+    const previous = before.cells[offset]!
+    const isSame = sameOklch(cell.color.oklch, previous.color.oklch)
+    return isSame ? { ...cell, color: previous.color } : cell
+  })
+}
+
+/**
+ * Computes some tokens again over a system that is resolved already; the rest is shared with it.
+ * @param again.tokens ids of all whose value can have moved; no theme's ground or ink is among them
+ * @param again.pairs pairs whose references can have gone
+ * @returns undefined where the edited model has a fault, for the full pass to find them all
+ */
+export function resolveAgain(
+  previous: ResolvedSystem,
+  model: SystemModel,
+  again: { readonly tokens: ReadonlySet<string>; readonly pairs: readonly PairModel[] },
+): ResolvedSystem | undefined {
+  const graph = createModelGraph(model)
+  const positions: number[] = []
+  const known = model.tokens.map((token, position) => {
+    if (!again.tokens.has(token.id)) return previous.tokens.get(token.id)!.cells
+    positions.push(position)
+    return undefined
+  })
+  const touched = positions.map((position) => model.tokens[position]!)
+  if (editFaults(graph, { tokens: touched, pairs: again.pairs }).length > 0) return undefined
+  const pass = passValues(graph, positions, known)
+  if (pass.faults.length > 0) return undefined
+  const tokens = new Map<string, ResolvedToken>()
+  for (const [position, token] of model.tokens.entries()) {
+    const before = previous.tokens.get(token.id)
+    if (known[position] !== undefined) {
+      tokens.set(token.id, before!)
+      continue
+    }
+    const resolved = toResolvedToken(graph, position, pass.cells[position]!)
+    const cells = before ? keepSameColors(resolved.cells, before) : resolved.cells
+    tokens.set(token.id, { ...resolved, cells })
+  }
+  return { model, themes: graph.themeAt, tokens }
+}
