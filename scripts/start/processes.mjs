@@ -1,5 +1,5 @@
 // @ts-check
-import { readdirSync, readFileSync } from 'node:fs'
+import { readdirSync, readFileSync, readlinkSync } from 'node:fs'
 import { setTimeout as delay } from 'node:timers/promises'
 
 /**
@@ -52,13 +52,24 @@ export function findProcesses(...wanted) {
  * Processes that were started for another one which is gone: each carries, in a variable of its
  * environment, the identity of the process it serves.
  * @param {string} variable
+ * @param {{ under?: string }} [options] only those whose working folder lies there
  * @returns {number[]}
  */
-export function findOrphans(variable) {
+export function findOrphans(variable, { under = '/' } = {}) {
   return listPids().filter((pid) => {
     const owner = environment(pid).get(variable)
-    return owner !== undefined && processIdentity(Number.parseInt(owner, 10)) !== owner
+    if (owner === undefined || processIdentity(Number.parseInt(owner, 10)) === owner) return false
+    return workingFolder(pid)?.startsWith(under)
   })
+}
+
+/** @param {number} pid */
+function workingFolder(pid) {
+  try {
+    return `${readlinkSync(`/proc/${pid}/cwd`)}/`
+  } catch {
+    return undefined
+  }
 }
 
 /**

@@ -15,10 +15,19 @@ const NAME_WIDTH = 12
 export async function step(name, work) {
   const from = performance.now()
   let detail = ''
-  const result = await work((text) => {
-    detail = text
-  })
-  const seconds = ((performance.now() - from) / 1000).toFixed(1)
-  console.log(`${name.padEnd(NAME_WIDTH)}${seconds.padStart(6)} s  ${detail}`.trimEnd())
-  return result
+  const show = () => {
+    const seconds = ((performance.now() - from) / 1000).toFixed(1)
+    console.log(`${name.padEnd(NAME_WIDTH)}${seconds.padStart(6)} s  ${detail}`.trimEnd())
+  }
+  try {
+    const result = await work((text) => {
+      detail = text
+    })
+    show()
+    return result
+  } catch (error) {
+    detail = 'failed'
+    show()
+    throw error
+  }
 }

@@ -1,0 +1,80 @@
+// @ts-check
+import { createHash } from 'node:crypto'
+import { existsSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
+import { join } from 'node:path'
+import { DATA, ROOT } from '#scripts/start/project.mjs'
+import { StepFailure } from '#scripts/start/steps.mjs'
+
+/**
+ * @typedef {{ email: string, name: string, role: string, listed: boolean }} DemoAccount
+ * @typedef {{ password: string, accounts: DemoAccount[] }} DemoPeople
+ */
+
+export const DEMO_KEY_FILE = join(DATA, 'demo-ci-key')
+
+/** @returns {DemoPeople} */
+export function demoPeople() {
+  return JSON.parse(readFileSync(join(ROOT, 'scripts/demo/demo-accounts.json'), 'utf8'))
+}
+
+/**
+ * A file that is there from before the first demo row until after the last: the service is not ready
+ * meanwhile, and a start that finds it knows that seeding broke off.
+ * @param {string | undefined} externalUrl the address of a database that is not ours
+ */
+export function pendingSeed(externalUrl) {
+  const name = externalUrl === undefined ? 'private' : digest(withoutPassword(externalUrl))
+  const file = join(DATA, `seeding-${name}`)
+  return {
+    file,
+    isPending: () => existsSync(file),
+    begin: () => {
+      mkdirSync(DATA, { recursive: true })
+      writeFileSync(file, '')
+    },
+    end: () => rmSync(file, { force: true }),
+  }
+}
+
+/**
+ * @param {string} url
+ * @returns {Promise<'empty' | 'demo' | 'in use'>}
+ */
+export async function contentsOf(url) {
+  const { createConnection } = await import('mysql2/promise')
+  const connection = await createConnection(url)
+  try {
+    const emails = demoPeople().accounts.map((account) => account.email)
+    const [[row]] = /** @type {[import('mysql2').RowDataPacket[], unknown]} */ (
+      await connection.query(
+        `select (select count(*) from users) + (select count(*) from systems) as everything,
+                (select count(*) from users where email in (?) and deactivated_at is null) as demo`,
+        [emails],
+      )
+    )
+    if (Number(row?.everything) === 0) return 'empty'
+    return Number(row?.demo) > 0 ? 'demo' : 'in use'
+  } finally {
+    await connection.end()
+  }
+}
+
+/** @param {string} contents */
+export function refuseDemoInProduction(contents) {
+  if (contents !== 'demo') return
+  throw new StepFailure(
+    'This database holds the demo accounts, whose password everybody knows. NODE_ENV=production refuses it:\n' +
+      'give another DATABASE_URL, or move .data away.',
+  )
+}
+
+/** @param {string} url */
+function withoutPassword(url) {
+  const { username, host, pathname } = new URL(url)
+  return `${username}@${host}${pathname}`
+}
+
+/** @param {string} text */
+function digest(text) {
+  return createHash('sha256').update(text).digest('hex').slice(0, 12)
+}
