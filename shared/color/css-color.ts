@@ -88,7 +88,7 @@ function readFunction(css: string, name: string, body: string): CssReading {
   const isOurs = space === 'display-p3-linear' || space === 'rec2020'
   const color = parseWithLibrary(isOurs ? `color(srgb ${terms})` : css)
   if (!color) return refused(`${name}() is not written as CSS Color 4 asks.`)
-  return spaced(clamped(color, name), space, /\/\s*none\s*\)$/.test(css))
+  return spaced(color, space, /\/\s*none\s*\)$/.test(css), name)
 }
 
 function reasonForNested(css: string): string {
@@ -120,22 +120,21 @@ function spaceOf(name: string): ColorSpace | undefined {
 }
 
 // What CSS clamps when it parses and the library leaves as written.
-function clamped(color: Color, name: string): Color {
-  if (color.mode === 'rgb' && name.startsWith('rgb')) {
-    const range = (channel: number) => Math.min(1, Math.max(0, channel))
-    return { ...color, r: range(color.r), g: range(color.g), b: range(color.b) }
-  }
-  return color.mode === 'hsl' ? { ...color, s: Math.max(0, color.s) } : color
+function clamped([first, second, third]: Components, name: string): Components {
+  if (name.startsWith('rgb')) return [unit(first), unit(second), unit(third)]
+  if (name.startsWith('hsl')) return [first, second === null ? null : Math.max(0, second), third]
+  return [first, second, third]
 }
 
-function spaced(color: Color, space: ColorSpace, alphaIsMissing: boolean): CssReading {
+function unit(component: number | null): number | null {
+  return component === null ? null : Math.min(1, Math.max(0, component))
+}
+
+function spaced(color: Color, space: ColorSpace, alphaIsMissing: boolean, name = ''): CssReading {
+  const components = clamped(componentsOf(color), name)
   return {
     ok: true,
-    value: {
-      space,
-      components: componentsOf(color),
-      alpha: alphaIsMissing ? null : (color.alpha ?? 1),
-    },
+    value: { space, components, alpha: alphaIsMissing ? null : (color.alpha ?? 1) },
   }
 }
 
