@@ -1,46 +1,12 @@
-import type { ItemEdits, SystemEdits } from '#shared/checks/edits.ts'
 import type {
-  PairModel,
-  SystemModel,
-  ThemeModel,
-  ThemeRule,
-  TokenModel,
-} from '#shared/checks/model.ts'
+  GovernedEdits,
+  GovernedSystem,
+  GovernedTheme,
+  GovernedToken,
+} from '#shared/checks/governed-model.ts'
+import type { ModelFault, PairModel } from '#shared/checks/model.ts'
 import type { Fault, ProblemCode } from './problems.ts'
 import type { ModelNames, WireNames } from './wire-values.ts'
-
-/** That a token is going away; the replacement by id, so that a rename moves nothing. */
-export interface Deprecation {
-  readonly reason?: string
-  readonly replacement?: string
-  /** Calendar date, `YYYY-MM-DD`. */
-  readonly sunset?: string
-}
-
-/** A token with what a revision governs beyond the engine's part. */
-export interface GovernedToken extends TokenModel {
-  readonly description?: string
-  readonly locked: boolean
-  readonly deprecated?: Deprecation
-}
-
-/** A theme with what a revision governs beyond the engine's part. */
-export interface GovernedTheme extends ThemeModel {
-  readonly name: string
-  readonly rule: ThemeRule
-}
-
-/** A system at one revision, whole; the engine takes it as it is. */
-export interface GovernedSystem extends SystemModel {
-  readonly themes: readonly GovernedTheme[]
-  readonly tokens: readonly GovernedToken[]
-}
-
-/** Edits of a governed system. */
-export interface GovernedEdits extends SystemEdits {
-  readonly tokens?: ItemEdits<GovernedToken>
-  readonly themes?: readonly GovernedTheme[]
-}
 
 /** A governed system that can be looked up in. */
 export interface SystemIndex {
@@ -85,7 +51,12 @@ export interface Refusal {
 
 /** What a write comes to on a system as it stands: edits, or a refusal. */
 export type Decision =
-  | { readonly ok: true; readonly edits: GovernedEdits }
+  | {
+      readonly ok: true
+      readonly edits: GovernedEdits
+      /** Where in the body a fault of resolution lies, where that can be told. */
+      readonly pointerOf?: (fault: ModelFault) => string | undefined
+    }
   | { readonly ok: false; readonly refusal: Refusal }
 
 /** A refusal as the outcome of a decision. */

@@ -1,6 +1,6 @@
 import type { PairModel, SystemSettings } from '#shared/checks/model.ts'
 import type { PairWire } from './pairs.contract.ts'
-import type { GovernedSystem, GovernedTheme, GovernedToken } from './governed-system.ts'
+import type { GovernedSystem, GovernedTheme, GovernedToken } from '#shared/checks/governed-model.ts'
 import type { SystemWire } from './systems.contract.ts'
 import type { ThemeWire } from './themes.contract.ts'
 import type { TokenWire } from './tokens.contract.ts'

@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto'
-import type { GovernedSystem } from '#shared/contracts/governed-system.ts'
+import type { GovernedSystem } from '#shared/checks/governed-model.ts'
 import { canonicalJson } from '#shared/formats/canonical-json.ts'
 
 /** Items are never changed in place, so that an item that stays is hashed once. */

@@ -1,9 +1,8 @@
 import type * as z from 'zod'
 import type { ModelFault, TokenModel } from '#shared/checks/model.ts'
+import type { GovernedTheme, GovernedToken } from '#shared/checks/governed-model.ts'
 import {
   type Decision,
-  type GovernedTheme,
-  type GovernedToken,
   refuse,
   refuseFaults,
   type SystemIndex,

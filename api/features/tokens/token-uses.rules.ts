@@ -1,5 +1,5 @@
 import type { Reference, RuleScope, SourceValue, StateRules } from '#shared/checks/model.ts'
-import type { GovernedSystem, GovernedToken } from '#shared/contracts/governed-system.ts'
+import type { GovernedSystem, GovernedToken } from '#shared/checks/governed-model.ts'
 
 /** Something that would be left without a token that it names. */
 export interface TokenUse {

@@ -1,9 +1,8 @@
 import type * as z from 'zod'
 import { DERIVED_STATES, type ModelFault, type TokenModel } from '#shared/checks/model.ts'
+import type { Deprecation, GovernedToken } from '#shared/checks/governed-model.ts'
 import {
   type Decision,
-  type Deprecation,
-  type GovernedToken,
   refuse,
   refuseFaults,
   type SystemIndex,
