@@ -20,7 +20,7 @@ import {
 } from '#scripts/start/seeding.mjs'
 import { startService } from '#scripts/start/service.mjs'
 import { readSettings } from '#scripts/start/settings.mjs'
-import { onStop, runOrStop, stopAll, stopOnSignals } from '#scripts/start/shutdown.mjs'
+import { isStopping, onStop, runOrStop, stopAll, stopOnSignals } from '#scripts/start/shutdown.mjs'
 import { StepFailure, step } from '#scripts/start/steps.mjs'
 import { describeReady } from '#scripts/start/welcome.mjs'
 
@@ -145,6 +145,7 @@ async function serveBuilt({ settings, env }) {
   onStop(service.stop)
   await service.untilOk('/healthz', UP_WITHIN_MS)
   void service.exited.then(() => {
+    if (isStopping()) return
     console.error(
       `The service has ended. Its log: ${settings.production ? 'above' : '.data/service.log'}`,
     )
