@@ -11,7 +11,7 @@ import { presentPair } from '#shared/contracts/present-items.ts'
 import { pairFromWire } from '#shared/contracts/system-model.ts'
 import type { Reading } from '#shared/contracts/wire-values.ts'
 import { canonicalJson } from '#shared/formats/canonical-json.ts'
-import { declarationOf } from './pair-declaration.rules.ts'
+import { declarationOf } from '#shared/checks/pair-declaration.ts'
 
 export type CreatePairBody = z.output<typeof createPairBody>
 export type PatchPairBody = z.output<typeof patchPairBody>

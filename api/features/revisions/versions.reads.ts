@@ -1,0 +1,192 @@
+import { and, asc, between, eq, getTableColumns, gt, lte, or } from 'drizzle-orm'
+import type { SystemEdits } from '#shared/checks/edits.ts'
+import type { PrefixRules, StateRules, SystemSettings } from '#shared/checks/model.ts'
+import type { GovernedEdits, GovernedSystem, GovernedTheme } from '#shared/checks/governed-model.ts'
+import type { Executor } from '#api/platform/database.ts'
+import { pairs, pairVersions } from '#drizzle/schema/pairs.ts'
+import { ruleVersions } from '#drizzle/schema/rules.ts'
+import { settingVersions } from '#drizzle/schema/systems.ts'
+import { themeVersions } from '#drizzle/schema/themes.ts'
+import { tokens, tokenVersions } from '#drizzle/schema/tokens.ts'
+import { pairFromRow, themeFromRow, tokenFromRow } from './version-rows.ts'
+
+type Versions =
+  | typeof tokenVersions
+  | typeof pairVersions
+  | typeof themeVersions
+  | typeof ruleVersions
+  | typeof settingVersions
+
+/** Revisions after `after` up to and with `upTo`. */
+export interface RevisionSpan {
+  readonly systemId: string
+  readonly after: number
+  readonly upTo: number
+}
+
+/** Reads governed systems out of their versions. What is read at a revision never changes again. */
+export function createVersionsReads(db: Executor) {
+  const systemAt = async (systemId: string, revision: number): Promise<GovernedSystem> => ({
+    settings: await settingsAt(db, systemId, revision),
+    ...(await rulesAt(db, systemId, revision)),
+    themes: await themesAt(db, systemId, revision),
+    tokens: await tokensAt(db, systemId, revision),
+    pairs: await pairsAt(db, systemId, revision),
+  })
+  const editsIn = (span: RevisionSpan): Promise<GovernedEdits> => readEdits(db, span)
+  return { systemAt, editsIn }
+}
+export type VersionsReads = ReturnType<typeof createVersionsReads>
+
+const inForce = (table: Versions, systemId: string, revision: number) =>
+  and(
+    eq(table.systemId, systemId),
+    gt(table.toRevision, revision),
+    lte(table.fromRevision, revision),
+  )
+
+/** Versions in force at the end of the span that were not at its start. */
+const begun = (table: Versions, { systemId, after, upTo }: RevisionSpan) =>
+  and(
+    eq(table.systemId, systemId),
+    between(table.fromRevision, after + 1, upTo),
+    gt(table.toRevision, upTo),
+  )
+
+/** Versions in force at the start of the span that are not at its end. */
+const ended = (table: Versions, { systemId, after, upTo }: RevisionSpan) =>
+  and(
+    eq(table.systemId, systemId),
+    between(table.toRevision, after + 1, upTo),
+    lte(table.fromRevision, after),
+  )
+
+async function tokensAt(db: Executor, systemId: string, revision: number) {
+  const rows = await db
+    .select(tokenColumns)
+    .from(tokenVersions)
+    .innerJoin(tokens, eq(tokens.id, tokenVersions.tokenId))
+    .where(inForce(tokenVersions, systemId, revision))
+    .orderBy(asc(tokens.position))
+  return rows.map(tokenFromRow)
+}
+
+async function pairsAt(db: Executor, systemId: string, revision: number) {
+  const rows = await db
+    .select(pairColumns)
+    .from(pairVersions)
+    .innerJoin(pairs, eq(pairs.id, pairVersions.pairId))
+    .where(inForce(pairVersions, systemId, revision))
+    .orderBy(asc(pairs.position))
+  return rows.map(pairFromRow)
+}
+
+async function themesAt(
+  db: Executor,
+  systemId: string,
+  revision: number,
+): Promise<GovernedTheme[]> {
+  const rows = await db
+    .select()
+    .from(themeVersions)
+    .where(inForce(themeVersions, systemId, revision))
+    .orderBy(asc(themeVersions.position))
+  return rows.map(themeFromRow)
+}
+
+async function rulesAt(
+  db: Executor,
+  systemId: string,
+  revision: number,
+): Promise<{ states: StateRules; prefixes: PrefixRules[] }> {
+  const rows = await db
+    .select()
+    .from(ruleVersions)
+    .where(inForce(ruleVersions, systemId, revision))
+    .orderBy(asc(ruleVersions.position))
+  const system = rows.find(({ scope }) => scope === 'system')
+  return {
+    states: system?.definition.states ?? {},
+    prefixes: rows
+      .filter(({ scope }) => scope === 'prefix')
+      .map(({ prefix, definition }) => ({ prefix, ...definition })),
+  }
+}
+
+async function settingsAt(
+  db: Executor,
+  systemId: string,
+  revision: number,
+): Promise<SystemSettings> {
+  const [row] = await db
+    .select({ definition: settingVersions.definition })
+    .from(settingVersions)
+    .where(inForce(settingVersions, systemId, revision))
+  if (row === undefined) throw new TypeError(`No revision ${revision} of ${systemId}`)
+  return row.definition
+}
+
+/** Only what the span touched is read, so that following a head costs what was edited. */
+async function readEdits(db: Executor, span: RevisionSpan): Promise<GovernedEdits> {
+  const { systemId, upTo } = span
+  return {
+    tokens: await tokenEdits(db, span),
+    pairs: await pairEdits(db, span),
+    ...((await isTouched(db, themeVersions, span))
+      ? { themes: await themesAt(db, systemId, upTo) }
+      : {}),
+    ...((await isTouched(db, ruleVersions, span)) ? await rulesAt(db, systemId, upTo) : {}),
+    ...((await isTouched(db, settingVersions, span))
+      ? { settings: await settingsAt(db, systemId, upTo) }
+      : {}),
+  }
+}
+
+async function tokenEdits(db: Executor, span: RevisionSpan): Promise<GovernedEdits['tokens']> {
+  const put = await db
+    .select(tokenColumns)
+    .from(tokenVersions)
+    .innerJoin(tokens, eq(tokens.id, tokenVersions.tokenId))
+    .where(begun(tokenVersions, span))
+    .orderBy(asc(tokens.position))
+  const gone = await db
+    .select({ id: tokenVersions.tokenId })
+    .from(tokenVersions)
+    .where(ended(tokenVersions, span))
+  return { put: put.map(tokenFromRow), remove: gone.map(({ id }) => id) }
+}
+
+async function pairEdits(db: Executor, span: RevisionSpan): Promise<SystemEdits['pairs']> {
+  const put = await db
+    .select(pairColumns)
+    .from(pairVersions)
+    .innerJoin(pairs, eq(pairs.id, pairVersions.pairId))
+    .where(begun(pairVersions, span))
+    .orderBy(asc(pairs.position))
+  const gone = await db
+    .select({ id: pairVersions.pairId })
+    .from(pairVersions)
+    .where(ended(pairVersions, span))
+  return { put: put.map(pairFromRow), remove: gone.map(({ id }) => id) }
+}
+
+async function isTouched(db: Executor, table: Versions, span: RevisionSpan): Promise<boolean> {
+  const [row] = await db
+    .select({ systemId: table.systemId })
+    .from(table)
+    .where(or(begun(table, span), ended(table, span)))
+    .limit(1)
+  return row !== undefined
+}
+
+const { tokenId, name, definition } = getTableColumns(tokenVersions)
+const tokenColumns = { tokenId, name, definition }
+
+const { pairId, foregroundTokenId, backgroundTokenId, use } = getTableColumns(pairVersions)
+const pairColumns = {
+  pairId,
+  foregroundTokenId,
+  backgroundTokenId,
+  use,
+  definition: pairVersions.definition,
+}

@@ -1,0 +1,138 @@
+import { createHash } from 'node:crypto'
+import { type AnyColumn, and, eq, inArray, max, type SQL, sql } from 'drizzle-orm'
+import type { PairModel, SystemSettings } from '#shared/checks/model.ts'
+import { declarationOf } from '#shared/checks/pair-declaration.ts'
+import type { Executor } from '#api/platform/database.ts'
+import { STILL_LIVE } from '#drizzle/schema/columns.ts'
+import { pairs, pairVersions } from '#drizzle/schema/pairs.ts'
+import { ruleVersions } from '#drizzle/schema/rules.ts'
+import { settingVersions } from '#drizzle/schema/systems.ts'
+import { themes, themeVersions } from '#drizzle/schema/themes.ts'
+import { tokens, tokenVersions } from '#drizzle/schema/tokens.ts'
+import type { VersionChanges } from './version-changes.rules.ts'
+import { pairToRow, prefixToRow, themeToRow, tokenToRow } from './version-rows.ts'
+
+/** The revision that versions begin and end with. */
+export interface Turn {
+  readonly systemId: string
+  readonly revision: number
+}
+
+/** Writes what a revision changes; call it under the head's lock. */
+export function createVersionsRepository(db: Executor) {
+  return {
+    async write(turn: Turn, changes: VersionChanges): Promise<void> {
+      await closeVersions(db, turn, changes)
+      await openTokens(db, turn, changes.tokens)
+      await openThemes(db, turn, changes.themes)
+      await openPairs(db, turn, changes.pairs)
+      await openRules(db, turn, changes)
+      if (changes.settings) await openSettings(db, turn, changes.settings)
+    },
+  }
+}
+export type VersionsRepository = ReturnType<typeof createVersionsRepository>
+
+const begin = ({ systemId, revision }: Turn) => ({ systemId, fromRevision: revision })
+
+async function closeVersions(db: Executor, { systemId, revision }: Turn, changes: VersionChanges) {
+  const end = { toRevision: revision }
+  const live = (table: { systemId: AnyColumn; toRevision: AnyColumn }, which: SQL) =>
+    and(eq(table.systemId, systemId), eq(table.toRevision, STILL_LIVE), which)
+  const { tokens: token, pairs: pair, themes: theme, prefixes: prefix } = changes
+  if (token.closed.length > 0) {
+    const which = inArray(tokenVersions.tokenId, [...token.closed])
+    await db.update(tokenVersions).set(end).where(live(tokenVersions, which))
+  }
+  if (pair.closed.length > 0) {
+    const which = inArray(pairVersions.pairId, [...pair.closed])
+    await db.update(pairVersions).set(end).where(live(pairVersions, which))
+  }
+  if (theme.closed.length > 0) {
+    const which = inArray(themeVersions.themeId, [...theme.closed])
+    await db.update(themeVersions).set(end).where(live(themeVersions, which))
+  }
+  const prefixes =
+    prefix.closed.length > 0 ? inArray(ruleVersions.prefix, [...prefix.closed]) : null
+  if (prefixes) {
+    const which = sql`${eq(ruleVersions.scope, 'prefix')} and ${prefixes}`
+    await db.update(ruleVersions).set(end).where(live(ruleVersions, which))
+  }
+  if (changes.states) {
+    await db
+      .update(ruleVersions)
+      .set(end)
+      .where(live(ruleVersions, eq(ruleVersions.scope, 'system')))
+  }
+  if (changes.settings) {
+    await db.update(settingVersions).set(end).where(live(settingVersions, sql`true`))
+  }
+}
+
+async function openTokens(db: Executor, turn: Turn, { opened, added }: VersionChanges['tokens']) {
+  if (opened.length === 0) return
+  if (added.length > 0) {
+    const [last] = await db
+      .select({ position: max(tokens.position) })
+      .from(tokens)
+      .where(eq(tokens.systemId, turn.systemId))
+    await db.insert(tokens).values(placed(turn, added, last?.position ?? -1))
+  }
+  await db
+    .insert(tokenVersions)
+    .values(opened.map(({ item }) => ({ ...begin(turn), ...tokenToRow(item) })))
+}
+
+async function openPairs(db: Executor, turn: Turn, { opened, added }: VersionChanges['pairs']) {
+  if (opened.length === 0) return
+  if (added.length > 0) {
+    const [last] = await db
+      .select({ position: max(pairs.position) })
+      .from(pairs)
+      .where(eq(pairs.systemId, turn.systemId))
+    await db.insert(pairs).values(placed(turn, added, last?.position ?? -1))
+  }
+  const rows = opened.map(({ item }) => ({
+    ...begin(turn),
+    ...pairToRow(item),
+    declarationHash: declarationHash(item),
+  }))
+  await db.insert(pairVersions).values(rows)
+}
+
+async function openThemes(db: Executor, turn: Turn, { opened, added }: VersionChanges['themes']) {
+  if (opened.length === 0) return
+  if (added.length > 0) {
+    await db.insert(themes).values(added.map((id) => ({ id, systemId: turn.systemId })))
+  }
+  const rows = opened.map(({ item, position }) => ({
+    ...begin(turn),
+    ...themeToRow(item),
+    position,
+  }))
+  await db.insert(themeVersions).values(rows)
+}
+
+async function openRules(db: Executor, turn: Turn, { prefixes, states }: VersionChanges) {
+  const rows = prefixes.opened.map(({ item, position }) => ({
+    ...begin(turn),
+    ...prefixToRow(item),
+    scope: 'prefix' as const,
+    position,
+  }))
+  if (rows.length > 0) await db.insert(ruleVersions).values(rows)
+  if (states) {
+    await db
+      .insert(ruleVersions)
+      .values({ ...begin(turn), scope: 'system', definition: { states } })
+  }
+}
+
+const openSettings = (db: Executor, turn: Turn, definition: SystemSettings) =>
+  db.insert(settingVersions).values({ ...begin(turn), definition })
+
+const placed = ({ systemId }: Turn, ids: readonly string[], last: number) =>
+  ids.map((id, at) => ({ id, systemId, position: last + 1 + at }))
+
+const declarationHash = (pair: PairModel) =>
+  createHash('sha256').update(declarationOf(pair)).digest('hex')
