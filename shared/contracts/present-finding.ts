@@ -1,4 +1,5 @@
 import type { Advisory, Finding } from '#shared/checks/model.ts'
+import type { ResolvedSystem } from '#shared/checks/resolved.ts'
 import type { AdvisoryWire, FindingWire } from './findings.ts'
 import type { ModelNames } from './wire-values.ts'
 
@@ -35,5 +36,25 @@ export function presentAdvisory(advisory: Advisory, names: ModelNames): Advisory
     token: names.tokenName(token),
     ...(theme === undefined ? {} : { theme: names.themeKey(theme) }),
     ...(state === undefined ? {} : { state }),
+  }
+}
+
+/**
+ * What tokens and themes are called in the first of some resolved systems that has them: in the one after
+ * an edit, say, and else in the one before.
+ * @returns names by id; an id that none of them has answers with itself
+ */
+export function namesIn(...systems: readonly ResolvedSystem[]): ModelNames {
+  const first = (nameIn: (system: ResolvedSystem) => string | undefined, id: string) => {
+    for (const system of systems) {
+      const name = nameIn(system)
+      if (name !== undefined) return name
+    }
+    return id
+  }
+  return {
+    tokenName: (id) => first(({ tokens }) => tokens.get(id)?.token.name, id),
+    themeKey: (id) =>
+      first(({ model, themes }) => model.themes[themes.get(id) ?? themes.size]?.key, id),
   }
 }
