@@ -9,6 +9,11 @@ export interface HeadMark {
   readonly epoch: number
 }
 
+/** The head's mark under its lock, with the database's time. */
+export interface LockedHead extends HeadMark {
+  readonly at: Date
+}
+
 const mark = { revision: systemHeads.revision, epoch: systemHeads.verdictEpoch }
 
 /** The row that serialises the writes of a system, and the revisions that come of them. */
@@ -24,14 +29,14 @@ export function createHeadsRepository(db: Executor) {
     },
 
     /** Waits for every other write of the system; must be the first statement of a transaction. */
-    async lock(systemId: string): Promise<(HeadMark & { readonly at: Date }) | undefined> {
+    async lock(systemId: string): Promise<LockedHead | undefined> {
       const at = sql`utc_timestamp(3)`.mapWith(revisions.at)
       const [row] = await db
         .select({ ...mark, at })
         .from(systemHeads)
         .where(eq(systemHeads.systemId, systemId))
         .for('update')
-      return row as (HeadMark & { readonly at: Date }) | undefined
+      return row as LockedHead | undefined
     },
 
     /** Takes the number of the next revision. */

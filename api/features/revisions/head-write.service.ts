@@ -1,0 +1,206 @@
+import { applyEdits } from '#shared/checks/edits.ts'
+import type { GovernedEdits, GovernedSystem } from '#shared/checks/governed-model.ts'
+import type { Verdict } from '#shared/checks/model.ts'
+import { verdictOf } from '#shared/checks/verdict.ts'
+import type { Decision, Refusal } from '#shared/contracts/governed-system.ts'
+import type { Fault } from '#shared/contracts/problems.ts'
+import { actorOf, type SystemAccess } from '#api/caller.ts'
+import { AppError } from '#api/errors.ts'
+import type { BreachesService } from '#api/features/breaches/breaches.service.ts'
+import { type IfMatch, preconditionFailed } from '#api/precondition.ts'
+import type { Repositories, Transact } from '#api/repositories.ts'
+import type { LockedHead } from './heads.repository.ts'
+import { advanceHead, editedHead, type Head, type HeadsService } from './heads.service.ts'
+import { stateDigest } from './state-digest.ts'
+import { changesBetween, isEmpty, type VersionChanges } from './version-changes.rules.ts'
+import { type Effect, effectOf } from './write-effect.ts'
+import type { WriteGuards } from './write-guards.ts'
+
+export type WriteRepositories = 'heads' | 'versions' | 'breaches' | 'audit' | 'systems'
+type Writing = Pick<Repositories, WriteRepositories>
+
+export interface HeadWriteDeps {
+  readonly heads: HeadsService
+  readonly breaches: Pick<BreachesService, 'recordHead'>
+  readonly transact: Transact<WriteRepositories>
+  /** For what is compared before the transaction. */
+  readonly outside: Writing
+  readonly guards: WriteGuards
+}
+
+/** A write of what a revision governs. */
+export interface HeadWrite {
+  readonly system: SystemAccess
+  readonly message: string | undefined
+  /** Edits or a refusal, from the head alone: it may be asked again under the lock. */
+  readonly decide: (head: Head) => Decision
+  /** The representation that an `If-Match` is compared with; throws `not-found` where there is none. */
+  readonly expected?: {
+    readonly ifMatch: IfMatch
+    readonly current: (head: Head, reading: Writing) => Promise<Tagged> | Tagged
+  }
+  readonly audit: { readonly action: string; readonly subject: string }
+  /** Handling that belongs to the same call: no part of a revision, and audited by itself. */
+  readonly alongside?: (repositories: Writing) => Promise<void>
+}
+
+export interface Tagged {
+  readonly etag: string
+}
+
+/** The head as the write left it, and what the write did. */
+export interface Written {
+  readonly head: Head
+  readonly effect: Effect
+}
+
+/** What a write comes to on one head; `next` is absent where nothing would change. */
+interface Plan {
+  readonly head: Head
+  readonly next?: {
+    readonly head: Head
+    readonly changes: VersionChanges
+    readonly before: Verdict
+    readonly after: Verdict
+  }
+}
+
+/**
+ * The one write: every change of what a revision governs goes through it, and makes exactly one revision or
+ * none. It decides before the transaction, and again under the lock where the head moved meanwhile.
+ */
+export function createHeadWriteService(deps: HeadWriteDeps) {
+  return {
+    async write(request: HeadWrite): Promise<Written> {
+      const { heads, transact, outside } = deps
+      const plan = await planOn(deps, request, {
+        head: await heads.current(request.system.id),
+        reading: outside,
+      })
+      if (plan.next === undefined && request.alongside === undefined) return unmoved(plan.head)
+      const written = await transact((repositories) =>
+        writeUnderLock(deps, request, { plan, repositories }),
+      )
+      heads.keep(written.head)
+      return written
+    },
+  }
+}
+export type HeadWriteService = ReturnType<typeof createHeadWriteService>
+
+async function planOn(
+  { guards }: HeadWriteDeps,
+  { expected, decide }: HeadWrite,
+  { head, reading }: { readonly head: Head; readonly reading: Writing },
+): Promise<Plan> {
+  if (expected) {
+    const current = await expected.current(head, reading)
+    if (!guards.isMeantFor(expected.ifMatch, current.etag)) throw preconditionFailed(current)
+  }
+  const decision = decide(head)
+  if (!decision.ok) throw refusalError(decision.refusal)
+  const { edits } = decision
+  const changes = changesBetween(head.model, editedModel(head, edits))
+  if (isEmpty(changes)) return { head }
+  const edited = editedHead(head, edits)
+  if (!edited.ok) {
+    const faults = edited.faults.map((fault): Fault => {
+      const pointer = decision.pointerOf?.(fault)
+      return {
+        ...(pointer === undefined ? {} : { pointer }),
+        detail: fault.detail,
+        code: fault.code,
+      }
+    })
+    throw new AppError('system-unresolvable', { faults })
+  }
+  const [before, after] = [head, edited.head].map(({ evaluation }) =>
+    verdictOf(evaluation, { include: 'not-pass' }),
+  ) as [Verdict, Verdict]
+  return { head, next: { head: edited.head, changes, before, after } }
+}
+
+async function writeUnderLock(
+  deps: HeadWriteDeps,
+  request: HeadWrite,
+  { plan: prepared, repositories }: { readonly plan: Plan; readonly repositories: Writing },
+): Promise<Written> {
+  const { id } = request.system
+  const locked = await deps.guards.lock(repositories.heads, id)
+  if (locked === undefined) throw new AppError('not-found')
+  const plan = deps.guards.isCurrent(prepared.head, locked)
+    ? prepared
+    : await planOn(deps, request, {
+        head: await advanceHead(prepared.head, locked, repositories.versions),
+        reading: repositories,
+      })
+  const written =
+    plan.next === undefined
+      ? unmoved(plan.head)
+      : await writeRevision(deps, request, { plan, next: plan.next, locked, repositories })
+  await request.alongside?.(repositories)
+  if (plan.next) {
+    const { revision } = written.head
+    const { action, subject } = request.audit
+    const actor = actorOf(request.system.caller)
+    await repositories.audit.append({ chain: id, actor, action, subject, details: { revision } })
+  }
+  return written
+}
+
+interface Turn {
+  readonly plan: Plan
+  readonly next: NonNullable<Plan['next']>
+  readonly locked: LockedHead
+  readonly repositories: Writing
+}
+
+async function writeRevision(
+  { breaches }: HeadWriteDeps,
+  { system, message }: HeadWrite,
+  { plan, next, locked, repositories }: Turn,
+): Promise<Written> {
+  const mode = await repositories.heads.writeModeOf(system.id)
+  if (mode === 'review') throw new AppError('review-required')
+  const revision = await repositories.heads.advance(system.id)
+  await repositories.versions.write({ systemId: system.id, revision }, next.changes)
+  const { verdict, counts, engine } = next.after
+  await repositories.heads.addRevision({
+    systemId: system.id,
+    number: revision,
+    origin: 'direct',
+    authorUserId: system.caller.userId,
+    message: message || null,
+    verdict,
+    counts,
+    engineVersion: engine.version,
+    gamutMap: engine.gamutMap,
+    ruleSet: engine.ruleSet,
+    digest: stateDigest(next.head.model),
+    at: locked.at,
+  })
+  await breaches.recordHead(repositories, {
+    systemId: system.id,
+    revision,
+    at: locked.at,
+    actor: system.caller.userId,
+    before: plan.head.evaluation,
+    after: next.head.evaluation,
+    cause: 'edit',
+  })
+  const head: Head = { ...next.head, revision, epoch: locked.epoch }
+  return { head, effect: effectOf({ before: plan.head, after: head, verdicts: next }) }
+}
+
+const editedModel = (head: Head, edits: GovernedEdits) =>
+  applyEdits(head.model, edits) as GovernedSystem
+
+function unmoved(head: Head): Written {
+  const verdict = verdictOf(head.evaluation, { include: 'not-pass' })
+  return {
+    head,
+    effect: effectOf({ before: head, after: head, verdicts: { before: verdict, after: verdict } }),
+  }
+}
+
+const refusalError = ({ code, ...options }: Refusal) => new AppError(code, options)
