@@ -67,10 +67,11 @@ async function takeFolder(settings) {
   if (holder !== undefined) {
     throw new StepFailure(`npm start already runs in this folder: process ${holder}.`)
   }
+  await endMariadb(MARIADB_FOLDER)
   const orphans = findOrphans(START_VARIABLE, { under: ROOT })
   if (orphans.length > 0) {
     await step('Tidying', async (say) => {
-      await Promise.all(orphans.map((pid) => endProcess(pid)))
+      await Promise.all(orphans.map((pid) => endProcess(pid, { patienceMs: 3_000 })))
       say(`ended ${orphans.length} left by a start that was killed`)
     })
   }

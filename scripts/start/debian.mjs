@@ -49,7 +49,8 @@ export async function ensurePrograms({ programs, packages }) {
   const patience = ['-o', 'DPkg::Lock::Timeout=180', '-q']
   const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive', LC_ALL: 'C' }
   await runProgram('apt-get', ['update', ...patience], { env })
-  await runProgram('apt-get', [...install.slice(1), ...patience], { env })
+  // Ended half-way, it leaves packages to repair by hand.
+  await runProgram('apt-get', [...install.slice(1), ...patience], { env, patienceMs: 60_000 })
   const still = programs.filter((program) => findProgram(program) === undefined)
   if (still.length > 0) throw new StepFailure(`${packages.join(' ')} came without ${still.join()}`)
   return `installed ${packages.join(', ')}`

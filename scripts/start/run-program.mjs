@@ -5,17 +5,22 @@ import { StepFailure } from '#scripts/start/steps.mjs'
 
 const KEPT_LINES = 15
 
-/** @type {Set<number>} */
-const running = new Set()
+/** @type {Map<number, number>} the patience, in ms, of each program at work */
+const running = new Map()
 
 /**
  * Runs a program to its end, quietly; what it said is shown when it fails.
  * @param {string} program
  * @param {string[]} args
- * @param {{ cwd?: string, env?: NodeJS.ProcessEnv, input?: string }} [options]
+ * @param {{ cwd?: string, env?: NodeJS.ProcessEnv, input?: string, patienceMs?: number }} [options]
+ *   `patienceMs`: how long it may take to end when it is asked to
  * @returns {Promise<string>} its standard output
  */
-export function runProgram(program, args, { cwd, env = process.env, input = '' } = {}) {
+export function runProgram(
+  program,
+  args,
+  { cwd, env = process.env, input = '', patienceMs = 3_000 } = {},
+) {
   return new Promise((resolve, reject) => {
     const child = spawn(program, args, { cwd, env, stdio: 'pipe' })
     let stdout = ''
@@ -30,7 +35,7 @@ export function runProgram(program, args, { cwd, env = process.env, input = '' }
     child.stdin.on('error', () => {})
     child.stdin.end(input)
     child.once('error', (error) => reject(new StepFailure(`${program}: ${error.message}`)))
-    if (child.pid !== undefined) running.add(child.pid)
+    if (child.pid !== undefined) running.set(child.pid, patienceMs)
     child.once('close', (code) => {
       running.delete(/** @type {number} */ (child.pid))
       if (code === 0) return resolve(stdout)
@@ -42,5 +47,5 @@ export function runProgram(program, args, { cwd, env = process.env, input = '' }
 
 /** Ends every program that is still at work. */
 export async function endRunning() {
-  await Promise.all([...running].map((pid) => endProcess(pid)))
+  await Promise.all([...running].map(([pid, patienceMs]) => endProcess(pid, { patienceMs })))
 }
