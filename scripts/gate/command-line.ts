@@ -26,23 +26,24 @@ Configuration file
   dyewright.json in the working directory, or --config FILE. The same keys: url,
   system, against, tokens, pairs, newOnly, format; and source, an object of
   repository, branch, commit and pipelineUrl that is kept with the check. A flag
-  beats the file. File names in it start at its folder. Unknown keys are refused.
+  beats the file; its file names start at its folder; unknown keys are refused.
 
 Files
   A token file is a Design Tokens (2025.10) document. Several are merged in
   order; where two set one token the later wins, and the gate says so.
   A pairs file is an array of pairs:
-  [{ "foreground": "text.primary", "background": "surface.deck", "use": "text" }]
+  [{ "foreground": "text.muted", "background": "surface.deck", "use": "text" }]
 
 Formats
   text   a table of breaches (the default)
   json   the check as the service answered it
+  Several at once are fine where all but one go to a file.
 
 Environment
   DYEWRIGHT_KEY   the API key, scope checks:write; it is read from nowhere else
   DYEWRIGHT_SOURCE_REPOSITORY, DYEWRIGHT_SOURCE_BRANCH, DYEWRIGHT_SOURCE_COMMIT,
   DYEWRIGHT_SOURCE_PIPELINE_URL   where the build comes from; beat the file
-  NO_COLOR        no colour and no swatches; FORCE_COLOR: both without a terminal
+  NO_COLOR        no colour, no swatches; FORCE_COLOR: both without a terminal
 
 Exit codes
   0  pass
@@ -76,7 +77,7 @@ const gateCommand = (): Command =>
     .option('--tokens <file...>', 'candidate token files, later ones over earlier ones')
     .option('--pairs <file>', 'pairs to measure besides the declared ones')
     .option('--new-only', 'fail on new or worsened breaches only')
-    .option('--format <name[=file]...>', 'text or json; one to the output, others to a file')
+    .option('--format <format...>', 'text or json; NAME=FILE writes to a file')
     .option('--config <file>', 'configuration file')
     .option('--timeout <seconds>', 'limit of the run, retries included (default 60)', readSeconds)
     .allowExcessArguments(false)

@@ -48,7 +48,7 @@ const remarksOn = (finding: FindingWire): string[] => [
   ...(finding.gating ? [] : ['its theme only reports']),
 ]
 
-const MOST_THEME_COLUMNS = 16
+const MOST_THEME_COLUMNS = 10
 const STATE_COLUMNS = 'disabled on active'.length
 
 const tableOf = (breaches: readonly FindingWire[], { hasColor, columns }: Surface): string[] => {
