@@ -12,12 +12,7 @@ import { MARIADB_FOLDER, openPrivateDatabase } from '#scripts/start/private-data
 import { endProcess, findOrphans, processIdentity } from '#scripts/start/processes.mjs'
 import { DATA, DIST, ROOT } from '#scripts/start/project.mjs'
 import { runProgram } from '#scripts/start/run-program.mjs'
-import {
-  contentsOf,
-  DEMO_KEY_FILE,
-  pendingSeed,
-  refuseDemoInProduction,
-} from '#scripts/start/seeding.mjs'
+import { contentsOf, pendingSeed, refuseDemoInProduction } from '#scripts/start/seeding.mjs'
 import { startService } from '#scripts/start/service.mjs'
 import { readSettings } from '#scripts/start/settings.mjs'
 import { isStopping, onStop, runOrStop, stopAll, stopOnSignals } from '#scripts/start/shutdown.mjs'
@@ -52,12 +47,15 @@ await runOrStop(async () => {
   const service = await step('Service', () => serve({ settings, env }))
   if (seeding) {
     await step('Demo', () =>
-      runBuilt('demo/seed.js', ['--url', settings.url, '--key-file', DEMO_KEY_FILE], env),
+      runBuilt('demo/seed.js', ['--url', settings.url, '--key-file', seed.keyFile], env),
     )
     seed.end()
   }
   await service.untilOk('/readyz', UP_WITHIN_MS)
-  console.log(describeReady({ settings, showDemo: seeding || contents === 'demo' }))
+  const showDemo = seeding || contents === 'demo'
+  console.log(
+    describeReady({ url: settings.url, demoKeyFile: showDemo ? seed.keyFile : undefined }),
+  )
 })
 
 /** @param {import('#scripts/start/settings.mjs').Settings} settings */

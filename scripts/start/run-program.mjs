@@ -3,8 +3,6 @@ import { spawn } from 'node:child_process'
 import { endProcess } from '#scripts/start/processes.mjs'
 import { StepFailure } from '#scripts/start/steps.mjs'
 
-const KEPT_LINES = 15
-
 /** @type {Map<number, number>} the patience, in ms, of each program at work */
 const running = new Map()
 
@@ -12,8 +10,9 @@ const running = new Map()
  * Runs a program to its end, quietly; what it said is shown when it fails.
  * @param {string} program
  * @param {string[]} args
- * @param {{ cwd?: string, env?: NodeJS.ProcessEnv, input?: string, patienceMs?: number }} [options]
- *   `patienceMs`: how long it may take to end when it is asked to
+ * @param {{ cwd?: string, env?: NodeJS.ProcessEnv, input?: string, patienceMs?: number, keptLines?: number }} [options]
+ *   `patienceMs`: how long it may take to end when it is asked to; `keptLines`: how much of
+ *   what it said is shown
  * @returns {Promise<string>} its standard output
  */
 export function runProgram(
@@ -39,7 +38,7 @@ export function runProgram(
     child.once('close', (code) => {
       running.delete(/** @type {number} */ (child.pid))
       if (code === 0) return resolve(stdout)
-      const tail = said.trim().split('\n').slice(-KEPT_LINES).join('\n  ')
+      const tail = said.trim().split('\n').slice(-keptLines).join('\n  ')
       reject(new StepFailure(`${[program, ...args].join(' ')} failed:\n  ${tail}`))
     })
   })

@@ -10,8 +10,6 @@ import { StepFailure } from '#scripts/start/steps.mjs'
  * @typedef {{ password: string, accounts: DemoAccount[] }} DemoPeople
  */
 
-export const DEMO_KEY_FILE = join(DATA, 'demo-ci-key')
-
 /** @returns {DemoPeople} */
 export function demoPeople() {
   return JSON.parse(readFileSync(join(ROOT, 'scripts/demo/demo-accounts.json'), 'utf8'))
@@ -23,10 +21,12 @@ export function demoPeople() {
  * @param {string | undefined} externalUrl the address of a database that is not ours
  */
 export function pendingSeed(externalUrl) {
-  const name = externalUrl === undefined ? 'private' : digest(withoutPassword(externalUrl))
-  const file = join(DATA, `seeding-${name}`)
+  const suffix = externalUrl === undefined ? '' : `-${digest(withoutPassword(externalUrl))}`
+  const file = join(DATA, `demo-pending${suffix}`)
   return {
     file,
+    /** The key of a pipeline, for the commands that are shown when all is ready. */
+    keyFile: join(DATA, `demo-ci-key${suffix}`),
     isPending: () => existsSync(file),
     begin: () => {
       mkdirSync(DATA, { recursive: true })

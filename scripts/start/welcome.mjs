@@ -2,35 +2,44 @@
 import { existsSync } from 'node:fs'
 import { relative } from 'node:path'
 import { ROOT } from '#scripts/start/project.mjs'
-import { DEMO_KEY_FILE, demoPeople } from '#scripts/start/seeding.mjs'
+import { demoPeople } from '#scripts/start/seeding.mjs'
 
 /**
- * @param {{ settings: import('#scripts/start/settings.mjs').Settings, showDemo: boolean }} options
+ * @param {{ url: string, demoKeyFile: string | undefined }} options no file where there is no demo
  * @returns {string} what a person does next
  */
-export function describeReady({ settings: { url }, showDemo }) {
-  if (!showDemo || !existsSync(DEMO_KEY_FILE)) return `\nDyewright is ready: ${url}`
+export function describeReady({ url, demoKeyFile }) {
+  const ready = ['', `Dyewright is ready: ${url}`]
+  if (demoKeyFile === undefined) return ready.join('\n')
+  const commands = existsSync(demoKeyFile) ? commandLines(url, demoKeyFile) : []
+  return [...ready, '', 'Sign in as', ...peopleLines(), ...commands, '', 'Ctrl-C stops it.'].join(
+    '\n',
+  )
+}
+
+function peopleLines() {
   const { accounts, password } = demoPeople()
-  const people = accounts
-    .filter((account) => account.listed)
-    .map(({ email, name, role }) => `  ${email.padEnd(30)}${role.padEnd(20)}${name}`)
-  const key = `$(cat ${relative(process.cwd(), DEMO_KEY_FILE)})`
-  const at = relative(process.cwd(), ROOT) || '.'
+  const listed = accounts.filter((account) => account.listed)
   return [
-    '',
-    `Dyewright is ready: ${url}`,
-    '',
-    'Sign in as',
-    ...people,
+    ...listed.map(({ email, name, role }) => `  ${email.padEnd(30)}${role.padEnd(20)}${name}`),
     `password  ${password}`,
+  ]
+}
+
+/**
+ * @param {string} url
+ * @param {string} keyFile
+ */
+function commandLines(url, keyFile) {
+  const here = relative(process.cwd(), ROOT) || '.'
+  const key = `$(cat ${relative(process.cwd(), keyFile)})`
+  const candidate = `${here}/scripts/demo/breaching-change.tokens.json`
+  return [
     '',
     'Ask for a theme',
     `  curl -H "Authorization: Bearer ${key}" ${url}/v1/systems/larkhaven/themes/dark.css`,
     '',
-    'Let the gate judge a change that breaches, then its fix',
-    `  DYEWRIGHT_KEY=${key} node ${at}/dist/gate/dyewright.mjs gate --url ${url} --system larkhaven --new-only --tokens ${at}/scripts/demo/breaching-change.tokens.json`,
-    `  DYEWRIGHT_KEY=${key} node ${at}/dist/gate/dyewright.mjs gate --url ${url} --system larkhaven --new-only --tokens ${at}/scripts/demo/fix.tokens.json`,
-    '',
-    'Ctrl-C stops it; the data stays in .data.',
-  ].join('\n')
+    'Let the gate judge a change that breaches (fix.tokens.json beside it passes)',
+    `  DYEWRIGHT_KEY=${key} node ${here}/dist/gate/dyewright.mjs gate --url ${url} --system larkhaven --new-only --tokens ${candidate}`,
+  ]
 }
