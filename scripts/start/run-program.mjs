@@ -18,7 +18,7 @@ const running = new Map()
 export function runProgram(
   program,
   args,
-  { cwd, env = process.env, input = '', patienceMs = 3_000 } = {},
+  { cwd, env = process.env, input = '', patienceMs = 3_000, keptLines = 15 } = {},
 ) {
   return new Promise((resolve, reject) => {
     const child = spawn(program, args, { cwd, env, stdio: 'pipe' })
