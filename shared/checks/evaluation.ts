@@ -1,4 +1,4 @@
-import type { ContrastKind, ModelFault, PairModel } from './model.ts'
+import type { Advisory, ContrastKind, ModelFault, PairModel } from './model.ts'
 import type { ResolvedSystem } from './resolved.ts'
 
 /** What a row says before groups, waivers and comparison: met, short, exempt, or under the floor for disabled. */
@@ -21,8 +21,10 @@ export interface PairMeasure {
   /** By position in `themes`: what the use, the levels and the pair's minimum ask for. */
   readonly required: readonly number[]
   readonly srgb: Float64Array
-  /** NaN where P3 was not measured. */
+  /** NaN where no visible layer asks for P3; empty where the system does not ship it. */
   readonly p3: Float64Array
+  /** The ratio that decides: the lower of the two where P3 gates. */
+  readonly ratio: Float64Array
   /** ROW_… */
   readonly status: Uint8Array
   /** 1 where one level a translucent layer would flip the verdict. */
@@ -52,7 +54,9 @@ export interface Evaluation {
    * (theme position × STATE_COUNT + foreground state) × STATE_COUNT + background state.
    */
   readonly anyOf: ReadonlyMap<string, Uint8Array>
-  /** By token id: tokens whose value is computed from it. */
+  /** By token id; tokens without any are left out. */
+  readonly advisories: ReadonlyMap<string, readonly Advisory[]>
+  /** By token id: tokens whose values or rules name it; what all hangs on, ground and ink, is left out. */
   readonly dependents: ReadonlyMap<string, readonly string[]>
   /** By token id: positions in `measures` of the pairs with it as foreground, background or backdrop. */
   readonly pairsOf: ReadonlyMap<string, readonly number[]>

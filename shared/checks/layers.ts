@@ -35,7 +35,21 @@ export function paintLayer(pixel: Pixel, layer: RenderedColor, basis: Basis): vo
   pixel.b = compositeChannel(b, alpha, pixel.b)
 }
 
-function movedByte(byte: number, levels: number): number {
+/** One channel of a layer: 0 red, 1 green, 2 blue. */
+export function layerChannel(layer: RenderedColor, basis: Basis, channel: number): number {
+  if (basis === 'p3') return channel === 0 ? layer.p3r : channel === 1 ? layer.p3g : layer.p3b
+  return channel === 0 ? layer.r : channel === 1 ? layer.g : layer.b
+}
+
+/** What one channel adds to luminance: 0 red, 1 green, 2 blue. */
+export function channelLuminance(byte: number, basis: Basis, channel: number): number {
+  const measure = basis === 'p3' ? relativeLuminanceP3 : relativeLuminance
+  if (channel === 0) return measure(byte, 0, 0)
+  return channel === 1 ? measure(0, byte, 0) : measure(0, 0, byte)
+}
+
+/** A byte moved by levels, within 0 to 255. */
+export function movedByte(byte: number, levels: number): number {
   return Math.min(255, Math.max(0, byte + levels))
 }
 

@@ -170,7 +170,7 @@ export interface WaiverModel {
 export const OUTCOMES = ['pass', 'breach', 'waived', 'exempt', 'known'] as const
 export type Outcome = (typeof OUTCOMES)[number]
 
-/** A rendered colour: what ships and what was measured. Channels are bytes. */
+/** One entry of a check: what was measured of two tokens in a theme and a state, and what follows from it. */
 export interface Finding {
   readonly foreground: string
   readonly background: string
@@ -184,7 +184,10 @@ export interface Finding {
   readonly ratio: number
   /** 0 where nothing is required. */
   readonly required: number
+  /** Which measure `ratio` is: the lower one where both gate. */
   readonly basis: 'srgb' | 'p3'
+  /** Both measures; `p3` is WCAG's ratio on P3 luminance, outside its definition, where it was taken. */
+  readonly ratios: { readonly srgb: number; readonly p3?: number }
   readonly outcome: Outcome
   /** For example `any-of`, `backdrop-unknown`, `disabled-floor`, `disabled`, `logotype`. */
   readonly reason?: string
