@@ -1,0 +1,71 @@
+import { advisoriesOf } from './advisories.ts'
+import { meetAnyOf } from './any-of.ts'
+import type { Checked, Evaluation, PairMeasure, Subject } from './evaluation.ts'
+import { measurePair } from './measure-pair.ts'
+import type { Advisory, ContrastKind, PairModel, SystemModel } from './model.ts'
+import { dependentsOf, resolveSystem } from './resolve-system.ts'
+import type { ResolvedSystem } from './resolved.ts'
+import { kindOf } from './uses.ts'
+
+/** Gathers the pairs whose findings can share an identity, in the order of their first. */
+export function toSubjects(pairs: readonly PairModel[]): Subject[] {
+  type Draft = { foreground: string; background: string; kind: ContrastKind; members: number[] }
+  const drafts = new Map<string, Draft>()
+  for (const [position, { foreground, background, use }] of pairs.entries()) {
+    const kind = kindOf(use)
+    const key = `${kind} ${foreground.length} ${foreground} ${background}`
+    const draft = drafts.get(key)
+    if (draft) draft.members.push(position)
+    else drafts.set(key, { foreground, background, kind, members: [position] })
+  }
+  return [...drafts.values()]
+}
+
+/** By token id, the positions of the pairs that show it. */
+export function toPairsOf(pairs: readonly PairModel[]): Map<string, readonly number[]> {
+  const pairsOf = new Map<string, number[]>()
+  for (const [position, pair] of pairs.entries()) {
+    const backdrop = pair.backdrop === 'unknown' ? [] : pair.backdrop
+    for (const token of new Set([pair.foreground, pair.background, ...backdrop])) {
+      const known = pairsOf.get(token)
+      if (known) known.push(position)
+      else pairsOf.set(token, [position])
+    }
+  }
+  return pairsOf
+}
+
+/** Advisories by token id, tokens without any left out. */
+export function toAdvisories(resolved: ResolvedSystem): Map<string, readonly Advisory[]> {
+  const advisories = new Map<string, readonly Advisory[]>()
+  for (const [id, token] of resolved.tokens) {
+    const found = advisoriesOf(resolved, token)
+    if (found.length > 0) advisories.set(id, found)
+  }
+  return advisories
+}
+
+/** Measures every pair of a resolved system. */
+export function evaluateSystem(resolved: ResolvedSystem): Evaluation {
+  const { pairs, themes } = resolved.model
+  const measures: readonly PairMeasure[] = pairs.map((pair) => measurePair(resolved, pair))
+  return {
+    resolved,
+    measures,
+    subjects: toSubjects(pairs),
+    anyOf: meetAnyOf(measures, themes.length),
+    advisories: toAdvisories(resolved),
+    dependents: dependentsOf(resolved),
+    pairsOf: toPairsOf(pairs),
+  }
+}
+
+/**
+ * Resolves a model and measures every declared pair in every theme and state.
+ * @returns the measurements, for `verdictOf` to judge; or all faults of the model at once
+ */
+export function checkSystem(model: SystemModel): Checked {
+  const resolution = resolveSystem(model)
+  if (!resolution.ok) return resolution
+  return { ok: true, evaluation: evaluateSystem(resolution.resolved) }
+}

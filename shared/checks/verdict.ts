@@ -1,0 +1,58 @@
+import { ENGINE_STAMP } from './engine.ts'
+import { toFinding, visitEntries } from './entries.ts'
+import type { Evaluation } from './evaluation.ts'
+import { createJudge, type JudgementOptions } from './judgement.ts'
+import { themeOfRow } from './measured-row.ts'
+import type { Finding, Outcome, Verdict } from './model.ts'
+
+/** How an evaluation is judged and how much of it is written out. */
+export interface VerdictOptions extends JudgementOptions {
+  /** Which findings are written out, default `all`; counts cover all of them either way. */
+  readonly include?: 'all' | 'not-pass'
+}
+
+/**
+ * Judges what was measured: entries by identity with their outcome, counts, advisories, and `fail` where a
+ * breach gates. Findings stand in the order of their pairs.
+ */
+export function verdictOf(evaluation: Evaluation, options: VerdictOptions = {}): Verdict {
+  const counts: Record<Outcome, number> = { pass: 0, breach: 0, waived: 0, exempt: 0, known: 0 }
+  const findings: Finding[] = []
+  const isShort = options.include === 'not-pass'
+  const judge = createJudge(evaluation, options)
+  let fails = false
+  for (const subject of evaluation.subjects) {
+    visitEntries(evaluation, subject, judge, (measure, row, judgement, entry) => {
+      const { outcome } = judgement
+      counts[outcome]++
+      if (outcome === 'breach' && themeOfRow(evaluation, measure, row).gating) fails = true
+      if (isShort && outcome === 'pass') return
+      findings.push(
+        toFinding(evaluation, entry ?? { measure, row, judgement, declared: [measure] }),
+      )
+    })
+  }
+  return {
+    verdict: fails ? 'fail' : 'pass',
+    counts,
+    findings,
+    advisories: advisoriesInOrder(evaluation),
+    engine: ENGINE_STAMP,
+  }
+}
+
+function advisoriesInOrder(evaluation: Evaluation): Verdict['advisories'] {
+  if (evaluation.advisories.size === 0) return []
+  return evaluation.resolved.model.tokens.flatMap(
+    (token) => evaluation.advisories.get(token.id) ?? [],
+  )
+}
+
+/** The breaches of a verdict by identity, as `known` for another verdict that is compared with it. */
+export function breachRatios(verdict: Verdict): Map<string, number> {
+  const ratios = new Map<string, number>()
+  for (const finding of verdict.findings) {
+    if (finding.outcome === 'breach') ratios.set(finding.identity, finding.ratio)
+  }
+  return ratios
+}
