@@ -1,0 +1,158 @@
+import { type Entry, toFinding, visitEntries } from './entries.ts'
+import type { Evaluation, PairMeasure, Subject } from './evaluation.ts'
+import { createJudge, type Judge, type JudgementOptions } from './judgement.ts'
+import { identityOfRow } from './measured-row.ts'
+import type { Finding } from './model.ts'
+
+/** One finding that an edit moves; absent where it was not, or is no longer, measured. */
+export interface Consequence {
+  readonly identity: string
+  readonly before?: Finding
+  readonly after?: Finding
+  /** Whether the edit makes it a breach, or makes a breach pass. */
+  readonly newly: 'breaching' | 'passing' | null
+}
+
+interface Side {
+  readonly evaluation: Evaluation
+  readonly judge: Judge
+}
+
+function subjectKey(subject: Subject): string {
+  return JSON.stringify([subject.kind, subject.foreground, subject.background])
+}
+
+/** Subjects of both evaluations, matched by what they are about. */
+function* matchedSubjects(
+  before: Evaluation,
+  after: Evaluation,
+): Generator<readonly [Subject | undefined, Subject | undefined]> {
+  if (before.subjects === after.subjects) {
+    for (const subject of before.subjects) yield [subject, subject]
+    return
+  }
+  const rest = new Map(before.subjects.map((subject) => [subjectKey(subject), subject]))
+  for (const subject of after.subjects) {
+    const key = subjectKey(subject)
+    yield [rest.get(key), subject]
+    rest.delete(key)
+  }
+  for (const subject of rest.values()) yield [subject, undefined]
+}
+
+function measuresOf(evaluation: Evaluation, subject: Subject | undefined): PairMeasure[] {
+  return (subject?.members ?? []).map((position) => evaluation.measures[position]!)
+}
+
+function isSameBytes(first: Uint8Array | undefined, second: Uint8Array | undefined): boolean {
+  if (first === second) return true
+  return first !== undefined && second !== undefined && first.join() === second.join()
+}
+
+/** Groups in which a different set of places is met now. */
+function movedGroups(before: Evaluation, after: Evaluation): Set<string> {
+  const names = new Set([...before.anyOf.keys(), ...after.anyOf.keys()])
+  return new Set(
+    [...names].filter((name) => !isSameBytes(before.anyOf.get(name), after.anyOf.get(name))),
+  )
+}
+
+/** Whether a theme's findings can differ though nothing measured does. */
+function areThemesSame(before: Evaluation, after: Evaluation): boolean {
+  return before.resolved.model.themes === after.resolved.model.themes
+}
+
+function isUntouched(
+  before: readonly PairMeasure[],
+  after: readonly PairMeasure[],
+  moved: ReadonlySet<string>,
+): boolean {
+  return (
+    before.length === after.length &&
+    before.every((measure, at) => measure === after[at]) &&
+    !before.some(({ pair }) => pair.anyOf !== undefined && moved.has(pair.anyOf))
+  )
+}
+
+function entriesOf(side: Side, subject: Subject | undefined): Map<string, Entry> {
+  const entries = new Map<string, Entry>()
+  if (subject === undefined) return entries
+  visitEntries(side.evaluation, subject, side.judge, (measure, row, judgement, merged) => {
+    const entry = merged ?? { measure, row, judgement, declared: [measure] }
+    entries.set(identityOfRow(side.evaluation, measure, row), entry)
+  })
+  return entries
+}
+
+function isMoved(before: Finding | undefined, after: Finding | undefined): boolean {
+  if (before === undefined || after === undefined) return true
+  return (
+    before.ratio !== after.ratio ||
+    before.required !== after.required ||
+    before.outcome !== after.outcome ||
+    before.basis !== after.basis ||
+    before.gating !== after.gating ||
+    before.waiver?.id !== after.waiver?.id
+  )
+}
+
+function newlyOf(before: Finding | undefined, after: Finding | undefined): Consequence['newly'] {
+  if (after?.outcome === 'breach') return before?.outcome === 'breach' ? null : 'breaching'
+  return before?.outcome === 'breach' && after?.outcome === 'pass' ? 'passing' : null
+}
+
+function compareSubject(
+  sides: { readonly before: Side; readonly after: Side },
+  [earlier, later]: readonly [Subject | undefined, Subject | undefined],
+): Consequence[] {
+  const before = entriesOf(sides.before, earlier)
+  const after = entriesOf(sides.after, later)
+  const consequences: Consequence[] = []
+  for (const identity of new Set([...before.keys(), ...after.keys()])) {
+    const was = before.get(identity)
+    const is = after.get(identity)
+    const first = was && toFinding(sides.before.evaluation, was)
+    const second = is && toFinding(sides.after.evaluation, is)
+    if (!isMoved(first, second)) continue
+    consequences.push({
+      identity,
+      ...(first ? { before: first } : {}),
+      ...(second ? { after: second } : {}),
+      newly: newlyOf(first, second),
+    })
+  }
+  return consequences
+}
+
+const ORDER = ['breaching', 'passing', null] as const
+
+function reach({ after, before }: Consequence): number {
+  const finding = after ?? before!
+  return finding.required === 0 ? Number.MAX_VALUE : finding.ratio / finding.required
+}
+
+/**
+ * Every finding that moved between two evaluations of one system: newly breaching first, then newly passing,
+ * then the rest, and among them the one furthest short of its requirement first. What both share costs nothing.
+ */
+export function consequences(
+  before: Evaluation,
+  after: Evaluation,
+  options: JudgementOptions = {},
+): Consequence[] {
+  const sides = {
+    before: { evaluation: before, judge: createJudge(before, options) },
+    after: { evaluation: after, judge: createJudge(after, options) },
+  }
+  const moved = movedGroups(before, after)
+  const canSkip = areThemesSame(before, after)
+  const found: Consequence[] = []
+  for (const pair of matchedSubjects(before, after)) {
+    const [earlier, later] = [measuresOf(before, pair[0]), measuresOf(after, pair[1])]
+    if (canSkip && isUntouched(earlier, later, moved)) continue
+    found.push(...compareSubject(sides, pair))
+  }
+  return found.toSorted(
+    (a, b) => ORDER.indexOf(a.newly) - ORDER.indexOf(b.newly) || reach(a) - reach(b),
+  )
+}
