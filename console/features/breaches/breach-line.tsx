@@ -1,0 +1,37 @@
+import type { ReactNode } from 'react'
+import { stateInWords } from '#console/lib/finding-words.ts'
+import { PairSample } from '#console/ui/pair-sample.tsx'
+import { RatioText } from '#console/ui/ratio-text.tsx'
+import { BreachLink, type BreachRowProps } from './breach-row.tsx'
+import { BreachStatus } from './breach-status.tsx'
+
+/** A breach on a narrow screen: two lines, and its history under them where it is opened. */
+export function BreachLine({ under, ...row }: BreachRowProps & { under: ReactNode }) {
+  const { breach, isOpened } = row
+  return (
+    <>
+      <li data-opened={isOpened || undefined}>
+        <div className="flex items-baseline justify-between gap-12 pt-4">
+          <span className="min-w-0">
+            <BreachLink {...row} />
+          </span>
+          <span className="shrink-0">
+            <BreachStatus breach={breach} />
+          </span>
+        </div>
+        <div className="flex items-center justify-between gap-12 pb-6">
+          <PairSample {...breach.rendered} breaches={breach.status === 'open'} />
+          <RatioText
+            ratio={breach.ratio}
+            required={breach.required}
+            waived={breach.status === 'waived'}
+          />
+          <span className="min-w-0 truncate text-12 text-ink-soft">
+            {breach.theme}, {stateInWords(breach.state)}
+          </span>
+        </div>
+      </li>
+      {isOpened && <li className="border-b-2 border-ink py-14">{under}</li>}
+    </>
+  )
+}

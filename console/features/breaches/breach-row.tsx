@@ -1,0 +1,80 @@
+import { Link, useNavigate } from 'react-router-dom'
+import { stateInWords } from '#console/lib/finding-words.ts'
+import { PairSample } from '#console/ui/pair-sample.tsx'
+import { RatioColumns } from '#console/ui/ratio-text.tsx'
+import type { RowLinkProps } from '#console/ui/row-walk.ts'
+import type { BreachWire } from '#shared/contracts/breaches.contract.ts'
+import { BreachStatus } from './breach-status.tsx'
+import { firstSeenInWords } from './breach-words.ts'
+
+export interface BreachRowProps {
+  readonly breach: BreachWire
+  /** Where the row leads: to the opened breach, or back where it is open. */
+  readonly href: string
+  readonly link: RowLinkProps
+  readonly isOpened: boolean
+}
+
+export function BreachRow({ breach, href, link, isOpened }: BreachRowProps) {
+  const navigate = useNavigate()
+  return (
+    <tr
+      data-opens
+      data-opened={isOpened || undefined}
+      onClick={(event) => {
+        if (!(event.target instanceof HTMLAnchorElement)) {
+          void navigate(href, { preventScrollReset: true })
+        }
+      }}
+    >
+      <td className="row-start number figures text-ink-soft">{breach.number}</td>
+      <td>
+        <span className="block pl-16">
+          <PairSample {...breach.rendered} breaches={breach.status === 'open'} />
+        </span>
+      </td>
+      <td className="truncate">
+        <BreachLink breach={breach} href={href} link={link} isOpened={isOpened} />
+      </td>
+      <td className="truncate font-normal! text-ink-soft @max-[760px]:hidden">
+        {breach.theme}, {stateInWords(breach.state)}
+      </td>
+      <td>
+        <span className="flex justify-end pr-6 font-normal">
+          <RatioColumns
+            ratio={breach.ratio}
+            required={breach.required}
+            waived={breach.status === 'waived'}
+          />
+        </span>
+      </td>
+      <td className="figures truncate font-normal! text-ink-soft @max-[960px]:hidden">
+        <span className="pl-16">{firstSeenInWords(breach)}</span>
+      </td>
+      <td>
+        <BreachStatus breach={breach} />
+      </td>
+      <td className="truncate font-normal! text-ink-soft @max-[1100px]:hidden">
+        {breach.assignee?.name}
+      </td>
+    </tr>
+  )
+}
+
+/** The pair in words; it opens the row, or closes it. */
+export function BreachLink({ breach, href, link, isOpened }: BreachRowProps) {
+  return (
+    <Link
+      to={href}
+      preventScrollReset
+      {...link}
+      aria-expanded={isOpened}
+      aria-label={`Breach ${breach.number}: ${breach.foreground} on ${breach.background}`}
+      className="block truncate py-6"
+    >
+      <span className={isOpened ? 'font-semibold' : 'font-medium'}>{breach.foreground}</span>
+      {' on '}
+      <span className={isOpened ? 'font-semibold' : ''}>{breach.background}</span>
+    </Link>
+  )
+}

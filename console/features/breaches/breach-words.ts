@@ -1,0 +1,43 @@
+import { formatDay } from '#console/lib/format.ts'
+import type { BreachEventWire, BreachWire } from '#shared/contracts/breaches.contract.ts'
+
+const CLOSED: { readonly [reason in NonNullable<BreachWire['closingReason']>]: string } = {
+  fixed: 'fixed',
+  'requirement-changed': 'requirement changed',
+  'pair-removed': 'pair removed',
+  'theme-removed': 'theme removed',
+  exempted: 'exempted',
+  'engine-changed': 'engine changed',
+}
+
+/** `resolved, fixed` */
+export function closingInWords(breach: BreachWire): string {
+  return breach.closingReason === undefined
+    ? 'resolved'
+    : `resolved, ${CLOSED[breach.closingReason]}`
+}
+
+/** `27 Nov, r212` */
+export function firstSeenInWords(breach: BreachWire): string {
+  const day = formatDay(breach.firstSeenAt)
+  return breach.firstSeenRevision === undefined ? day : `${day}, r${breach.firstSeenRevision}`
+}
+
+/** Where it was seen, beside the head: `larkhaven/timetable, main`. */
+export function originInWords(breach: BreachWire): string {
+  if (breach.origin === 'head') return 'on the head'
+  return [breach.repository, breach.branch].filter((part) => part !== undefined).join(', ')
+}
+
+const EVENTS: { readonly [kind in BreachEventWire['kind']]: string } = {
+  opened: 'Fell short',
+  worsened: 'Fell further',
+  eased: 'Came nearer',
+  resolved: 'Passed again',
+  reopened: 'Fell short again',
+}
+
+export function eventInWords(event: BreachEventWire, breach: BreachWire): string {
+  const closed = event.kind === 'resolved' && breach.closingReason
+  return closed && closed !== 'fixed' ? `Closed, ${CLOSED[closed]}` : EVENTS[event.kind]
+}

@@ -1,0 +1,75 @@
+/** A ratio cut, never rounded, to a fixed number of decimals: 4.499 reads 4.49. */
+export function truncateRatio(ratio: number, decimals: number): string {
+  if (!Number.isFinite(ratio)) throw new TypeError(`a ratio is a finite number, not ${ratio}`)
+  const [whole = '0', fraction = ''] = String(ratio).split('.')
+  return decimals === 0 ? whole : `${whole}.${fraction.slice(0, decimals).padEnd(decimals, '0')}`
+}
+
+/** Lightness or chroma, three decimals. */
+export function formatComponent(value: number | null): string {
+  return value === null ? 'none' : value.toFixed(3)
+}
+
+export function formatHue(value: number | null): string {
+  return value === null ? 'none' : `${Math.round(value) % 360}°`
+}
+
+const SMALL_NUMBERS = [
+  'no',
+  'one',
+  'two',
+  'three',
+  'four',
+  'five',
+  'six',
+  'seven',
+  'eight',
+  'nine',
+  'ten',
+  'eleven',
+  'twelve',
+]
+
+/** A count in a sentence: words to twelve, then figures. */
+export function countInWords(count: number): string {
+  return SMALL_NUMBERS[count] ?? String(count)
+}
+
+/** `two breaches`, `one breach`, `no breaches`. */
+export function countOf(count: number, one: string, many = `${one}s`): string {
+  return `${countInWords(count)} ${count === 1 ? one : many}`
+}
+
+export function startSentence(text: string): string {
+  return text.charAt(0).toUpperCase() + text.slice(1)
+}
+
+/** `a`, `a and b`, `a, b and c`. */
+export function joinWords(words: readonly string[]): string {
+  const last = words.at(-1)
+  return words.length < 2 ? (last ?? '') : `${words.slice(0, -1).join(', ')} and ${last}`
+}
+
+const dayMonth = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'short' })
+const dayMonthYear = new Intl.DateTimeFormat('en-GB', {
+  day: 'numeric',
+  month: 'short',
+  year: 'numeric',
+})
+const dayLong = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'long' })
+const clock = new Intl.DateTimeFormat('en-GB', { hour: '2-digit', minute: '2-digit' })
+
+/** `12 Oct`, with its year where that is not the present one. */
+export function formatDay(iso: string, now = new Date()): string {
+  const date = new Date(iso)
+  return date.getFullYear() === now.getFullYear()
+    ? dayMonth.format(date)
+    : dayMonthYear.format(date)
+}
+
+/** `today at 09:42`, else `12 October at 09:42`. */
+export function formatMoment(iso: string, now = new Date()): string {
+  const date = new Date(iso)
+  const day = date.toDateString() === now.toDateString() ? 'today' : dayLong.format(date)
+  return `${day} at ${clock.format(date)}`
+}

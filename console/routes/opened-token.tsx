@@ -1,0 +1,117 @@
+import { useSuspenseQuery } from '@tanstack/react-query'
+import { type ReactNode, type Ref, useMemo, useState } from 'react'
+import { themeQueries } from '#console/features/themes/themes.queries.ts'
+import { ConsequenceList, type ModelNames } from '#console/features/tokens/consequence-list.tsx'
+import { presentColor, presentText } from '#console/features/tokens/present-value.ts'
+import { ShipsTable } from '#console/features/tokens/ships-table.tsx'
+import { TokenPairs } from '#console/features/tokens/token-pairs.tsx'
+import { useTokenFindings, useTried } from '#console/features/tokens/token-trial.ts'
+import { tokenQueries } from '#console/features/tokens/tokens.queries.ts'
+import { readTrial } from '#console/features/tokens/trial.ts'
+import { countOf, startSentence } from '#console/lib/format.ts'
+import { Trouble } from '#console/ui/page-states.tsx'
+import type { Evaluation } from '#shared/checks/evaluation.ts'
+import type { TokenWire } from '#shared/contracts/tokens.contract.ts'
+import { SaveForm } from './save-form.tsx'
+import { TitleWithCells } from './title-with-cells.tsx'
+
+/** One token: try a colour, see what moves, save it, and read what ships. */
+export function OpenedToken({
+  system,
+  token,
+  title,
+  evaluation,
+  children,
+}: {
+  system: string
+  token: TokenWire
+  title: Ref<HTMLHeadingElement>
+  evaluation: Evaluation | undefined
+  /** What to say while there is no evaluation. */
+  children: ReactNode
+}) {
+  const { data: tokens } = useSuspenseQuery(tokenQueries.ledger(system))
+  const { data: themes } = useSuspenseQuery(themeQueries.all(system))
+  const base = themes[0]?.key ?? ''
+  const [draft, setDraft] = useState<string>()
+  const present = presentText(token, base)
+  const text = draft ?? present
+  const isTried = text.trim() !== present
+  const reading = useMemo(() => {
+    const ids = new Map(tokens.map(({ name, id }) => [name, id]))
+    return readTrial(text, (name) => ids.get(name))
+  }, [text, tokens])
+  const value = isTried && reading.kind !== 'unread' ? reading.value : undefined
+  const tried = useTried(evaluation, token.id, value)
+  const known = useTokenFindings(evaluation, tried, token.id)
+  const names = useMemo<ModelNames>(() => {
+    const tokenNames = new Map(tokens.map(({ id, name }) => [id, name]))
+    const themeKeys = new Map(themes.map(({ id, key }) => [id, key]))
+    return {
+      token: (id) => tokenNames.get(id) ?? id,
+      theme: (id) => themeKeys.get(id) ?? id,
+    }
+  }, [tokens, themes])
+  const ships = themes.map(({ id, key, ground }) => ({
+    id,
+    key,
+    ground: tokens.find(({ name }) => name === ground)?.resolved[key]?.rest.hex ?? '#ffffff',
+  }))
+  return (
+    <>
+      <TitleWithCells
+        system={system}
+        token={token}
+        title={title}
+        tried={tried?.ok === true ? tried.evaluation : undefined}
+      />
+      <SaveForm
+        system={system}
+        token={token}
+        text={text}
+        reading={reading}
+        present={presentColor(token, base)}
+        base={base}
+        isTried={isTried}
+        onText={setDraft}
+        onPutBack={() => setDraft(undefined)}
+      />
+      {children}
+      {known !== undefined && (
+        <div className="grid gap-x-44 gap-y-28 pt-22 full:grid-cols-2">
+          <section>
+            <h2 className="text-16 font-semibold">Its pairs</h2>
+            <p className="text-13 text-ink-soft">{dependInWords(known.findings.length)}</p>
+            <TokenPairs pairs={known.pairs} names={names} />
+          </section>
+          <section aria-live="polite">
+            <h2 className="text-16 font-semibold">What the tried colour would move</h2>
+            {tried?.ok === false ? (
+              <Trouble title="This cannot be resolved.">
+                {tried.faults.map((fault) => (
+                  <p key={fault.detail}>{fault.detail}</p>
+                ))}
+              </Trouble>
+            ) : known.moved === undefined ? (
+              <p className="mt-8 max-w-460 text-ink-soft">
+                Nothing is tried. Write another colour, or step a component with the arrow keys:
+                every ratio it moves is listed here before anything is saved.
+              </p>
+            ) : (
+              <ConsequenceList moved={known.moved} names={names} />
+            )}
+          </section>
+        </div>
+      )}
+      <section className="pt-36 pb-44">
+        <h2 className="pb-8 text-16 font-semibold">As it ships</h2>
+        <ShipsTable token={token} themes={ships} findings={known?.findings ?? []} names={names} />
+      </section>
+    </>
+  )
+}
+
+function dependInWords(count: number): string {
+  const depend = count === 1 ? 'depends' : 'depend'
+  return `${startSentence(countOf(count, 'finding'))} ${depend} on this token, by itself and through what follows it.`
+}

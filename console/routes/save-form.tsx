@@ -1,0 +1,100 @@
+import { useMutation, useSuspenseQuery } from '@tanstack/react-query'
+import { type FormEvent, useState } from 'react'
+import { mayDo } from '#console/features/session/session.queries.ts'
+import { systemQueries } from '#console/features/systems/systems.queries.ts'
+import { valueInWords } from '#console/features/tokens/present-value.ts'
+import { SavedNote, SaveLine } from '#console/features/tokens/save-line.tsx'
+import { saveFaults, SaveRefusal } from '#console/features/tokens/save-refusal.tsx'
+import { saveToken, tokenQueries } from '#console/features/tokens/tokens.queries.ts'
+import type { TrialReading } from '#console/features/tokens/trial.ts'
+import { type PresentColor, TrialFields } from '#console/features/tokens/trial-fields.tsx'
+import { isRefusal } from '#console/lib/api.ts'
+import { queryClient } from '#console/lib/query-client.ts'
+import type { TokenWire } from '#shared/contracts/tokens.contract.ts'
+import { useMe } from './account-items.tsx'
+
+interface SaveFormProps {
+  readonly system: string
+  readonly token: TokenWire
+  readonly text: string
+  readonly reading: TrialReading
+  readonly present: PresentColor
+  readonly base: string
+  readonly isTried: boolean
+  readonly onText: (text: string) => void
+  readonly onPutBack: () => void
+}
+
+/** The fields of the trial, and the decision to save it. */
+export function SaveForm(props: SaveFormProps) {
+  const { system, token, text, reading, present, base, isTried, onText, onPutBack } = props
+  const [message, setMessage] = useState('')
+  const obstacle = useObstacle(props)
+  const saving = useMutation({
+    mutationFn: saveToken,
+    onSuccess: async () => {
+      await queryClient.invalidateQueries({ queryKey: ['system', system] })
+      setMessage('')
+      onPutBack()
+    },
+    onError: async (error) => {
+      const { queryKey } = tokenQueries.one(system, token.name)
+      if (isRefusal(error, 412)) await queryClient.invalidateQueries({ queryKey })
+    },
+  })
+  const faults = saveFaults(saving.error)
+  const save = () => {
+    if (obstacle !== undefined || saving.isPending) return
+    saving.mutate({ system, name: token.name, etag: token.etag, value: text.trim(), message })
+  }
+
+  function submit(event: FormEvent) {
+    event.preventDefault()
+    save()
+  }
+
+  function takeText(next: string) {
+    if (!saving.isIdle && !saving.isPending && !isRefusal(saving.error, 412)) saving.reset()
+    onText(next)
+  }
+
+  return (
+    <form onSubmit={submit} className="border-b border-ink pb-18">
+      <TrialFields
+        text={text}
+        reading={reading}
+        present={present}
+        fault={faults.value}
+        onText={takeText}
+      />
+      <SaveLine
+        message={message}
+        onMessage={setMessage}
+        fault={faults.message}
+        isTried={isTried}
+        isSaving={saving.isPending}
+        obstacle={obstacle}
+        onPutBack={() => {
+          saving.reset()
+          onPutBack()
+        }}
+      />
+      {saving.isError && (
+        <SaveRefusal error={saving.error} now={valueInWords(token, base)} onAgain={save} />
+      )}
+      {saving.isSuccess && <SavedNote saved={saving.data} />}
+    </form>
+  )
+}
+
+/** Why nothing can be saved just now, in one sentence. */
+function useObstacle({ system, token, reading, isTried }: SaveFormProps): string | undefined {
+  const me = useMe()
+  const { data: settings } = useSuspenseQuery(systemQueries.one(system))
+  if (!mayDo(me, system, 'tokens:write'))
+    return 'Saving takes a maintainer; trying is for everyone.'
+  if (token.locked) return 'This token is locked.'
+  if (settings.writeMode === 'review') return 'This system takes edits by review only.'
+  if (reading.kind === 'unread') return 'What is written is not a colour.'
+  return isTried ? undefined : 'Nothing is tried yet.'
+}

@@ -1,0 +1,43 @@
+import type { ReactNode } from 'react'
+import { NavLink } from 'react-router-dom'
+
+export interface Place {
+  readonly href: string
+  readonly text: string
+  readonly count?: number
+}
+
+/** The places of a system, over one ink line; four px of ink under the present one. */
+export function Navigation({
+  label,
+  places,
+  children,
+}: {
+  label: string
+  places: readonly Place[]
+  /** Actions of the page, at the far end. */
+  children?: ReactNode
+}) {
+  return (
+    <div className="flex flex-wrap items-end justify-between gap-x-28 border-b border-ink">
+      <nav aria-label={label}>
+        <ul className="-mb-1 flex flex-wrap gap-x-30">
+          {places.map((place) => (
+            <li key={place.href}>
+              <NavLink
+                to={place.href}
+                className="flex h-38 items-center border-b-4 border-transparent pt-4 text-ink-soft hover:text-ink aria-[current=page]:border-ink aria-[current=page]:font-semibold aria-[current=page]:text-ink"
+              >
+                {place.text}
+                {place.count !== undefined && (
+                  <span className="figures ml-6 text-12 font-normal">{place.count}</span>
+                )}
+              </NavLink>
+            </li>
+          ))}
+        </ul>
+      </nav>
+      {children !== undefined && <div className="flex items-center gap-x-22 pb-8">{children}</div>}
+    </div>
+  )
+}
