@@ -1,8 +1,8 @@
 // @ts-check
 import { mkdirSync } from 'node:fs'
 import { join } from 'node:path'
-import { build, isBuilt } from '#scripts/build.mjs'
-import { serveForDevelopment } from '#scripts/start/development.mjs'
+import { build, buildPrograms, isBuilt } from '#scripts/build.mjs'
+import { DEVELOPMENT, serveForDevelopment } from '#scripts/start/development.mjs'
 import { holdLock, LOCKS } from '#scripts/start/lock.mjs'
 import { endMariadb, ensureMariadb } from '#scripts/start/mariadb.mjs'
 import { checkNodeVersion } from '#scripts/start/node-version.mjs'
@@ -23,6 +23,9 @@ import { describeReady } from '#scripts/start/welcome.mjs'
 const START_VARIABLE = 'DYEWRIGHT_START'
 const UP_WITHIN_MS = 30_000
 
+const forDevelopment = process.argv.includes('--dev')
+const programs = forDevelopment ? DEVELOPMENT : DIST
+
 stopOnSignals()
 await runOrStop(async () => {
   const settings = readSettings(process.env)
@@ -31,8 +34,8 @@ await runOrStop(async () => {
   await step('Packages', async (say) => say(await ensurePackages({ serving: true })))
   const seed = pendingSeed(settings.databaseUrl)
   const database = await openDatabase(settings, seed)
-  const forDevelopment = process.argv.includes('--dev')
   await step('Build', async (say) => {
+    if (forDevelopment) return buildPrograms(programs)
     if (isBuilt()) return say('unchanged')
     await build()
   })
@@ -54,7 +57,11 @@ await runOrStop(async () => {
   await service.untilOk('/readyz', UP_WITHIN_MS)
   const showDemo = seeding || contents === 'demo'
   console.log(
-    describeReady({ url: settings.url, demoKeyFile: showDemo ? seed.keyFile : undefined }),
+    describeReady({
+      url: settings.url,
+      gate: join(programs, 'gate/dyewright.mjs'),
+      demoKeyFile: showDemo ? seed.keyFile : undefined,
+    }),
   )
 })
 
@@ -135,7 +142,7 @@ function serviceEnvironment({ host, port, production }, { serveUrl }, seedPendin
 /** @param {{ settings: import('#scripts/start/settings.mjs').Settings, env: NodeJS.ProcessEnv }} options */
 async function serveBuilt({ settings, env }) {
   const service = startService({
-    script: join(DIST, 'api/server.js'),
+    script: join(programs, 'api/server.js'),
     cwd: ROOT,
     url: settings.url,
     env,
@@ -154,10 +161,10 @@ async function serveBuilt({ settings, env }) {
 }
 
 /**
- * @param {string} program below dist
+ * @param {string} program below the programs' folder
  * @param {string[]} args
  * @param {NodeJS.ProcessEnv} env
  */
 function runBuilt(program, args, env) {
-  return runProgram(process.execPath, [join(DIST, program), ...args], { cwd: ROOT, env })
+  return runProgram(process.execPath, [join(programs, program), ...args], { cwd: ROOT, env })
 }

@@ -1,13 +1,13 @@
 // @ts-check
-import { cpSync } from 'node:fs'
 import { join } from 'node:path'
-import { COPIES, programOptions } from '#scripts/build.mjs'
+import { programOptions } from '#scripts/build.mjs'
 import { freePort } from '#scripts/start/free-port.mjs'
 import { DATA, ROOT } from '#scripts/start/project.mjs'
 import { startService } from '#scripts/start/service.mjs'
 import { isStopping, onStop } from '#scripts/start/shutdown.mjs'
 
-const FOLDER = join(DATA, 'development')
+/** Where the programs go; the console stays in its sources, which Vite serves. */
+export const DEVELOPMENT = join(DATA, 'development')
 const UP_WITHIN_MS = 30_000
 
 /**
@@ -18,12 +18,9 @@ const UP_WITHIN_MS = 30_000
 export async function serveForDevelopment({ settings, env }) {
   const port = await freePort()
   const url = `http://127.0.0.1:${port}`
-  for (const [to, from] of Object.entries(COPIES)) {
-    cpSync(join(ROOT, from), join(FOLDER, to), { recursive: true })
-  }
   const service = await watchService(() =>
     startService({
-      script: join(FOLDER, 'api/server.js'),
+      script: join(DEVELOPMENT, 'api/server.js'),
       cwd: ROOT,
       url,
       env: {
@@ -68,7 +65,7 @@ async function watchService(start) {
   })
   const bundle = await context({
     ...programOptions(),
-    outdir: FOLDER,
+    outdir: DEVELOPMENT,
     plugins: [
       {
         name: 'restart',

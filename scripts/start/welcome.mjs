@@ -1,17 +1,17 @@
 // @ts-check
 import { existsSync } from 'node:fs'
-import { relative } from 'node:path'
+import { join, relative } from 'node:path'
 import { ROOT } from '#scripts/start/project.mjs'
 import { demoPeople } from '#scripts/start/seeding.mjs'
 
 /**
- * @param {{ url: string, demoKeyFile: string | undefined }} options no file where there is no demo
+ * @param {{ url: string, gate: string, demoKeyFile: string | undefined }} options no key where there is no demo
  * @returns {string} what a person does next
  */
-export function describeReady({ url, demoKeyFile }) {
+export function describeReady({ url, gate, demoKeyFile }) {
   const ready = ['', `Dyewright is ready: ${url}`]
   if (demoKeyFile === undefined) return ready.join('\n')
-  const commands = existsSync(demoKeyFile) ? commandLines(url, demoKeyFile) : []
+  const commands = existsSync(demoKeyFile) ? commandLines({ url, gate, demoKeyFile }) : []
   return [...ready, '', 'Sign in as', ...peopleLines(), ...commands, '', 'Ctrl-C stops it.'].join(
     '\n',
   )
@@ -26,20 +26,21 @@ function peopleLines() {
   ]
 }
 
-/**
- * @param {string} url
- * @param {string} keyFile
- */
-function commandLines(url, keyFile) {
-  const here = relative(process.cwd(), ROOT) || '.'
-  const key = `$(cat ${relative(process.cwd(), keyFile)})`
-  const candidate = `${here}/scripts/demo/breaching-change.tokens.json`
+/** @param {{ url: string, gate: string, demoKeyFile: string }} options */
+function commandLines({ url, gate, demoKeyFile }) {
+  const key = `$(cat ${shown(demoKeyFile)})`
+  const candidate = shown(join(ROOT, 'scripts/demo/breaching-change.tokens.json'))
   return [
     '',
     'Ask for a theme',
     `  curl -H "Authorization: Bearer ${key}" ${url}/v1/systems/larkhaven/themes/dark.css`,
     '',
     'Let the gate judge a change that breaches (fix.tokens.json beside it passes)',
-    `  DYEWRIGHT_KEY=${key} node ${here}/dist/gate/dyewright.mjs gate --url ${url} --system larkhaven --new-only --tokens ${candidate}`,
+    `  DYEWRIGHT_KEY=${key} node ${shown(gate)} gate --url ${url} --system larkhaven --new-only --tokens ${candidate}`,
   ]
+}
+
+/** @param {string} path */
+function shown(path) {
+  return relative(process.cwd(), path)
 }
