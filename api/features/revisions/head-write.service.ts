@@ -17,7 +17,7 @@ import { type Effect, effectOf } from './write-effect.ts'
 import type { WriteGuards } from './write-guards.ts'
 
 export type WriteRepositories = 'heads' | 'versions' | 'breaches' | 'audit' | 'systems'
-type Writing = Pick<Repositories, WriteRepositories>
+export type Writing = Pick<Repositories, WriteRepositories>
 
 export interface HeadWriteDeps {
   readonly heads: HeadsService
@@ -34,10 +34,13 @@ export interface HeadWrite {
   readonly message: string | undefined
   /** Edits or a refusal, from the head alone: it may be asked again under the lock. */
   readonly decide: (head: Head) => Decision
-  /** The representation that an `If-Match` is compared with; throws `not-found` where there is none. */
+  /** What the edit is meant for, and what stands there now. */
   readonly expected?: {
-    readonly ifMatch: IfMatch
-    readonly current: (head: Head, reading: Writing) => Promise<Tagged> | Tagged
+    readonly ifMatch: IfMatch | 'nothing-there'
+    readonly current: (
+      head: Head,
+      reading: Writing,
+    ) => Promise<Tagged | undefined> | Tagged | undefined
   }
   readonly audit: { readonly action: string; readonly subject: string }
   /** Handling that belongs to the same call: no part of a revision, and audited by itself. */
@@ -93,10 +96,7 @@ async function planOn(
   { expected, decide }: HeadWrite,
   { head, reading }: { readonly head: Head; readonly reading: Writing },
 ): Promise<Plan> {
-  if (expected) {
-    const current = await expected.current(head, reading)
-    if (!guards.isMeantFor(expected.ifMatch, current.etag)) throw preconditionFailed(current)
-  }
+  if (expected) await compare(guards, expected, { head, reading })
   const decision = decide(head)
   if (!decision.ok) throw refusalError(decision.refusal)
   const { edits } = decision
@@ -118,6 +118,19 @@ async function planOn(
     verdictOf(evaluation, { include: 'not-pass' }),
   ) as [Verdict, Verdict]
   return { head, next: { head: edited.head, changes, before, after } }
+}
+
+async function compare(
+  guards: WriteGuards,
+  { ifMatch, current }: NonNullable<HeadWrite['expected']>,
+  { head, reading }: { readonly head: Head; readonly reading: Writing },
+): Promise<void> {
+  const standing = await current(head, reading)
+  const holds =
+    standing === undefined || ifMatch === 'nothing-there'
+      ? (standing === undefined) === (ifMatch === 'nothing-there')
+      : guards.isMeantFor(ifMatch, standing.etag)
+  if (!holds) throw preconditionFailed(standing ?? null)
 }
 
 async function writeUnderLock(

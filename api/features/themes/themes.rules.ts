@@ -62,7 +62,12 @@ export function decidePatch(
 }
 
 /** The removal of a theme that nothing else stands on, with the values it set. */
-export function decideDelete({ model }: SystemIndex, theme: GovernedTheme): Decision {
+export function decideDelete(
+  { model }: SystemIndex,
+  theme: GovernedTheme,
+  editsAll: boolean,
+): Decision {
+  if (!editsAll) return leadRefusal
   const isBase = model.themes[0]?.id === theme.id
   const children = model.themes.filter(({ id, from }) =>
     isBase ? id !== theme.id : from === theme.id,
@@ -93,6 +98,11 @@ export function decideDelete({ model }: SystemIndex, theme: GovernedTheme): Deci
   }
 }
 
+const leadRefusal = refuse(
+  'role-missing',
+  'A maintainer edits themes; an accessibility-lead level and gating only',
+)
+
 type ThemeMembers = Omit<PutThemeBody, 'message' | 'values'>
 interface ThemeInput {
   readonly members: ThemeMembers
@@ -107,8 +117,7 @@ function decideTheme(index: SystemIndex, edit: ThemeEdit, input: ThemeInput): De
   const tokens = readTokens(index, edit, { values: input.values, reading })
   if (reading.faults.length > 0) return refuseFaults(reading.faults)
   if (!edit.editsAll && (tokens.length > 0 || reaches(edit.before, theme))) {
-    const detail = 'A maintainer edits themes; an accessibility-lead level and gating only'
-    return refuse('role-missing', detail)
+    return leadRefusal
   }
   const locked = tokens.filter((token) => token.locked).map(({ name }) => name)
   if (locked.length > 0) return refuse('token-locked', `Locked: ${locked.join(', ')}`)

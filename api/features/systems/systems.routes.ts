@@ -1,0 +1,21 @@
+import { type ApiRouter, mount } from '#api/http/route.ts'
+import {
+  createSystem,
+  getSystem,
+  listSystems,
+  patchSystem,
+} from '#shared/contracts/systems.contract.ts'
+import type { SystemsService } from './systems.service.ts'
+
+export function mountSystems(router: ApiRouter, systems: SystemsService): void {
+  mount(router, listSystems, async ({ caller }) => ({
+    body: { items: await systems.list(caller) },
+  }))
+  mount(router, createSystem, async ({ caller, body }) => ({
+    body: await systems.create(caller, body),
+  }))
+  mount(router, getSystem, async ({ system }) => ({ body: await systems.get(system) }))
+  mount(router, patchSystem, async ({ system, ifMatch, body }) => ({
+    body: await systems.patch(system, ifMatch, body),
+  }))
+}
