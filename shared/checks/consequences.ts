@@ -1,5 +1,5 @@
 import { type Entry, toFinding, visitEntries } from './entries.ts'
-import type { Evaluation, PairMeasure, Subject } from './evaluation.ts'
+import type { Evaluation, Subject } from './evaluation.ts'
 import { createJudge, type Judge, type JudgementOptions } from './judgement.ts'
 import { identityOfRow } from './measured-row.ts'
 import type { Finding } from './model.ts'
@@ -40,10 +40,6 @@ function* matchedSubjects(
   for (const subject of rest.values()) yield [subject, undefined]
 }
 
-function measuresOf(evaluation: Evaluation, subject: Subject | undefined): PairMeasure[] {
-  return (subject?.members ?? []).map((position) => evaluation.measures[position]!)
-}
-
 function isSameBytes(first: Uint8Array | undefined, second: Uint8Array | undefined): boolean {
   if (first === second) return true
   return first !== undefined && second !== undefined && first.join() === second.join()
@@ -62,16 +58,20 @@ function areThemesSame(before: Evaluation, after: Evaluation): boolean {
   return before.resolved.model.themes === after.resolved.model.themes
 }
 
+/** Whether both sides share every measurement of a subject, and no group of theirs moved. */
 function isUntouched(
-  before: readonly PairMeasure[],
-  after: readonly PairMeasure[],
+  sides: { readonly before: Side; readonly after: Side },
+  [earlier, later]: readonly [Subject | undefined, Subject | undefined],
   moved: ReadonlySet<string>,
 ): boolean {
-  return (
-    before.length === after.length &&
-    before.every((measure, at) => measure === after[at]) &&
-    !before.some(({ pair }) => pair.anyOf !== undefined && moved.has(pair.anyOf))
-  )
+  if (earlier === undefined || later === undefined) return false
+  if (earlier.members.length !== later.members.length) return false
+  for (let at = 0; at < earlier.members.length; at++) {
+    const measure = sides.before.evaluation.measures[earlier.members[at]!]!
+    if (measure !== sides.after.evaluation.measures[later.members[at]!]) return false
+    if (measure.pair.anyOf !== undefined && moved.has(measure.pair.anyOf)) return false
+  }
+  return true
 }
 
 function entriesOf(side: Side, subject: Subject | undefined): Map<string, Entry> {
@@ -148,8 +148,7 @@ export function consequences(
   const canSkip = areThemesSame(before, after)
   const found: Consequence[] = []
   for (const pair of matchedSubjects(before, after)) {
-    const [earlier, later] = [measuresOf(before, pair[0]), measuresOf(after, pair[1])]
-    if (canSkip && isUntouched(earlier, later, moved)) continue
+    if (canSkip && isUntouched(sides, pair, moved)) continue
     found.push(...compareSubject(sides, pair))
   }
   return found.toSorted(

@@ -19,8 +19,8 @@ export interface ModelGraph {
   /** By theme position: token position of its ground and ink. */
   readonly grounds: readonly number[]
   readonly inks: readonly number[]
-  /** By token position: the states it lists or has from its target. */
-  readonly states: readonly (readonly DerivedState[])[]
+  /** The states that the token at a position lists, or has from its target. */
+  statesAt(position: number): readonly DerivedState[]
 }
 
 /** The position of every theme's parent: the base has none, absent means the base. */
@@ -31,36 +31,55 @@ function parentsOf(model: SystemModel, themeAt: ReadonlyMap<string, number>): nu
   })
 }
 
-/** An alias that lists no states has its target's; the chain is walked once for all on it. */
-function listedStates(
+type StatesAt = (position: number) => readonly DerivedState[] | undefined
+
+/** An alias that lists no states has its target's; a chain is walked once for all on it. */
+function createStatesAt(
   tokens: readonly TokenModel[],
   tokenAt: ReadonlyMap<string, number>,
-): (readonly DerivedState[])[] {
-  const listed: (readonly DerivedState[] | undefined)[] = new Array(tokens.length)
-  for (let start = 0; start < tokens.length; start++) {
+  knownAt: StatesAt,
+): ModelGraph['statesAt'] {
+  const found: (readonly DerivedState[] | undefined)[] = new Array(tokens.length)
+  return (position) => {
     const path: number[] = []
-    let at: number | undefined = start
+    let at: number | undefined = position
     let states: readonly DerivedState[] = []
-    while (at !== undefined && listed[at] === undefined) {
+    while (at !== undefined) {
       const token: TokenModel = tokens[at]!
-      path.push(at)
-      listed[at] = []
-      if (token.states.length > 0) {
-        states = token.states
+      const known = found[at] ?? knownAt(at)
+      const listed = known ?? (token.states.length > 0 ? token.states : undefined)
+      if (listed !== undefined) {
+        states = listed
+        if (known === undefined) found[at] = listed
         break
       }
+      path.push(at)
+      found[at] = []
       at = token.value.kind === 'alias' ? tokenAt.get(token.value.token) : undefined
-      if (at !== undefined && listed[at] !== undefined) states = listed[at]!
     }
-    for (const position of path) listed[position] = states
+    for (const passed of path) found[passed] = states
+    return states
   }
-  return listed.map((states) => states ?? [])
+}
+
+/** What is known of a model's tokens before it is read. */
+export interface KnownTokens {
+  /** Present where the tokens are the same ones in the same order. */
+  readonly tokenAt?: ReadonlyMap<string, number>
+  readonly statesAt: StatesAt
+}
+
+/** Position of each item by id. */
+export function positionsOf(
+  items: readonly { readonly id: string }[],
+): ReadonlyMap<string, number> {
+  return new Map(items.map(({ id }, position) => [id, position]))
 }
 
 /** Reads a model into positions; the references it holds may be missing. */
-export function createModelGraph(model: SystemModel): ModelGraph {
-  const tokenAt = new Map(model.tokens.map((token, position) => [token.id, position]))
-  const themeAt = new Map(model.themes.map((theme, position) => [theme.id, position]))
+export function createModelGraph(model: SystemModel, known?: KnownTokens): ModelGraph {
+  const tokenAt = known?.tokenAt ?? positionsOf(model.tokens)
+  const themeAt = positionsOf(model.themes)
   return {
     model,
     rules: createRuleScopes(model),
@@ -69,7 +88,7 @@ export function createModelGraph(model: SystemModel): ModelGraph {
     parents: parentsOf(model, themeAt),
     grounds: model.themes.map((theme) => tokenAt.get(theme.ground) ?? -1),
     inks: model.themes.map((theme) => tokenAt.get(theme.ink) ?? -1),
-    states: listedStates(model.tokens, tokenAt),
+    statesAt: createStatesAt(model.tokens, tokenAt, known?.statesAt ?? (() => undefined)),
   }
 }
 

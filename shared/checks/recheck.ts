@@ -50,57 +50,70 @@ function isSameToken(before: ResolvedToken | undefined, after: ResolvedToken | u
   )
 }
 
-/** Measures again what shows a token that moved, and what is declared anew; all else is shared. */
-function measureAgain(
-  previous: Evaluation,
-  resolved: ResolvedSystem,
-  moved: ReadonlySet<string>,
-): readonly PairMeasure[] {
-  const before = new Map<PairModel, PairMeasure>()
-  const { pairs } = resolved.model
-  const arePairsSame = pairs === previous.resolved.model.pairs
-  if (arePairsSame) {
-    if (moved.size === 0) return previous.measures
-    const measures = [...previous.measures]
-    for (const id of moved) {
-      for (const position of previous.pairsOf.get(id) ?? []) {
-        if (measures[position] !== previous.measures[position]) continue
-        measures[position] = measurePair(resolved, pairs[position]!)
-      }
-    }
-    return measures
-  }
-  for (const measure of previous.measures) before.set(measure.pair, measure)
-  const showsMoved = (pair: PairModel) =>
-    moved.has(pair.foreground) ||
-    moved.has(pair.background) ||
-    (pair.backdrop !== 'unknown' && pair.backdrop.some((id) => moved.has(id)))
-  return pairs.map((pair) => {
-    const known = before.get(pair)
-    return known === undefined || showsMoved(pair) ? measurePair(resolved, pair) : known
-  })
+/** Measures in the order of pairs, and the names of `anyOf` groups in which one came or went. */
+interface Remeasured {
+  readonly measures: readonly PairMeasure[]
+  readonly groups: ReadonlySet<string>
 }
 
-/** Groups whose members were measured again, declared or taken away. */
+function noteGroup(groups: Set<string>, ...measures: readonly PairMeasure[]): void {
+  for (const { pair } of measures) if (pair.anyOf !== undefined) groups.add(pair.anyOf)
+}
+
+/** Measures again what shows a token that moved, where the pairs are the same ones. */
+function measureMoved(
+  previous: Evaluation,
+  resolved: ResolvedSystem,
+  moved: readonly string[],
+): Remeasured {
+  const groups = new Set<string>()
+  const positions = new Set(moved.flatMap((id) => previous.pairsOf.get(id) ?? []))
+  if (positions.size === 0) return { measures: previous.measures, groups }
+  const measures = [...previous.measures]
+  for (const position of positions) {
+    measures[position] = measurePair(resolved, resolved.model.pairs[position]!)
+    noteGroup(groups, measures[position])
+  }
+  return { measures, groups }
+}
+
+/** Measures again what shows a token that moved, and what is declared anew. */
+function measurePairs(
+  previous: Evaluation,
+  resolved: ResolvedSystem,
+  moved: readonly string[],
+): Remeasured {
+  const groups = new Set<string>()
+  const before = new Map<PairModel, PairMeasure>()
+  for (const measure of previous.measures) before.set(measure.pair, measure)
+  for (const position of moved.flatMap((id) => previous.pairsOf.get(id) ?? [])) {
+    before.delete(previous.measures[position]!.pair)
+  }
+  const measures = resolved.model.pairs.map((pair) => {
+    const known = before.get(pair)
+    if (known !== undefined) return known
+    const measure = measurePair(resolved, pair)
+    noteGroup(groups, measure)
+    return measure
+  })
+  const kept = new Set(measures)
+  noteGroup(groups, ...previous.measures.filter((measure) => !kept.has(measure)))
+  return { measures, groups }
+}
+
+/** Lays the groups in which a member was measured again, declared or taken away over the others. */
 function anyOfAgain(
   previous: Evaluation,
   resolved: ResolvedSystem,
-  measures: readonly PairMeasure[],
-): ReadonlyMap<string, Uint8Array> {
-  const before = new Set(previous.measures)
-  const after = new Set(measures)
-  const names = new Set<string>()
-  for (const measure of [...previous.measures, ...measures]) {
-    const { anyOf } = measure.pair
-    if (anyOf !== undefined && !(before.has(measure) && after.has(measure))) names.add(anyOf)
+  { measures, groups }: Remeasured,
+): Evaluation['anyOf'] {
+  if (groups.size === 0) return previous.anyOf
+  const anyOf = new Map(previous.anyOf)
+  for (const name of groups) anyOf.delete(name)
+  for (const [name, met] of meetAnyOf(measures, resolved.model.themes.length, groups)) {
+    anyOf.set(name, met)
   }
-  if (names.size === 0) return previous.anyOf
-  const groups = new Map(previous.anyOf)
-  for (const name of names) groups.delete(name)
-  for (const [name, met] of meetAnyOf(measures, resolved.model.themes.length, names)) {
-    groups.set(name, met)
-  }
-  return groups
+  return anyOf
 }
 
 function advisoriesAgain(
@@ -138,6 +151,21 @@ function movesReferences(previous: Evaluation, edits: SystemEdits): boolean {
   })
 }
 
+function hasSameTokens(before: ResolvedSystem, edits: SystemEdits): boolean {
+  const { put = [], remove = [] } = edits.tokens ?? {}
+  return remove.length === 0 && put.every(({ id }) => before.tokens.has(id))
+}
+
+/** Pairs put by an edit, and pairs that are left though a token of theirs is removed. */
+function exposedPairs(previous: Evaluation, model: SystemModel, edits: SystemEdits): PairModel[] {
+  const removed = edits.tokens?.remove ?? []
+  const left = removed
+    .flatMap((id) => previous.pairsOf.get(id) ?? [])
+    .map((position) => previous.measures[position]!.pair)
+    .filter((pair) => model.pairs.includes(pair))
+  return [...(edits.pairs?.put ?? []), ...left]
+}
+
 /**
  * Checks an edited system again: only what depends on the edits is computed and measured, the rest is shared
  * with the evaluation given, which stays as it was. Equal, finding by finding, to a full check of the edited model.
@@ -150,27 +178,24 @@ export function recheck(previous: Evaluation, edits: SystemEdits): Checked {
   for (const theme of model.themes) {
     if (touched.has(theme.ground) || touched.has(theme.ink)) return checkSystem(model)
   }
-  const exposed = new Set(edits.pairs?.put)
-  for (const id of edits.tokens?.remove ?? []) {
-    for (const position of previous.pairsOf.get(id) ?? []) {
-      const pair = before.model.pairs[position]!
-      if (model.pairs.includes(pair)) exposed.add(pair)
-    }
-  }
-  const resolved = resolveAgain(before, model, { tokens: touched, pairs: [...exposed] })
+  const resolved = resolveAgain(before, model, {
+    tokens: touched,
+    pairs: exposedPairs(previous, model, edits),
+    hasSameTokens: hasSameTokens(before, edits),
+  })
   if (resolved === undefined) return checkSystem(model)
-  const moved = new Set(
-    [...touched].filter((id) => !isSameToken(before.tokens.get(id), resolved.tokens.get(id))),
+  const moved = [...touched].filter(
+    (id) => !isSameToken(before.tokens.get(id), resolved.tokens.get(id)),
   )
   const arePairsSame = model.pairs === before.model.pairs
-  const measures = measureAgain(previous, resolved, moved)
+  const measured = (arePairsSame ? measureMoved : measurePairs)(previous, resolved, moved)
   return {
     ok: true,
     evaluation: {
       resolved,
-      measures,
+      measures: measured.measures,
       subjects: arePairsSame ? previous.subjects : toSubjects(model.pairs),
-      anyOf: anyOfAgain(previous, resolved, measures),
+      anyOf: anyOfAgain(previous, resolved, measured),
       advisories: advisoriesAgain(previous, resolved, touched),
       dependents: movesReferences(previous, edits) ? dependentsOf(resolved) : previous.dependents,
       pairsOf: arePairsSame ? previous.pairsOf : toPairsOf(model.pairs),

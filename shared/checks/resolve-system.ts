@@ -1,7 +1,7 @@
 import { sameOklch } from './color-arithmetic.ts'
 import { editFaults, modelFaults } from './model-faults.ts'
 import { createModelGraph, type ModelGraph } from './model-graph.ts'
-import type { ModelFault, PairModel, SystemModel } from './model.ts'
+import type { DerivedState, ModelFault, PairModel, SystemModel } from './model.ts'
 import {
   type ResolvedCell,
   type ResolvedSystem,
@@ -24,10 +24,10 @@ function barsThePass(fault: ModelFault): boolean {
   return fault.code === 'theme-cycle'
 }
 
-function spansOf(graph: ModelGraph, cells: readonly Row[]): ModelFault[] {
+function spansOf(graph: ModelGraph, rows: readonly (Row | undefined)[]): ModelFault[] {
   return graph.model.themes.flatMap((theme, position) => {
-    const ground = cells[graph.grounds[position]!]?.[position * STATE_COUNT]
-    const ink = cells[graph.inks[position]!]?.[position * STATE_COUNT]
+    const ground = rows[graph.grounds[position]!]?.[position * STATE_COUNT]
+    const ink = rows[graph.inks[position]!]?.[position * STATE_COUNT]
     return ground && ink ? spanFaults(theme, ground.color.rendered, ink.color.rendered) : []
   })
 }
@@ -40,9 +40,14 @@ function completeRow(row: Row): readonly ResolvedCell[] {
 function toResolvedToken(graph: ModelGraph, position: number, row: Row): ResolvedToken {
   return {
     token: graph.model.tokens[position]!,
-    states: ['rest', ...graph.states[position]!],
+    states: ['rest', ...graph.statesAt(position)],
     cells: completeRow(row),
   }
+}
+
+/** A full pass computes every token, so none is asked for. */
+function noKnownRow(token: number): never {
+  throw new TypeError(`Token at ${token} is not computed`)
 }
 
 /**
@@ -58,14 +63,15 @@ export function resolveSystem(model: SystemModel): Resolution {
   const faults = modelFaults(graph)
   if (faults.some(barsThePass)) return { ok: false, faults }
   const all = model.tokens.map((_, position) => position)
-  const pass = passValues(graph, all, [])
-  faults.push(...pass.faults, ...spansOf(graph, pass.cells))
+  const pass = passValues(graph, all, noKnownRow)
+  faults.push(...pass.faults, ...spansOf(graph, pass.rows))
   if (faults.length > 0) return { ok: false, faults }
   const tokens = new Map<string, ResolvedToken>()
   for (const [position, token] of model.tokens.entries()) {
-    tokens.set(token.id, toResolvedToken(graph, position, pass.cells[position]!))
+    tokens.set(token.id, toResolvedToken(graph, position, pass.rows[position]!))
   }
-  return { ok: true, resolved: { model, themes: graph.themeAt, tokens } }
+  const { themeAt: themes, tokenAt: positions } = graph
+  return { ok: true, resolved: { model, themes, positions, tokens } }
 }
 
 /** By token id, the tokens whose values or rules name it. Ground and ink, which all depend on, are left out. */
@@ -83,49 +89,57 @@ export function dependentsOf(resolved: ResolvedSystem): Map<string, readonly str
 }
 
 /** Keeps the previous colour objects where a value came out the same, so that nothing is measured again for it. */
-function keepSameColors(
-  row: readonly ResolvedCell[],
-  before: ResolvedToken,
-): readonly ResolvedCell[] {
-  return row.map((cell, offset) => {
+function keepSameColors(token: ResolvedToken, before: ResolvedToken): ResolvedToken {
+  const cells = token.cells.map((cell, offset) => {
     const previous = before.cells[offset]!
     const isSame = sameOklch(cell.color.oklch, previous.color.oklch)
     return isSame ? { ...cell, color: previous.color } : cell
   })
+  return { ...token, cells }
+}
+
+/** What a re-check computes again. */
+export interface AgainTasks {
+  /** Ids of all tokens whose value can have moved, removed ones too; no theme's ground or ink is among them. */
+  readonly tokens: ReadonlySet<string>
+  /** Pairs whose references can have gone. */
+  readonly pairs: readonly PairModel[]
+  /** Whether the model has the same tokens in the same order. */
+  readonly hasSameTokens: boolean
 }
 
 /**
  * Computes some tokens again over a system that is resolved already; the rest is shared with it.
- * @param again.tokens ids of all whose value can have moved; no theme's ground or ink is among them
- * @param again.pairs pairs whose references can have gone
  * @returns undefined where the edited model has a fault, for the full pass to find them all
  */
 export function resolveAgain(
   previous: ResolvedSystem,
   model: SystemModel,
-  again: { readonly tokens: ReadonlySet<string>; readonly pairs: readonly PairModel[] },
+  again: AgainTasks,
 ): ResolvedSystem | undefined {
-  const graph = createModelGraph(model)
-  const positions: number[] = []
-  const known = model.tokens.map((token, position) => {
-    if (!again.tokens.has(token.id)) return previous.tokens.get(token.id)!.cells
-    positions.push(position)
-    return undefined
+  const knownAt = (position: number) => {
+    const { id } = model.tokens[position]!
+    return again.tokens.has(id) ? undefined : previous.tokens.get(id)
+  }
+  const graph = createModelGraph(model, {
+    ...(again.hasSameTokens ? { tokenAt: previous.positions } : {}),
+    statesAt: (position) => knownAt(position)?.states.slice(1) as DerivedState[] | undefined,
   })
+  const positions = [...again.tokens]
+    .map((id) => graph.tokenAt.get(id))
+    .filter((position) => position !== undefined)
+    .sort((a, b) => a - b)
   const touched = positions.map((position) => model.tokens[position]!)
   if (editFaults(graph, { tokens: touched, pairs: again.pairs }).length > 0) return undefined
-  const pass = passValues(graph, positions, known)
+  const pass = passValues(graph, positions, (position) => knownAt(position)!.cells)
   if (pass.faults.length > 0) return undefined
-  const tokens = new Map<string, ResolvedToken>()
-  for (const [position, token] of model.tokens.entries()) {
-    const before = previous.tokens.get(token.id)
-    if (known[position] !== undefined) {
-      tokens.set(token.id, before!)
-      continue
-    }
-    const resolved = toResolvedToken(graph, position, pass.cells[position]!)
-    const cells = before ? keepSameColors(resolved.cells, before) : resolved.cells
-    tokens.set(token.id, { ...resolved, cells })
+  const tokens = new Map(previous.tokens)
+  for (const id of again.tokens) if (!graph.tokenAt.has(id)) tokens.delete(id)
+  for (const [at, position] of positions.entries()) {
+    const { id } = touched[at]!
+    const resolved = toResolvedToken(graph, position, pass.rows[position]!)
+    const before = previous.tokens.get(id)
+    tokens.set(id, before ? keepSameColors(resolved, before) : resolved)
   }
-  return { model, themes: graph.themeAt, tokens }
+  return { model, themes: graph.themeAt, positions: graph.tokenAt, tokens }
 }

@@ -34,6 +34,8 @@ export interface ResolvedSystem {
   readonly model: SystemModel
   /** Position of each theme id in `model.themes`. */
   readonly themes: ReadonlyMap<string, number>
+  /** Position of each token id in `model.tokens`. */
+  readonly positions: ReadonlyMap<string, number>
   /** By token id, in ledger order. */
   readonly tokens: ReadonlyMap<string, ResolvedToken>
 }

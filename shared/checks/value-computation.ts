@@ -11,8 +11,13 @@ import { referenceAt, type ValuePlan } from './value-plan.ts'
 /** What a pass has computed so far. */
 export interface ValuePass {
   readonly graph: ModelGraph
-  /** By token position, then theme position × STATE_COUNT + state position; undefined where not computed. */
-  readonly cells: (readonly (ResolvedCell | undefined)[])[]
+  /**
+   * By token position, for those that are computed, then by theme position × STATE_COUNT + state position;
+   * undefined where not yet computed, or where a value hangs on a missing or cyclic reference.
+   */
+  readonly rows: readonly ((ResolvedCell | undefined)[] | undefined)[]
+  /** Cells of a token that is not computed again. */
+  knownRow(token: number): readonly ResolvedCell[]
   /** By token position × themes + theme position. */
   readonly directions: Map<number, StepDirection>
 }
@@ -24,7 +29,8 @@ function cellAt(
   theme: number,
   state: State,
 ): ResolvedCell | undefined {
-  return pass.cells[token]?.[theme * STATE_COUNT + stateAt(state)]
+  const row = pass.rows[token] ?? pass.knownRow(token)
+  return row[theme * STATE_COUNT + stateAt(state)]
 }
 
 function restColor(pass: ValuePass, token: number, theme: number): ResolvedColor | undefined {

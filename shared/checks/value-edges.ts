@@ -101,7 +101,7 @@ export function namedTokens(graph: ModelGraph, token: TokenModel, position: numb
     const { against } = graph.rules.themeRuleOf(token, theme.id)
     if (typeof against === 'object') named.add(against.token)
   }
-  for (const state of graph.states[position]!) {
+  for (const state of graph.statesAt(position)) {
     const { reference } = graph.rules.stateRuleOf(token, state).towards
     if (typeof reference === 'object') named.add(reference.token)
   }

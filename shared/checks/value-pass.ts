@@ -15,8 +15,7 @@ const DONE = 2
 
 /** A walk over the nodes: what is open is the path from a root to where it stands. */
 interface Walk extends ValuePass {
-  /** The rows of `cells` that this walk fills. */
-  readonly rows: (ResolvedCell | undefined)[][]
+  readonly rows: ((ResolvedCell | undefined)[] | undefined)[]
   /** Nodes a token. */
   readonly width: number
   readonly progress: Uint8Array
@@ -78,6 +77,7 @@ function openNode(walk: Walk, stack: number[], place: ValuePlace): void {
   progress[place.node] = OPEN
   for (const needed of edgesOf(graph, plan, place)) {
     if (needed < 0 || progress[needed] === DONE) continue
+    if (walk.rows[Math.floor(needed / walk.width)] === undefined) continue // Known already.
     if (progress[needed] === OPEN) reportCycle(walk, stack, needed)
     else stack.push(needed)
   }
@@ -105,20 +105,19 @@ function walkFrom(walk: Walk, root: number): void {
 /** Nodes of a token in the order of themes and states. */
 function nodesOf(graph: ModelGraph, token: number): number[] {
   const first = token * graph.parents.length * STATE_COUNT
-  const offsets = [0, ...graph.states[token]!.map(stateAt)]
+  const offsets = [0, ...graph.statesAt(token).map(stateAt)]
   return graph.parents.flatMap((_, theme) =>
     offsets.map((offset) => first + theme * STATE_COUNT + offset),
   )
 }
 
-function createWalk(graph: ModelGraph): Walk {
+function createWalk(graph: ModelGraph, knownRow: ValuePass['knownRow']): Walk {
   const width = graph.parents.length * STATE_COUNT
   const tokens = graph.model.tokens.length
-  const rows: (ResolvedCell | undefined)[][] = new Array(tokens)
   return {
     graph,
-    cells: rows,
-    rows,
+    rows: new Array(tokens),
+    knownRow,
     width,
     directions: new Map(),
     progress: new Uint8Array(tokens * width),
@@ -131,26 +130,20 @@ function createWalk(graph: ModelGraph): Walk {
 
 /**
  * Computes the values of some tokens in one topological pass, without recursion.
- * @param known cells by token position, for the tokens that are not computed; left untouched
+ * @param tokens positions
+ * @param knownRow cells of any other token, read where one is needed
+ * @returns rows by position, for the tokens asked for
  */
 export function passValues(
   graph: ModelGraph,
   tokens: readonly number[],
-  known: readonly (readonly ResolvedCell[] | undefined)[],
-): {
-  readonly cells: readonly (readonly (ResolvedCell | undefined)[])[]
-  readonly faults: readonly ModelFault[]
-} {
-  const walk = createWalk(graph)
-  for (const [token, cells] of known.entries()) {
-    if (cells === undefined) continue
-    walk.cells[token] = cells
-    walk.progress.fill(DONE, token * walk.width, (token + 1) * walk.width)
-  }
+  knownRow: ValuePass['knownRow'],
+): { readonly rows: ValuePass['rows']; readonly faults: readonly ModelFault[] } {
+  const walk = createWalk(graph, knownRow)
   for (const token of tokens) {
     const model = graph.model.tokens[token]!
     walk.rows[token] = new Array(walk.width).fill(undefined)
-    walk.largest[token] = largestStep(graph.states[token]!, (state) =>
+    walk.largest[token] = largestStep(graph.statesAt(token), (state) =>
       graph.rules.stateRuleOf(model, state),
     )
   }
@@ -159,5 +152,5 @@ export function passValues(
       if (walk.progress[node] === UNSEEN) walkFrom(walk, node)
     }
   }
-  return { cells: walk.cells, faults: walk.faults }
+  return { rows: walk.rows, faults: walk.faults }
 }

@@ -31,7 +31,8 @@ export function nodeAt(graph: ModelGraph, token: number, theme: number, state: S
 /** The state in which a target is read: its own where it lists it, else rest. */
 function stateOfTarget(graph: ModelGraph, target: string, state: State): State {
   const position = graph.tokenAt.get(target)
-  const lists = position !== undefined && graph.states[position]!.some((listed) => listed === state)
+  const lists =
+    position !== undefined && graph.statesAt(position).some((listed) => listed === state)
   return lists ? state : 'rest'
 }
 

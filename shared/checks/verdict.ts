@@ -8,7 +8,7 @@ import type { Finding, Outcome, Verdict } from './model.ts'
 /** How an evaluation is judged and how much of it is written out. */
 export interface VerdictOptions extends JudgementOptions {
   /** Which findings are written out, default `all`; counts cover all of them either way. */
-  readonly include?: 'all' | 'not-pass'
+  readonly include?: 'all' | 'not-pass' | 'none'
 }
 
 /**
@@ -18,7 +18,7 @@ export interface VerdictOptions extends JudgementOptions {
 export function verdictOf(evaluation: Evaluation, options: VerdictOptions = {}): Verdict {
   const counts: Record<Outcome, number> = { pass: 0, breach: 0, waived: 0, exempt: 0, known: 0 }
   const findings: Finding[] = []
-  const isShort = options.include === 'not-pass'
+  const { include = 'all' } = options
   const judge = createJudge(evaluation, options)
   let fails = false
   for (const subject of evaluation.subjects) {
@@ -26,7 +26,7 @@ export function verdictOf(evaluation: Evaluation, options: VerdictOptions = {}):
       const { outcome } = judgement
       counts[outcome]++
       if (outcome === 'breach' && themeOfRow(evaluation, measure, row).gating) fails = true
-      if (isShort && outcome === 'pass') return
+      if (include === 'none' || (include === 'not-pass' && outcome === 'pass')) return
       findings.push(
         toFinding(evaluation, entry ?? { measure, row, judgement, declared: [measure] }),
       )
