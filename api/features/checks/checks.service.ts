@@ -1,0 +1,134 @@
+import * as z from 'zod'
+import type { Caller, SystemAccess } from '#api/caller.ts'
+import { AppError } from '#api/errors.ts'
+import type { Head, HeadsService } from '#api/features/revisions/heads.service.ts'
+import { decodeCursor, encodeCursor } from '#api/paging.ts'
+import type { Clock } from '#api/platform/clock.ts'
+import type { NewId } from '#api/platform/ids.ts'
+import type { Transact } from '#api/repositories.ts'
+import type { Evaluation } from '#shared/checks/evaluation.ts'
+import type { Verdict } from '#shared/checks/model.ts'
+import type { CheckWire, createCheck, listChecks } from '#shared/contracts/checks.contract.ts'
+import { namesIn, presentAdvisory, presentFinding } from '#shared/contracts/present-finding.ts'
+import type { AnswerOf, ParsedOf } from '#shared/contracts/route.ts'
+import { presentCheckSummary } from './checks.presenter.ts'
+import type { ChecksReads } from './checks.reads.ts'
+import type { CheckRow, NewCheckRow } from './checks.repository.ts'
+import { type KeptFindings, packFindings, unpackFindings } from './findings-archive.ts'
+import { judgeCandidate, measureCandidate } from './measure-candidate.rules.ts'
+
+export interface ChecksDeps {
+  readonly heads: Pick<HeadsService, 'current'>
+  readonly reads: ChecksReads
+  readonly transact: Transact<'checks'>
+  readonly newId: NewId
+  readonly clock: Clock
+}
+
+export type ChecksService = ReturnType<typeof createChecksService>
+type Asked = Pick<ParsedOf<typeof createCheck>, 'body' | 'query'>
+type ListQuery = ParsedOf<typeof listChecks>['query']
+
+const placeSchema = z.strictObject({ number: z.int().min(1) })
+
+/** Measures candidates against the head, and keeps what came out. */
+export function createChecksService(deps: ChecksDeps) {
+  const { heads, reads, transact, newId, clock } = deps
+  return {
+    /** Answers a verdict: a candidate that fails is no refusal. */
+    async create(system: SystemAccess, { body, query }: Asked): Promise<CheckWire> {
+      const head = await heads.current(system.id)
+      const measured = measureCandidate(head, body)
+      if (!measured.ok) {
+        const { code, ...options } = measured.refusal
+        throw new AppError(code, options)
+      }
+      const verdict = judgeCandidate(head, measured.evaluation, {
+        newOnly: body.newOnly,
+        waivers: [],
+        include: query.findings === 'all' ? 'all' : 'not-pass',
+      })
+      const findings = presentFindings(verdict, measured.evaluation)
+      const row = {
+        ...rowOf(system, { head, verdict, source: body.source }),
+        id: newId('chk'),
+        at: clock.now(),
+        findingsGzip: await packFindings(keptOf(findings)),
+      }
+      const number = await transact(async ({ checks }) => {
+        const taken = await checks.takeNumber(system.id)
+        await checks.insert({ ...row, number: taken })
+        return taken
+      })
+      return { ...presentCheckSummary({ ...row, number }), ...findings }
+    },
+
+    async list(system: SystemAccess, query: ListQuery) {
+      const { verdict, repository, branch, limit, cursor } = query
+      const filter = { verdict, repository, branch, callerKeyId: ownKeyOf(system) }
+      const before = decodeCursor(placeSchema, cursor)?.number
+      const rows = await reads.list(system.id, filter, { before, limit: limit + 1 })
+      const shown = rows.slice(0, limit)
+      const body: AnswerOf<typeof listChecks> = { items: shown.map(presentCheckSummary) }
+      const last = rows.length > limit ? shown.at(-1) : undefined
+      return last === undefined ? { body } : { body, next: encodeCursor({ number: last.number }) }
+    },
+
+    async get(system: SystemAccess, id: string): Promise<CheckWire> {
+      const row = await reads.find(system.id, id)
+      const own = ownKeyOf(system)
+      if (row === undefined || (own !== undefined && row.callerKeyId !== own)) {
+        throw new AppError('not-found', { detail: `No check ${id}` })
+      }
+      return { ...presentCheckSummary(row), ...(await unpackFindings(row.findingsGzip)) }
+    },
+  }
+}
+
+/** The key that may read only what it asked for itself. */
+const ownKeyOf = ({ ownOnly, caller }: SystemAccess): string | undefined =>
+  ownOnly && caller.kind === 'key' ? caller.keyId : undefined
+
+function presentFindings(verdict: Verdict, { resolved }: Evaluation): KeptFindings {
+  const names = namesIn(resolved)
+  return {
+    findings: verdict.findings.map((finding) => presentFinding(finding, names)),
+    advisories: verdict.advisories.map((advisory) => presentAdvisory(advisory, names)),
+  }
+}
+
+const keptOf = ({ findings, advisories }: KeptFindings): KeptFindings => ({
+  findings: findings.filter(({ outcome }) => outcome !== 'pass'),
+  advisories,
+})
+
+interface Outcome {
+  readonly head: Head
+  readonly verdict: Verdict
+  readonly source: Asked['body']['source']
+}
+
+function rowOf({ id, caller }: SystemAccess, { head, verdict, source }: Outcome) {
+  const { engine, counts } = verdict
+  return {
+    systemId: id,
+    againstRevision: head.revision,
+    releaseId: null,
+    ...callerColumns(caller),
+    repository: source?.repository ?? null,
+    branch: source?.branch ?? null,
+    commitSha: source?.commit ?? null,
+    pipelineUrl: source?.pipelineUrl ?? null,
+    verdict: verdict.verdict,
+    counts,
+    engineVersion: engine.version,
+    gamutMap: engine.gamutMap,
+    ruleSet: engine.ruleSet,
+  } satisfies Partial<NewCheckRow>
+}
+
+function callerColumns(caller: Caller): Pick<CheckRow, 'callerUserId' | 'callerKeyId'> {
+  return caller.kind === 'key'
+    ? { callerUserId: null, callerKeyId: caller.keyId }
+    : { callerUserId: caller.userId, callerKeyId: null }
+}

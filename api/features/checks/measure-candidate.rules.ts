@@ -1,0 +1,74 @@
+import type { Evaluation } from '#shared/checks/evaluation.ts'
+import type { ModelFault, Verdict, WaiverModel } from '#shared/checks/model.ts'
+import { recheck } from '#shared/checks/recheck.ts'
+import { breachRatios, verdictOf } from '#shared/checks/verdict.ts'
+import {
+  type Refusal,
+  refuse,
+  refuseFaults,
+  type SystemIndex,
+} from '#shared/contracts/governed-system.ts'
+import type { Fault } from '#shared/contracts/problems.ts'
+import { type CandidateEdits, candidateEdits, unknownNames } from './candidate.rules.ts'
+import { type CheckRequest, isWritten, readTokenDocument } from './token-document.rules.ts'
+
+/** What a candidate is merged over and compared with. */
+export interface Compared {
+  readonly index: SystemIndex
+  readonly evaluation: Evaluation
+}
+
+export type Measured =
+  | { readonly ok: true; readonly evaluation: Evaluation }
+  | { readonly ok: false; readonly refusal: Refusal }
+
+/** Measures what a check asks for, from the head by what differs; without a candidate, the head itself. */
+export function measureCandidate(head: Compared, request: CheckRequest): Measured {
+  const read = readCandidate(head.index, request)
+  if (!read.ok) return refuseFaults(read.faults)
+  if (Object.keys(read.edits).length === 0) return { ok: true, evaluation: head.evaluation }
+  const checked = recheck(head.evaluation, read.edits)
+  if (checked.ok) return checked
+  const faults = checked.faults.map((fault) => faultOf(fault, read, head.index))
+  return refuse('system-unresolvable', undefined, faults)
+}
+
+function readCandidate(head: SystemIndex, request: CheckRequest): CandidateEdits {
+  const { mode, pairs = [], tokens: given } = request
+  if (given === undefined) return candidateEdits(head, { mode, pairs })
+  const stands = (name: string) => mode === 'merge' && head.tokensByName.has(name)
+  const document = readTokenDocument(given, stands)
+  if (document.ok) return candidateEdits(head, { mode, pairs, tokens: document.tokens })
+  const isNamed = (name: string) => stands(name) || isWritten(given, name)
+  return { ok: false, faults: [...document.faults, ...unknownNames(head, pairs, isNamed)] }
+}
+
+function faultOf(
+  fault: ModelFault,
+  { pointerOf }: Extract<CandidateEdits, { ok: true }>,
+  { names }: SystemIndex,
+): Fault {
+  const pointer = pointerOf(fault)
+  return {
+    ...(pointer === undefined ? {} : { pointer }),
+    detail: fault.detail.replace(/\btok_\w+/g, names.tokenName),
+    code: fault.code,
+  }
+}
+
+export interface Judging {
+  readonly newOnly: boolean
+  readonly waivers: readonly WaiverModel[]
+  readonly include: 'all' | 'not-pass'
+}
+
+/** Judges a candidate; with `newOnly` against what the head has, under the same waivers. */
+export function judgeCandidate(
+  head: Compared,
+  candidate: Evaluation,
+  { newOnly, waivers, include }: Judging,
+): Verdict {
+  if (!newOnly) return verdictOf(candidate, { waivers, include })
+  const known = breachRatios(verdictOf(head.evaluation, { waivers, include: 'not-pass' }))
+  return verdictOf(candidate, { waivers, include, known })
+}
