@@ -37,6 +37,8 @@ export interface Contract {
   readonly body?: z.ZodType
   /** Example of the body, and of each query parameter that an example needs. */
   readonly bodyExample?: unknown
+  /** What the body may have at most, default 1 MiB. */
+  readonly maxBodyBytes?: number
   readonly success: Success
   readonly problems: readonly ProblemCode[]
   readonly access: Access
