@@ -1,0 +1,95 @@
+import type { Request, Response } from 'express'
+import { sha256Hex } from '#api/canonical-json.ts'
+import type { AnswerOf, Contract } from '#shared/contracts/route.ts'
+import { isUnmodified } from './conditional.ts'
+
+interface Accompanied {
+  /** Strong validator; without it the `etag` member of the body is the one. */
+  readonly etag?: string
+  readonly headers?: Readonly<Record<string, string | readonly string[]>>
+}
+
+/** What a handler answers: JSON, text of one of the contract's media types, or nothing. */
+export type Answer<C extends Contract> = C['success'] extends { status: 204 }
+  ? undefined | Accompanied
+  : C['success'] extends { media: readonly string[] }
+    ? Accompanied & { readonly text: string; readonly media: string }
+    : Accompanied & {
+        readonly body: AnswerOf<C>
+        /** Cursor of the next page, where there is one. */
+        readonly next?: string | undefined
+      }
+
+interface LooseAnswer extends Accompanied {
+  readonly body?: unknown
+  readonly text?: string
+  readonly media?: string
+  readonly next?: string | undefined
+}
+
+/** The answer is not what the contract says: a bug, found by a test. */
+const contradiction = (contract: Contract, what: string): Error =>
+  new Error(`${contract.operationId} answers what its contract does not say: ${what}`)
+
+/** @throws {Error} where the answer contradicts its contract */
+export function checkAnswer(contract: Contract, answer: LooseAnswer | undefined): void {
+  const { success } = contract
+  if (success.status === 204) return
+  if ('media' in success) {
+    if (typeof answer?.text !== 'string') throw contradiction(contract, 'no text')
+    if (!success.media.includes(answer.media ?? ''))
+      throw contradiction(contract, `${answer.media}`)
+    return
+  }
+  const parsed = success.body.safeParse(answer?.body)
+  if (!parsed.success) throw contradiction(contract, parsed.error.message)
+}
+
+/** Sends a success, or 304 where the caller has it already. */
+export function sendAnswer(
+  request: Request,
+  response: Response,
+  contract: Contract,
+  answer: LooseAnswer | undefined,
+): void {
+  const { success } = contract
+  response.set('Cache-Control', contract.conditional ? 'private, no-cache' : 'no-store')
+  response.vary('Authorization, Cookie')
+  for (const [name, value] of Object.entries(answer?.headers ?? {})) {
+    response.setHeader(name, typeof value === 'string' ? value : [...value])
+  }
+  if (success.status === 204) {
+    response.status(204).end()
+    return
+  }
+  const text = answer?.text ?? JSON.stringify(answer?.body)
+  const etag = etagFor(contract, answer, text)
+  if (etag !== undefined) response.set('ETag', etag)
+  if (answer?.next !== undefined) response.set('Link', nextLink(request, answer.next))
+  if (contract.conditional && isUnmodified(request.headers['if-none-match'], etag ?? '')) {
+    response.status(304).end()
+    return
+  }
+  response
+    .status(success.status)
+    .set('Content-Type', answer?.media ?? 'application/json; charset=utf-8')
+    .end(request.method === 'HEAD' ? undefined : text)
+}
+
+function etagFor(
+  contract: Contract,
+  answer: LooseAnswer | undefined,
+  text: string,
+): string | undefined {
+  const member = (answer?.body as { etag?: unknown } | undefined)?.etag
+  const own = answer?.etag ?? (typeof member === 'string' ? member : undefined)
+  if (own !== undefined || !contract.conditional) return own
+  return `"${sha256Hex(text).slice(0, 32)}"`
+}
+
+/** @see https://www.rfc-editor.org/rfc/rfc8288 */
+function nextLink(request: Request, cursor: string): string {
+  const url = new URL(request.originalUrl, 'http://localhost')
+  url.searchParams.set('cursor', cursor)
+  return `<${url.pathname}${url.search}>; rel="next"`
+}

@@ -1,0 +1,58 @@
+import type { ProblemCode } from '#shared/contracts/problems.ts'
+
+/** What a person can do about each refusal, one or two sentences of plain text. */
+export const PROBLEM_ADVICE: Readonly<Record<ProblemCode, string>> = {
+  'request-unreadable':
+    'The body is not JSON in UTF-8, is nested deeper than 32, or the address cannot be decoded. Nothing was done.',
+  'parameter-invalid':
+    'A query parameter, a part of the path or a header is unknown or has a value that cannot be used. Each entry of errors names one.',
+  'host-unknown':
+    'The Host of the request is neither a loopback name nor that of PUBLIC_URL. Whoever runs the service sets PUBLIC_URL to the address people use.',
+  'sign-in-required':
+    'The call takes a session or a key. Sign in, or send Authorization: Bearer with a key. A session ends after 30 minutes without a call and after 12 hours in all.',
+  'credentials-wrong':
+    'No account has this e-mail address with this password. Which of the two is wrong is not said.',
+  'key-refused':
+    'The key is mistyped, expired, revoked, or its owner has left the system. Make a new one; a key is never shown twice. A bad key is refused even beside a good session.',
+  'role-missing':
+    'Your role in this system does not allow the call; detail names the roles that do. An administrator grants roles.',
+  'scope-missing':
+    'The key does not have the scope that the call takes; detail names it. Make a key with that scope.',
+  'origin-foreign':
+    'A browser sent this from a page that is not part of this service, or a password would have travelled without https. Nothing was done.',
+  'not-found': 'It does not exist, or you are not allowed to know of it.',
+  'method-not-allowed': 'The address exists, but not for this method. Allow lists those it takes.',
+  'not-acceptable':
+    'Accept asks only for types that the call cannot give. Ask for application/json.',
+  'system-key-taken': 'Choose another key: keys of systems are unique.',
+  'token-name-taken':
+    'Names of tokens are unique, also after Unicode normalisation. Choose another name.',
+  'token-in-use':
+    'A pair, an alias, a derivation, a rule or a theme uses the token; detail names them. Change those first.',
+  'token-locked': 'The token is locked. Unlock it in an edit of its own, then change it.',
+  'pair-already-declared':
+    'A pair with the same colours, use, relation, backdrop, group and product is declared already. Edit that one.',
+  'theme-already-exists':
+    'A theme has this key already. Replace it with If-Match, or choose another key.',
+  'theme-in-use': 'Another theme derives from it, or it is the base. Change that first.',
+  'css-name-collision':
+    'Two token names come to the same CSS custom property; detail names both. Rename one.',
+  'review-required':
+    'The system takes edits by review only. An accessibility lead may set direct writes again.',
+  'precondition-failed':
+    'Somebody has changed it since you read it. The member current is how it stands now: read it, decide, send again with its ETag.',
+  'request-too-large':
+    'The body has more bytes than the call takes; detail says how many it takes.',
+  'media-type-unsupported': 'Send the body as application/json in UTF-8, not compressed.',
+  'request-invalid':
+    'The request was read, but it cannot be done as it is. Each entry of errors points at one fault in the body; all of them are listed.',
+  'system-unresolvable':
+    'With this edit a colour of the system could not be computed: a reference leads nowhere or in a circle, or a theme breaks a rule. Each entry of errors names one fault.',
+  'precondition-required':
+    'An edit says which version it is meant for: send If-Match with the ETag that you read, or If-None-Match: * to create.',
+  'requests-too-many': 'Wait as long as Retry-After says, then try again.',
+  'server-unexpected':
+    'A fault of ours. Nothing was half done. Tell whoever runs the service the requestId.',
+  'service-unavailable':
+    'The database is away, or the service is starting or stopping. Nothing was half done: try again as Retry-After says.',
+}

@@ -1,0 +1,40 @@
+import type { Response } from 'express'
+import { AppError } from '#api/errors.ts'
+import { type Problem, PROBLEMS } from '#shared/contracts/problems.ts'
+import { requestIdOf } from './request-id.ts'
+
+/** Answers the problem document of a refusal. */
+export function problemOf(refusal: AppError, requestId: string): Problem {
+  const { status, title } = PROBLEMS[refusal.code]
+  const { detail, faults, extra } = refusal.options
+  return {
+    type: `/problems/${refusal.code}`,
+    title,
+    status,
+    ...(detail === undefined ? {} : { detail }),
+    ...(faults === undefined ? {} : { errors: [...faults] }),
+    ...extra,
+    requestId,
+  }
+}
+
+/**
+ * Sends a refusal; nothing else in the service writes a problem document.
+ * @see https://www.rfc-editor.org/rfc/rfc9457
+ */
+export function sendProblem(response: Response, refusal: AppError): void {
+  const { status } = PROBLEMS[refusal.code]
+  const { retryAfterSeconds } = refusal.options
+  if (retryAfterSeconds !== undefined) response.set('Retry-After', String(retryAfterSeconds))
+  if (status === 401) response.set('WWW-Authenticate', 'Bearer realm="dyewright"')
+  response.removeHeader('ETag')
+  response
+    .status(status)
+    .set('Cache-Control', 'no-store')
+    .type('application/problem+json')
+    .send(JSON.stringify(problemOf(refusal, requestIdOf(response))))
+}
+
+/** Whatever went wrong, as a refusal: what nobody foresaw keeps its cause for the log alone. */
+export const refusalOf = (error: unknown): AppError =>
+  error instanceof AppError ? error : new AppError('server-unexpected', { cause: error })

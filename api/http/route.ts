@@ -1,0 +1,187 @@
+import { type IRouter, type Request, type RequestHandler, type Response, Router } from 'express'
+import { AppError } from '#api/errors.ts'
+import { GENERAL_PROBLEMS } from '#shared/contracts/problems.ts'
+import type { Contract } from '#shared/contracts/route.ts'
+import { type Answer, checkAnswer, sendAnswer } from './answer.ts'
+import { authenticate, cookieOf, type Identify, type SessionCookie } from './authenticate.ts'
+import { authorize, type FindAccess } from './authorize.ts'
+import {
+  type Exchange,
+  readParams,
+  readPrecondition,
+  readQuery,
+  readValidBody,
+} from './exchange.ts'
+import { refuseForeignOrigin } from './origin.ts'
+import { refusalOf } from './problem.ts'
+import { requestIdOf } from './request-id.ts'
+
+export type { Answer } from './answer.ts'
+export type { Exchange } from './exchange.ts'
+
+/** Runs one operation. */
+export type Handler<C extends Contract> = (exchange: Exchange<C>) => Promise<Answer<C>> | Answer<C>
+
+/** What every route of the service relies on. */
+export interface RouteContext {
+  readonly identify: Identify
+  readonly findAccess: FindAccess
+  readonly cookie: SessionCookie
+  readonly publicUrl: URL
+  /** Parse answers by their contract and refuse codes it does not list: always but in production. */
+  readonly strictAnswers: boolean
+}
+
+interface Route {
+  readonly contract: Contract
+  readonly handler: Handler<Contract>
+}
+
+/** The operations of the service as they are gathered. */
+export interface ApiRouter {
+  readonly context: RouteContext
+  readonly routes: Route[]
+}
+
+export const createApiRouter = (context: RouteContext): ApiRouter => ({ context, routes: [] })
+
+/** Adds an operation: who calls it, what goes in and what comes out is all in its contract. */
+export function mount<const C extends Contract>(
+  router: ApiRouter,
+  contract: C,
+  handler: Handler<C>,
+): void {
+  router.routes.push({ contract, handler: handler as unknown as Handler<Contract> })
+}
+
+/** A last segment `{name}.{format}` is one parameter, split at its first dot. */
+const FILE_SEGMENT = /\/\{(\w+)\}\.\{(\w+)\}$/
+
+const expressPathOf = (path: string): string =>
+  path.replace(FILE_SEGMENT, '/:file').replace(/\{(\w+)\}/g, ':$1')
+
+/** Literal segments first, then files, then parameters: the narrowest template gets the request. */
+const breadthOf = ({ contract }: Route): string =>
+  contract.path
+    .replace(FILE_SEGMENT, '/.')
+    .split('/')
+    .map((segment) => (segment === '.' ? 1 : segment.startsWith('{') ? 2 : 0))
+    .join('')
+
+/** Answers the Express router of all gathered operations; other methods on their paths are 405. */
+export function createExpressRouter({ routes, context }: ApiRouter): IRouter {
+  const router = Router({ caseSensitive: true, strict: true })
+  const ordered = [...routes].sort((a, b) => (breadthOf(a) < breadthOf(b) ? -1 : 1))
+  for (const route of ordered) {
+    const method = route.contract.method.toLowerCase() as 'get'
+    router[method](expressPathOf(route.contract.path), runRoute(route, context))
+  }
+  for (const path of new Set(ordered.map((route) => expressPathOf(route.contract.path)))) {
+    router.all(path, refuseMethod(ordered, path))
+  }
+  return router
+}
+
+const refuseMethod = (routes: readonly Route[], path: string): RequestHandler => {
+  const methods = routes
+    .filter(({ contract }) => expressPathOf(contract.path) === path)
+    .flatMap(({ contract }) => (contract.method === 'GET' ? ['GET', 'HEAD'] : [contract.method]))
+  return (request, response, next) => {
+    if (methods.includes(request.method)) next()
+    else {
+      response.set('Allow', methods.join(', '))
+      next(new AppError('method-not-allowed', { detail: `It takes ${methods.join(', ')}` }))
+    }
+  }
+}
+
+const runRoute =
+  ({ contract, handler }: Route, context: RouteContext): RequestHandler =>
+  async (request, response, next) => {
+    const params = pathParamsOf(contract, request)
+    if (params === undefined) return next()
+    try {
+      const exchange = await readExchange(contract, context, { request, response, params })
+      const answer = await handler(exchange)
+      if (context.strictAnswers) checkAnswer(contract, answer)
+      sendAnswer(request, response, contract, answer)
+    } catch (error) {
+      next(context.strictAnswers ? listedOnly(contract, error) : error)
+    }
+  }
+
+/** Nothing where the last segment has no dot and the template wants one: another route's request. */
+function pathParamsOf(contract: Contract, request: Request): Record<string, string> | undefined {
+  const given = request.params as Record<string, string>
+  const names = FILE_SEGMENT.exec(contract.path)
+  if (names === null) return given
+  const { file = '', ...others } = given
+  const dot = file.indexOf('.')
+  if (dot < 0) return undefined
+  return {
+    ...others,
+    [String(names[1])]: file.slice(0, dot),
+    [String(names[2])]: file.slice(dot + 1),
+  }
+}
+
+interface Arrived {
+  readonly request: Request
+  readonly response: Response
+  readonly params: Readonly<Record<string, string>>
+}
+
+/** Who, then whether, then what: nobody unknown gets a body read. */
+async function readExchange(
+  contract: Contract,
+  context: RouteContext,
+  { request, response, params: given }: Arrived,
+): Promise<Exchange<Contract>> {
+  guardOrigin(contract, context, request)
+  const { access } = contract
+  const caller =
+    access === 'anyone' ? undefined : await authenticate(request, context.identify, context.cookie)
+  response.locals.caller = caller
+  const params = readParams(contract, given)
+  const system =
+    caller === undefined || access === 'anyone'
+      ? undefined
+      : await authorize(caller, access, given.system, context.findAccess)
+  refuseAccept(contract, request)
+  const query = readQuery(contract, request)
+  const precondition = readPrecondition(contract, request)
+  const body = await readValidBody(contract, request, response)
+  const requestId = requestIdOf(response)
+  return {
+    ...({ params, query, body } as Pick<Exchange<Contract>, 'params' | 'query' | 'body'>),
+    ...precondition,
+    caller,
+    system,
+    requestId,
+    request,
+    response,
+  } as Exchange<Contract>
+}
+
+/** What a browser sends with a cookie of ours, and any sign-in, must come from our own pages. */
+function guardOrigin(contract: Contract, context: RouteContext, request: Request): void {
+  if (contract.method === 'GET' || request.headers.authorization !== undefined) return
+  const hasCookie = cookieOf(request, context.cookie.name) !== undefined
+  if (hasCookie || contract.access === 'anyone') refuseForeignOrigin(request, context.publicUrl)
+}
+
+/** A browser's Accept asks for a page or for XML before JSON: it gets JSON. */
+function refuseAccept(contract: Contract, request: Request): void {
+  if (!contract.problems.includes('not-acceptable')) return
+  if (request.accepts(['application/json', 'text/html']) !== false) return
+  throw new AppError('not-acceptable', { detail: 'application/json can be given' })
+}
+
+/** @returns the error; a refusal that the contract does not list becomes a bug of ours */
+function listedOnly(contract: Contract, error: unknown): unknown {
+  const { code } = refusalOf(error)
+  const listed: readonly string[] = [...contract.problems, ...GENERAL_PROBLEMS]
+  return listed.includes(code)
+    ? error
+    : new Error(`${contract.operationId} does not list ${code}`, { cause: error })
+}
