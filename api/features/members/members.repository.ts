@@ -1,0 +1,73 @@
+import { and, asc, eq, inArray, isNull, sql } from 'drizzle-orm'
+import type { Executor } from '#api/platform/database.ts'
+import { memberships, systemHeads, systems } from '#drizzle/schema/systems.ts'
+import { users } from '#drizzle/schema/users.ts'
+
+export interface MemberRow {
+  readonly id: string
+  readonly name: string
+  readonly email: string
+  readonly role: 'engineer' | 'maintainer' | 'accessibility-lead'
+}
+
+export type MembersRepository = ReturnType<typeof createMembersRepository>
+
+export const createMembersRepository = (db: Executor) => ({
+  /** The system of this key and how the person stands in it; a stranger's role is null. */
+  findStanding: async (systemKey: string, userId: string) => {
+    const [row] = await db
+      .select({
+        id: systems.id,
+        key: systems.key,
+        name: systems.name,
+        role: memberships.role,
+        isAdmin: sql<number>`exists(select 1 from ${users} where ${users.id} = ${userId} and ${users.isAdmin} and ${users.deactivatedAt} is null)`,
+      })
+      .from(systems)
+      .leftJoin(
+        memberships,
+        and(eq(memberships.systemId, systems.id), eq(memberships.userId, userId)),
+      )
+      .where(eq(systems.key, systemKey))
+    return row
+  },
+
+  rolesOf: (userId: string) =>
+    db
+      .select({ key: systems.key, role: memberships.role })
+      .from(memberships)
+      .innerJoin(systems, eq(systems.id, memberships.systemId))
+      .where(eq(memberships.userId, userId))
+      .orderBy(asc(systems.key)),
+
+  list: (systemId: string): Promise<MemberRow[]> =>
+    db
+      .select({ id: users.id, name: users.name, email: users.email, role: memberships.role })
+      .from(memberships)
+      .innerJoin(users, eq(users.id, memberships.userId))
+      .where(eq(memberships.systemId, systemId))
+      .orderBy(asc(users.email)),
+
+  /** Held until the transaction ends: two lists of one system cannot be replaced at once. */
+  lock: async (systemId: string): Promise<void> => {
+    await db
+      .select({ id: systemHeads.systemId })
+      .from(systemHeads)
+      .where(eq(systemHeads.systemId, systemId))
+      .for('update')
+  },
+
+  findPeople: (emails: readonly string[]) =>
+    db
+      .select({ id: users.id, email: users.email, name: users.name })
+      .from(users)
+      .where(and(inArray(users.email, [...emails]), isNull(users.deactivatedAt))),
+
+  replace: async (systemId: string, members: readonly Pick<MemberRow, 'id' | 'role'>[]) => {
+    await db.delete(memberships).where(eq(memberships.systemId, systemId))
+    if (members.length === 0) return
+    await db
+      .insert(memberships)
+      .values(members.map(({ id, role }) => ({ systemId, userId: id, role })))
+  },
+})
