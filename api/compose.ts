@@ -1,0 +1,58 @@
+import type { Express } from 'express'
+import { createApp, type Files } from './app.ts'
+import type { Config } from './config.ts'
+import { sessionCookieFor } from './http/authenticate.ts'
+import { createApiRouter } from './http/route.ts'
+import { systemClock } from './platform/clock.ts'
+import { createDatabase } from './platform/database.ts'
+import { createNewId } from './platform/ids.ts'
+import { createLogger } from './platform/logger.ts'
+import { createPasswords } from './platform/passwords.ts'
+import { mountAll } from './routes.ts'
+import { createServices, type Platform, type Services } from './services.ts'
+
+export interface Composition {
+  readonly config: Config
+  /** What is served besides the API: the console, the gate, the document. */
+  readonly files?: Files
+  /** Edges of the world that are not the real ones. */
+  readonly platform?: Partial<Platform>
+}
+
+export interface Service {
+  readonly app: Express
+  readonly services: Services
+  readonly platform: Platform
+  close(): Promise<void>
+}
+
+/** Puts the service together; nothing else knows how its parts meet. */
+export function compose({ config, files = {}, platform: given = {} }: Composition): Service {
+  const platform = createPlatform(config, given)
+  const services = createServices(platform, config)
+  const router = createApiRouter({
+    identify: { bySession: services.sessions.identify, byKey: services.keys.identify },
+    findAccess: services.members.findAccess,
+    cookie: sessionCookieFor(config.publicUrl),
+    publicUrl: config.publicUrl,
+    strictAnswers: config.mode !== 'production',
+  })
+  mountAll(router, services)
+  const app = createApp({ config, router, platform, files })
+  return { app, services, platform, close: () => platform.database.close() }
+}
+
+function createPlatform(config: Config, given: Partial<Platform>): Platform {
+  const database =
+    given.database ??
+    createDatabase({ url: config.databaseUrl, connections: config.databaseConnections })
+  return {
+    clock: systemClock,
+    newId: createNewId(),
+    logger: given.logger ?? createLogger({ level: config.logLevel }),
+    passwords: given.passwords ?? createPasswords(config.passwordCost),
+    transact: database.transact,
+    ...given,
+    database,
+  }
+}

@@ -1,0 +1,42 @@
+import type { Config } from './config.ts'
+import { createAccountsService } from './features/accounts/accounts.service.ts'
+import { createHealthService } from './features/health/health.service.ts'
+import { createKeysService } from './features/keys/keys.service.ts'
+import { createMembersService } from './features/members/members.service.ts'
+import { createSessionsService } from './features/sessions/sessions.service.ts'
+import type { Clock } from './platform/clock.ts'
+import type { Database, RunTransaction } from './platform/database.ts'
+import type { NewId } from './platform/ids.ts'
+import type { Logger } from './platform/logger.ts'
+import type { Passwords } from './platform/passwords.ts'
+import { createRepositories, createTransactOver } from './repositories.ts'
+
+/** The outside world, as services reach it. */
+export interface Platform {
+  readonly clock: Clock
+  readonly newId: NewId
+  readonly logger: Logger
+  readonly database: Database
+  readonly passwords: Passwords
+  /** The database's own, unless a test breaks it on purpose. */
+  readonly transact: RunTransaction
+}
+
+/** Wires every use case to the world. */
+export function createServices(platform: Platform, config: Config) {
+  const { newId, database, passwords } = platform
+  const reads = createRepositories(database.db)
+  const transact = createTransactOver(platform.transact)
+  return {
+    accounts: createAccountsService({ transact, reads, newId, passwords }),
+    sessions: createSessionsService({ transact, reads, newId, passwords }),
+    keys: createKeysService({ transact, reads, newId }),
+    members: createMembersService({ transact, reads }),
+    health: createHealthService({
+      isReachable: database.isReachable,
+      seedPendingFile: config.seedPendingFile,
+    }),
+  }
+}
+
+export type Services = ReturnType<typeof createServices>
