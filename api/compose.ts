@@ -1,6 +1,7 @@
 import type { Express } from 'express'
 import { createApp, type Files } from './app.ts'
 import type { Config } from './config.ts'
+import { WRITE_GUARDS } from './features/revisions/write-guards.ts'
 import { sessionCookieFor } from './http/authenticate.ts'
 import { createApiRouter } from './http/route.ts'
 import { systemClock } from './platform/clock.ts'
@@ -52,6 +53,7 @@ function createPlatform(config: Config, given: Partial<Platform>): Platform {
     logger: given.logger ?? createLogger({ level: config.logLevel }),
     passwords: given.passwords ?? createPasswords(config.passwordCost),
     transact: database.transact,
+    writeGuards: WRITE_GUARDS,
     ...given,
     database,
   }

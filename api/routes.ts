@@ -1,7 +1,12 @@
 import { mountHealth } from './features/health/health.routes.ts'
 import { mountKeys } from './features/keys/keys.routes.ts'
 import { mountMembers } from './features/members/members.routes.ts'
+import { mountPairs } from './features/pairs/pairs.routes.ts'
+import { mountRules } from './features/rules/rules.routes.ts'
 import { mountSessions } from './features/sessions/sessions.routes.ts'
+import { mountSystems } from './features/systems/systems.routes.ts'
+import { mountThemes } from './features/themes/themes.routes.ts'
+import { mountTokens } from './features/tokens/tokens.routes.ts'
 import type { ApiRouter } from './http/route.ts'
 import type { Services } from './services.ts'
 
@@ -10,5 +15,10 @@ export function mountAll(router: ApiRouter, services: Services): void {
   mountSessions(router, services.sessions)
   mountKeys(router, services.keys)
   mountMembers(router, services.members)
+  mountSystems(router, services.systems)
+  mountTokens(router, services.tokens)
+  mountPairs(router, services.pairs)
+  mountThemes(router, services.themes)
+  mountRules(router, services.rules)
   mountHealth(router, services.health)
 }

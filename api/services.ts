@@ -4,6 +4,8 @@ import { createHealthService } from './features/health/health.service.ts'
 import { createKeysService } from './features/keys/keys.service.ts'
 import { createMembersService } from './features/members/members.service.ts'
 import { createSessionsService } from './features/sessions/sessions.service.ts'
+import type { WriteGuards } from './features/revisions/write-guards.ts'
+import { createGovernedServices } from './governed-services.ts'
 import type { Clock } from './platform/clock.ts'
 import type { Database, RunTransaction } from './platform/database.ts'
 import type { NewId } from './platform/ids.ts'
@@ -20,6 +22,8 @@ export interface Platform {
   readonly passwords: Passwords
   /** The database's own, unless a test breaks it on purpose. */
   readonly transact: RunTransaction
+  /** The head's lock and comparisons, unless a test leaves one out on purpose. */
+  readonly writeGuards: WriteGuards
 }
 
 /** Wires every use case to the world. */
@@ -28,6 +32,7 @@ export function createServices(platform: Platform, config: Config) {
   const reads = createRepositories(database.db)
   const transact = createTransactOver(platform.transact)
   return {
+    ...createGovernedServices(platform, { reads, transact }),
     accounts: createAccountsService({ transact, reads, newId, passwords }),
     sessions: createSessionsService({ transact, reads, newId, passwords }),
     keys: createKeysService({ transact, reads, newId }),

@@ -7,7 +7,6 @@ import { etagOf, type IfMatch } from '#api/precondition.ts'
 import type { GovernedTheme } from '#shared/checks/governed-model.ts'
 import { presentTheme, presentThemeValues } from '#shared/contracts/present-items.ts'
 import type { ThemeWire } from '#shared/contracts/themes.contract.ts'
-import { type ThemeFile, type ThemeFormat, presentThemeFile } from './theme-file.presenter.ts'
 import {
   decideDelete,
   decidePatch,
@@ -39,13 +38,6 @@ export function createThemesService({ heads, writes, newId }: ThemesDeps) {
     async get(system: SystemAccess, key: string): Promise<ThemeWire> {
       const head = await heads.current(system.id)
       return taggedTheme(head, themeOf(head, key))
-    },
-
-    async file(system: SystemAccess, key: string, format: ThemeFormat): Promise<ThemeFile> {
-      const head = await heads.current(system.id)
-      const written = presentThemeFile(head, themeOf(head, key), format)
-      if (!written.ok) throw new AppError('css-name-collision', { detail: written.detail })
-      return written.file
     },
 
     /** @param edit without `ifMatch`: to be made, where nothing of that key is there */

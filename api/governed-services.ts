@@ -1,0 +1,43 @@
+import { createBreachesReads } from './features/breaches/breaches.reads.ts'
+import { createBreachesService } from './features/breaches/breaches.service.ts'
+import { createPairsService } from './features/pairs/pairs.service.ts'
+import { createHeadBeginService } from './features/revisions/head-begin.service.ts'
+import { createHeadWriteService } from './features/revisions/head-write.service.ts'
+import { createHeadsService } from './features/revisions/heads.service.ts'
+import { createRulesService } from './features/rules/rules.service.ts'
+import { createSystemsService } from './features/systems/systems.service.ts'
+import { createThemesService } from './features/themes/themes.service.ts'
+import { createTokensService } from './features/tokens/tokens.service.ts'
+import type { Repositories, Transact } from './repositories.ts'
+import type { Platform } from './services.ts'
+
+interface Reach {
+  readonly reads: Repositories
+  readonly transact: Transact<keyof Repositories>
+}
+
+/** Wires what a revision governs, around the one head and the one write. */
+export function createGovernedServices(
+  { newId, database, writeGuards }: Platform,
+  { reads, transact }: Reach,
+) {
+  const heads = createHeadsService({ heads: reads.heads, versions: reads.versions })
+  const breaches = createBreachesService({ reads: createBreachesReads(database.db), newId })
+  const writes = createHeadWriteService({
+    heads,
+    breaches,
+    transact,
+    outside: reads,
+    guards: writeGuards,
+  })
+  const begins = createHeadBeginService()
+  return {
+    heads,
+    breaches,
+    systems: createSystemsService({ reads, transact, begins, writes, newId }),
+    tokens: createTokensService({ heads, writes, newId }),
+    pairs: createPairsService({ heads, writes, newId }),
+    themes: createThemesService({ heads, writes, newId }),
+    rules: createRulesService({ heads, writes }),
+  }
+}
