@@ -49,7 +49,7 @@ async function readFiles(): Promise<Files> {
   const at = (path: string) => fileURLToPath(new URL(`../${path}`, import.meta.url))
   const text = (path: string) => readFile(at(path), 'utf8').catch(() => undefined)
   const [document, page, gate] = await Promise.all([
-    text('../openapi/openapi.json'),
+    text('openapi/openapi.json'),
     text('console/index.html'),
     text('gate/dyewright.mjs'),
   ])
