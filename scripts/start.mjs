@@ -135,7 +135,7 @@ function serviceEnvironment({ host, port, production }, { serveUrl }, seedPendin
     HOST: host,
     PORT: String(port),
     DATABASE_URL: serveUrl,
-    SEED_PENDING_FILE: seedPendingFile,
+    ...(production ? {} : { SEED_PENDING_FILE: seedPendingFile }),
   }
 }
 
