@@ -51,14 +51,10 @@ function noKnownRow(token: number): never {
 }
 
 /**
- * Computes every token in every theme and state.
+ * Computes every token in every theme and state; a system without a theme yet has no value.
  * @returns the values with their provenance, or all faults of the model at once
  */
 export function resolveSystem(model: SystemModel): Resolution {
-  if (model.themes.length === 0) {
-    const detail = 'The system has no theme'
-    return { ok: false, faults: [{ code: 'theme-unset', detail }] }
-  }
   const graph = createModelGraph(model)
   const faults = modelFaults(graph)
   if (faults.some(barsThePass)) return { ok: false, faults }
