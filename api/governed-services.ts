@@ -1,9 +1,13 @@
 import { createBreachesReads } from './features/breaches/breaches.reads.ts'
 import { createBreachesService } from './features/breaches/breaches.service.ts'
+import { createChecksReads } from './features/checks/checks.reads.ts'
+import { createChecksService } from './features/checks/checks.service.ts'
 import { createPairsService } from './features/pairs/pairs.service.ts'
 import { createHeadBeginService } from './features/revisions/head-begin.service.ts'
 import { createHeadWriteService } from './features/revisions/head-write.service.ts'
 import { createHeadsService } from './features/revisions/heads.service.ts'
+import { createRevisionsReads } from './features/revisions/revisions.reads.ts'
+import { createRevisionsService } from './features/revisions/revisions.service.ts'
 import { createRulesService } from './features/rules/rules.service.ts'
 import { createSystemsService } from './features/systems/systems.service.ts'
 import { createThemesService } from './features/themes/themes.service.ts'
@@ -18,7 +22,7 @@ interface Reach {
 
 /** Wires what a revision governs, around the one head and the one write. */
 export function createGovernedServices(
-  { newId, database, writeGuards }: Platform,
+  { newId, clock, database, writeGuards }: Platform,
   { reads, transact }: Reach,
 ) {
   const heads = createHeadsService({ heads: reads.heads, versions: reads.versions })
@@ -39,5 +43,16 @@ export function createGovernedServices(
     pairs: createPairsService({ heads, writes, newId }),
     themes: createThemesService({ heads, writes, newId }),
     rules: createRulesService({ heads, writes }),
+    checks: createChecksService({
+      heads,
+      reads: createChecksReads(database.db),
+      transact,
+      newId,
+      clock,
+    }),
+    revisions: createRevisionsService({
+      reads: createRevisionsReads(database.db),
+      versions: reads.versions,
+    }),
   }
 }

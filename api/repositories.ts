@@ -1,5 +1,6 @@
 import { createAccountsRepository } from './features/accounts/accounts.repository.ts'
 import { createBreachesRepository } from './features/breaches/breaches.repository.ts'
+import { createChecksRepository } from './features/checks/checks.repository.ts'
 import { createKeysRepository } from './features/keys/keys.repository.ts'
 import { createMembersRepository } from './features/members/members.repository.ts'
 import { createHeadsRepository } from './features/revisions/heads.repository.ts'
@@ -17,6 +18,7 @@ export const createRepositories = (db: Executor) => ({
   attempts: createAttemptsRepository(db),
   audit: createAuditTrail(db),
   breaches: createBreachesRepository(db),
+  checks: createChecksRepository(db),
   heads: createHeadsRepository(db),
   keys: createKeysRepository(db),
   members: createMembersRepository(db),

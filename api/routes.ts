@@ -1,7 +1,10 @@
+import { mountBreaches } from './features/breaches/breaches.routes.ts'
+import { mountChecks } from './features/checks/checks.routes.ts'
 import { mountHealth } from './features/health/health.routes.ts'
 import { mountKeys } from './features/keys/keys.routes.ts'
 import { mountMembers } from './features/members/members.routes.ts'
 import { mountPairs } from './features/pairs/pairs.routes.ts'
+import { mountRevisions } from './features/revisions/revisions.routes.ts'
 import { mountRules } from './features/rules/rules.routes.ts'
 import { mountSessions } from './features/sessions/sessions.routes.ts'
 import { mountSystems } from './features/systems/systems.routes.ts'
@@ -20,5 +23,8 @@ export function mountAll(router: ApiRouter, services: Services): void {
   mountPairs(router, services.pairs)
   mountThemes(router, services.themes)
   mountRules(router, services.rules)
+  mountChecks(router, services.checks)
+  mountBreaches(router, services.breaches)
+  mountRevisions(router, services.revisions)
   mountHealth(router, services.health)
 }

@@ -20,6 +20,7 @@ const finding = (changes: Partial<Finding> = {}): Finding => ({
   use: 'text',
   kind: 'text',
   ratio: 3.9,
+  ratios: { srgb: 3.9 },
   required: 4.5,
   basis: 'srgb',
   outcome: 'breach',
