@@ -1,0 +1,173 @@
+import {
+  OpenAPIRegistry,
+  OpenApiGeneratorV31,
+  type ResponseConfig,
+  type RouteConfig,
+} from '@asteasolutions/zod-to-openapi'
+import * as z from 'zod'
+import { contracts } from '#shared/contracts/contracts.ts'
+import { rolesWith, scopesWith } from '#shared/contracts/permissions.ts'
+import { PROBLEMS, type ProblemCode, problemSchema } from '#shared/contracts/problems.ts'
+import type { Contract } from '#shared/contracts/route.ts'
+import {
+  createProblemResponses,
+  headerRef,
+  problemExample,
+  REQUEST_ID,
+} from './problem-responses.ts'
+
+const HEADERS = {
+  'X-Request-Id': { description: 'Finds the line in the log', schema: { type: 'string' } },
+  ETag: { description: 'Strong validator', schema: { type: 'string' } },
+  Link: { description: 'rel="next" where a further page is', schema: { type: 'string' } },
+  'Set-Cookie': { description: 'The session, HttpOnly', schema: { type: 'string' } },
+  'WWW-Authenticate': { description: 'Bearer', schema: { type: 'string' } },
+  Allow: { description: 'The methods it takes', schema: { type: 'string' } },
+  'Retry-After': { description: 'Seconds', schema: { type: 'integer' } },
+} as const
+
+/** The document of the service, made from its contracts alone. */
+export function createDocument() {
+  const registry = new OpenAPIRegistry()
+  registry.registerComponent('securitySchemes', 'session', {
+    type: 'apiKey',
+    in: 'cookie',
+    name: 'dyewright',
+    description: 'Set by signing in; called __Host-dyewright where the service is reached by https',
+  })
+  registry.registerComponent('securitySchemes', 'key', {
+    type: 'http',
+    scheme: 'bearer',
+    bearerFormat: 'dyw_<kind>_…',
+    description: 'A key of one system; it beats a cookie',
+  })
+  for (const code of Object.keys(PROBLEMS) as ProblemCode[]) {
+    registry.registerComponent('examples', code, {
+      summary: PROBLEMS[code].title,
+      value: problemExample(code),
+    })
+  }
+  for (const [name, header] of Object.entries(HEADERS)) {
+    registry.registerComponent('headers', name, header)
+  }
+  const problemsOf = createProblemResponses(registry)
+  for (const contract of contracts) {
+    registry.registerPath(operationOf(contract, problemsOf(contract)))
+  }
+  const definitions = [...registry.definitions, { type: 'schema' as const, schema: problemSchema }]
+  return new OpenApiGeneratorV31(definitions).generateDocument({
+    openapi: '3.1.0',
+    info: {
+      title: 'Dyewright',
+      version: '1',
+      description:
+        'Design-token colour governance: tokens, themes, states and declared pairs of a design system, and the verdict on every pair’s contrast by WCAG 2.x. A verdict is no statement of conformity: contrast is one criterion among many.',
+    },
+    servers: [{ url: '/' }],
+    tags: [...new Set(contracts.map(({ feature }) => feature))].map((name) => ({ name })),
+  })
+}
+
+export type OpenApiDocument = ReturnType<typeof createDocument>
+
+/** The committed text of a document. */
+export const documentText = (document: OpenApiDocument): string =>
+  `${JSON.stringify(document, null, 2)}\n`
+
+function operationOf(contract: Contract, problems: RouteConfig['responses']): RouteConfig {
+  const { operationId, path, feature, summary, params, query } = contract
+  const headers = requestHeaders(contract)
+  return {
+    operationId,
+    method: contract.method.toLowerCase() as RouteConfig['method'],
+    path,
+    tags: [feature],
+    summary,
+    description: descriptionOf(contract),
+    security: contract.access === 'anyone' ? [] : securityOf(contract),
+    request: {
+      ...(params === undefined ? {} : { params }),
+      ...(query === undefined ? {} : { query }),
+      ...(headers === undefined ? {} : { headers }),
+      ...(contract.body === undefined ? {} : { body: bodyOf(contract) }),
+    },
+    responses: {
+      [contract.success.status]: successOf(contract),
+      ...(contract.conditional
+        ? { 304: { description: 'Not modified since', headers: { ...REQUEST_ID, ...ETAG } } }
+        : {}),
+      ...problems,
+    },
+  }
+}
+
+function descriptionOf({ access, description }: Contract): string {
+  const sentence = description === undefined ? '' : `${description} `
+  if (access === 'anyone') return `${sentence}Anyone may call it.`
+  if (access === 'known') return `${sentence}Anyone with a session or a key may call it.`
+  const scopes = scopesWith(access)
+  const keys = scopes.length === 0 ? '' : `, or a key with ${scopes.join(' or ')}`
+  return `${sentence}Takes the role ${rolesWith(access).join(', ')}${keys}.`
+}
+
+const securityOf = ({ access }: Contract): Record<string, string[]>[] => {
+  const hasKeys = access === 'known' || access === 'anyone' || takesKeys(access)
+  return hasKeys ? [{ session: [] }, { key: [] }] : [{ session: [] }]
+}
+
+const takesKeys = (permission: Exclude<Contract['access'], 'known' | 'anyone'>): boolean =>
+  scopesWith(permission).length > 0 ||
+  scopesWith(`${permission}-own` as typeof permission).length > 0
+
+const validator = (description: string) => z.string().meta({ description, example: '"9c3e1f20"' })
+
+function requestHeaders({ precondition, conditional }: Contract) {
+  const ifMatch = validator('The ETag that was read')
+  const fields = {
+    ...(precondition === 'required' ? { 'If-Match': ifMatch } : {}),
+    ...(precondition === 'create'
+      ? {
+          'If-Match': ifMatch.optional(),
+          'If-None-Match': z
+            .string()
+            .optional()
+            .meta({ description: 'To create: nothing may stand there yet', example: '*' }),
+        }
+      : {}),
+    ...(conditional
+      ? { 'If-None-Match': validator('Answers 304 while it still holds').optional() }
+      : {}),
+  }
+  return Object.keys(fields).length === 0 ? undefined : z.object(fields)
+}
+
+function bodyOf({ body, bodyExample }: Contract) {
+  const media = {
+    schema: body as z.ZodType,
+    ...(bodyExample === undefined ? {} : { example: bodyExample }),
+  }
+  return { required: true, content: { 'application/json': media } }
+}
+
+const ETAG = headerRef('ETag')
+
+function successOf(contract: Contract): ResponseConfig {
+  const { success, conditional, precondition, query, operationId } = contract
+  const isPaged = query !== undefined && 'cursor' in query.shape
+  const hasEtag = success.status !== 204 && (conditional || precondition !== undefined)
+  const headers = {
+    ...REQUEST_ID,
+    ...(hasEtag ? ETAG : {}),
+    ...(isPaged ? headerRef('Link') : {}),
+    ...(operationId === 'signIn' ? headerRef('Set-Cookie') : {}),
+  }
+  if (success.status === 204) return { description: 'Done', headers }
+  const { body: schema, example } = success
+  const media = 'media' in success ? success.media : ['application/json']
+  const bare = media.map((type) => type.replace(/;.*$/, ''))
+  return {
+    description: 'Success',
+    headers,
+    content: Object.fromEntries(bare.map((type) => [type, { schema, example }])),
+  }
+}

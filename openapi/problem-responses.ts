@@ -1,0 +1,81 @@
+import type { OpenAPIRegistry } from '@asteasolutions/zod-to-openapi'
+import {
+  GENERAL_PROBLEMS,
+  type Problem,
+  PROBLEMS,
+  type ProblemCode,
+} from '#shared/contracts/problems.ts'
+import type { Contract } from '#shared/contracts/route.ts'
+
+const MEDIA = 'application/problem+json'
+
+const WITH_POINTER: readonly ProblemCode[] = ['request-invalid', 'system-unresolvable']
+const WITH_PARAMETER: readonly ProblemCode[] = ['parameter-invalid']
+
+/** What a refusal looks like on the wire. */
+export function problemExample(code: ProblemCode): Problem {
+  const { status, title } = PROBLEMS[code]
+  const errors = WITH_POINTER.includes(code)
+    ? [{ pointer: '/values/dark/rest', detail: 'Expected a CSS colour' }]
+    : WITH_PARAMETER.includes(code)
+      ? [{ parameter: 'limit', detail: 'Expected a whole number' }]
+      : undefined
+  return {
+    type: `/problems/${code}`,
+    title,
+    status,
+    ...(errors === undefined ? {} : { errors }),
+    requestId: 'req_01kb2rz7y8e6k0s9d4m1p3q5t7',
+  }
+}
+
+export const headerRef = <N extends string>(name: N) =>
+  ({ [name]: { $ref: `#/components/headers/${name}` } }) as Record<N, { $ref: string }>
+
+const HEADERS: Readonly<Record<number, Record<string, { $ref: string }>>> = {
+  401: headerRef('WWW-Authenticate'),
+  405: headerRef('Allow'),
+  429: headerRef('Retry-After'),
+  503: headerRef('Retry-After'),
+}
+
+/** Component responses, gathered while the operations are described: most are refused alike. */
+export function createProblemResponses(registry: OpenAPIRegistry) {
+  const known = new Set<string>()
+  const refer = (status: number, codes: readonly ProblemCode[]) => {
+    const name = codes.join('.')
+    if (!known.has(name)) registry.registerComponent('responses', name, responseOf(status, codes))
+    known.add(name)
+    return { $ref: `#/components/responses/${name}` }
+  }
+  /** Every code an operation can be refused with, grouped by status. */
+  return (contract: Contract) => {
+    const codes = [...new Set<ProblemCode>([...contract.problems, ...GENERAL_PROBLEMS])].sort()
+    const statuses = [...new Set(codes.map((code) => PROBLEMS[code].status))]
+    return Object.fromEntries(
+      statuses.map((status) => [
+        String(status),
+        refer(
+          status,
+          codes.filter((code) => PROBLEMS[code].status === status),
+        ),
+      ]),
+    )
+  }
+}
+
+const responseOf = (status: number, codes: readonly ProblemCode[]) => ({
+  description: codes.map((code) => `${code}: ${PROBLEMS[code].title}`).join('; '),
+  headers: { ...REQUEST_ID, ...HEADERS[status] },
+  content: {
+    [MEDIA]: {
+      schema: { $ref: '#/components/schemas/Problem' },
+      examples: Object.fromEntries(
+        codes.map((code) => [code, { $ref: `#/components/examples/${code}` }]),
+      ),
+    },
+  },
+})
+
+/** On every answer. */
+export const REQUEST_ID = headerRef('X-Request-Id')
