@@ -137,7 +137,7 @@ export const limitSchema = (most: number, fallback: number) =>
     .min(1)
     .max(most)
     .default(fallback)
-    .meta({ type: 'integer', description: `At most ${most}` })
+    .meta({ type: 'integer', minimum: 1, maximum: most, default: fallback })
 export const cursorSchema = z
   .string()
   .max(512)
