@@ -12,7 +12,7 @@ import { MARIADB_FOLDER, openPrivateDatabase } from '#scripts/start/private-data
 import { endProcess, findOrphans, processIdentity } from '#scripts/start/processes.mjs'
 import { DATA, DIST, ROOT } from '#scripts/start/project.mjs'
 import { runProgram } from '#scripts/start/run-program.mjs'
-import { contentsOf, pendingSeed, refuseDemoInProduction } from '#scripts/start/seeding.mjs'
+import { contentsOf, pendingSeed } from '#scripts/start/seeding.mjs'
 import { startService } from '#scripts/start/service.mjs'
 import { readSettings } from '#scripts/start/settings.mjs'
 import { isStopping, onStop, runOrStop, stopAll, stopOnSignals } from '#scripts/start/shutdown.mjs'
@@ -41,7 +41,6 @@ await runOrStop(async () => {
   })
   await migrate(database)
   const contents = await contentsOf(database.serveUrl)
-  if (settings.production) refuseDemoInProduction(contents)
   const seeding = contents === 'empty' && !settings.production
   if (seeding) seed.begin()
   const env = serviceEnvironment(settings, database, seed.file)
@@ -55,7 +54,7 @@ await runOrStop(async () => {
     seed.end()
   }
   await service.untilOk('/readyz', UP_WITHIN_MS)
-  const showDemo = seeding || contents === 'demo'
+  const showDemo = !settings.production && (seeding || contents === 'demo')
   console.log(
     describeReady({
       url: settings.url,

@@ -3,7 +3,6 @@ import { createHash } from 'node:crypto'
 import { existsSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { DATA, ROOT } from '#scripts/start/project.mjs'
-import { StepFailure } from '#scripts/start/steps.mjs'
 
 /**
  * @typedef {{ email: string, name: string, role: string, listed: boolean }} DemoAccount
@@ -57,15 +56,6 @@ export async function contentsOf(url) {
   } finally {
     await connection.end()
   }
-}
-
-/** @param {string} contents */
-export function refuseDemoInProduction(contents) {
-  if (contents !== 'demo') return
-  throw new StepFailure(
-    'This database holds the demo accounts, whose password everybody knows. NODE_ENV=production refuses it:\n' +
-      'give another DATABASE_URL, or move .data away.',
-  )
 }
 
 /** @param {string} url */
