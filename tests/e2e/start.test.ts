@@ -1,0 +1,209 @@
+import { type ChildProcess, spawn, spawnSync } from 'node:child_process'
+import { once } from 'node:events'
+import { cpSync, existsSync, mkdtempSync, readFileSync, rmSync, symlinkSync } from 'node:fs'
+import { tmpdir } from 'node:os'
+import { dirname, join } from 'node:path'
+import { setTimeout as delay } from 'node:timers/promises'
+import { afterAll, beforeAll, describe, expect, inject, test } from 'vitest'
+import { freePort } from '#scripts/start/free-port.mjs'
+import { findProcesses, processIdentity } from '#scripts/start/processes.mjs'
+import { demoPeople } from '#scripts/start/seeding.mjs'
+
+const ROOT = process.cwd()
+const READY = 'Dyewright is ready:'
+
+/** A copy of the project, so that a service running in this folder is left alone. */
+let folder: string
+let port: number
+let url: string
+let running: Start | undefined
+
+interface Start {
+  readonly child: ChildProcess
+  readonly output: () => string
+}
+
+beforeAll(async () => {
+  folder = mkdtempSync(join(tmpdir(), 'dyw-start-'))
+  for (const file of projectFiles()) {
+    cpSync(join(ROOT, file), join(folder, file), { recursive: true })
+  }
+  symlinkSync(join(ROOT, 'node_modules'), join(folder, 'node_modules'))
+  cpSync(inject('dist'), join(folder, 'dist'), { recursive: true })
+  port = await freePort()
+  url = `http://127.0.0.1:${port}`
+})
+
+afterAll(async () => {
+  if (running !== undefined) await stop(running)
+  rmSync(folder, { recursive: true, force: true })
+})
+
+describe('npm start', () => {
+  test('answers 503 from readyz until the demo is loaded, then says what to do next', async () => {
+    running = start()
+    const seen = await watchReadiness()
+    await untilSaid(running, READY)
+    expect(seen).toContain(503)
+    expect(await statusOf('/readyz')).toBe(200)
+    const said = running.output()
+    expect(said).toContain(`${READY} ${url}`)
+    expect(said).toMatch(new RegExp(`^password  ${demoPeople().password}$`, 'm'))
+    for (const { email, listed } of demoPeople().accounts) expect(said.includes(email)).toBe(listed)
+    for (const step of [
+      'Node',
+      'Packages',
+      'MariaDB',
+      'Database',
+      'Migrations',
+      'Service',
+      'Demo',
+    ]) {
+      expect(said).toMatch(new RegExp(`^${step} +\\d+\\.\\d s`, 'm'))
+    }
+  })
+
+  test('answers the printed curl, and fails and passes the printed gate', async () => {
+    const said = running?.output() ?? ''
+    const [, keyFile, address] = /^ {2}curl -H .*\(cat (\S+)\)" (\S+)$/m.exec(said) ?? []
+    expect(address).toContain(url)
+    const theme = await fetch(address!, {
+      headers: { authorization: `Bearer ${readFileSync(join(folder, keyFile!), 'utf8').trim()}` },
+    })
+    expect(await theme.text()).toContain(':root')
+    const gate = /^ {2}DYEWRIGHT_KEY=.*$/m.exec(said)?.[0] ?? ''
+    expect(shell(gate).status).toBe(1)
+    expect(shell(gate.replace('breaching-change', 'fix')).status).toBe(0)
+  })
+
+  test('refuses a second start in the folder, naming the first', async () => {
+    const second = start()
+    const [code] = await once(second.child, 'exit')
+    expect(code).toBe(1)
+    expect(second.output()).toContain(
+      `npm start already runs in this folder: process ${running?.child.pid}.`,
+    )
+  })
+
+  test('answers 503 while a killed MariaDB is started again, with the service up all along', async () => {
+    const [service] = findProcesses(join(folder, 'dist/api/server.js'))
+    const identity = processIdentity(service!)
+    const [database] = findProcesses(`--datadir=${join(folder, '.data/mariadb')}`)
+    process.kill(database!, 'SIGKILL')
+    const seen: number[] = []
+    const deadline = Date.now() + 20_000
+    do {
+      seen.push(await statusOf('/readyz'))
+      await delay(20)
+    } while ((seen.at(-1) !== 200 || !seen.includes(503)) && Date.now() < deadline)
+    expect(seen.filter((status) => status !== 200 && status !== 503)).toEqual([])
+    expect(seen).toContain(503)
+    expect(seen.at(-1)).toBe(200)
+    expect(processIdentity(service!)).toBe(identity)
+  })
+
+  test('leaves nothing running after SIGTERM, and the data for the next start', async () => {
+    const key = readFileSync(join(folder, '.data/demo-ci-key'), 'utf8')
+    expect(await stop(running!)).toBe(0)
+    expect(findProcesses(`--datadir=${join(folder, '.data/mariadb')}`)).toEqual([])
+    expect(findProcesses(join(folder, 'dist/api/server.js'))).toEqual([])
+    expect(existsSync(join(folder, '.data/database-url'))).toBe(false)
+    running = start()
+    await untilSaid(running, READY)
+    expect(running.output()).not.toMatch(/^Demo /m)
+    expect(running.output()).toContain('unchanged')
+    const answer = await fetch(`${url}/v1/systems/larkhaven/themes/dark.css`, {
+      headers: { authorization: `Bearer ${key.trim()}` },
+    })
+    expect(answer.status).toBe(200)
+  })
+
+  test('leaves no orphan of a start that was killed in the way of the next', async () => {
+    running!.child.kill('SIGKILL')
+    await once(running!.child, 'exit')
+    expect(findProcesses(join(folder, 'dist/api/server.js'))).toHaveLength(1)
+    running = start()
+    await untilSaid(running, READY)
+    expect(running.output()).toMatch(/^Tidying .*left by a start that was killed$/m)
+    expect(findProcesses(join(folder, 'dist/api/server.js'))).toHaveLength(1)
+  })
+
+  test('refuses the demo’s database in production, by name', async () => {
+    await stop(running!)
+    running = undefined
+    const production = start({ NODE_ENV: 'production', PUBLIC_URL: 'https://dyewright.example' })
+    const [code] = await once(production.child, 'exit')
+    expect(code).toBe(1)
+    expect(production.output()).toMatch(
+      /refused to start: the database has \d+ accounts of the demo/,
+    )
+  })
+})
+
+function projectFiles(): string[] {
+  const listed = spawnSync('git', ['ls-files', '--cached', '--others', '--exclude-standard'], {
+    encoding: 'utf8',
+  })
+  return listed.stdout.split('\n').filter((file) => file !== '' && existsSync(join(ROOT, file)))
+}
+
+function start(env: NodeJS.ProcessEnv = {}): Start {
+  // What the test run sets for itself must not reach the service.
+  const { NODE_ENV: _, VITEST: __, DATABASE_URL: ___, ...rest } = process.env
+  const child = spawn(process.execPath, ['scripts/start.mjs'], {
+    cwd: folder,
+    env: { ...rest, PORT: String(port), ...env },
+    stdio: ['ignore', 'pipe', 'pipe'],
+  })
+  let said = ''
+  for (const stream of [child.stdout, child.stderr]) {
+    stream?.setEncoding('utf8').on('data', (text) => {
+      said += text
+    })
+  }
+  return { child, output: () => said }
+}
+
+async function stop({ child }: Start): Promise<number | null> {
+  child.kill('SIGTERM')
+  const [code] = child.exitCode === null ? await once(child, 'exit') : [child.exitCode]
+  return code
+}
+
+async function untilSaid({ child, output }: Start, words: string): Promise<void> {
+  while (!output().includes(words)) {
+    if (child.exitCode !== null) throw new Error(`ended without saying "${words}":\n${output()}`)
+    await delay(50)
+  }
+}
+
+/** Asks all along, from before anybody listens until it is ready. */
+async function watchReadiness(): Promise<number[]> {
+  const seen: number[] = []
+  const deadline = Date.now() + 100_000
+  while (seen.at(-1) !== 200 && Date.now() < deadline) {
+    seen.push(await statusOf('/readyz'))
+    await delay(50)
+  }
+  return seen
+}
+
+/** 0 where nobody listens. */
+async function statusOf(path: string): Promise<number> {
+  try {
+    const answer = await fetch(`${url}${path}`)
+    await answer.arrayBuffer()
+    return answer.status
+  } catch {
+    return 0
+  }
+}
+
+function shell(command: string) {
+  const node = dirname(process.execPath)
+  return spawnSync('bash', ['-c', command], {
+    cwd: folder,
+    encoding: 'utf8',
+    env: { ...process.env, PATH: `${node}:${process.env.PATH}` },
+  })
+}
