@@ -1,3 +1,4 @@
+import './lib/zod-without-eval.ts'
 import '@fontsource/inter/latin-400.css'
 import '@fontsource/inter/latin-500.css'
 import '@fontsource/inter/latin-600.css'

@@ -1,15 +1,28 @@
 import { Link, useRouteError } from 'react-router-dom'
 import { WordButton } from '#console/ui/button.tsx'
+import { DyewrightMark } from '#console/ui/dyewright-mark.tsx'
 import { Trouble } from '#console/ui/page-states.tsx'
 import { ApiError } from '#shared/client/client.ts'
 import { paths } from './paths.ts'
 
-/** What is shown where a page could not be: what happened, in the service's words, and the ways on. */
+/** What is shown where nothing of the console could be: what happened, and the ways on. */
 export function ErrorScreen() {
+  return (
+    <main className="mr-16 ml-42 py-44 wide:mr-44 wide:ml-116">
+      <DyewrightMark height={48} />
+      <div className="mt-22">
+        <PageTrouble />
+      </div>
+    </main>
+  )
+}
+
+/** The same inside the frame of a system, which stays. */
+export function PageTrouble() {
   const error = useRouteError()
   const { title, detail } = wordsFor(error)
   return (
-    <main className="mr-16 ml-42 py-44 wide:mr-44 wide:ml-116">
+    <div className="py-22">
       <title>{`${title} · Dyewright`}</title>
       <Trouble title={title} level="h1">
         <p>{detail}</p>
@@ -23,7 +36,7 @@ export function ErrorScreen() {
           </Link>
         </p>
       </Trouble>
-    </main>
+    </div>
   )
 }
 

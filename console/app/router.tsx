@@ -5,17 +5,39 @@ import {
   redirect,
 } from 'react-router-dom'
 import { Waiting } from '#console/ui/page-states.tsx'
-import { ErrorScreen } from './error-screen.tsx'
+import { ErrorScreen, PageTrouble } from './error-screen.tsx'
 import { paths } from './paths.ts'
 
+/** Pages of one system; what fails in one leaves the frame standing. */
 const systemPages: RouteObject[] = [
   {
     index: true,
     loader: ({ params }: LoaderFunctionArgs) => redirect(paths.tokens(params.system ?? '')),
   },
-  { path: 'tokens', lazy: () => import('#console/routes/tokens-page.tsx') },
-  { path: 'tokens/:name', lazy: () => import('#console/routes/token-page.tsx') },
-  { path: 'breaches/:id?', lazy: () => import('#console/routes/breaches-page.tsx') },
+  {
+    path: 'tokens',
+    lazy: () => import('#console/routes/tokens-page.tsx'),
+    ErrorBoundary: PageTrouble,
+  },
+  {
+    path: 'tokens/:name',
+    lazy: () => import('#console/routes/token-page.tsx'),
+    ErrorBoundary: PageTrouble,
+  },
+  {
+    path: 'breaches/:id?',
+    lazy: () => import('#console/routes/breaches-page.tsx'),
+    ErrorBoundary: PageTrouble,
+  },
+]
+
+const signedInPages: RouteObject[] = [
+  { path: 'systems', lazy: () => import('#console/routes/systems-page.tsx') },
+  {
+    path: 'systems/:system',
+    lazy: () => import('#console/routes/system-frame.tsx'),
+    children: systemPages,
+  },
 ]
 
 export const router = createBrowserRouter([
@@ -25,17 +47,7 @@ export const router = createBrowserRouter([
     children: [
       { index: true, loader: () => redirect(paths.systems()) },
       { path: 'sign-in', lazy: () => import('#console/routes/sign-in-page.tsx') },
-      {
-        lazy: () => import('#console/routes/signed-in.tsx'),
-        children: [
-          { path: 'systems', lazy: () => import('#console/routes/systems-page.tsx') },
-          {
-            path: 'systems/:system',
-            lazy: () => import('#console/routes/system-frame.tsx'),
-            children: systemPages,
-          },
-        ],
-      },
+      { lazy: () => import('#console/routes/signed-in.tsx'), children: signedInPages },
       { path: '*', lazy: () => import('#console/routes/not-found-page.tsx') },
     ],
   },

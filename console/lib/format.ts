@@ -67,6 +67,11 @@ export function formatDay(iso: string, now = new Date()): string {
     : dayMonthYear.format(date)
 }
 
+/** `12 October` */
+export function formatLongDay(iso: string): string {
+  return dayLong.format(new Date(iso))
+}
+
 /** `today at 09:42`, else `12 October at 09:42`. */
 export function formatMoment(iso: string, now = new Date()): string {
   const date = new Date(iso)

@@ -13,7 +13,7 @@ export function Component() {
     <div className="flex min-h-dvh">
       <title>Sign in · Dyewright</title>
       <OwnStrip />
-      <main className="flex min-w-0 flex-1 flex-col py-44 pr-16 pl-12 wide:pr-44 wide:pl-44 full:pl-120">
+      <main className="flex min-w-0 flex-1 flex-col py-44 pr-16 pl-14 wide:pr-44 wide:pl-188 full:pl-292">
         <div className="my-auto w-full max-w-400">
           <h1 className="flex items-center gap-18 text-34 font-semibold tracking-tight full:text-[2.5rem]/[3rem]">
             <DyewrightMark height={64} />

@@ -24,7 +24,7 @@ export function Component() {
         <PlaceItems />
       </TopLine>
       <main id="content">
-        <div className="flex flex-wrap items-baseline gap-x-36 gap-y-4 py-13">
+        <div className="flex flex-wrap items-baseline gap-x-36 gap-y-4 pt-8 pb-10">
           <h1 className="large-name">Systems</h1>
           <p className="text-ink-soft">
             {startSentence(countOf(systems.length, 'system'))} you may open

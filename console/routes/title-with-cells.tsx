@@ -7,6 +7,7 @@ import { tokenQueries } from '#console/features/tokens/tokens.queries.ts'
 import { evaluatedHalf } from '#console/features/tokens/tried-cell.ts'
 import { Arrow } from '#console/ui/ratio-text.tsx'
 import { StripCell } from '#console/ui/strip-cell.tsx'
+import { useNarrow } from '#console/ui/window-size.ts'
 import type { Evaluation } from '#shared/checks/evaluation.ts'
 import { findingsOf } from '#shared/checks/token-standing.ts'
 import type { TokenWire } from '#shared/contracts/tokens.contract.ts'
@@ -28,6 +29,7 @@ export function TitleWithCells({
   const { data: strip } = useSuspenseQuery(tokenQueries.strip(system))
   const { shown, bands } = useStripBands(system)
   const ledgerToken = tokens.find(({ id }) => id === token.id)
+  const size = useNarrow() ? 'row' : 'title'
   const triedHalves = useTriedHalves(system, token.id, tried)
   if (ledgerToken === undefined) return null
   return (
@@ -38,23 +40,23 @@ export function TitleWithCells({
       title={title}
     >
       {shown !== undefined && (
-        <div className="flex items-start">
+        <div className="flex flex-wrap items-start gap-y-10">
           <CaptionedCell caption="present">
             <TokenCell
               name={token.name}
               resolved={token.resolved}
               shown={shown}
               breach={bands.find(({ name }) => name === token.name)?.breach}
-              size="title"
+              size={size}
             />
           </CaptionedCell>
           {triedHalves !== undefined && (
             <>
-              <span className="mx-8 flex h-38 items-center">
+              <span className="flex h-28 items-center wide:mx-8 wide:h-38">
                 <Arrow />
               </span>
               <CaptionedCell caption="tried">
-                <StripCell size="title" label={`${token.name} as tried`} {...triedHalves} />
+                <StripCell size={size} label={`${token.name} as tried`} {...triedHalves} />
               </CaptionedCell>
             </>
           )}

@@ -3,7 +3,7 @@ import type { ReactNode } from 'react'
 export type MarkKind = 'breach' | 'waived' | 'exempt'
 
 const WORD_STYLES = {
-  breach: 'text-madder font-semibold',
+  breach: 'text-madder',
   waived: 'text-weld',
   exempt: 'text-ink-soft',
 } as const
@@ -21,7 +21,7 @@ export function OutcomeMark({
 }) {
   return (
     <span
-      className={`inline-flex items-baseline gap-7 ${WORD_STYLES[kind]} ${calm ? 'font-normal' : ''}`}
+      className={`inline-flex items-baseline gap-7 ${WORD_STYLES[kind]} ${kind === 'breach' && !calm ? 'font-semibold' : 'font-normal'}`}
     >
       <MarkShape kind={kind} />
       <span>{children}</span>

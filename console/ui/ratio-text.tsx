@@ -38,11 +38,13 @@ export function RatioMove({ before, ratio, required }: Measured & { before: numb
     <span className="figures inline-flex items-baseline whitespace-nowrap">
       {before !== undefined && (
         <>
-          <span>{truncateRatio(before, 2)}</span>
+          <span className="min-w-38 text-end">{truncateRatio(before, 2)}</span>
           <Arrow />
         </>
       )}
-      <RatioColumns ratio={ratio} required={required} />
+      <span className="inline-flex min-w-90 justify-end">
+        <RatioColumns ratio={ratio} required={required} />
+      </span>
     </span>
   )
 }

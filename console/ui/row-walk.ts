@@ -18,19 +18,22 @@ export function useRowWalk(count: number, reveal?: (index: number) => void) {
 
   const focusRow = useCallback(
     (index: number) => {
-      reveal?.(index)
-      requestAnimationFrame(() => {
-        const link = container.current?.querySelector<HTMLElement>(`[data-row="${index}"]`)
+      const find = () => container.current?.querySelector<HTMLElement>(`[data-row="${index}"]`)
+      const take = (link: HTMLElement | null | undefined) => {
         link?.focus({ preventScroll: true })
         link?.closest('tr, li')?.scrollIntoView({ block: 'nearest' })
-      })
+      }
+      const drawn = find()
+      if (drawn) return take(drawn)
+      reveal?.(index)
+      requestAnimationFrame(() => take(find()))
     },
     [reveal],
   )
 
   function onKeyDown(event: KeyboardEvent) {
-    const inRow = event.target instanceof HTMLElement && event.target.dataset.row !== undefined
-    const next = inRow ? nextRow(event, stop, count) : undefined
+    if (!(event.target instanceof HTMLElement) || event.target.dataset.row === undefined) return
+    const next = nextRow(event, Number(event.target.dataset.row), count)
     if (next === undefined) return
     event.preventDefault()
     focusRow(next)

@@ -10,6 +10,7 @@ export interface CellHalf {
 }
 
 const SIZES = {
+  line: { width: 104, height: 24, bare: 3 },
   row: { width: 116, height: 28, bare: 4 },
   title: { width: 132, height: 38, bare: 5 },
 } as const

@@ -12,10 +12,12 @@ interface Cut {
   readonly bare: number
   readonly left: number
   readonly deep: number
+  /** Length of a stitch. */
+  readonly stitch: number
 }
 
-const WIDE: Cut = { left: 24, width: 48, bare: 6, deep: 13 }
-const NARROW: Cut = { left: 8, width: 20, bare: 3, deep: 8 }
+const WIDE: Cut = { left: 24, width: 48, bare: 6, deep: 13, stitch: 5 }
+const NARROW: Cut = { left: 8, width: 20, bare: 3, deep: 8, stitch: 3 }
 
 /** The drawing of the strip: two grounds, two bars a token, and the notches. */
 export function StripCloth({
@@ -47,10 +49,10 @@ export function StripCloth({
           <rect x={middle - bar} y={band.top} width={bar} height={band.high} fill={band.light} />
           <rect x={middle} y={band.top} width={bar} height={band.high} fill={band.dark} />
           {(band.breach === 'light' || band.breach === 'both') && (
-            <BandNotch band={band} edge={cut.left} into={1} deep={cut.deep} />
+            <BandNotch band={band} edge={cut.left} into={1} cut={cut} />
           )}
           {(band.breach === 'dark' || band.breach === 'both') && (
-            <BandNotch band={band} edge={cut.left + cut.width} into={-1} deep={cut.deep} />
+            <BandNotch band={band} edge={cut.left + cut.width} into={-1} cut={cut} />
           )}
         </g>
       ))}
@@ -63,10 +65,10 @@ interface BandNotchProps {
   readonly edge: number
   /** 1 cuts towards the right, −1 towards the left. */
   readonly into: 1 | -1
-  readonly deep: number
+  readonly cut: Cut
 }
 
-function BandNotch({ band, edge, into, deep }: BandNotchProps) {
+function BandNotch({ band, edge, into, cut: { deep, stitch } }: BandNotchProps) {
   const middle = band.top + band.high / 2
   const high = Math.min(Math.max(band.high - 1, 1), 13)
   const cut = `M${edge} ${middle - high / 2}L${edge + into * deep} ${middle}L${edge} ${middle + high / 2}`
@@ -76,9 +78,9 @@ function BandNotch({ band, edge, into, deep }: BandNotchProps) {
       <path d={`${cut}z`} className="fill-ground" />
       {high >= 8 && <path d={cut} fill="none" className="stroke-rule" />}
       <rect
-        x={into === 1 ? edge - 7 : edge + 2}
+        x={into === 1 ? edge - 2 - stitch : edge + 2}
         y={middle - thick / 2}
-        width={5}
+        width={stitch}
         height={thick}
         className="mark-shape fill-madder"
       />

@@ -1,7 +1,7 @@
 import { type ReactNode, useState } from 'react'
 import { Link } from 'react-router-dom'
 import { DyewrightMark } from './dyewright-mark.tsx'
-import { useNarrow } from './window-size.ts'
+import { useCompact } from './window-size.ts'
 
 /** The first line of every page: the product, where one is, and the ways out. */
 export function TopLine({
@@ -21,10 +21,10 @@ export function TopLine({
   /** Links, as list items. */
   children: ReactNode
 }) {
-  const narrow = useNarrow()
+  const compact = useCompact()
   const [open, setOpen] = useState(false)
   return (
-    <header className="flex min-h-44 flex-wrap items-center gap-x-28">
+    <header className="flex min-h-44 flex-wrap items-center gap-x-14 wide:gap-x-28">
       <Link to={home} className="flex items-center gap-10 font-semibold">
         <DyewrightMark />
         Dyewright
@@ -32,7 +32,7 @@ export function TopLine({
       {where !== undefined && (
         <div className="min-w-0 truncate border-rule wide:border-l wide:pl-20">{where}</div>
       )}
-      {narrow && (
+      {compact && (
         <button
           type="button"
           aria-expanded={open}
@@ -42,8 +42,8 @@ export function TopLine({
           Menu
         </button>
       )}
-      {(!narrow || open) && (
-        <ul className="flex w-full flex-wrap items-center gap-x-28 gap-y-10 py-8 wide:ml-auto wide:w-auto wide:py-0">
+      {(!compact || open) && (
+        <ul className="flex w-full flex-wrap items-center gap-x-28 gap-y-10 py-8 min-[901px]:ml-auto min-[901px]:w-auto min-[901px]:py-0">
           {children}
           <li>
             {person} {role !== undefined && <span className="text-ink-soft">{role}</span>}

@@ -10,15 +10,24 @@ export function useWindowHeight(): number {
   return useSyncExternalStore(onResize, () => window.innerHeight)
 }
 
+/** ≤ 720 px: the strip and the rows are laid out anew; ≤ 900 px the ways out go into a menu. */
 const NARROW = '(max-width: 720px)'
+const COMPACT = '(max-width: 900px)'
 
-function onNarrow(notify: () => void) {
-  const list = window.matchMedia(NARROW)
+const onChangeOf = (query: string) => (notify: () => void) => {
+  const list = window.matchMedia(query)
   list.addEventListener('change', notify)
   return () => list.removeEventListener('change', notify)
 }
+const onNarrow = onChangeOf(NARROW)
+const onCompact = onChangeOf(COMPACT)
 
 /** Whether the page is laid out for a narrow screen (or a high zoom). */
 export function useNarrow(): boolean {
   return useSyncExternalStore(onNarrow, () => window.matchMedia(NARROW).matches)
+}
+
+/** Whether the top line has no room for all its places. */
+export function useCompact(): boolean {
+  return useSyncExternalStore(onCompact, () => window.matchMedia(COMPACT).matches)
 }

@@ -1,6 +1,6 @@
 import { useSuspenseQuery } from '@tanstack/react-query'
 import { Link } from 'react-router-dom'
-import { formatDay, formatMoment, startSentence } from '#console/lib/format.ts'
+import { formatLongDay, formatMoment, startSentence } from '#console/lib/format.ts'
 import { stateInWords } from '#console/lib/finding-words.ts'
 import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import { useNarrow } from '#console/ui/window-size.ts'
@@ -24,7 +24,7 @@ export function BreachHistory({
   return (
     <div className="grid gap-x-44 gap-y-20 full:grid-cols-[620px_1fr]">
       <section>
-        <h2 className="font-semibold">Since {formatDay(breach.firstSeenAt)}</h2>
+        <h2 className="font-semibold">Since {formatLongDay(breach.firstSeenAt)}</h2>
         {!narrow && <BreachSteps breach={breach} events={breach.events} />}
         <Facts breach={breach} />
         <p className="mt-10 flex flex-wrap gap-x-28 gap-y-6">

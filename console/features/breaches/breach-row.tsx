@@ -27,7 +27,7 @@ export function BreachRow({ breach, href, link, isOpened }: BreachRowProps) {
         }
       }}
     >
-      <td className="row-start number figures text-ink-soft">{breach.number}</td>
+      <td className="row-start number figures font-normal! text-ink-soft">{breach.number}</td>
       <td>
         <span className="block pl-16">
           <PairSample {...breach.rendered} breaches={breach.status === 'open'} />
@@ -70,7 +70,7 @@ export function BreachLink({ breach, href, link, isOpened }: BreachRowProps) {
       {...link}
       aria-expanded={isOpened}
       aria-label={`Breach ${breach.number}: ${breach.foreground} on ${breach.background}`}
-      className="block truncate py-6"
+      className="block py-6 break-words wide:truncate"
     >
       <span className={isOpened ? 'font-semibold' : 'font-medium'}>{breach.foreground}</span>
       {' on '}

@@ -9,7 +9,8 @@ export function BreachStatus({ breach }: { breach: BreachWire }) {
   if (breach.status === 'waived') return <OutcomeMark kind="waived">waived</OutcomeMark>
   return (
     <OutcomeMark kind="breach" calm>
-      {breach.gating ? 'open' : 'open, reported only'}
+      open
+      {!breach.gating && <span className="text-ink-soft">, reported only</span>}
     </OutcomeMark>
   )
 }

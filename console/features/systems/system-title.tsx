@@ -7,8 +7,8 @@ import type { SystemWire } from '#shared/contracts/systems.contract.ts'
 export function SystemTitle({ system, breaches }: { system: SystemWire; breaches: string }) {
   const { counts, head, latestRelease } = system
   return (
-    <div className="flex min-h-66 flex-wrap items-center gap-x-36 gap-y-6 py-8">
-      <h1 className="large-name min-w-0 break-words" title={system.name}>
+    <div className="flex min-h-62 flex-wrap items-start gap-x-36 gap-y-4 pt-6 pb-8">
+      <h1 className="large-name mt-2 min-w-0 break-words" title={system.name}>
         {system.key}
       </h1>
       <div className="min-w-0">
@@ -40,7 +40,7 @@ export function SystemName({ system, href }: { system: SystemWire; href: string 
       <Link to={href} className="font-semibold hover:underline">
         {system.key}
       </Link>
-      <span className="ml-12 text-ink-soft">
+      <span className="ml-12 hidden text-ink-soft wide:inline">
         revision {system.head.revision}
         {system.latestRelease !== null && `, release ${system.latestRelease}`}
       </span>

@@ -42,7 +42,7 @@ export function ComponentField({
       onChange={(event) => take(event.target.value)}
       onBlur={() => setDraft(undefined)}
       onKeyDown={onKeyDown}
-      className="w-80"
+      className="w-0 flex-1 wide:w-80 wide:flex-none"
     />
   )
 }

@@ -16,7 +16,7 @@ export function TokenCell({
   resolved: TokenWire['resolved']
   shown: StripThemes
   breach: StripBand['breach']
-  size?: 'row' | 'title'
+  size?: 'line' | 'row' | 'title'
 }) {
   return (
     <StripCell

@@ -1,4 +1,5 @@
 import { useEffect } from 'react'
+import { startSentence } from '#console/lib/format.ts'
 import { RulerHead } from '#console/ui/ratio-ruler.tsx'
 import type { StripBand } from '#console/ui/strip-geometry.ts'
 import { useRowWalk } from '#console/ui/row-walk.ts'
@@ -70,8 +71,8 @@ function LedgerHead({ light, dark }: { light: string; dark: string }) {
     <thead>
       <tr aria-rowindex={1}>
         <th className="w-88">Group</th>
-        <th className="w-[max(120px,178px+(100cqw-1280px)*0.4)]">Name</th>
-        <th className="w-134">{light === dark ? light : `${light}, ${dark}`}</th>
+        <th className="w-[max(120px,168px+(100cqw-1280px)*0.4)]">Name</th>
+        <th className="w-134">{startSentence(light === dark ? light : `${light}, ${dark}`)}</th>
         <th className="w-194 @max-[960px]:hidden">
           <span className="pl-14 inline-block">
             <SourceHeads />
@@ -81,11 +82,11 @@ function LedgerHead({ light, dark }: { light: string; dark: string }) {
         <th className="w-129">
           <span className="block w-71 text-end">Lowest</span>
         </th>
-        <th className="w-261 @max-[1180px]:hidden">
+        <th className="w-257 @max-[1180px]:hidden">
           <span className="sr-only">Ratio, from 1 to 21</span>
           <RulerHead />
         </th>
-        <th className="w-[max(104px,106px+(100cqw-1280px)*0.2)] @max-[700px]:hidden">Where</th>
+        <th className="w-[max(104px,116px+(100cqw-1280px)*0.2)] @max-[700px]:hidden">Where</th>
         <th>Mark</th>
       </tr>
     </thead>

@@ -63,6 +63,7 @@ function TokenLine({
           resolved={token.resolved}
           shown={shown}
           breach={breaches.get(token.name)}
+          size="line"
         />
         {lowest !== null && (
           <>

@@ -96,7 +96,10 @@ function Measures({ standing: { lowest, mark } }: { standing: StandingWire }) {
       <td className="@max-[1180px]:hidden">
         <RatioRuler {...(lowest ?? {})} waived={waived} />
       </td>
-      <td className="truncate text-ink-soft @max-[700px]:hidden">
+      <td
+        className="truncate pr-8! text-ink-soft @max-[700px]:hidden"
+        title={lowest === null ? undefined : stateInWords(lowest.state)}
+      >
         {lowest !== null && `${lowest.theme}, ${stateInWords(lowest.state)}`}
       </td>
     </>

@@ -27,7 +27,7 @@ export function TokenTitle({
         <h1 ref={title} className="large-name min-w-0 break-words">
           {token.name}
         </h1>
-        <div className="max-w-600 min-w-0">
+        <div className="max-w-640 min-w-0">
           <p>{aboutToken(token, followers)}</p>
           {breaches > 0 && (
             <p>

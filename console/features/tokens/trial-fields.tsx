@@ -39,34 +39,36 @@ export function TrialFields({
         fault={reading.kind === 'unread' ? reading.reason : fault}
         className="w-full wide:w-250"
       />
-      <ComponentField
-        label="Lightness"
-        value={color.l}
-        text={formatComponent(color.l)}
-        step={0.005}
-        onChange={(l) => put({ l: Math.min(Math.max(l, 0), 1) })}
-      />
-      <ComponentField
-        label="Chroma"
-        value={color.c}
-        text={formatComponent(color.c)}
-        step={0.004}
-        onChange={(c) => put({ c: Math.max(c, 0) })}
-      />
-      <ComponentField
-        label="Hue"
-        value={color.h}
-        text={formatHue(color.h)}
-        step={1}
-        onChange={(h) => put({ h: ((h % 360) + 360) % 360 })}
-      />
-      <ComponentField
-        label="Alpha"
-        value={color.alpha}
-        text={color.alpha === null ? 'none' : String(Number(color.alpha.toFixed(3)))}
-        step={0.05}
-        onChange={(alpha) => put({ alpha: Math.min(Math.max(alpha, 0), 1) })}
-      />
+      <div className="flex w-full gap-x-16 wide:w-auto wide:gap-x-20">
+        <ComponentField
+          label="Lightness"
+          value={color.l}
+          text={formatComponent(color.l)}
+          step={0.005}
+          onChange={(l) => put({ l: Math.min(Math.max(l, 0), 1) })}
+        />
+        <ComponentField
+          label="Chroma"
+          value={color.c}
+          text={formatComponent(color.c)}
+          step={0.004}
+          onChange={(c) => put({ c: Math.max(c, 0) })}
+        />
+        <ComponentField
+          label="Hue"
+          value={color.h}
+          text={formatHue(color.h)}
+          step={1}
+          onChange={(h) => put({ h: ((h % 360) + 360) % 360 })}
+        />
+        <ComponentField
+          label="Alpha"
+          value={color.alpha}
+          text={color.alpha === null ? 'none' : String(Number(color.alpha.toFixed(3)))}
+          step={0.05}
+          onChange={(alpha) => put({ alpha: Math.min(Math.max(alpha, 0), 1) })}
+        />
+      </div>
       <Understood reading={reading} present={present} />
     </div>
   )
@@ -75,7 +77,7 @@ export function TrialFields({
 function Understood({ reading, present }: { reading: TrialReading; present: PresentColor }) {
   if (reading.kind === 'unread') return null
   return (
-    <p aria-live="polite" className="pt-8 text-ink-soft">
+    <p aria-live="polite" className="pt-6 text-ink-soft">
       {reading.kind === 'alias' ? (
         <>
           Understood as <span className="text-ink">an alias of {reading.name}</span>
