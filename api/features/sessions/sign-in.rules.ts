@@ -1,7 +1,7 @@
 /** What was counted of one account at one address, or of one address. */
 export interface Attempts {
   readonly hits: number
-  /** Since the last one. */
+  /** Since the last one; below 0 where that was counted while this one waited for its lock. */
   readonly elapsedMs: number
 }
 
@@ -16,4 +16,4 @@ export function delaySeconds(hits: number, free: number): number {
 
 /** How long until the next attempt is looked at; 0: now. */
 export const waitSeconds = ({ hits, elapsedMs }: Attempts, free: number): number =>
-  Math.max(0, Math.ceil(delaySeconds(hits, free) - elapsedMs / 1000))
+  Math.max(0, Math.ceil(delaySeconds(hits, free) - Math.max(0, elapsedMs) / 1000))
