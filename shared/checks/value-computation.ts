@@ -29,6 +29,7 @@ function cellAt(
   theme: number,
   state: State,
 ): ResolvedCell | undefined {
+  if (token < 0) return undefined
   const row = pass.rows[token] ?? pass.knownRow(token)
   return row[theme * STATE_COUNT + stateAt(state)]
 }
