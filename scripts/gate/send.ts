@@ -17,11 +17,16 @@ const MOST_BYTES = 64 * 1024 * 1024
 const readBody = async (answer: IncomingMessage): Promise<string> => {
   const chunks: Buffer[] = []
   let bytes = 0
-  for await (const chunk of answer as AsyncIterable<Buffer>) {
-    bytes += chunk.length
-    if (bytes > MOST_BYTES) throw new NoAnswer('TOO_LARGE', 'The answer is larger than 64 MiB')
-    chunks.push(chunk)
+  try {
+    for await (const chunk of answer as AsyncIterable<Buffer>) {
+      bytes += chunk.length
+      if (bytes > MOST_BYTES) break
+      chunks.push(chunk)
+    }
+  } catch {
+    throw new NoAnswer('CUT_OFF', 'The answer broke off')
   }
+  if (bytes > MOST_BYTES) throw new NoAnswer('TOO_LARGE', 'The answer is larger than 64 MiB')
   return Buffer.concat(chunks).toString('utf8')
 }
 
@@ -58,8 +63,8 @@ export function createSend(remainingMs: () => number): Send {
         body: await readBody(answer),
       }
     } catch (error) {
-      if (error instanceof NoAnswer) throw error
       if (signal.aborted) throw new NoAnswer('TIMEOUT', 'No answer in time')
+      if (error instanceof NoAnswer) throw error
       const { code = 'UNKNOWN', message } = error as NodeJS.ErrnoException
       throw new NoAnswer(code, message || code)
     }

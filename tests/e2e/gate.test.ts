@@ -1,0 +1,211 @@
+import { readFileSync } from 'node:fs'
+import { join } from 'node:path'
+import { fileURLToPath } from 'node:url'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { createPeople } from '#scripts/demo/people.ts'
+import { createDemoKey, seedDemo } from '#scripts/demo/seed-demo.ts'
+import { createClient } from '#shared/client/client.ts'
+import { getCheck, listChecks } from '#shared/contracts/checks.contract.ts'
+import { createKey } from '#shared/contracts/keys.contract.ts'
+import { getSystem } from '#shared/contracts/systems.contract.ts'
+import { type DemoService, startDemoService } from '#tests/support/demo-service.ts'
+import { createGateProcess, type GateProcess, type GateRun } from '#tests/support/gate-process.ts'
+
+const DEMO = fileURLToPath(new URL('../../scripts/demo/', import.meta.url))
+const params = { system: 'larkhaven' }
+let service: DemoService
+let key: string
+let pipeline: GateProcess
+
+beforeAll(async () => {
+  service = await startDemoService()
+  key = await createDemoKey(service)
+  pipeline = createGateProcess()
+})
+afterAll(async () => {
+  await service?.close()
+  pipeline?.remove()
+})
+
+const gate = (
+  options: readonly string[] = [],
+  env: Readonly<Record<string, string>> = {},
+): Promise<GateRun> =>
+  pipeline.run(['gate', '--url', service.baseUrl, '--system', 'larkhaven', ...options], {
+    DYEWRIGHT_KEY: key,
+    ...env,
+  })
+
+describe('the demo over HTTP', () => {
+  it('answers the head that the demo is said to have, within 20 s of seeding', async () => {
+    const maintainer = await createPeople(service)('maintainer')
+    const { body } = await maintainer(getSystem, { params })
+    expect(body.counts).toEqual({ tokens: 122, pairs: 157, themes: 3, openBreaches: 9 })
+    expect(body.head).toMatchObject({ revision: service.revisions, verdict: 'fail' })
+    expect(service.seedingMs).toBeLessThan(20_000)
+  })
+
+  it('leaves a demo that is there as it is', async () => {
+    expect(await seedDemo(service)).toBe(0)
+  })
+})
+
+describe('the shipped change and its fix', () => {
+  const candidate = (name: string) => [
+    '--config',
+    join(DEMO, 'dyewright.json'),
+    '--tokens',
+    join(DEMO, name),
+  ]
+
+  it('answers 1 to the change that breaches, and names its breaches', async () => {
+    const { code, out } = await gate(candidate('breaching-change.tokens.json'))
+    expect(code).toBe(1)
+    expect(out).toContain('text.link on surface.hull, text')
+    expect(out).toMatch(/light {2}rest +\d\.\d{4} +4\.5 +#[0-9a-f]{6} on #[0-9a-f]{6}/)
+    expect(out).not.toContain('text.muted on surface.cabin')
+  })
+
+  it('answers 0 to the fix, and to the token file as it is', async () => {
+    expect((await gate(candidate('fix.tokens.json'))).code).toBe(0)
+    expect(await gate(['--config', join(DEMO, 'dyewright.json')])).toMatchObject({
+      code: 0,
+      err: '',
+    })
+  })
+
+  it('answers 1 to the change laid over the whole token file, and says which wins', async () => {
+    const files = ['larkhaven.tokens.json', 'breaching-change.tokens.json'].map((name) =>
+      join(DEMO, name),
+    )
+    const { code, err } = await gate(['--new-only', '--tokens', ...files])
+    expect(code).toBe(1)
+    expect(err).toContain('sea.7 is set in two files')
+  })
+})
+
+describe('a verdict', () => {
+  it('answers 1 for the head as it stands, and 0 where only what is new counts', async () => {
+    expect((await gate()).code).toBe(1)
+    expect((await gate(['--new-only'])).code).toBe(0)
+  })
+
+  it('answers json that equals the check of the service', async () => {
+    const { code, out, err } = await gate(['--format', 'json'])
+    expect({ code, err }).toEqual({ code: 1, err: '' })
+    const check = JSON.parse(out)
+    const call = createClient({ ...service, headers: { authorization: `Bearer ${key}` } })
+    const { body } = await call(getCheck, { params: { ...params, id: check.id } })
+    expect(check).toEqual(body)
+  })
+
+  it('answers both formats at once', async () => {
+    const { code, out } = await gate(['--format', 'text', 'json=check.json'])
+    expect(code).toBe(1)
+    const check = JSON.parse(readFileSync(join(pipeline.folder, 'check.json'), 'utf8'))
+    expect(out).toContain(`Check ${check.number} of larkhaven fails`)
+  })
+
+  it('answers a breach of a pair of the build', async () => {
+    const pair = { foreground: 'sand.1', background: 'sand.2', use: 'text' }
+    const pairs = pipeline.write('pairs.json', [pair])
+    const { code, out } = await gate(['--new-only', '--pairs', pairs])
+    expect(code).toBe(1)
+    expect(out).toContain('sand.1 on sand.2, text')
+  })
+
+  it('leaves where the build comes from with the check', async () => {
+    await gate(['--new-only'], {
+      DYEWRIGHT_SOURCE_REPOSITORY: 'lark/quay',
+      DYEWRIGHT_SOURCE_BRANCH: 'fog',
+    })
+    const maintainer = await createPeople(service)('maintainer')
+    const { body } = await maintainer(listChecks, { params, query: { repository: 'lark/quay' } })
+    expect(body.items[0]?.source).toEqual({ repository: 'lark/quay', branch: 'fog' })
+  })
+
+  it('answers without colour unless asked, and never with it under NO_COLOR', async () => {
+    expect((await gate()).out).not.toContain('\u001b')
+    const painted = (await gate([], { FORCE_COLOR: '1' })).out
+    expect(painted).toContain('\u001b[38;2;')
+    expect((await gate([], { FORCE_COLOR: '1', NO_COLOR: '1' })).out).not.toContain('\u001b')
+  })
+})
+
+describe('usage and configuration', () => {
+  it.each([
+    ['an unknown flag', ['--nope'], "unknown option '--nope'"],
+    ['a file that is not there', ['--tokens', 'none.json'], 'none.json cannot be read'],
+    ['an unknown format', ['--format', 'xml'], 'There is no format "xml"'],
+    [
+      'a file that cannot be written',
+      ['--format', 'json=no/such/folder.json'],
+      'cannot be written',
+    ],
+  ])('answers 2 to %s', async (_, options, reason) => {
+    const { code, err } = await gate(options)
+    expect({ code, err }).toEqual({ code: 2, err: expect.stringContaining(reason) })
+  })
+
+  it('answers 2 to an unknown key in the configuration, by name', async () => {
+    const { code, err } = await gate([
+      '--config',
+      pipeline.write('bad.json', { sistem: 'larkhaven' }),
+    ])
+    expect({ code, err }).toEqual({ code: 2, err: expect.stringContaining('"sistem"') })
+  })
+
+  it('answers 2 with the place of every fault that the service finds', async () => {
+    const pairs = pipeline.write('unknown.json', [
+      { foreground: 'no.such', background: 'sand.1', use: 'text' },
+    ])
+    const named = await gate(['--pairs', pairs])
+    expect(named.code).toBe(2)
+    expect(named.err).toContain('unknown.json#/0/foreground')
+
+    const colour = {
+      sea: { '7': { $type: 'color', $value: { colorSpace: 'srgb', components: [2, 0, 0] } } },
+    }
+    const files = [pipeline.write('fine.json', { a: {} }), pipeline.write('colour.json', colour)]
+    const refused = await gate(['--tokens', ...files])
+    expect(refused.code).toBe(2)
+    expect(refused.err).toContain('colour.json#/sea/7/$value')
+  })
+
+  it('answers 2 to a revision that nobody released, and to a system that is not there', async () => {
+    expect((await gate(['--against', '1.0.0'])).code).toBe(2)
+    expect((await gate(['--system', 'nowhere'])).code).toBe(2)
+  })
+
+  it('answers help with 0, and no command at all with 2', async () => {
+    expect(await pipeline.run(['gate', '--help'])).toMatchObject({ code: 0, err: '' })
+    expect((await pipeline.run([])).code).toBe(2)
+  })
+})
+
+describe('a key that is refused', () => {
+  it('answers 4 without a key, and says that none is set', async () => {
+    const { code, err } = await gate([], { DYEWRIGHT_KEY: '' })
+    expect({ code, err }).toEqual({
+      code: 4,
+      err: expect.stringContaining('DYEWRIGHT_KEY is not set'),
+    })
+  })
+
+  it('answers 4 to a wrong key, and prints it nowhere', async () => {
+    const wrong = 'dyw_ci_0000000000000000000000000000'
+    const { code, out, err } = await gate([], { DYEWRIGHT_KEY: wrong })
+    expect(code).toBe(4)
+    expect(out + err).not.toContain(wrong)
+  })
+
+  it('answers 4 to a key without the scope, which it names', async () => {
+    const engineer = await createPeople(service)('engineer')
+    const { body } = await engineer(createKey, {
+      params,
+      body: { name: 'Reader', scopes: ['themes:read'] },
+    })
+    const { code, err } = await gate([], { DYEWRIGHT_KEY: body.key })
+    expect({ code, err }).toEqual({ code: 4, err: expect.stringContaining('checks:write') })
+  })
+})
