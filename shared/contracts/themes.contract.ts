@@ -146,7 +146,7 @@ export const putTheme = defineContract({
     body: writtenTheme,
     example: { ...themeExample, effect: effectExample },
   },
-  problems: [...EDIT_PROBLEMS, 'theme-already-exists'],
+  problems: [...EDIT_PROBLEMS, 'token-locked'],
   access: 'themes:write',
   precondition: 'create',
 })
@@ -166,7 +166,7 @@ export const patchTheme = defineContract({
     body: writtenTheme,
     example: { ...themeExample, effect: effectExample },
   },
-  problems: EDIT_PROBLEMS,
+  problems: [...EDIT_PROBLEMS, 'token-locked'],
   access: 'themes:write',
   precondition: 'required',
 })

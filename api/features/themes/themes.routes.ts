@@ -2,6 +2,7 @@ import { type ApiRouter, mount } from '#api/http/route.ts'
 import {
   deleteTheme,
   getTheme,
+  getThemeFile,
   listThemes,
   patchTheme,
   putTheme,
@@ -15,6 +16,9 @@ export function mountThemes(router: ApiRouter, themes: ThemesService): void {
   mount(router, getTheme, async ({ system, params }) => ({
     body: await themes.get(system, params.theme),
   }))
+  mount(router, getThemeFile, ({ system, params }) =>
+    themes.file(system, params.theme, params.format),
+  )
   mount(router, putTheme, async ({ system, params, ifMatch, createOnly, body }) => ({
     body: await themes.put(
       system,

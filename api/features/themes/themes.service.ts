@@ -7,6 +7,7 @@ import { etagOf, type IfMatch } from '#api/precondition.ts'
 import type { GovernedTheme } from '#shared/checks/governed-model.ts'
 import { presentTheme, presentThemeValues } from '#shared/contracts/present-items.ts'
 import type { ThemeWire } from '#shared/contracts/themes.contract.ts'
+import { presentThemeFile, type ThemeFormat } from './theme-file.presenter.ts'
 import {
   decideDelete,
   decidePatch,
@@ -28,7 +29,12 @@ export interface KeyedEdit {
 }
 
 /** Reads themes off the head, also as files, and writes them to it. */
-export function createThemesService({ heads, writes, newId }: ThemesDeps) {
+export function createThemesService(deps: ThemesDeps) {
+  return { ...themeReads(deps), ...themeWrites(deps) }
+}
+export type ThemesService = ReturnType<typeof createThemesService>
+
+function themeReads({ heads }: ThemesDeps) {
   return {
     async list(system: SystemAccess): Promise<ThemeWire[]> {
       const head = await heads.current(system.id)
@@ -40,6 +46,23 @@ export function createThemesService({ heads, writes, newId }: ThemesDeps) {
       return taggedTheme(head, themeOf(head, key))
     },
 
+    async file(
+      system: SystemAccess,
+      key: string,
+      format: ThemeFormat,
+    ): Promise<{ text: string; media: string }> {
+      const head = await heads.current(system.id)
+      const written = presentThemeFile(head, themeOf(head, key), format)
+      if (!written.ok) {
+        throw new AppError('css-name-collision', { detail: written.details.join(' ') })
+      }
+      return written.file
+    },
+  }
+}
+
+function themeWrites({ heads, writes, newId }: ThemesDeps) {
+  return {
     /** @param edit without `ifMatch`: to be made, where nothing of that key is there */
     async put(
       system: SystemAccess,
@@ -97,8 +120,6 @@ export function createThemesService({ heads, writes, newId }: ThemesDeps) {
     },
   }
 }
-export type ThemesService = ReturnType<typeof createThemesService>
-
 /** An accessibility lead edits level and gating only. */
 const editsAll = ({ role }: SystemAccess) => role === 'maintainer' || role === 'admin'
 
