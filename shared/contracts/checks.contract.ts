@@ -71,6 +71,8 @@ const summary = {
 
 export const checkSummarySchema = z.strictObject(summary).meta({ id: 'CheckSummary' })
 
+export type CheckSummaryWire = z.infer<typeof checkSummarySchema>
+
 export const checkSchema = z
   .strictObject({
     ...summary,
@@ -110,6 +112,7 @@ export const createCheck = defineContract({
   params: systemParams,
   query: findingsQuery,
   body: createCheckBody,
+  maxBodyBytes: 8 * 2 ** 20,
   bodyExample: {
     tokens: {
       action: {
