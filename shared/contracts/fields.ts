@@ -23,7 +23,12 @@ export const tokenNameSchema = z
   .refine((name) => !/^state-(rest|hover|active|focus|disabled)(\.|$)/.test(name), {
     message: 'Names beginning with a state- group are reserved',
   })
-  .meta({ description: 'Dot path, at most 255 characters', example: 'action.board.fill' })
+  .meta({
+    description: 'Dot path, at most 255 characters',
+    example: 'action.board.fill',
+    // Given by hand: the document has no place for a pattern's flags.
+    pattern: NAME_PATTERN.source,
+  })
 
 export const aliasSchema = z
   .string()
