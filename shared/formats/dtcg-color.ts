@@ -8,7 +8,7 @@ import {
   type JsonObject,
   objectOf,
   quoted,
-  segmentOf,
+  pointerTo,
 } from './dtcg-fault.ts'
 
 /** A color space of the DTCG color module: those of CSS but `display-p3-linear`. */
@@ -79,7 +79,7 @@ export function readDtcgColor(value: unknown): DtcgColorReading {
     ...Object.keys(source)
       .filter((name) => !MEMBERS.includes(name))
       .map((name) =>
-        fault('color-shape', segmentOf(name), `A color has no member ${quoted(name)}.`),
+        fault('color-shape', pointerTo('', name), `A color has no member ${quoted(name)}.`),
       ),
     ...(space ? [] : [spaceFault(source)]),
     ...componentFaults(source.components, space),
@@ -95,7 +95,7 @@ export function readDtcgColor(value: unknown): DtcgColorReading {
     alpha: (source.alpha as number | undefined) ?? 1,
   })
   if (reading.ok) return reading
-  return { ok: false, faults: [fault('color-range', 'components', reading.reason)] }
+  return { ok: false, faults: [fault('color-range', '/components', reading.reason)] }
 }
 
 /**
@@ -133,16 +133,16 @@ function spaceOf({ colorSpace }: JsonObject): DtcgColorSpace | undefined {
 function spaceFault({ colorSpace }: JsonObject): DtcgFault {
   if (colorSpace === undefined) return fault('color-shape', '', 'colorSpace is missing.')
   const known = Object.keys(RANGES).join(', ')
-  return fault('color-shape', 'colorSpace', `colorSpace is one of ${known}.`)
+  return fault('color-shape', '/colorSpace', `colorSpace is one of ${known}.`)
 }
 
 function componentFaults(components: unknown, space: DtcgColorSpace | undefined): DtcgFault[] {
   if (components === undefined) return [fault('color-shape', '', 'components is missing.')]
   if (!Array.isArray(components) || components.length !== 3) {
-    return [fault('color-shape', 'components', 'components is an array of three.')]
+    return [fault('color-shape', '/components', 'components is an array of three.')]
   }
   return components.flatMap((component: unknown, i) => {
-    const at = `components/${i}`
+    const at = `/components/${i}`
     if (component === 'none') return []
     if (typeof component !== 'number' || !Number.isFinite(component)) {
       return [fault('color-component', at, 'A component is a number or "none".')]
@@ -155,13 +155,13 @@ function componentFaults(components: unknown, space: DtcgColorSpace | undefined)
 
 function alphaFaults(alpha: unknown): DtcgFault[] {
   if (alpha === undefined || (typeof alpha === 'number' && isWithin(alpha, UNIT))) return []
-  return [fault('color-alpha', 'alpha', 'alpha is a number from 0 to 1.')]
+  return [fault('color-alpha', '/alpha', 'alpha is a number from 0 to 1.')]
 }
 
 function hexFaults(hex: unknown): DtcgFault[] {
   if (hex === undefined) return []
   if (typeof hex === 'string' && /^#[\da-f]{6}$/i.test(hex)) return []
-  return [fault('color-hex', 'hex', 'hex is # and six hex digits, without alpha.')]
+  return [fault('color-hex', '/hex', 'hex is # and six hex digits, without alpha.')]
 }
 
 function isWithin(value: number, { min, max, open = false }: Range): boolean {

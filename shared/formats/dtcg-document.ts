@@ -4,7 +4,7 @@ import {
   type JsonObject,
   objectOf,
   quoted,
-  segmentOf,
+  pointerTo,
 } from './dtcg-fault.ts'
 
 /** The types of the format module; case matters. */
@@ -33,8 +33,8 @@ export const ROOT_TOKEN = '$root'
 export interface DtcgSurvey {
   /** Groups in document order, the document itself first. */
   readonly groups: readonly JsonObject[]
-  /** Path of a group or token without its leading `/`, ready for `fault`. */
-  readonly pathOf: ReadonlyMap<JsonObject, string>
+  /** The JSON pointer of a group or token. */
+  readonly pointerOf: ReadonlyMap<JsonObject, string>
   readonly faults: readonly DtcgFault[]
 }
 
@@ -60,34 +60,29 @@ export function isTypeName(type: unknown): type is DtcgType {
 /** Walks a document once, checks the members of every group and token, and reports every fault. */
 export function surveyDocument(document: JsonObject): DtcgSurvey {
   const groups: JsonObject[] = []
-  const pathOf = new Map<JsonObject, string>([[document, '']])
+  const pointerOf = new Map<JsonObject, string>([[document, '']])
   const faults: DtcgFault[] = []
   const waiting = [document]
   for (let node = waiting.pop(); node; node = waiting.pop()) {
-    const path = pathOf.get(node)!
-    faults.push(...memberFaults(node, path))
+    const pointer = pointerOf.get(node)!
+    faults.push(...memberFaults(node, pointer))
     if (isToken(node)) {
-      faults.push(...tokenFaults(node, path))
+      faults.push(...tokenFaults(node, pointer))
       continue
     }
     groups.push(node)
     const children: JsonObject[] = []
     for (const name of Object.keys(node)) {
-      const at = joined(path, segmentOf(name))
+      const at = pointerTo(pointer, name)
       faults.push(...childFaults(node, name, at))
       const child = childOf(node, name)
       if (!child) continue
-      pathOf.set(child, at)
+      pointerOf.set(child, at)
       children.push(child)
     }
-    waiting.push(...children.reverse())
+    for (const child of children.reverse()) waiting.push(child)
   }
-  return { groups, pathOf, faults }
-}
-
-/** Joins a path and a segment of a pointer. */
-export function joined(path: string, segment: string): string {
-  return path === '' ? segment : `${path}/${segment}`
+  return { groups, pointerOf, faults }
 }
 
 function isChildName(name: string): boolean {
@@ -110,33 +105,38 @@ function childFaults(group: JsonObject, name: string, at: string): DtcgFault[] {
   return child ? [] : [fault('token-shape', at, 'Neither a group nor a token: not an object.')]
 }
 
-function tokenFaults(token: JsonObject, path: string): DtcgFault[] {
+function tokenFaults(token: JsonObject, pointer: string): DtcgFault[] {
   const children = Object.keys(token)
     .filter((name) => !TOKEN_MEMBERS.includes(name) && objectOf(token[name]))
-    .map((name) => fault('token-shape', joined(path, segmentOf(name)), 'A token has no children.'))
-  if (path === '') children.push(fault('document-shape', '', 'A document is a group, not a token.'))
+    .map((name) => fault('token-shape', pointerTo(pointer, name), 'A token has no children.'))
+  if (pointer === '')
+    children.push(fault('document-shape', '', 'A document is a group, not a token.'))
   if (Object.hasOwn(token, '$value') && Object.hasOwn(token, '$ref')) {
-    children.push(fault('value-and-ref', path, '$value and $ref exclude each other.'))
+    children.push(fault('value-and-ref', pointer, '$value and $ref exclude each other.'))
   }
   return children
 }
 
-function memberFaults(node: JsonObject, path: string): DtcgFault[] {
+function memberFaults(node: JsonObject, pointer: string): DtcgFault[] {
   const { $type, $description, $deprecated, $extensions } = node
   const faults: DtcgFault[] = []
   if ($type !== undefined && !isTypeName($type)) {
     const known = DTCG_TYPES.join(', ')
-    faults.push(fault('type-unknown', joined(path, '$type'), `$type is one of ${known}.`))
+    faults.push(fault('type-unknown', pointerTo(pointer, '$type'), `$type is one of ${known}.`))
   }
   if ($description !== undefined && typeof $description !== 'string') {
-    faults.push(fault('description-type', joined(path, '$description'), '$description is text.'))
+    faults.push(
+      fault('description-type', pointerTo(pointer, '$description'), '$description is text.'),
+    )
   }
   if ($deprecated !== undefined && !['boolean', 'string'].includes(typeof $deprecated)) {
     const detail = '$deprecated is true, false or text.'
-    faults.push(fault('deprecated-type', joined(path, '$deprecated'), detail))
+    faults.push(fault('deprecated-type', pointerTo(pointer, '$deprecated'), detail))
   }
   if ($extensions !== undefined && !objectOf($extensions)) {
-    faults.push(fault('extensions-type', joined(path, '$extensions'), '$extensions is an object.'))
+    faults.push(
+      fault('extensions-type', pointerTo(pointer, '$extensions'), '$extensions is an object.'),
+    )
   }
   return faults
 }

@@ -64,13 +64,18 @@ export function objectOf(value: unknown): JsonObject | undefined {
     : undefined
 }
 
-/** Makes a fault at a path of segments already escaped, joined by `/`; the empty path is the value itself. */
-export function fault(code: DtcgFaultCode, path: string, detail: string): DtcgFault {
-  return { pointer: path === '' ? '' : `/${path}`, detail, code }
+/** Makes a fault; the empty pointer is the value itself. */
+export function fault(code: DtcgFaultCode, pointer: string, detail: string): DtcgFault {
+  return { pointer, detail, code }
 }
 
-/** Escapes a member name for a JSON pointer. @see https://www.rfc-editor.org/rfc/rfc6901#section-3 */
-export function segmentOf(name: string): string {
+/** The pointer of a member or an item. */
+export function pointerTo(holder: string, member: string | number): string {
+  return `${holder}/${segmentOf(String(member))}`
+}
+
+/** Escapes a member name. @see https://www.rfc-editor.org/rfc/rfc6901#section-3 */
+function segmentOf(name: string): string {
   return name.replaceAll('~', '~0').replaceAll('/', '~1')
 }
 

@@ -1,6 +1,6 @@
 import { cyclesOf } from './cycles.ts'
-import { childNamesOf, childOf, type DtcgSurvey, isToken, joined } from './dtcg-document.ts'
-import { type DtcgFault, fault, type JsonObject } from './dtcg-fault.ts'
+import { childNamesOf, childOf, type DtcgSurvey, isToken } from './dtcg-document.ts'
+import { type DtcgFault, fault, type JsonObject, pointerTo } from './dtcg-fault.ts'
 import { readAlias, readPointer } from './dtcg-path.ts'
 
 /** A group as its layers: what is written in it first, then what it inherits; or one token. */
@@ -25,7 +25,7 @@ export function layerDocument(document: JsonObject, survey: DtcgSurvey): DtcgLay
   const faults: DtcgFault[] = []
   const targets: Targets = new Map()
   const report = (group: JsonObject, code: DtcgFault['code'], detail: string) => {
-    faults.push(fault(code, joined(survey.pathOf.get(group)!, '$extends'), detail))
+    faults.push(fault(code, pointerTo(survey.pointerOf.get(group)!, '$extends'), detail))
     targets.delete(group)
   }
   for (const group of survey.groups) {
@@ -103,8 +103,9 @@ function createLookup(document: JsonObject, targets: Targets) {
       layers.add(group)
       const target = targets.get(group)
       if (!target) continue
-      if (underWay.size > DEEPEST || layers.size > DEEPEST) tooDeep.add(group)
-      else for (const layer of layersAt(target)) layers.add(layer)
+      const inherited = underWay.size > DEEPEST ? undefined : layersAt(target)
+      if (!inherited || inherited.length > DEEPEST) tooDeep.add(group)
+      else for (const layer of inherited) layers.add(layer)
     }
     return [...layers]
   }

@@ -1,14 +1,14 @@
 import { cyclesOf } from './cycles.ts'
-import { type DtcgSurvey, type DtcgType, isTypeName, joined } from './dtcg-document.ts'
+import { type DtcgSurvey, type DtcgType, isTypeName } from './dtcg-document.ts'
 import type { DtcgEntry } from './dtcg-entries.ts'
-import { type DtcgFault, fault } from './dtcg-fault.ts'
+import { type DtcgFault, fault, pointerTo } from './dtcg-fault.ts'
 import { type DtcgReferences, isAliasLike, type Referent, referenceOf } from './dtcg-references.ts'
 
 /** A token with where its value comes from and what type it is. */
 export interface DtcgLink {
   readonly entry: DtcgEntry
-  /** Path of its value without the leading `/`. */
-  readonly path: string
+  /** Pointer of its value. */
+  readonly pointer: string
   /** The whole token it takes its value from. */
   readonly target?: string
   /** The value as written, or what a reference into another value leads to. */
@@ -24,16 +24,17 @@ export interface DtcgLinks {
 /** Follows every token's reference, reports those that lead nowhere or in a circle, and settles every type. */
 export function linkEntries(
   entries: ReadonlyMap<string, DtcgEntry>,
-  { pathOf }: DtcgSurvey,
+  { pointerOf }: DtcgSurvey,
   references: DtcgReferences,
 ): DtcgLinks {
   const faults: DtcgFault[] = []
   const sources = new Map<string, Source>()
   for (const entry of entries.values()) {
-    const source = sourceOf(entry, pathOf.get(entry.token)!, references)
+    const source = sourceOf(entry, pointerOf.get(entry.token)!, references)
     sources.set(entry.name, source)
     const { referent } = source
-    if (referent.kind === 'fault') faults.push(fault(referent.code, source.path, referent.detail))
+    if (referent.kind === 'fault')
+      faults.push(fault(referent.code, source.pointer, referent.detail))
   }
   const targetOf = (name: string) => {
     const referent = sources.get(name)!.referent
@@ -44,39 +45,41 @@ export function linkEntries(
     const detail = `The reference leads in a circle: ${members.slice(0, 8).join(', ')}.`
     for (const name of members) {
       circular.add(name)
-      faults.push(fault('alias-circular', sources.get(name)!.path, detail))
+      faults.push(fault('alias-circular', sources.get(name)!.pointer, detail))
     }
   }
   const types = typesOf(entries, targetOf, circular)
   const links = [...entries.values()].map((entry): DtcgLink => {
-    const { path, referent } = sources.get(entry.name)!
+    const { pointer, referent } = sources.get(entry.name)!
     const type = types.get(entry.name)
     const target = targetOf(entry.name)
     const isLost = circular.has(entry.name) || referent.kind === 'fault'
-    faults.push(...typeFaults(entry, pathOf, { type, targetType: types.get(target ?? ''), isLost }))
-    if (isLost) return { entry, path, type }
+    faults.push(
+      ...typeFaults(entry, pointerOf, { type, targetType: types.get(target ?? ''), isLost }),
+    )
+    if (isLost) return { entry, pointer, type }
     return referent.kind === 'token'
-      ? { entry, path, type, target: referent.name }
-      : { entry, path, type, value: referent.value }
+      ? { entry, pointer, type, target: referent.name }
+      : { entry, pointer, type, value: referent.value }
   })
   return { links, faults }
 }
 
 interface Source {
-  readonly path: string
+  readonly pointer: string
   readonly referent: Referent
 }
 
-function sourceOf({ token }: DtcgEntry, path: string, references: DtcgReferences): Source {
+function sourceOf({ token }: DtcgEntry, pointer: string, references: DtcgReferences): Source {
   if (!Object.hasOwn(token, '$value')) {
-    return { path: joined(path, '$ref'), referent: references.followPointer(token.$ref) }
+    return { pointer: pointerTo(pointer, '$ref'), referent: references.followPointer(token.$ref) }
   }
-  const at = joined(path, '$value')
+  const at = pointerTo(pointer, '$value')
   const value = token.$value
-  if (isAliasLike(value)) return { path: at, referent: references.followAlias(value) }
+  if (isAliasLike(value)) return { pointer: at, referent: references.followAlias(value) }
   const reference = referenceOf(value)
-  if (!reference) return { path: at, referent: { kind: 'value', value } }
-  return { path: joined(at, '$ref'), referent: references.followPointer(reference.$ref) }
+  if (!reference) return { pointer: at, referent: { kind: 'value', value } }
+  return { pointer: pointerTo(at, '$ref'), referent: references.followPointer(reference.$ref) }
 }
 
 /** A token's own type, else that of what it refers to, else that of its groups; never guessed. */
@@ -111,14 +114,16 @@ interface SettledType {
 
 function typeFaults(
   { token }: DtcgEntry,
-  pathOf: DtcgSurvey['pathOf'],
+  pointerOf: DtcgSurvey['pointerOf'],
   { type, targetType, isLost }: SettledType,
 ): DtcgFault[] {
-  const path = pathOf.get(token)!
+  const pointer = pointerOf.get(token)!
   if (type === undefined && !isLost && token.$type === undefined) {
-    return [fault('type-missing', path, 'No $type here, in what it refers to, or in its groups.')]
+    return [
+      fault('type-missing', pointer, 'No $type here, in what it refers to, or in its groups.'),
+    ]
   }
   if (type === undefined || targetType === undefined || type === targetType) return []
   const detail = `The type is ${type}, but what it refers to is a ${targetType}.`
-  return [fault('type-mismatch', path, detail)]
+  return [fault('type-mismatch', pointer, detail)]
 }

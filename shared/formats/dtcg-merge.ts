@@ -24,7 +24,7 @@ export function mergedDocument(documents: readonly JsonObject[]): JsonObject {
       into.set(name, child)
       groups.push({ into: child, from: group })
     }
-    waiting.push(...groups.reverse())
+    for (const group of groups.reverse()) waiting.push(group)
   }
   return asObject(root)
 }

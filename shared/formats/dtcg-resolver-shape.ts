@@ -1,19 +1,18 @@
 import { cyclesOf } from './cycles.ts'
-import { joined } from './dtcg-document.ts'
 import {
   type DtcgFault,
   fault,
   type JsonObject,
   objectOf,
   quoted,
-  segmentOf,
+  pointerTo,
 } from './dtcg-fault.ts'
 import { readPointer } from './dtcg-path.ts'
 
 /** A token document in a set or context, or a set that it names. */
 export type ResolverSource =
-  | { readonly kind: 'tokens'; readonly tokens: JsonObject; readonly path: string }
-  | { readonly kind: 'set'; readonly name: string; readonly path: string }
+  | { readonly kind: 'tokens'; readonly tokens: JsonObject; readonly pointer: string }
+  | { readonly kind: 'set'; readonly name: string; readonly pointer: string }
 
 export interface ResolverModifier {
   readonly name: string
@@ -39,16 +38,16 @@ export interface ResolverShape {
 export function readResolverShape(file: JsonObject): ResolverShape {
   const faults: DtcgFault[] = []
   if (file.version !== '2025.10') {
-    faults.push(fault('resolver-version', 'version', 'version is "2025.10".'))
+    faults.push(fault('resolver-version', '/version', 'version is "2025.10".'))
   }
   const setObjects = membersOf(file, 'sets', faults)
   const sets = new Map(
-    setObjects.map(([name, set]) => [name, readSet(set, `sets/${segmentOf(name)}`, faults)]),
+    setObjects.map(([name, set]) => [name, readSet(set, pointerTo('/sets', name), faults)]),
   )
   const modifiers = new Map(
     membersOf(file, 'modifiers', faults).map(([name, modifier]) => [
       name,
-      readModifier(name, modifier, `modifiers/${segmentOf(name)}`, faults),
+      readModifier(name, modifier, pointerTo('/modifiers', name), faults),
     ]),
   )
   const order = readOrder(file.resolutionOrder, { file, sets, modifiers }, faults)
@@ -62,7 +61,7 @@ export function readResolverShape(file: JsonObject): ResolverShape {
     .flat()) {
     if (source.kind !== 'set' || sets.has(source.name)) continue
     faults.push(
-      fault('resolver-unresolved', source.path, `There is no set ${quoted(source.name)}.`),
+      fault('resolver-unresolved', source.pointer, `There is no set ${quoted(source.name)}.`),
     )
   }
   const namesIn = (name: string) => [
@@ -75,7 +74,7 @@ export function readResolverShape(file: JsonObject): ResolverShape {
   )) {
     const detail = `Sets refer to each other in a circle: ${members.slice(0, 8).join(', ')}.`
     for (const name of members)
-      faults.push(fault('resolver-circular', `sets/${segmentOf(name)}`, detail))
+      faults.push(fault('resolver-circular', pointerTo('/sets', name), detail))
   }
   return { sets, order, faults }
 }
@@ -95,37 +94,38 @@ function membersOf(file: JsonObject, member: string, faults: DtcgFault[]): [stri
   if (value === undefined) return []
   const holder = objectOf(value)
   if (!holder) {
-    faults.push(fault('document-shape', member, `${member} is an object.`))
+    faults.push(fault('document-shape', `/${member}`, `${member} is an object.`))
     return []
   }
   return Object.entries(holder).flatMap(([name, each]): [string, JsonObject][] => {
     const object = objectOf(each)
     if (object) return [[name, object]]
-    faults.push(fault('document-shape', `${member}/${segmentOf(name)}`, 'Not an object.'))
+    faults.push(fault('document-shape', pointerTo(`/${member}`, name), 'Not an object.'))
     return []
   })
 }
 
-function readSet(set: JsonObject, path: string, faults: DtcgFault[]): ResolverSource[] {
-  if (Array.isArray(set.sources)) return readSources(set.sources, joined(path, 'sources'), faults)
-  faults.push(fault('resolver-set', path, 'A set has an array of sources.'))
+function readSet(set: JsonObject, pointer: string, faults: DtcgFault[]): ResolverSource[] {
+  if (Array.isArray(set.sources))
+    return readSources(set.sources, pointerTo(pointer, 'sources'), faults)
+  faults.push(fault('resolver-set', pointer, 'A set has an array of sources.'))
   return []
 }
 
 function readModifier(
   name: string,
   modifier: JsonObject,
-  path: string,
+  pointer: string,
   faults: DtcgFault[],
 ): ResolverModifier {
-  const at = joined(path, 'contexts')
+  const at = pointerTo(pointer, 'contexts')
   const entries = Object.entries(objectOf(modifier.contexts) ?? {})
   if (entries.length < 2) {
     faults.push(fault('resolver-contexts', at, 'A modifier has two contexts or more.'))
   }
   const contexts = new Map(
     entries.map(([context, sources]) => {
-      const where = joined(at, segmentOf(context))
+      const where = pointerTo(at, context)
       if (Array.isArray(sources)) return [context, readSources(sources, where, faults)]
       faults.push(fault('resolver-contexts', where, 'A context is an array of sources.'))
       return [context, []]
@@ -135,32 +135,32 @@ function readModifier(
   if (chosen === undefined) return { name, contexts }
   if (typeof chosen === 'string' && contexts.has(chosen)) return { name, contexts, default: chosen }
   faults.push(
-    fault('resolver-default', joined(path, 'default'), 'default names one of the contexts.'),
+    fault('resolver-default', pointerTo(pointer, 'default'), 'default names one of the contexts.'),
   )
   return { name, contexts }
 }
 
 function readSources(
   sources: readonly unknown[],
-  path: string,
+  pointer: string,
   faults: DtcgFault[],
 ): ResolverSource[] {
   return sources.flatMap((source: unknown, i): ResolverSource[] => {
-    const at = joined(path, String(i))
+    const at = pointerTo(pointer, i)
     const object = objectOf(source)
     if (!object) {
       faults.push(fault('document-shape', at, 'A source is a token document or a $ref to a set.'))
       return []
     }
-    if (!Object.hasOwn(object, '$ref')) return [{ kind: 'tokens', tokens: object, path: at }]
-    const pointer = readPointer(object.$ref)
-    if (pointer?.[0] === 'sets' && pointer.length === 2) {
+    if (!Object.hasOwn(object, '$ref')) return [{ kind: 'tokens', tokens: object, pointer: at }]
+    const target = readPointer(object.$ref)
+    if (target?.[0] === 'sets' && target.length === 2) {
       // Members beside $ref override those of what it refers to.
       if (Object.hasOwn(object, 'sources')) return readSet(object, at, faults)
-      return [{ kind: 'set', name: pointer[1]!, path: joined(at, '$ref') }]
+      return [{ kind: 'set', name: target[1]!, pointer: pointerTo(at, '$ref') }]
     }
     const detail = 'A source refers to a set of this file (#/sets/…), to nothing else.'
-    faults.push(fault('resolver-pointer', joined(at, '$ref'), detail))
+    faults.push(fault('resolver-pointer', pointerTo(at, '$ref'), detail))
     return []
   })
 }
@@ -172,16 +172,16 @@ function readOrder(order: unknown, known: Known, faults: DtcgFault[]): ResolverS
   }
   const names = new Set<string>()
   return order.flatMap((item: unknown, i): ResolverStep[] => {
-    const path = `resolutionOrder/${i}`
+    const pointer = `/resolutionOrder/${i}`
     const object = objectOf(item)
     const step =
       object && Object.hasOwn(object, '$ref')
-        ? referredStep(object, path, known, faults)
-        : inlineStep(object, path, faults)
+        ? referredStep(object, pointer, known, faults)
+        : inlineStep(object, pointer, faults)
     if (!step) return []
     const name = step.kind === 'set' ? `set ${step.name}` : `modifier ${step.modifier.name}`
     if (names.has(name)) {
-      faults.push(fault('resolver-name', path, `The ${quoted(name)} is in the order already.`))
+      faults.push(fault('resolver-name', pointer, `The ${quoted(name)} is in the order already.`))
     }
     names.add(name)
     return [step]
@@ -190,21 +190,21 @@ function readOrder(order: unknown, known: Known, faults: DtcgFault[]): ResolverS
 
 function referredStep(
   item: JsonObject,
-  path: string,
+  pointer: string,
   { file, sets, modifiers }: Known,
   faults: DtcgFault[],
 ): ResolverStep | undefined {
-  const at = joined(path, '$ref')
-  const pointer = readPointer(item.$ref)
-  const [kind, name = ''] = pointer ?? []
-  if (pointer?.length !== 2 || !(kind === 'sets' || kind === 'modifiers')) {
+  const at = pointerTo(pointer, '$ref')
+  const target = readPointer(item.$ref)
+  const [kind, name = ''] = target ?? []
+  if (target?.length !== 2 || !(kind === 'sets' || kind === 'modifiers')) {
     faults.push(fault('resolver-pointer', at, '$ref is #/sets/… or #/modifiers/….'))
     return undefined
   }
   const sources = kind === 'sets' ? sets.get(name) : undefined
   // Members beside $ref override those of what it refers to.
   if (sources) {
-    const own = Object.hasOwn(item, 'sources') ? readSet(item, path, faults) : sources
+    const own = Object.hasOwn(item, 'sources') ? readSet(item, pointer, faults) : sources
     return { kind: 'set', name, sources: own }
   }
   const modifier = kind === 'modifiers' ? modifiers.get(name) : undefined
@@ -213,7 +213,7 @@ function referredStep(
     const whole = { ...written(file.modifiers, name), ...item }
     return {
       kind: 'modifier',
-      modifier: overrides ? readModifier(name, whole, path, faults) : modifier,
+      modifier: overrides ? readModifier(name, whole, pointer, faults) : modifier,
     }
   }
   faults.push(fault('resolver-unresolved', at, `There is no ${quoted(name)} in ${kind}.`))
@@ -226,15 +226,15 @@ function written(holder: unknown, name: string): JsonObject | undefined {
 
 function inlineStep(
   item: JsonObject | undefined,
-  path: string,
+  pointer: string,
   faults: DtcgFault[],
 ): ResolverStep | undefined {
   const name = item?.name
   if (!item || typeof name !== 'string' || !(item.type === 'set' || item.type === 'modifier')) {
     const detail = 'An item of the order is a $ref, or has a name and the type "set" or "modifier".'
-    faults.push(fault('resolver-inline', path, detail))
+    faults.push(fault('resolver-inline', pointer, detail))
     return undefined
   }
-  if (item.type === 'set') return { kind: 'set', name, sources: readSet(item, path, faults) }
-  return { kind: 'modifier', modifier: readModifier(name, item, path, faults) }
+  if (item.type === 'set') return { kind: 'set', name, sources: readSet(item, pointer, faults) }
+  return { kind: 'modifier', modifier: readModifier(name, item, pointer, faults) }
 }

@@ -4,7 +4,7 @@ import {
   type JsonObject,
   objectOf,
   quoted,
-  segmentOf,
+  pointerTo,
 } from './dtcg-fault.ts'
 import {
   readResolverShape,
@@ -69,7 +69,7 @@ export function readDtcgResolver(file: unknown): ResolverReading {
   const permutationCount = modifiers.reduce((count, { contexts }) => count * contexts.size, 1)
   if (permutationCount > MOST_PERMUTATIONS) {
     const detail = `Its contexts give ${permutationCount} choices; ${MOST_PERMUTATIONS} at most.`
-    return { ok: false, faults: [fault('too-many-contexts', 'modifiers', detail)] }
+    return { ok: false, faults: [fault('too-many-contexts', '/modifiers', detail)] }
   }
   return { ok: true, resolver: createResolver(shape, modifiers, permutationCount) }
 }
@@ -105,15 +105,15 @@ function chosenContexts(input: unknown, modifiers: readonly ResolverModifier[]) 
   const known = new Map(modifiers.map((modifier) => [modifier.name, modifier]))
   for (const [name, context] of Object.entries(given ?? {})) {
     const modifier = known.get(name)
-    const path = segmentOf(name)
+    const pointer = pointerTo('', name)
     if (!modifier) {
-      faults.push(fault('input-unknown-modifier', path, `There is no modifier ${quoted(name)}.`))
+      faults.push(fault('input-unknown-modifier', pointer, `There is no modifier ${quoted(name)}.`))
     } else if (typeof context !== 'string') {
-      faults.push(fault('input-not-string', path, 'A context is named by text.'))
+      faults.push(fault('input-not-string', pointer, 'A context is named by text.'))
     } else {
       const match = contextNamed(modifier, context)
       if (match !== undefined) chosen.set(name, match)
-      else faults.push(fault('input-context', path, `There is no context ${quoted(context)}.`))
+      else faults.push(fault('input-context', pointer, `There is no context ${quoted(context)}.`))
     }
   }
   for (const { name, default: fallback } of modifiers) {
@@ -164,7 +164,7 @@ function tokensOf(
     if (source.kind === 'tokens') lastFirst.push(source.tokens)
     else if (!seen.has(source.name)) {
       seen.add(source.name)
-      waiting.push(...sets.get(source.name)!)
+      for (const inner of sets.get(source.name)!) waiting.push(inner)
     }
   }
   return lastFirst.reverse()

@@ -1,8 +1,8 @@
 import type { Oklch } from '#shared/color/oklch.ts'
 import { readDtcgColor } from './dtcg-color.ts'
-import { type DtcgType, joined, surveyDocument } from './dtcg-document.ts'
+import { type DtcgType, surveyDocument } from './dtcg-document.ts'
 import { type DtcgEntry, type DtcgGroup, namedEntries } from './dtcg-entries.ts'
-import { type DtcgFault, fault, type JsonObject, objectOf } from './dtcg-fault.ts'
+import { type DtcgFault, fault, type JsonObject, objectOf, pointerTo } from './dtcg-fault.ts'
 import { layerDocument } from './dtcg-layers.ts'
 import { type DtcgLink, linkEntries } from './dtcg-links.ts'
 import { createReferences, type DtcgReferences, referenceOf } from './dtcg-references.ts'
@@ -18,7 +18,7 @@ export type DtcgTokenValue =
   | { readonly kind: 'alias'; readonly name: string }
 
 interface Described {
-  /** Dot path; the token of a group itself ends in `.$root`. */
+  /** Dot pointer; the token of a group itself ends in `.$root`. */
   readonly name: string
   /** Where the token is written; where an inherited one comes from. */
   readonly pointer: string
@@ -77,7 +77,7 @@ export function readDtcgTokens(document: unknown): DtcgDocument {
   const tokens: DtcgToken[] = []
   const others: DtcgOtherToken[] = []
   for (const link of linked.links) {
-    const described = describe(link.entry, survey.pathOf.get(link.entry.token)!)
+    const described = describe(link.entry, survey.pointerOf.get(link.entry.token)!)
     if (link.type === 'color') {
       const reading = readValue(link, references)
       if (reading.value) tokens.push({ ...described, type: link.type, value: reading.value })
@@ -89,13 +89,13 @@ export function readDtcgTokens(document: unknown): DtcgDocument {
   return { tokens, others, groups: named.groups, faults: distinct(faults) }
 }
 
-function describe({ name, token, deprecated }: DtcgEntry, path: string): Described {
+function describe({ name, token, deprecated }: DtcgEntry, pointer: string): Described {
   const { $description, $extensions } = token
   const extensions = objectOf($extensions)
   const unknown = Object.entries(token).filter(([member]) => !member.startsWith('$'))
   return {
     name,
-    pointer: path === '' ? '' : `/${path}`,
+    pointer,
     ...(typeof $description === 'string' ? { description: $description } : {}),
     ...(deprecated === undefined || deprecated === false ? {} : { deprecated }),
     ...(extensions ? { extensions } : {}),
@@ -119,16 +119,16 @@ interface ValueReading {
 }
 
 function readValue(
-  { entry, path, target, value }: DtcgLink,
+  { entry, pointer, target, value }: DtcgLink,
   references: DtcgReferences,
 ): ValueReading {
   if (target !== undefined) return { value: { kind: 'alias', name: target }, faults: [] }
   // Neither a target nor a value: what is wrong with the reference has been reported.
   if (value === undefined) return { faults: [] }
   const { whole, faults } = withPartsSettled(value, references)
-  if (faults.length > 0) return { faults: faults.map((inner) => under(path, inner)) }
+  if (faults.length > 0) return { faults: faults.map((inner) => under(pointer, inner)) }
   const reading = readDtcgColor(whole)
-  if (!reading.ok) return { faults: reading.faults.map((inner) => under(path, inner)) }
+  if (!reading.ok) return { faults: reading.faults.map((inner) => under(pointer, inner)) }
   return { value: { kind: 'color', color: reading.color, authored: authoredOf(entry) }, faults: [] }
 }
 
@@ -146,16 +146,16 @@ function withPartsSettled(value: unknown, references: DtcgReferences) {
   if (!members) return { whole: value, faults }
   const whole = Object.fromEntries(
     Object.entries(members).map(([name, member]) => {
-      const settled = settle(member, name)
+      const settled = settle(member, pointerTo('', name))
       if (name !== 'components' || !Array.isArray(settled)) return [name, settled]
-      return [name, settled.slice(0, 4).map((part, i) => settle(part, `components/${i}`))]
+      return [name, settled.slice(0, 4).map((part, i) => settle(part, `/components/${i}`))]
     }),
   )
   return { whole, faults }
 }
 
-function under(path: string, inner: DtcgFault): DtcgFault {
-  return fault(inner.code, joined(path, inner.pointer.slice(1)).replace(/\/$/, ''), inner.detail)
+function under(pointer: string, inner: DtcgFault): DtcgFault {
+  return { ...inner, pointer: pointer + inner.pointer }
 }
 
 /** A token inherited by several groups is written once, so its faults are told once. */
