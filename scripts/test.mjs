@@ -107,7 +107,7 @@ function runVitest(countFile) {
     const child = spawn(
       process.execPath,
       [join(ROOT, 'node_modules/vitest/vitest.mjs'), 'run', ...vitestArgs],
-      { cwd: ROOT, stdio: 'inherit', env: { ...process.env, CLOSING_COUNT_FILE: countFile } },
+      { cwd: ROOT, stdio: 'inherit', env: { ...ownEnvironment(), CLOSING_COUNT_FILE: countFile } },
     )
     for (const name of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
       process.on(name, () => child.kill(name))
@@ -115,4 +115,13 @@ function runVitest(countFile) {
     child.once('error', reject)
     child.once('exit', resolve)
   })
+}
+
+/** Settings of a service of this person's are none of the tests' business. */
+function ownEnvironment() {
+  const env = { ...process.env, NODE_ENV: 'test' }
+  for (const name of ['DATABASE_URL', 'MIGRATE_DATABASE_URL', 'HOST', 'PORT', 'PUBLIC_URL']) {
+    Reflect.deleteProperty(env, name)
+  }
+  return env
 }
