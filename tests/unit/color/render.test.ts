@@ -6,7 +6,8 @@ import { contrastRatio, relativeLuminance } from '#shared/color/luminance.ts'
 import { srgbBytesToP3Bytes } from '#shared/color/p3.ts'
 import { parseColor } from '#shared/color/parse-color.ts'
 import { renderColor } from '#shared/color/render.ts'
-import { byteOf } from '#shared/color/transfer.ts'
+import { writeLinear } from '#shared/color/rgb-gamut.ts'
+import { byteOf, encodedOf } from '#shared/color/transfer.ts'
 
 function render(text: string) {
   const reading = parseColor(text)
@@ -51,6 +52,28 @@ describe('renderColor', () => {
     ['oklch(0.465 0.075 90.6)', '#695722'],
   ])('answers %s as %s', (text, hex) => {
     expect(hexOf(text)).toBe(hex)
+  })
+
+  it('leaves no channel to clipping: a browser that clips paints oklch(0.7 0.4 150) as #00d600', () => {
+    const angle = (150 * Math.PI) / 180
+    const light = [0.7, 0.4 * Math.cos(angle), 0.4 * Math.sin(angle)] as const
+    const clipped = writeLinear(...light, 'srgb', new Float64Array(3))
+    const [r, g, b] = [...clipped].map((component) => byteOf(encodedOf(component)))
+    expect(formatHex(r!, g!, b!)).toBe('#00d600')
+    expect(hexOf('oklch(0.7 0.4 150)')).toBe('#00c248')
+  })
+
+  // The engine's example of a button under a white label in a dark theme, truncated to two places.
+  it.each([
+    ['oklch(0.52 0.17 258)', '5.60'],
+    ['oklch(0.47 0.17 258)', '7.02'],
+    ['oklch(0.42 0.17 258)', '8.62'],
+    ['oklch(0.57 0.17 258)', '4.55'],
+    ['oklch(0.62 0.17 258)', '3.69'],
+  ])('answers white on %s as %s', (text, ratio) => {
+    const { r, g, b } = render(text)
+    const measured = contrastRatio(relativeLuminance(r, g, b), relativeLuminance(255, 255, 255))
+    expect((Math.floor(measured * 100) / 100).toFixed(2)).toBe(ratio)
   })
 
   it('answers the narrowest gamut that holds the color', () => {
