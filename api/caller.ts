@@ -99,7 +99,7 @@ const oneOf = (words: readonly string[]): string =>
 
 /** The refusal that names the missing role, or the missing scope of a key. */
 export function permissionMissing(caller: Caller, permission: Permission): AppError {
-  const scopes = scopesWith(permission)
+  const scopes = [permission, `${permission}-own` as Permission].flatMap(scopesWith)
   if (caller.kind === 'key' && !scopesAllow(caller.scopes, permission)) {
     return new AppError('scope-missing', {
       detail:
