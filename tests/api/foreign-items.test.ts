@@ -1,0 +1,67 @@
+import { afterAll, beforeAll, expect, it } from 'vitest'
+import { contracts } from '#shared/contracts/contracts.ts'
+import { createTestApp, TEST_SYSTEM, type TestApp } from '#tests/support/app.ts'
+import { call } from '#tests/support/guards.ts'
+
+/**
+ * Items of one system, asked for by a member of both under the address of another: absent there. A token's
+ * name and a theme's key are no secrets, so the other system has none of that name.
+ */
+let test: TestApp
+const ids = new Map<string, string>()
+
+beforeAll(async () => {
+  test = await createTestApp()
+  await test.createSystem('elsewhere')
+  const { maintainer } = test.people
+  const own = `/v1/systems/${TEST_SYSTEM}`
+  const token = async (name: string, value: string) =>
+    maintainer.post(`${own}/tokens`).send({ name, value }).expect(201)
+  await token('deck', '#fff')
+  await token('ink', '#000')
+  await token('action.board.fill', '#bbb')
+  const light = { name: 'Light', ground: 'deck', ink: 'ink' }
+  await maintainer.put(`${own}/themes/light`).set('If-None-Match', '*').send(light).expect(200)
+  const pair = { foreground: 'action.board.fill', background: 'deck', use: 'text' }
+  const made = await maintainer.post(`${own}/pairs`).send(pair).expect(201)
+  const key = await maintainer.post(`${own}/keys`).send({ name: 'x', scopes: ['themes:read'] })
+  const check = await maintainer.post(`${own}/checks`).send({}).expect(200)
+  const breaches = await maintainer.get(`${own}/breaches`).expect(200)
+  ids.set('pairs', made.body.id)
+  ids.set('keys', key.body.id)
+  ids.set('checks', check.body.id)
+  ids.set('breaches', breaches.body.items[0].id)
+})
+afterAll(() => test.close())
+
+const ITEM = /\{(id|name|theme)\}/
+const items = contracts.filter(({ path }) => path.includes('{system}') && ITEM.test(path))
+const cases = items.map((contract) => [contract.operationId, contract] as const)
+
+const paramsOf = (feature: string, system: string) => ({
+  system,
+  id: ids.get(feature) ?? '',
+  name: 'action.board.fill',
+  theme: 'light',
+})
+
+it.each(cases.filter(([, { method }]) => method === 'GET'))(
+  '%s answers in the system of the item',
+  async (_, contract) => {
+    await call(test.people.maintainer, contract, paramsOf(contract.feature, TEST_SYSTEM)).expect(
+      200,
+    )
+  },
+)
+
+it.each(cases.filter(([, { precondition }]) => precondition !== 'create'))(
+  '%s refuses in another system',
+  async (_, contract) => {
+    const { body } = await call(
+      test.people.maintainer,
+      contract,
+      paramsOf(contract.feature, 'elsewhere'),
+    )
+    expect(body).toMatchObject({ status: 404, type: '/problems/not-found' })
+  },
+)
