@@ -81,7 +81,7 @@ const tableOf = (breaches: readonly FindingWire[], { hasColor, columns }: Surfac
     return [...heading, ...group.flatMap(rowsOf)]
   })
   const head =
-    `${lead('Theme', 'State')}    Ratio  Required  ${hasColor ? '    ' : ''} Colours`.trimEnd()
+    `${lead('Theme', 'State')}    Ratio  Required  ${hasColor ? '     ' : ''}Colours`.trimEnd()
   return [paint.soft(head), ...groups]
 }
 

@@ -60,7 +60,7 @@ describe('no verdict', () => {
       code: 3,
       err: expect.stringContaining('No answer in time (1 s)'),
     })
-    expect(performance.now() - startedAt).toBeLessThan(4000)
+    expect(performance.now() - startedAt).toBeLessThan(10_000)
   })
 
   it.each([

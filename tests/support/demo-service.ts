@@ -12,7 +12,6 @@ import { createTestDatabase } from './database.ts'
 export interface DemoService extends Service {
   /** Revisions that seeding made. */
   readonly revisions: number
-  readonly seedingMs: number
   close(): Promise<void>
 }
 
@@ -41,12 +40,10 @@ export async function startDemoService(): Promise<DemoService> {
     })
   }
   const service = { baseUrl, send: createSend(() => 20_000) }
-  const startedAt = performance.now()
   const revisions = await seedDemo(service)
   return {
     ...service,
     revisions,
-    seedingMs: performance.now() - startedAt,
     close: async () => {
       server.closeAllConnections()
       await new Promise((resolve) => server.close(resolve))

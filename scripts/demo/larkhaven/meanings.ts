@@ -23,7 +23,7 @@ const surfaces = [
   token('surface.cabin', '{sand.3}', 'Panels within panels'),
   token('surface.chosen', '{sea.2}', 'The sailing that is chosen', {
     states: ['hover'],
-    rules: { states: { hover: { lightness: 0.02 } } },
+    rules: { states: { hover: { lightness: 0.03 } } },
   }),
   token('surface.inverse', '{sea.10}', 'Footer and banners'),
   token('surface.night', 'oklch(0.15 0.03 255)', 'Bridge and car deck at night', {

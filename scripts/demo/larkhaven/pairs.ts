@@ -21,7 +21,7 @@ const each = (
 /** A ring of two bands: on each background one of them is enough. */
 const ring = (backgrounds: readonly string[], detail: Detail): DemoPair[] =>
   backgrounds.flatMap((background) =>
-    each('focus-adjacent', ['focus.inner', 'focus.outer'], [background], {
+    each('focus-adjacent', ['focus.outer', 'focus.inner'], [background], {
       ...detail,
       states: ['focus'],
       anyOf: `${detail.product} ring on ${background}`,
