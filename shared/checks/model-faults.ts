@@ -1,5 +1,6 @@
 import type { ModelGraph } from './model-graph.ts'
-import type { ModelFault, PairModel, Reference, SourceValue, TokenModel } from './model.ts'
+import type { ModelFault, PairModel, SourceValue, TokenModel } from './model.ts'
+import { ruleReferences } from './rule-scopes.ts'
 import { themeFaults } from './theme-faults.ts'
 import { effectiveLevel, requiredRatio } from './uses.ts'
 
@@ -11,17 +12,6 @@ function missing(id: string, what: string, about: Fault): ModelFault {
     detail: `${what} refers to ${id}, which is missing`,
     ...about,
   }
-}
-
-function tokenOf(reference: Reference | undefined): string | undefined {
-  return typeof reference === 'object' ? reference.token : undefined
-}
-
-/** Every token that a rule scope names. */
-function scopeReferences(scope: Pick<TokenModel, 'rules'>['rules']): string[] {
-  const states = Object.values(scope?.states ?? {}).map((rule) => tokenOf(rule?.towards?.reference))
-  const themes = Object.values(scope?.themes ?? {}).map((rule) => tokenOf(rule.against))
-  return [...states, ...themes].filter((id) => id !== undefined)
 }
 
 function valueFaults(
@@ -52,7 +42,7 @@ function tokenFaults(graph: ModelGraph, token: TokenModel): ModelFault[] {
       faults.push(...valueFaults(graph, value, where))
     }
   }
-  for (const id of scopeReferences(token.rules)) {
+  for (const id of ruleReferences(token.rules)) {
     if (!graph.tokenAt.has(id))
       faults.push(missing(id, `A rule of ${token.name}`, { token: token.id }))
   }
@@ -76,7 +66,7 @@ function scopeFaults(graph: ModelGraph): ModelFault[] {
     })),
   ]
   return scopes.flatMap(({ name, scope, about }) =>
-    scopeReferences(scope)
+    ruleReferences(scope)
       .filter((id) => !graph.tokenAt.has(id))
       .map((id) => missing(id, name, about)),
   )

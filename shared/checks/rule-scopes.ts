@@ -2,6 +2,7 @@ import type {
   Adjustment,
   DerivedState,
   PrefixRules,
+  Reference,
   RuleScope,
   StateRule,
   SystemModel,
@@ -120,4 +121,15 @@ export function createRuleScopes(model: SystemModel): RuleScopes {
 /** Whether a prefix covers a name: by whole segments, so `action` covers `action.fill` and not `actions`. */
 export function coversName(prefix: string, name: string): boolean {
   return name === prefix || name.startsWith(`${prefix}.`)
+}
+
+function tokenIn(reference: Reference | undefined): string | undefined {
+  return typeof reference === 'object' ? reference.token : undefined
+}
+
+/** Every token that the rules of one scope name. */
+export function ruleReferences(scope: RuleScope | undefined): string[] {
+  const states = Object.values(scope?.states ?? {}).map((rule) => tokenIn(rule?.towards?.reference))
+  const themes = Object.values(scope?.themes ?? {}).map((rule) => tokenIn(rule.against))
+  return [...states, ...themes].filter((id) => id !== undefined)
 }

@@ -1,6 +1,7 @@
 import type { ModelGraph } from './model-graph.ts'
 import type { State, TokenModel } from './model.ts'
 import { STATE_COUNT } from './resolved.ts'
+import { ruleReferences } from './rule-scopes.ts'
 import type { LargestStep } from './state-rule.ts'
 import { nodeAt, referenceAt, type ValuePlan } from './value-plan.ts'
 
@@ -91,7 +92,7 @@ export function edgesOf(graph: ModelGraph, plan: ValuePlan, place: ValuePlace): 
 
 /** Every other token that a token's values and rules name, in any theme; ground and ink are left out. */
 export function namedTokens(graph: ModelGraph, token: TokenModel, position: number): string[] {
-  const named = new Set<string>()
+  const named = new Set(ruleReferences(token.rules))
   const follow = (value: TokenModel['value'] | undefined) => {
     if (value !== undefined && value.kind !== 'color') named.add(value.token)
   }
