@@ -1,4 +1,5 @@
-import { Link, useRouteError } from 'react-router-dom'
+import { Link, Navigate, useLocation, useRouteError } from 'react-router-dom'
+import { isRefusal } from '#console/lib/api.ts'
 import { WordButton } from '#console/ui/button.tsx'
 import { DyewrightMark } from '#console/ui/dyewright-mark.tsx'
 import { Trouble } from '#console/ui/page-states.tsx'
@@ -20,7 +21,9 @@ export function ErrorScreen() {
 /** The same inside the frame of a system, which stays. */
 export function PageTrouble() {
   const error = useRouteError()
+  const { pathname, search } = useLocation()
   const { title, detail } = wordsFor(error)
+  if (isRefusal(error, 401)) return <Navigate to={paths.signIn(pathname + search)} replace />
   return (
     <div className="py-22">
       <title>{`${title} · Dyewright`}</title>

@@ -12,6 +12,7 @@ import { paths } from './paths.ts'
 const systemPages: RouteObject[] = [
   {
     index: true,
+    element: null,
     loader: ({ params }: LoaderFunctionArgs) => redirect(paths.tokens(params.system ?? '')),
   },
   {
@@ -45,7 +46,7 @@ export const router = createBrowserRouter([
     ErrorBoundary: ErrorScreen,
     HydrateFallback: FirstWait,
     children: [
-      { index: true, loader: () => redirect(paths.systems()) },
+      { index: true, element: null, loader: () => redirect(paths.systems()) },
       { path: 'sign-in', lazy: () => import('#console/routes/sign-in-page.tsx') },
       { lazy: () => import('#console/routes/signed-in.tsx'), children: signedInPages },
       { path: '*', lazy: () => import('#console/routes/not-found-page.tsx') },

@@ -31,8 +31,8 @@ export function SignOutItem() {
   const leaving = useMutation({
     mutationFn: endSession,
     onSettled: async () => {
-      queryClient.clear()
       await navigate(paths.signIn())
+      queryClient.clear()
     },
   })
   return (

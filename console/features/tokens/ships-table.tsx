@@ -33,19 +33,19 @@ export function ShipsTable(props: ShipsTableProps) {
           <tr>
             <th className="w-88 @max-[600px]:w-64">Theme</th>
             <th className="w-70">State</th>
-            <th className="w-130 @max-[600px]:w-auto">Seen on its ground</th>
+            <th className="w-124 @max-[600px]:w-auto">Seen on its ground</th>
             <th className="w-150 @max-[980px]:hidden">
               <SourceHeads />
             </th>
-            <th className="w-150 @max-[600px]:hidden">
+            <th className="w-134 @max-[600px]:hidden">
               <span className="pl-14">sRGB</span>
             </th>
-            <th className="w-160 @max-[1180px]:hidden">Display P3</th>
+            <th className="w-132 @max-[1180px]:hidden">Display P3</th>
             <th className="@max-[820px]:hidden">Made by</th>
             <th className="w-129">
               <span className="block w-71 text-end">Lowest</span>
             </th>
-            <th className="w-220 @max-[1100px]:hidden">Against</th>
+            <th className="w-184 @max-[1100px]:hidden">Against</th>
           </tr>
         </thead>
         {props.themes.map((theme) => (

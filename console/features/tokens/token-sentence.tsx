@@ -1,5 +1,6 @@
-import type { ReactNode, Ref } from 'react'
+import type { ReactNode, RefObject } from 'react'
 import { Choice } from '#console/ui/choice.tsx'
+import { NameField } from './name-field.tsx'
 import { MARK_CHOICES, ORDER_CHOICES, type TokenFilter } from './token-filter.ts'
 
 /** The filter of the ledger, as a sentence. */
@@ -14,7 +15,7 @@ export function TokenSentence({
   filter: TokenFilter
   groups: readonly string[]
   themes: readonly string[]
-  field: Ref<HTMLInputElement>
+  field: RefObject<HTMLInputElement | null>
   onChange: (filter: TokenFilter) => void
   /** What was found, at the far end. */
   children: ReactNode
@@ -26,17 +27,10 @@ export function TokenSentence({
   return (
     <search className="flex min-h-48 flex-wrap items-center gap-x-8 gap-y-6 py-8">
       <label htmlFor="find">Tokens named</label>
-      <input
-        id="find"
-        ref={field}
-        type="text"
-        value={filter.named}
-        placeholder="any name"
-        autoComplete="off"
-        spellCheck={false}
-        aria-keyshortcuts="/"
-        onChange={(event) => onChange({ ...filter, named: event.target.value })}
-        className="line-input w-150"
+      <NameField
+        named={filter.named}
+        field={field}
+        onChange={(named) => onChange({ ...filter, named })}
       />
       in
       <Choice
