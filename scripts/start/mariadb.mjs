@@ -132,6 +132,8 @@ async function createDataFolder(folder) {
     '--auth-root-authentication-method=socket',
     `--auth-root-socket-user=${userInfo().username}`,
     '--skip-test-db',
+    // A machine whose own name does not resolve is no hindrance: nobody comes in by a host's name.
+    '--force',
     ...AS_ROOT,
     `--datadir=${unfinished}`,
   ])
