@@ -109,6 +109,7 @@ function removeLeftovers() {
 export async function buildPrograms(folder) {
   const esbuild = await import('esbuild')
   await Promise.all([esbuild.build({ ...programOptions(), outdir: folder }), buildGate(folder)])
+  await esbuild.stop()
   for (const [to, from] of Object.entries(COPIES)) {
     cpSync(join(ROOT, from), join(folder, to), { recursive: true })
   }
