@@ -1,0 +1,80 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { createTestApp, type TestApp } from '#tests/support/app.ts'
+
+let test: TestApp
+beforeAll(async () => {
+  test = await createTestApp()
+})
+afterAll(() => test.close())
+
+const get = (url: string) => test.people.maintainer.get(url)
+
+describe('query', () => {
+  it.each([
+    ['an unknown parameter', 'colour=red', 'colour'],
+    ['a repeated one', 'limit=1&limit=2', 'limit'],
+    ['a number out of range', 'limit=0', 'limit'],
+    ['a text for a number', 'limit=ten', 'limit'],
+    ['a word that is none of those known', 'view=wide', 'view'],
+    ['broken percent-encoding', 'named=%zz', 'named'],
+    ['bytes that are not UTF-8', 'named=%ff%fe', 'named'],
+    ['a cursor that nobody gave', 'cursor=abc', 'cursor'],
+    ['nested names', 'limit[a]=1', 'limit[a]'],
+  ])('refuses %s with 400 and names it', async (_, query, parameter) => {
+    const { body } = await get(`/v1/systems/larkhaven/tokens?${query}`).expect(400)
+    expect(body.type).toBe('/problems/parameter-invalid')
+    expect(body.errors.map((fault: { parameter: string }) => fault.parameter)).toEqual([parameter])
+  })
+
+  it('refuses any parameter where none is known', async () => {
+    const { body } = await get('/v1/me?verbose=1').expect(400)
+    expect(body.errors).toEqual([{ parameter: 'verbose', detail: 'Unknown parameter' }])
+  })
+
+  it('reads a plus as a space and an empty query as none', async () => {
+    await get('/v1/systems/larkhaven/tokens?named=a+b').expect(200)
+    await get('/v1/systems/larkhaven/tokens?').expect(200)
+  })
+})
+
+describe('path', () => {
+  it.each(['/v1/systems/%zz', '/v1/systems/larkhaven/tokens/%ff'])(
+    'refuses the encoding of %s with 400',
+    async (url) => {
+      const { body } = await get(url).expect(400)
+      expect(body.type).toBe('/problems/request-unreadable')
+    },
+  )
+
+  it('refuses what cannot be a key of a system with 400', async () => {
+    const { body } = await get('/v1/systems/Not%20A%20Slug').expect(400)
+    expect(body.errors[0].parameter).toBe('system')
+  })
+
+  it.each([
+    '/v1/nothing',
+    '/v1/systems/larkhaven/',
+    '/v1/Systems',
+    '/v1/systems/larkhaven/themes/light.exe',
+    '/v1/systems/larkhaven/tokens/a%00b',
+  ])('refuses %s with 404', async (url) => {
+    await get(url).expect(404)
+  })
+})
+
+describe('method', () => {
+  it('refuses one that an address does not take with 405, and lists those it does', async () => {
+    const { headers, body } = await test.people.maintainer.delete('/v1/systems').expect(405)
+    expect(headers.allow?.split(', ').sort()).toEqual(['GET', 'HEAD', 'POST'])
+    expect(body.type).toBe('/problems/method-not-allowed')
+  })
+
+  it('answers HEAD as GET, without the body', async () => {
+    const { headers: full } = await get('/v1/systems/larkhaven/members').expect(200)
+    const { headers, text } = await test.people.maintainer
+      .head('/v1/systems/larkhaven/members')
+      .expect(200)
+    expect(headers.etag).toBe(full.etag)
+    expect(text ?? '').toBe('')
+  })
+})

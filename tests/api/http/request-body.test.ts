@@ -1,0 +1,133 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { createTestApp, type TestApp } from '#tests/support/app.ts'
+
+let test: TestApp
+beforeAll(async () => {
+  test = await createTestApp()
+})
+afterAll(() => test.close())
+
+const TOKENS = '/v1/systems/larkhaven/tokens'
+/** The bytes as they are: the client would write a Buffer as JSON. */
+const asIs = (body: string) => body
+const post = (body: string | Buffer, type = 'application/json') =>
+  test.people.maintainer.post(TOKENS).set('Content-Type', type).serialize(asIs).send(body)
+const nested = (depth: number) => `${'['.repeat(depth)}${']'.repeat(depth)}`
+const code = ({ body }: { body: { type: string } }) => body.type.split('/').at(-1)
+
+describe('unreadable', () => {
+  it.each([
+    ['broken JSON', '{"name": '],
+    ['nothing', ''],
+    ['two values', '{} {}'],
+    ['a nesting of 33', nested(33)],
+    ['a nesting of 500,000', nested(500_000)],
+    ['brackets that only close', ']]]]'],
+    ['bytes that are not UTF-8', Buffer.from([0x22, 0xff, 0xfe, 0x22])],
+    ['200,000 elements', `[${'0,'.repeat(199_999)}0]`],
+  ])('refuses %s with 400', async (_, body) => {
+    const answer = await post(body).expect(400)
+    expect(code(answer)).toBe('request-unreadable')
+  })
+
+  it('reads a nesting of 32, and brackets in strings are none', async () => {
+    await post(nested(32)).expect(422)
+    await post(JSON.stringify({ name: '['.repeat(200), value: '"}}' })).expect(422)
+  })
+})
+
+describe('size', () => {
+  it('refuses more than 1 MiB with 413 and says the limit', async () => {
+    const { body } = await post(JSON.stringify({ name: 'x'.repeat(2 ** 20) })).expect(413)
+    expect(body).toMatchObject({ type: '/problems/request-too-large', limitBytes: 2 ** 20 })
+  })
+
+  it('reads 1 MiB exactly', async () => {
+    await post(`{"name":"${'x'.repeat(2 ** 20 - 11)}"}`).expect(422)
+  })
+
+  it('takes more for a check', async () => {
+    const body = JSON.stringify({ source: { branch: 'x'.repeat(2 * 2 ** 20) } })
+    await test.people.maintainer
+      .post('/v1/systems/larkhaven/checks')
+      .set('Content-Type', 'application/json')
+      .send(body)
+      .expect(422)
+  })
+})
+
+describe('media type', () => {
+  it.each([
+    'text/plain',
+    'application/xml',
+    'multipart/form-data; boundary=x',
+    'application/x-www-form-urlencoded',
+    'application/json; charset=utf-16',
+    'application/jsonp',
+  ])('refuses %s with 415', async (type) => {
+    expect(code(await post('{}', type).expect(415))).toBe('media-type-unsupported')
+  })
+
+  it.each([
+    'application/json; charset=UTF-8',
+    'application/json;charset="utf-8"',
+    'application/design-tokens+json',
+    'APPLICATION/merge-patch+JSON',
+  ])('reads %s', async (type) => {
+    await post('{}', type).expect(422)
+  })
+
+  it('refuses a compressed body with 415', async () => {
+    await post('{}').set('Content-Encoding', 'gzip').expect(415)
+  })
+})
+
+describe('faults', () => {
+  it('answers every fault at once, each with its pointer', async () => {
+    const { body } = await post(
+      JSON.stringify({
+        name: '$x',
+        value: { colorSpace: 'oklch', components: [0.5, 'x', 200], alpha: 2 },
+        states: ['hover', 'pressed'],
+        values: { 'Not A Slug': { rest: '#fff' }, light: { pressed: '#fff' } },
+        'a/b~c': 1,
+        locked: 'yes',
+      }),
+    ).expect(422)
+    const pointers = body.errors.map(({ pointer }: { pointer: string }) => pointer).sort()
+    expect(pointers).toEqual([
+      '/a~1b~0c',
+      '/locked',
+      '/name',
+      '/states/1',
+      '/value/alpha',
+      '/value/components/1',
+      '/values/Not A Slug',
+      '/values/light/pressed',
+    ])
+  })
+
+  it('tells an absent member from one of the wrong type', async () => {
+    const { body } = await post('{"value": 12}').expect(422)
+    expect(body.errors).toEqual([
+      { pointer: '/name', detail: 'Missing' },
+      { pointer: '/value', detail: 'Expected text or an object' },
+    ])
+  })
+
+  it('points at the whole body where that is of the wrong type', async () => {
+    const { body } = await post('[]').expect(422)
+    expect(body.errors).toEqual([{ pointer: '', detail: 'Expected an object' }])
+  })
+
+  it.each(['__proto__', '\\u005f_proto__'])('refuses the name %s aloud', async (name) => {
+    const { body } = await post(
+      `{"name":"a","value":"#fff","values":{"${name}":{"rest":"#fff"}}}`,
+    ).expect(422)
+    expect(body.errors[0].pointer).toBe('/values/__proto__')
+  })
+})
+
+it('refuses who is unknown before it reads a body', async () => {
+  await test.anonymous.post(TOKENS).set('Content-Type', 'text/plain').send('x').expect(401)
+})
