@@ -159,7 +159,7 @@ export function randomPair(dice: Dice, ids: readonly string[], id: string): Pair
     background: dice.pick(ids),
     use: dice.pick(USES),
     relation: dice.pick(['inside', 'together']),
-    backdrop: dice.chance(0.06)
+    backdrop: dice.chance(0.03)
       ? 'unknown'
       : dice.chance(0.3)
         ? [dice.pick(ids), ...dice.some([dice.pick(ids)], 0.4)]
@@ -214,7 +214,7 @@ function strict(settings: SystemSettings, pairs: readonly PairModel[]): PairMode
   })
 }
 
-export function randomSystem(dice: Dice, size = 12): SystemModel {
+export function randomSystem(dice: Dice, size = 11): SystemModel {
   const ids = ['ground', 'ink', ...Array.from({ length: size }, (_, at) => `t${at}`)]
   const settings = randomSettings(dice)
   const pairs = Array.from({ length: size }, (_, at) => randomPair(dice, ids, `p${at}`))

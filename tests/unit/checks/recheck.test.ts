@@ -62,7 +62,7 @@ it('answers sequences of edits as a full check does, finding by finding', () => 
         evaluation = again.evaluation
       }
     }),
-    { numRuns: 250 },
+    { numRuns: 200 },
   )
   expect(tally.edits).toBeGreaterThan(500)
   expect(tally.faulty).toBeGreaterThan(20)
