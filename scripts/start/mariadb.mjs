@@ -11,11 +11,11 @@ import {
   rmSync,
 } from 'node:fs'
 import { tmpdir, userInfo } from 'node:os'
-import { dirname, join } from 'node:path'
+import { basename, dirname, join } from 'node:path'
 import { setTimeout as delay } from 'node:timers/promises'
 import { ensurePrograms, findProgram } from '#scripts/start/debian.mjs'
 import { freePort } from '#scripts/start/free-port.mjs'
-import { endProcess, findProcesses } from '#scripts/start/processes.mjs'
+import { commandLine, endProcess, findProcesses } from '#scripts/start/processes.mjs'
 import { runProgram } from '#scripts/start/run-program.mjs'
 import { StepFailure } from '#scripts/start/steps.mjs'
 
@@ -28,6 +28,8 @@ import { StepFailure } from '#scripts/start/steps.mjs'
  * @property {() => Promise<void>} stop
  */
 
+const SOCKET_FLAG = '--socket='
+const SOCKET_FOLDER = 'dyw-'
 const READY_WITHIN_MS = 30_000
 /** sun_path holds 108 bytes, one of them the closing zero. */
 const SOCKET_PATH_LIMIT = 107
@@ -58,7 +60,7 @@ export function ensureMariadb() {
 export async function startMariadb({ folder, port, throwAway = false }) {
   await endMariadb(folder)
   await createDataFolder(folder)
-  const socketFolder = mkdtempSync(join(shortTemporaryFolder(), 'dyw-'))
+  const socketFolder = mkdtempSync(join(shortTemporaryFolder(), SOCKET_FOLDER))
   const socket = join(socketFolder, 's')
   const log = `${folder}.log`
   const chosenPort = port ?? (await freePort())
@@ -70,7 +72,7 @@ export async function startMariadb({ folder, port, throwAway = false }) {
       '--no-defaults',
       ...AS_ROOT,
       `--datadir=${folder}`,
-      `--socket=${socket}`,
+      `${SOCKET_FLAG}${socket}`,
       `--pid-file=${join(socketFolder, 'pid')}`,
       `--port=${chosenPort}`,
       '--bind-address=127.0.0.1',
@@ -115,7 +117,22 @@ export async function startMariadb({ folder, port, throwAway = false }) {
  * @param {string} folder absolute
  */
 export async function endMariadb(folder) {
-  for (const pid of findProcesses(`--datadir=${folder}`)) await endProcess(pid)
+  for (const pid of findProcesses(`--datadir=${folder}`)) await endServer(pid)
+}
+
+/**
+ * Ends a process and, where it is a server of ours, removes the folder of its socket.
+ * @param {number} pid
+ * @param {{ patienceMs?: number }} [options]
+ */
+export async function endServer(pid, options) {
+  const socket = commandLine(pid).find((argument) => argument.startsWith(SOCKET_FLAG))
+  await endProcess(pid, options)
+  if (socket === undefined) return
+  const socketFolder = dirname(socket.slice(SOCKET_FLAG.length))
+  if (basename(socketFolder).startsWith(SOCKET_FOLDER)) {
+    rmSync(socketFolder, { recursive: true, force: true })
+  }
 }
 
 /**

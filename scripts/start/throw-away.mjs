@@ -2,8 +2,8 @@
 import { mkdirSync, readdirSync, rmSync, statfsSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
-import { startMariadb } from '#scripts/start/mariadb.mjs'
-import { endProcess, findOrphans, processIdentity } from '#scripts/start/processes.mjs'
+import { endServer, startMariadb } from '#scripts/start/mariadb.mjs'
+import { findOrphans, processIdentity } from '#scripts/start/processes.mjs'
 
 /** Every process of a test run carries this variable: the identity of the run. */
 const RUN_VARIABLE = 'DYEWRIGHT_TEST_RUN'
@@ -34,7 +34,7 @@ export async function startThrowAwayMariadb() {
 
 /** Ends the processes and removes the folders of test runs that are no more, and of no others. */
 export async function reapLeftovers() {
-  await Promise.all(findOrphans(RUN_VARIABLE).map((pid) => endProcess(pid, { patienceMs: 3_000 })))
+  await Promise.all(findOrphans(RUN_VARIABLE).map((pid) => endServer(pid, { patienceMs: 3_000 })))
   for (const parent of new Set(['/dev/shm', tmpdir()])) {
     for (const name of listNames(parent)) {
       const owner = name.slice(PREFIX.length)
@@ -45,8 +45,8 @@ export async function reapLeftovers() {
   }
 }
 
-/** @returns {string} */
-function roomyFolder() {
+/** @returns {string} memory where it has room, else the temporary folder */
+export function roomyFolder() {
   try {
     const { bavail, bsize } = statfsSync('/dev/shm')
     return bavail * bsize > ROOM_BYTES ? '/dev/shm' : tmpdir()

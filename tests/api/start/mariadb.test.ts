@@ -1,11 +1,11 @@
 import { mkdirSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs'
 import { createConnection as connect } from 'node:net'
-import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { createConnection } from 'mysql2/promise'
 import { afterEach, beforeEach, describe, expect, test } from 'vitest'
 import { startMariadb } from '#scripts/start/mariadb.mjs'
 import { processIdentity } from '#scripts/start/processes.mjs'
+import { roomyFolder } from '#scripts/start/throw-away.mjs'
 
 const HOST_NOT_ALLOWED = 1130
 
@@ -13,7 +13,7 @@ let parent: string
 let folder: string
 
 beforeEach(() => {
-  parent = mkdtempSync(join(tmpdir(), 'dyw-mariadb-'))
+  parent = mkdtempSync(join(roomyFolder(), 'dyw-mariadb-'))
   folder = join(parent, 'data')
 })
 
