@@ -12,20 +12,19 @@ const STAND_IN: JsonObject = {
  * @returns the copy, and the names that were put in
  */
 export function withStandingTokens(
-  document: JsonObject,
+  given: JsonObject,
   stands: (name: string) => boolean,
 ): { readonly document: JsonObject; readonly standIns: ReadonlySet<string> } {
-  let whole = document
+  const document: Group = { ...given }
+  const copied = new Set([document])
   const standIns = new Set<string>()
-  for (const name of aliasedNames(document)) {
-    if (!stands(name)) continue
-    const put = withToken(whole, name.split('.'))
-    if (put === undefined) continue
-    whole = put
-    standIns.add(name)
+  for (const name of aliasedNames(given)) {
+    if (stands(name) && putToken(document, name.split('.'), copied)) standIns.add(name)
   }
-  return { document: whole, standIns }
+  return { document, standIns }
 }
+
+type Group = Record<string, unknown>
 
 /** Names in braces anywhere in the document. */
 function aliasedNames(document: JsonObject): Set<string> {
@@ -42,17 +41,28 @@ function aliasedNames(document: JsonObject): Set<string> {
   return names
 }
 
-/** Nothing where the document has something at that name itself, or a token on the way to it. */
-function withToken(
-  group: JsonObject,
-  [segment, ...rest]: readonly string[],
-): JsonObject | undefined {
-  if (segment === undefined || isToken(group)) return undefined
-  const child = Object.hasOwn(group, segment) ? group[segment] : undefined
-  if (rest.length === 0) return child === undefined ? { ...group, [segment]: STAND_IN } : undefined
-  const inner = child === undefined ? {} : objectOf(child)
-  const put = inner && withToken(inner, rest)
-  return put && { ...group, [segment]: put }
+/**
+ * Copies a group the first time that something goes into it, so that the caller's document stays as it is and
+ * thousands of tokens cost one copy.
+ * @returns false where the document has something at that name itself, or a token on the way to it
+ */
+function putToken(document: Group, path: readonly string[], copied: Set<Group>): boolean {
+  let group = document
+  for (const [at, segment] of path.entries()) {
+    const child = Object.hasOwn(group, segment) ? group[segment] : undefined
+    if (isToken(group)) return false
+    if (at === path.length - 1) {
+      if (child === undefined) group[segment] = STAND_IN
+      return child === undefined
+    }
+    const inner = child === undefined ? {} : objectOf(child)
+    if (inner === undefined) return false
+    const own = copied.has(inner) ? (inner as Group) : { ...inner }
+    copied.add(own)
+    group[segment] = own
+    group = own
+  }
+  return false
 }
 
 const isToken = (group: JsonObject) =>
