@@ -117,7 +117,7 @@ function chosenContexts(input: unknown, modifiers: readonly ResolverModifier[]) 
     }
   }
   for (const { name, default: fallback } of modifiers) {
-    if (chosen.has(name) || Object.hasOwn(given ?? {}, name)) continue
+    if (Object.hasOwn(given ?? {}, name)) continue
     if (fallback !== undefined) chosen.set(name, fallback)
     else
       faults.push(fault('input-missing', '', `${quoted(name)} has no default: choose a context.`))
