@@ -113,6 +113,9 @@ describe('parseColor', () => {
     for (const grey of ['#777', 'hsl(200 0% 40%)', 'lch(50 0 90)', 'lab(50 0 0)', 'hwb(9 50% 50%)'])
       expect(read(grey)).toMatchObject({ c: 0, h: null })
     expect(read('oklch(0.5 0 90)')).toMatchObject({ c: 0, h: 90 })
+    // CSS Color 4: hue is powerless in LCH at a chroma of 0.0015 or less.
+    expect(read('lch(1 0.0015 40)')).toMatchObject({ c: 0, h: null })
+    expect(read('lch(1 0.0016 40)').h).not.toBeNull()
   })
 
   it('answers hues turned into 0 to 360, exact where they already lie there', () => {

@@ -145,6 +145,13 @@ describe('mapToGamut', () => {
     )
   })
 
+  it('answers a grey where the chroma is powerless, 0.000004 or less', () => {
+    const [r, g, b] = mapToGamut(0.2, 0.000004, 180, 'srgb')
+    expect(Math.max(r!, g!, b!) - Math.min(r!, g!, b!)).toBeLessThan(1e-7)
+    const [red, green, blue] = mapToGamut(0.2, 0.0000041, 180, 'srgb')
+    expect(Math.max(red!, green!, blue!) - Math.min(red!, green!, blue!)).toBeGreaterThan(1e-6)
+  })
+
   it('answers into the array it is given', () => {
     const out = new Float64Array(3)
     expect(mapToGamut(0.7, 0.4, 150, 'srgb', out)).toBe(out)
