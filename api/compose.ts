@@ -16,6 +16,8 @@ export interface Composition {
   readonly config: Config
   /** What is served besides the API: the console, the gate, the document. */
   readonly files?: Files
+  /** Not ready before the database has had so many. */
+  readonly expectedMigrations?: number
   /** Edges of the world that are not the real ones. */
   readonly platform?: Partial<Platform>
 }
@@ -28,9 +30,10 @@ export interface Service {
 }
 
 /** Puts the service together; nothing else knows how its parts meet. */
-export function compose({ config, files = {}, platform: given = {} }: Composition): Service {
-  const platform = createPlatform(config, given)
-  const services = createServices(platform, config)
+export function compose(composition: Composition): Service {
+  const { config, files = {}, expectedMigrations } = composition
+  const platform = createPlatform(config, composition.platform ?? {})
+  const services = createServices(platform, config, expectedMigrations)
   const router = createApiRouter({
     identify: { bySession: services.sessions.identify, byKey: services.keys.identify },
     findAccess: services.members.findAccess,

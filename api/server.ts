@@ -24,7 +24,8 @@ if (read.ok) await serve(read.config)
 else refuse(read.refusals)
 
 async function serve(config: Extract<typeof read, { ok: true }>['config']): Promise<void> {
-  const service = compose({ config, files: await readFiles() })
+  const [files, expectedMigrations] = await Promise.all([readFiles(), countBuiltMigrations()])
+  const service = compose({ config, files, expectedMigrations })
   const refusals = await bootRefusals(service, config)
   if (refusals.length > 0) {
     refuse(refusals)
@@ -44,9 +45,16 @@ async function serve(config: Extract<typeof read, { ok: true }>['config']): Prom
   }
 }
 
+const at = (path: string): string => fileURLToPath(new URL(`../${path}`, import.meta.url))
+
+/** How many migrations were built with the service. */
+async function countBuiltMigrations(): Promise<number> {
+  const journal = await readFile(at('drizzle/migrations/meta/_journal.json'), 'utf8')
+  return (JSON.parse(journal) as { entries: unknown[] }).entries.length
+}
+
 /** Everything that the built service hands out as it is; what was not built is left out. */
 async function readFiles(): Promise<Files> {
-  const at = (path: string) => fileURLToPath(new URL(`../${path}`, import.meta.url))
   const text = (path: string) => readFile(at(path), 'utf8').catch(() => undefined)
   const [document, page, gate] = await Promise.all([
     text('openapi/openapi.json'),

@@ -27,7 +27,7 @@ export interface Platform {
 }
 
 /** Wires every use case to the world. */
-export function createServices(platform: Platform, config: Config) {
+export function createServices(platform: Platform, config: Config, expectedMigrations?: number) {
   const { newId, database, passwords } = platform
   const reads = createRepositories(database.db)
   const transact = createTransactOver(platform.transact)
@@ -38,7 +38,8 @@ export function createServices(platform: Platform, config: Config) {
     keys: createKeysService({ transact, reads, newId }),
     members: createMembersService({ transact, reads }),
     health: createHealthService({
-      isReachable: database.isReachable,
+      countMigrations: database.countMigrations,
+      expectedMigrations,
       seedPendingFile: config.seedPendingFile,
     }),
   }

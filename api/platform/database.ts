@@ -1,7 +1,7 @@
 import type { MySqlDatabase } from 'drizzle-orm/mysql-core'
 import { drizzle, type MySql2PreparedQueryHKT, type MySqlRawQueryResult } from 'drizzle-orm/mysql2'
 import type { MySql2QueryResultHKT } from 'drizzle-orm/mysql2'
-import { createPool, type Pool } from 'mysql2/promise'
+import { createPool, type Pool, type RowDataPacket } from 'mysql2/promise'
 import { failureOf, isRetryable } from './database-error.ts'
 
 /** Runs statements: the database itself, or one transaction of it. */
@@ -16,8 +16,8 @@ export interface Database {
   readonly db: Executor
   readonly pool: Pool
   readonly transact: RunTransaction
-  /** Whether a statement comes back. */
-  isReachable(): Promise<boolean>
+  /** How many migrations it has had; rejects while it is away or has had none. */
+  countMigrations(): Promise<number>
   close(): Promise<void>
 }
 
@@ -52,11 +52,12 @@ export function createDatabase({ url, connections = 10 }: DatabaseOptions): Data
     db,
     pool,
     transact: createTransact(db),
-    isReachable: () =>
-      pool.query('select 1').then(
-        () => true,
-        () => false,
-      ),
+    countMigrations: async () => {
+      const [rows] = await pool.query<(RowDataPacket & { n: number })[]>(
+        'select count(*) as n from `__drizzle_migrations`',
+      )
+      return rows[0]?.n ?? 0
+    },
     close: () => pool.end(),
   }
 }
