@@ -1,0 +1,85 @@
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
+import { createTestApp, type TestApp } from '#tests/support/app.ts'
+import { createSampleSystem, type SampleSystem } from '#tests/support/sample-system.ts'
+
+let test: TestApp
+let system: SampleSystem
+beforeAll(async () => {
+  test = await createTestApp()
+})
+beforeEach(async () => {
+  system = await createSampleSystem(test)
+})
+afterAll(() => test.close())
+
+const read = async () => (await system.maintainer.get(system.url).expect(200)).body
+const patch = async (body: object, agent = system.maintainer) =>
+  agent
+    .patch(system.url)
+    .set('If-Match', (await read()).etag)
+    .send(body)
+
+describe('patchSystem', () => {
+  it('answers the breaches that a higher level opens, as one revision', async () => {
+    await system.addToken('note', '#666666')
+    await system.addPair({ foreground: 'note', background: 'paper', use: 'text' })
+    const before = await read()
+    // #666666 on white is 5.74: enough for AA, short of 7 for AAA (WCAG 2.2, 1.4.6).
+    const { body } = await patch({ level: 'AAA', message: 'Read in glare' })
+    expect(body).toMatchObject({
+      level: 'AAA',
+      counts: { openBreaches: 1 },
+      head: { revision: before.head.revision + 1, verdict: 'fail' },
+      effect: { opened: [{ foreground: 'note', required: 7 }] },
+    })
+    const lowered = await patch({ level: 'AA' })
+    expect(lowered.body.effect.resolved).toMatchObject([{ foreground: 'note' }])
+    expect(await system.breaches('?status=resolved')).toMatchObject([
+      { closingReason: 'requirement-changed' },
+    ])
+  })
+
+  it('answers a floor for disabled, and takes it away again', async () => {
+    expect((await patch({ disabledFloor: 2 })).body.disabledFloor).toBe(2)
+    expect((await patch({ disabledFloor: null })).body.disabledFloor).toBeNull()
+  })
+
+  it('leaves the revision where only name and write mode change', async () => {
+    const before = await read()
+    const { body } = await patch({ name: 'Ferries', writeMode: 'review' })
+    expect(body).toMatchObject({
+      name: 'Ferries',
+      writeMode: 'review',
+      head: before.head,
+      effect: { revision: before.head.revision },
+    })
+  })
+
+  it('refuses settings under review, and a maintainer who would end it; the lead may', async () => {
+    await patch({ writeMode: 'review' })
+    const refused = await patch({ level: 'AAA', name: 'Half' })
+    expect([refused.status, refused.body.type]).toEqual([409, '/problems/review-required'])
+    expect((await read()).name).not.toBe('Half')
+    expect((await patch({ writeMode: 'direct' })).status).toBe(403)
+    expect((await patch({ writeMode: 'direct' }, test.people.lead)).body.writeMode).toBe('direct')
+  })
+
+  it('refuses the lead what is not level and write mode', async () => {
+    expect((await patch({ level: 'AAA' }, test.people.lead)).status).toBe(200)
+    for (const body of [{ name: 'X' }, { p3Gates: true }, { disabledFloor: 2 }]) {
+      expect((await patch(body, test.people.lead)).status).toBe(403)
+    }
+  })
+
+  it('refuses an edit without, and with a stale If-Match', async () => {
+    await system.maintainer.patch(system.url).send({ name: 'X' }).expect(428)
+    const { etag } = await read()
+    await system.addToken('further', '#fff')
+    const stale = await system.maintainer
+      .patch(system.url)
+      .set('If-Match', etag)
+      .send({ name: 'X' })
+      .expect(412)
+    expect(stale.body.current).toEqual(await read())
+  })
+})
