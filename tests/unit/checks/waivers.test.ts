@@ -1,0 +1,94 @@
+import { describe, expect, it } from 'vitest'
+import type { Finding, PairModel, SystemModel, WaiverModel } from '#shared/checks/model.ts'
+import { breachRatios, verdictOf } from '#shared/checks/verdict.ts'
+import { pair, system, theme, token } from './model-builder.ts'
+import { evaluate, findings } from './reading.ts'
+
+const GREY = token('grey', '#8a8a8a')
+
+function lightSystem(
+  pairs: readonly PairModel[],
+  more: Parameters<typeof system>[0] = {},
+): SystemModel {
+  return system({ themes: [theme('light')], tokens: [GREY], pairs, ...more })
+}
+
+describe('waivers', () => {
+  const model = lightSystem([pair('grey', 'ground')])
+  const [{ ratio }] = findings(model) as [Finding]
+  const waiver: WaiverModel = {
+    id: 'wai_1',
+    foreground: 'grey',
+    background: 'ground',
+    kind: 'text',
+    floorRatio: ratio,
+    required: 4.5,
+    endsAt: '2030-01-01T00:00:00.000Z',
+  }
+  const under = (more: Partial<WaiverModel>, of: SystemModel = model) =>
+    findings(of, { waivers: [{ ...waiver, ...more }] })[0]!
+
+  it('answers waived from the floor ratio up, with the waiver’s id and end', () => {
+    expect(under({})).toMatchObject({
+      outcome: 'waived',
+      waiver: { id: 'wai_1', endsAt: waiver.endsAt },
+    })
+    expect(under({ floorRatio: ratio + 1e-9 }).outcome).toBe('breach')
+  })
+
+  it('leaves a breach whose requirement became stricter than the waiver’s', () => {
+    expect(under({}, lightSystem([pair('grey', 'ground', { level: 'AAA' })])).outcome).toBe(
+      'breach',
+    )
+    expect(under({ required: 7 }).outcome).toBe('waived')
+  })
+
+  it('leaves what the waiver does not name', () => {
+    const others = [
+      { foreground: 'ink' },
+      { background: 'ink' },
+      { kind: 'link' },
+      { theme: 'dark' },
+    ] as const
+    for (const other of others) expect(under(other).outcome).toBe('breach')
+    expect(under({ foregroundState: 'hover' }).outcome).toBe('breach')
+    expect(under({ backgroundState: 'hover' }).outcome).toBe('breach')
+    expect(
+      under({ theme: 'light', foregroundState: 'rest', backgroundState: 'rest' }).outcome,
+    ).toBe('waived')
+  })
+
+  it('answers a verdict of pass where every breach is waived', () => {
+    const { verdict, counts } = verdictOf(evaluate(model), { waivers: [waiver] })
+    expect([verdict, counts.waived, counts.breach]).toEqual(['pass', 1, 0])
+  })
+
+  it('answers the waiver that ends last where several cover', () => {
+    const later = { ...waiver, id: 'wai_2', endsAt: '2031-01-01T00:00:00.000Z' }
+    for (const waivers of [
+      [waiver, later],
+      [later, waiver],
+    ]) {
+      expect(findings(model, { waivers })[0]!.waiver!.id).toBe('wai_2')
+    }
+  })
+})
+
+describe('newOnly', () => {
+  const at = (text: string) =>
+    lightSystem([pair('grey', 'ground')], { tokens: [token('grey', text)] })
+  const known = breachRatios(verdictOf(evaluate(at('#8a8a8a'))))
+
+  it('answers known for a breach that was one before and is not lower now', () => {
+    const verdict = verdictOf(evaluate(at('#888888')), { known })
+    expect(verdict.findings[0]!.outcome).toBe('known')
+    expect(verdict.verdict).toBe('pass')
+    expect(findings(at('#8a8a8a'), { known })[0]!.outcome).toBe('known')
+  })
+
+  it('answers breach where the ratio fell, or where it was no breach before', () => {
+    expect(findings(at('#8c8c8c'), { known })[0]!.outcome).toBe('breach')
+    const passing = breachRatios(verdictOf(evaluate(at('#333'))))
+    expect(findings(at('#888888'), { known: passing })[0]!.outcome).toBe('breach')
+  })
+})
