@@ -1,3 +1,4 @@
+import type { Outcome } from '#shared/checks/model.ts'
 import { RATIO_LINES, ratioPosition } from './ratio-scale.ts'
 import type { Measured } from './ratio-text.tsx'
 
@@ -6,11 +7,12 @@ export const RULER_WIDTH = 244
 
 /** One row of the ruler: a stroke at the required line, and a line from it to the measured place. */
 export function RatioRuler({
-  ratio,
-  required,
-  waived = false,
+  measured,
   height = 37,
-}: Partial<Measured> & { waived?: boolean; height?: number }) {
+}: {
+  measured: Measured | null
+  height?: number
+}) {
   return (
     <svg
       viewBox={`0 0 ${RULER_WIDTH} ${height}`}
@@ -26,20 +28,27 @@ export function RatioRuler({
           className="stroke-feint"
         />
       ))}
-      {ratio !== undefined && required !== undefined && required > 0 && (
-        <Reach ratio={ratio} required={required} waived={waived} middle={Math.floor(height / 2)} />
+      {measured !== null && measured.required > 0 && (
+        <Reach {...measured} middle={Math.floor(height / 2)} />
       )}
     </svg>
   )
 }
 
-function Reach(reach: Measured & { waived: boolean; middle: number }) {
-  const { ratio, required, waived, middle } = reach
+const FILLS: { readonly [outcome in Outcome]: string } = {
+  pass: 'fill-ink',
+  breach: 'fill-madder',
+  known: 'fill-madder',
+  waived: 'fill-weld',
+  exempt: 'fill-ink-soft',
+}
+
+function Reach({ ratio, required, outcome, middle }: Measured & { middle: number }) {
   const from = Math.round(ratioPosition(required, RULER_WIDTH))
   const to = ratioPosition(ratio, RULER_WIDTH)
   const short = ratio < required
-  const fill = !short ? 'fill-ink' : waived ? 'fill-weld' : 'fill-madder'
-  const thickness = short && !waived ? 3 : 1.5
+  const fill = FILLS[outcome]
+  const thickness = outcome === 'breach' || outcome === 'known' ? 3 : 1.5
   const tick = short ? to - 1.5 : to - 3
   return (
     <>

@@ -1,39 +1,50 @@
 import { truncateRatio } from '#console/lib/format.ts'
+import type { Outcome } from '#shared/checks/model.ts'
 
+/** A ratio, what it needs, and how that was judged: a pair may pass under its line, by its group or an exemption. */
 export interface Measured {
   readonly ratio: number
   /** 0 where nothing is required. */
   readonly required: number
+  readonly outcome: Outcome
 }
 
-/** What it measures, of what it needs: `3.88 of 4.5`; short of it in madder, waived in weld. */
-export function RatioText({ ratio, required, waived = false }: Measured & { waived?: boolean }) {
+/** What it measures, of what it needs: `3.88 of 4.5`; a breach in madder. */
+export function RatioText(measured: Measured) {
   return (
     <span className="figures whitespace-nowrap">
-      <Figure ratio={ratio} required={required} waived={waived} />
-      {required > 0 && <span className="ml-6 text-ink-soft">of {required}</span>}
+      <Figure {...measured} />
+      {measured.required > 0 && <span className="ml-6 text-ink-soft">of {measured.required}</span>}
     </span>
   )
 }
 
-/** The same as two aligned columns: the figure ends at the decimal column, `of 4.5` begins 46 px of its own. */
-export function RatioColumns({ ratio, required, waived = false }: Measured & { waived?: boolean }) {
+/** The same as two aligned columns: the figure ends at the decimal column, `of 4.5` has 46 px of its own. */
+export function RatioColumns(measured: Measured) {
   return (
     <span className="figures inline-flex whitespace-nowrap">
-      <Figure ratio={ratio} required={required} waived={waived} />
-      <span className="ml-6 w-46 text-start text-ink-soft">{required > 0 && `of ${required}`}</span>
+      <Figure {...measured} />
+      <span className="ml-6 w-46 text-start text-ink-soft">
+        {measured.required > 0 && `of ${measured.required}`}
+      </span>
     </span>
   )
 }
 
-function Figure({ ratio, required, waived }: Measured & { waived: boolean }) {
-  const short = ratio < required
-  const style = !short ? 'font-medium' : waived ? 'font-semibold' : 'font-semibold text-madder'
-  return <span className={style}>{truncateRatio(ratio, 2)}</span>
+const FIGURES: { readonly [outcome in Outcome]: string } = {
+  pass: 'font-medium',
+  breach: 'font-semibold text-madder',
+  known: 'font-semibold text-madder',
+  waived: 'font-semibold',
+  exempt: 'font-medium',
+}
+
+function Figure({ ratio, outcome }: Measured) {
+  return <span className={FIGURES[outcome]}>{truncateRatio(ratio, 2)}</span>
 }
 
 /** Before and after a trial: `3.88 → 6.36 of 4.5`. */
-export function RatioMove({ before, ratio, required }: Measured & { before: number | undefined }) {
+export function RatioMove({ before, ...measured }: Measured & { before: number | undefined }) {
   return (
     <span className="figures inline-flex items-baseline whitespace-nowrap">
       {before !== undefined && (
@@ -43,7 +54,7 @@ export function RatioMove({ before, ratio, required }: Measured & { before: numb
         </>
       )}
       <span className="inline-flex min-w-90 justify-end">
-        <RatioColumns ratio={ratio} required={required} />
+        <RatioColumns {...measured} />
       </span>
     </span>
   )

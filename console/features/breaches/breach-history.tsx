@@ -67,7 +67,11 @@ function EventItem({ event, breach }: { event: BreachEventWire; breach: BreachWi
           <span className="font-medium">{eventInWords(event, breach)}</span>
           {event.revision !== undefined && ` in revision ${event.revision}`}
         </span>
-        <RatioColumns ratio={event.ratio} required={event.required} />
+        <RatioColumns
+          ratio={event.ratio}
+          required={event.required}
+          outcome={event.kind === 'resolved' ? 'pass' : 'breach'}
+        />
       </p>
       <p className="text-13 text-ink-soft">
         {startSentence(formatMoment(event.at))}

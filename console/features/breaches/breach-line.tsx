@@ -3,6 +3,7 @@ import { stateInWords } from '#console/lib/finding-words.ts'
 import { PairSample } from '#console/ui/pair-sample.tsx'
 import { RatioText } from '#console/ui/ratio-text.tsx'
 import { BreachLink, type BreachRowProps } from './breach-row.tsx'
+import { outcomeOf } from './breach-words.ts'
 import { BreachStatus } from './breach-status.tsx'
 
 /** A breach on a narrow screen: two lines, and its history under them where it is opened. */
@@ -21,11 +22,7 @@ export function BreachLine({ under, ...row }: BreachRowProps & { under: ReactNod
         </div>
         <div className="flex items-center justify-between gap-12 pb-6">
           <PairSample {...breach.rendered} breaches={breach.status === 'open'} />
-          <RatioText
-            ratio={breach.ratio}
-            required={breach.required}
-            waived={breach.status === 'waived'}
-          />
+          <RatioText ratio={breach.ratio} required={breach.required} outcome={outcomeOf(breach)} />
           <span className="min-w-0 truncate text-12 text-ink-soft">
             {breach.theme}, {stateInWords(breach.state)}
           </span>

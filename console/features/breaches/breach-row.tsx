@@ -5,7 +5,7 @@ import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import type { RowLinkProps } from '#console/ui/row-walk.ts'
 import type { BreachWire } from '#shared/contracts/breaches.contract.ts'
 import { BreachStatus } from './breach-status.tsx'
-import { firstSeenInWords } from './breach-words.ts'
+import { firstSeenInWords, outcomeOf } from './breach-words.ts'
 
 export interface BreachRowProps {
   readonly breach: BreachWire
@@ -44,7 +44,7 @@ export function BreachRow({ breach, href, link, isOpened }: BreachRowProps) {
           <RatioColumns
             ratio={breach.ratio}
             required={breach.required}
-            waived={breach.status === 'waived'}
+            outcome={outcomeOf(breach)}
           />
         </span>
       </td>

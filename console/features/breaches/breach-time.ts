@@ -6,7 +6,7 @@ export interface Step {
   readonly ratio: number
   readonly from: number
   readonly to: number
-  /** Whether it is long enough to carry its figure, and not the figure just shown. */
+  /** Whether it is long enough to carry its figure beside that of the step before. */
   readonly labelled: boolean
 }
 
@@ -22,7 +22,8 @@ export function stepsOf(events: readonly BreachEventWire[], now: string): Step[]
   return events.map((event, index) => {
     const from = Math.min(((times[index] ?? start) - start) / whole, 1)
     const to = Math.min(((times[index + 1] ?? start) - start) / whole, 1)
-    const labelled = from - shownAt >= LABEL_SHARE
+    const isLast = index === events.length - 1
+    const labelled = from - shownAt >= LABEL_SHARE && (to - from >= LABEL_SHARE || isLast)
     if (labelled) shownAt = from
     return { at: event.id, ratio: event.ratio, from, to, labelled }
   })

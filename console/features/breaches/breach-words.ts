@@ -29,6 +29,11 @@ export function originInWords(breach: BreachWire): string {
   return [breach.repository, breach.branch].filter((part) => part !== undefined).join(', ')
 }
 
+/** How the last measured ratio is to be read. */
+export function outcomeOf({ status }: BreachWire) {
+  return status === 'open' ? 'breach' : status === 'waived' ? 'waived' : 'pass'
+}
+
 const EVENTS: { readonly [kind in BreachEventWire['kind']]: string } = {
   opened: 'Fell short',
   worsened: 'Fell further',

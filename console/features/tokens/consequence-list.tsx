@@ -5,6 +5,7 @@ import { WordButton } from '#console/ui/button.tsx'
 import { OutcomeMark } from '#console/ui/outcome-mark.tsx'
 import { RatioMove } from '#console/ui/ratio-text.tsx'
 import type { MovedGroups, MovedLine } from './moved-lines.ts'
+import { passesByGroup } from './lowest-finding.ts'
 import { RelationPhrase } from './relation-phrase.tsx'
 
 /** How names are read out of ids. */
@@ -23,7 +24,7 @@ export function ConsequenceList({ moved, names }: { moved: MovedGroups; names: M
   return (
     <>
       <Moved
-        title={`${startSentence(countInWords(counts.breaching))} newly breaching`}
+        title={`${counts.breaching === 0 ? 'None' : startSentence(countInWords(counts.breaching))} newly breaching`}
         lines={moved.breaching}
         names={names}
         isFirst
@@ -99,7 +100,8 @@ function MovedItem({ line, names }: { line: MovedLine; names: ModelNames }) {
         </span>
       </span>
       {line.outcome === 'breach' && <OutcomeMark kind="breach">breach</OutcomeMark>}
-      <RatioMove before={line.before} ratio={line.ratio} required={line.required} />
+      {passesByGroup(line) && <span className="text-13 text-ink-soft">its group passes</span>}
+      <RatioMove {...line} />
     </li>
   )
 }

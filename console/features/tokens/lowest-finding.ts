@@ -1,6 +1,6 @@
 import type { Finding, State } from '#shared/checks/model.ts'
 
-/** The finding furthest short of its line; what is exempt or asks for nothing only where there is no other. */
+/** The finding furthest short; what is exempt, asks for nothing or passes by its group only where there is no other. */
 export function lowestFinding(findings: readonly Finding[]): Finding | undefined {
   return findings.reduce<Finding | undefined>(
     (lowest, finding) => (lowest === undefined || isLower(finding, lowest) ? finding : lowest),
@@ -16,8 +16,13 @@ function isLower(finding: Finding, than: Finding): boolean {
     : finding.ratio < than.ratio
 }
 
-function counts({ outcome, required }: Finding): boolean {
-  return outcome !== 'exempt' && required > 0
+function counts(finding: Finding): boolean {
+  return finding.outcome !== 'exempt' && finding.required > 0 && !passesByGroup(finding)
+}
+
+/** Under its own line, but another member of its `anyOf` group meets the one it has. */
+export function passesByGroup(finding: Pick<Finding, 'outcome' | 'ratio' | 'required'>): boolean {
+  return finding.outcome === 'pass' && finding.ratio < finding.required
 }
 
 /** Findings in which the token itself stands in that theme and state. */

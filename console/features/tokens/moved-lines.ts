@@ -1,5 +1,6 @@
 import type { Consequence } from '#shared/checks/consequences.ts'
 import type { Finding } from '#shared/checks/model.ts'
+import { passesByGroup } from './lowest-finding.ts'
 import { type Relation, relationTo } from './relation-words.ts'
 
 /** Findings that move alike, as one line. */
@@ -102,6 +103,6 @@ function joinedLines(
   return [...lines.values()].sort((a, b) => margin(a) - margin(b))
 }
 
-function margin({ ratio, required }: MovedLine): number {
-  return required === 0 ? Infinity : ratio / required
+function margin(line: MovedLine): number {
+  return line.required === 0 || passesByGroup(line) ? Infinity : line.ratio / line.required
 }

@@ -1,5 +1,5 @@
 import type { Finding, Use } from '#shared/checks/model.ts'
-import { lowestFinding } from './lowest-finding.ts'
+import { lowestFinding, passesByGroup } from './lowest-finding.ts'
 import { type Relation, relationTo } from './relation-words.ts'
 
 /** A pair that depends on a token: its lowest finding now, and with what is tried. */
@@ -41,6 +41,8 @@ function byPair(findings: readonly Finding[]): Map<string, Finding[]> {
   return pairs
 }
 
-function margin({ outcome, ratio, required }: Finding): number {
-  return outcome === 'exempt' || required === 0 ? Infinity : ratio / required
+function margin(finding: Finding): number {
+  const { outcome, ratio, required } = finding
+  const isFree = outcome === 'exempt' || required === 0 || passesByGroup(finding)
+  return isFree ? Infinity : ratio / required
 }

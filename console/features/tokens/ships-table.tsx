@@ -150,7 +150,7 @@ function LowestCells({
           <RatioColumns
             ratio={lowest.ratio}
             required={isExempt ? 0 : lowest.required}
-            waived={lowest.outcome === 'waived'}
+            outcome={lowest.outcome}
           />
         </span>
       </td>

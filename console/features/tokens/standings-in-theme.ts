@@ -1,5 +1,6 @@
 import type { Finding, SystemModel } from '#shared/checks/model.ts'
 import type { LedgerTokenWire, StandingWire } from '#shared/contracts/tokens.contract.ts'
+import { passesByGroup } from './lowest-finding.ts'
 
 /** How every token stands among its pairs in one theme alone, by token name. */
 export function standingsInTheme(
@@ -53,7 +54,9 @@ function withFinding(
         ? null
         : outcome
   const lower =
-    outcome !== 'exempt' && (standing.lowest === null || margin(finding) < margin(standing.lowest))
+    outcome !== 'exempt' &&
+    !passesByGroup(finding) &&
+    (standing.lowest === null || margin(finding) < margin(standing.lowest))
   const state = `${finding.foregroundState}/${finding.backgroundState}`
   return {
     ...standing,

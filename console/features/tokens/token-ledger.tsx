@@ -86,7 +86,7 @@ function LedgerHead({ light, dark }: { light: string; dark: string }) {
           <span className="sr-only">Ratio, from 1 to 21</span>
           <RulerHead />
         </th>
-        <th className="w-[max(104px,116px+(100cqw-1280px)*0.2)] @max-[700px]:hidden">Where</th>
+        <th className="w-[max(104px,130px+(100cqw-1280px)*0.2)] @max-[700px]:hidden">Where</th>
         <th>Mark</th>
       </tr>
     </thead>

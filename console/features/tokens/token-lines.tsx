@@ -67,11 +67,7 @@ function TokenLine({
         />
         {lowest !== null && (
           <>
-            <RatioText
-              ratio={lowest.ratio}
-              required={lowest.required}
-              waived={lowest.outcome === 'waived'}
-            />
+            <RatioText {...lowest} />
             <span className="min-w-0 truncate text-12 text-ink-soft">
               {lowest.theme}, {stateInWords(lowest.state)}
             </span>

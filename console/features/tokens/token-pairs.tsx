@@ -3,6 +3,7 @@ import { OutcomeMark } from '#console/ui/outcome-mark.tsx'
 import { PairSample } from '#console/ui/pair-sample.tsx'
 import { RatioMove } from '#console/ui/ratio-text.tsx'
 import type { ModelNames } from './consequence-list.tsx'
+import { passesByGroup } from './lowest-finding.ts'
 import type { PairStanding } from './pair-standings.ts'
 import { RelationPhrase } from './relation-phrase.tsx'
 
@@ -35,11 +36,15 @@ export function TokenPairs({
               </span>
             </span>
             {shown.outcome === 'breach' && <OutcomeMark kind="breach">breach</OutcomeMark>}
+            {passesByGroup(shown) && (
+              <span className="text-13 text-ink-soft">its group passes</span>
+            )}
             {shown.outcome === 'exempt' && <OutcomeMark kind="exempt">exempt</OutcomeMark>}
             <RatioMove
               before={after === undefined ? undefined : before.ratio}
               ratio={shown.ratio}
               required={shown.required}
+              outcome={shown.outcome}
             />
           </li>
         )

@@ -82,19 +82,18 @@ function pairCount(standing: StandingWire): string {
   return standing.pairs === 0 && standing.pairsThroughAliases === 0 ? '–' : String(standing.pairs)
 }
 
-function Measures({ standing: { lowest, mark } }: { standing: StandingWire }) {
-  const waived = lowest?.outcome === 'waived' || mark === 'waived'
+function Measures({ standing: { lowest } }: { standing: StandingWire }) {
   return (
     <>
       <td>
         {lowest !== null && (
           <span className="flex justify-end pr-6">
-            <RatioColumns ratio={lowest.ratio} required={lowest.required} waived={waived} />
+            <RatioColumns {...lowest} />
           </span>
         )}
       </td>
       <td className="@max-[1180px]:hidden">
-        <RatioRuler {...(lowest ?? {})} waived={waived} />
+        <RatioRuler measured={lowest} />
       </td>
       <td
         className="truncate pr-8! text-ink-soft @max-[700px]:hidden"

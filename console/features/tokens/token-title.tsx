@@ -47,17 +47,17 @@ export function TokenTitle({
 
 const MOST_NAMED = 3
 
-function aboutToken(token: LedgerTokenWire, followers: readonly string[]): string {
+/** What it is for, and what follows it, where the description does not name that itself. */
+function aboutToken({ description }: LedgerTokenWire, followers: readonly string[]): string {
+  const unnamed = followers.filter((name) => description?.includes(name) !== true)
   const named =
-    followers.length > MOST_NAMED
-      ? [...followers.slice(0, MOST_NAMED), `${followers.length - MOST_NAMED} more`]
-      : followers
-  const follow =
-    named.length === 0
-      ? 'nothing follows it'
-      : `${joinWords(named)} ${followers.length === 1 ? 'follows' : 'follow'} it`
-  const described = token.description?.replace(/\.$/, '')
-  return described === undefined ? `${startSentence(follow)}.` : `${described}; ${follow}.`
+    unnamed.length > MOST_NAMED
+      ? [...unnamed.slice(0, MOST_NAMED), `${unnamed.length - MOST_NAMED} more`]
+      : unnamed
+  const follow = `${joinWords(named)} ${unnamed.length === 1 ? 'follows' : 'follow'} it`
+  const parts = [description?.replace(/\.$/, ''), named.length > 0 ? follow : undefined]
+  const sentence = parts.filter((part) => part !== undefined).join('; ')
+  return sentence === '' ? '' : `${sentence}.`
 }
 
 /** One of the two cells beside the title, with its caption. */

@@ -44,9 +44,9 @@ describe('the steps of a breach', () => {
     ])
   })
 
-  it('leaves out a figure that would touch the one before', () => {
+  it('leaves out the figure of a step that is too short to carry it', () => {
     const events = [event('2026-10-01T00:00:00.000Z', 4.3), event('2026-10-01T01:00:00.000Z', 4.2)]
     const steps = stepsOf(events, '2026-10-20T00:00:00.000Z')
-    expect(steps.map(({ labelled }) => labelled)).toEqual([true, false])
+    expect(steps.map(({ labelled }) => labelled)).toEqual([false, true])
   })
 })
