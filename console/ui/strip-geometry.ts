@@ -64,6 +64,12 @@ export function groupOf(name: string): string {
   return name.split('.', 1)[0] ?? name
 }
 
+/** The band of a token, or of its group where a band stands for a group. */
+export function bandOf(bands: readonly PlacedBand[], token: string): PlacedBand | undefined {
+  const group = groupOf(token)
+  return bands.find(({ name }) => name === token) ?? bands.find(({ name }) => name === group)
+}
+
 /** From the band's middle through the gutter to a place on the page, bending in a lane of its own. */
 export function leaderPath(bandMiddle: number, targetMiddle: number): string {
   return `M72 ${bandMiddle}H92V${targetMiddle}H108`

@@ -1,5 +1,5 @@
 import { useEffect, useState } from 'react'
-import { leaderPath, type PlacedBand } from './strip-geometry.ts'
+import { bandOf, leaderPath, type PlacedBand } from './strip-geometry.ts'
 
 /** What the leader runs to: the row or title of a token. */
 export interface LeaderTarget {
@@ -15,8 +15,8 @@ export function Bracket({
   bands: readonly PlacedBand[]
   view: readonly [first: string, last: string]
 }) {
-  const first = bands.find((band) => band.name === view[0])
-  const last = bands.find((band) => band.name === view[1])
+  const first = bandOf(bands, view[0])
+  const last = bandOf(bands, view[1])
   if (first === undefined || last === undefined) return null
   const top = Math.max(first.top, 0.75)
   const bottom = last.top + last.high

@@ -2,7 +2,7 @@ import { type KeyboardEvent, useRef, useState } from 'react'
 import { Link } from 'react-router-dom'
 import { StripCloth, type StripGrounds } from './strip-cloth.tsx'
 import { Bracket, Leader, type LeaderTarget, NameTag } from './strip-gutter.tsx'
-import { type PlacedBand, placeBands, type StripBand } from './strip-geometry.ts'
+import { bandOf, type PlacedBand, placeBands, type StripBand } from './strip-geometry.ts'
 import { useNarrow, useWindowHeight } from './window-size.ts'
 
 export interface StripProps {
@@ -20,7 +20,7 @@ export function Strip({ groups, grounds, view, leader }: StripProps) {
   const bands = placeBands(groups, height)
   const [pointed, setPointed] = useState<number>()
   const shown = pointed === undefined ? undefined : bands[pointed]
-  const led = bands.find((band) => band.name === leader?.name)
+  const led = leader && bandOf(bands, leader.name)
   return (
     <nav
       aria-label="Strip of all tokens"
@@ -28,7 +28,7 @@ export function Strip({ groups, grounds, view, leader }: StripProps) {
     >
       <StripCloth bands={bands} grounds={grounds} height={height} narrow={narrow} />
       {!narrow && view !== undefined && <Bracket bands={bands} view={view} />}
-      {!narrow && led !== undefined && leader !== undefined && (
+      {!narrow && leader !== undefined && led !== undefined && (
         <Leader band={led} target={leader} height={height} />
       )}
       <BandLinks bands={bands} onPoint={setPointed} start={led?.index ?? 0} />

@@ -20,6 +20,7 @@ const finding = (part: Partial<Finding>): Finding => ({
   ratio: 5,
   required: 4.5,
   basis: 'srgb',
+  ratios: { srgb: 5 },
   outcome: 'pass',
   gating: true,
   rendered: { foreground: '#000000', background: '#ffffff' },

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import {
+  bandOf,
   groupOf,
   MOST_BANDS,
   placeBands,
@@ -59,6 +60,13 @@ describe('the strip', () => {
       ['g1', '?group=g1', 'light'],
       ['g2', '?group=g2', undefined],
     ])
+  })
+
+  it('answers the band of a token, or of its group where bands are groups', () => {
+    const placed = placeBands([[band('a.1'), band('b')]], 100)
+    expect(bandOf(placed, 'a.1')?.index).toBe(0)
+    expect(bandOf(placed, 'b.7')?.index).toBe(1)
+    expect(bandOf(placed, 'c.1')).toBeUndefined()
   })
 
   it('answers no band for no token', () => {
