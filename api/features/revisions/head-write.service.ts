@@ -1,3 +1,4 @@
+import { type Consequence, consequences } from '#shared/checks/consequences.ts'
 import { applyEdits } from '#shared/checks/edits.ts'
 import type { GovernedEdits, GovernedSystem } from '#shared/checks/governed-model.ts'
 import type { Verdict } from '#shared/checks/model.ts'
@@ -63,8 +64,8 @@ interface Plan {
   readonly next?: {
     readonly head: Head
     readonly changes: VersionChanges
-    readonly before: Verdict
-    readonly after: Verdict
+    readonly verdict: Verdict
+    readonly moved: readonly Consequence[]
   }
 }
 
@@ -114,10 +115,9 @@ async function planOn(
     })
     throw new AppError('system-unresolvable', { faults })
   }
-  const [before, after] = [head, edited.head].map(({ evaluation }) =>
-    verdictOf(evaluation, { include: 'not-pass' }),
-  ) as [Verdict, Verdict]
-  return { head, next: { head: edited.head, changes, before, after } }
+  const verdict = verdictOf(edited.head.evaluation, { include: 'none' })
+  const moved = consequences(head.evaluation, edited.head.evaluation)
+  return { head, next: { head: edited.head, changes, verdict, moved } }
 }
 
 async function compare(
@@ -177,7 +177,7 @@ async function writeRevision(
   if (mode === 'review') throw new AppError('review-required')
   const revision = await repositories.heads.advance(system.id)
   await repositories.versions.write({ systemId: system.id, revision }, next.changes)
-  const { verdict, counts, engine } = next.after
+  const { verdict, counts, engine } = next.verdict
   await repositories.heads.addRevision({
     systemId: system.id,
     number: revision,
@@ -202,18 +202,15 @@ async function writeRevision(
     cause: 'edit',
   })
   const head: Head = { ...next.head, revision, epoch: locked.epoch }
-  return { head, effect: effectOf({ before: plan.head, after: head, verdicts: next }) }
+  return { head, effect: effectOf({ before: plan.head, after: head, verdict, moved: next.moved }) }
 }
 
 const editedModel = (head: Head, edits: GovernedEdits) =>
   applyEdits(head.model, edits) as GovernedSystem
 
 function unmoved(head: Head): Written {
-  const verdict = verdictOf(head.evaluation, { include: 'not-pass' })
-  return {
-    head,
-    effect: effectOf({ before: head, after: head, verdicts: { before: verdict, after: verdict } }),
-  }
+  const { verdict } = verdictOf(head.evaluation, { include: 'none' })
+  return { head, effect: effectOf({ before: head, after: head, verdict, moved: [] }) }
 }
 
 const refusalError = ({ code, ...options }: Refusal) => new AppError(code, options)
