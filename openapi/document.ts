@@ -51,7 +51,7 @@ export function createDocument() {
     registry.registerComponent('headers', name, header)
   }
   const problemsOf = createProblemResponses(registry)
-  for (const contract of contracts) {
+  for (const contract of inOrder()) {
     registry.registerPath(operationOf(contract, problemsOf(contract)))
   }
   const definitions = [...registry.definitions, { type: 'schema' as const, schema: problemSchema }]
@@ -66,6 +66,19 @@ export function createDocument() {
     servers: [{ url: '/' }],
     tags: [...new Set(contracts.map(({ feature }) => feature))].map((name) => ({ name })),
   })
+}
+
+const METHODS = ['GET', 'POST', 'PUT', 'PATCH', 'DELETE']
+const rankOf = ({ path, method }: Contract): string => `${path} ${METHODS.indexOf(method)}`
+
+/** Loaders differ in the order in which they list a module's exports; the committed text must not. */
+function inOrder(): Contract[] {
+  const features = [...new Set(contracts.map(({ feature }) => feature))]
+  return features.flatMap((feature) =>
+    contracts
+      .filter((contract) => contract.feature === feature)
+      .sort((a, b) => (rankOf(a) < rankOf(b) ? -1 : 1)),
+  )
 }
 
 export type OpenApiDocument = ReturnType<typeof createDocument>
