@@ -49,13 +49,12 @@ function preferredSign(
     direction: 'away' | 'towards'
     reference: ResolvedColor
     ink: ResolvedColor
-    isInk: boolean
   },
 ): 1 | -1 {
   const l = lightnessOf(rest)
   const distance = l - lightnessOf(aim.reference)
   if (Math.abs(distance) < SIDE_LIGHTNESS) {
-    return aim.isInk || lightnessOf(aim.ink) >= l ? 1 : -1
+    return lightnessOf(aim.ink) >= l ? 1 : -1 // Ink itself is level with ink.
   }
   const away = distance > 0 ? 1 : -1
   return aim.direction === 'away' ? away : away === 1 ? -1 : 1
@@ -77,8 +76,6 @@ export function stepDirection(
     readonly step: LargestStep
     readonly reference: ResolvedColor
     readonly ink: ResolvedColor
-    /** Whether the token is the theme's ink. */
-    readonly isInk: boolean
   },
 ): StepDirection {
   const { step } = aim

@@ -101,8 +101,7 @@ function directionOf(
   const reference = restColor(pass, at, place.theme)
   const ink = restColor(pass, graph.inks[place.theme]!, place.theme)
   if (!reference || !ink) return undefined
-  const isInk = graph.inks[place.theme] === place.token
-  const direction = stepDirection(rest, { step: place.largest, reference, ink, isInk })
+  const direction = stepDirection(rest, { step: place.largest, reference, ink })
   pass.directions.set(row, direction)
   return direction
 }

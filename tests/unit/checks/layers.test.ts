@@ -96,6 +96,19 @@ describe('an unknown backdrop', () => {
     expect(got.identity).toBe('fg/scrim/?/text/light/rest/rest')
   })
 
+  it('answers the least ratio whichever backdrop it lies on', () => {
+    // Black on a white veil is least on black, on a veil of blue at the corner that holds no red or green.
+    const over = (veil: string) =>
+      measured([token('fg', '#000'), token('veil', veil)], pair('fg', 'veil', unknown)).ratio
+    expect(over('rgb(255 255 255 / 0.8)')).toBe(contrastRatio(0, relativeLuminance(204, 204, 204)))
+    expect(over('rgb(0 0 255 / 0.4)')).toBe(contrastRatio(0, relativeLuminance(0, 0, 102)))
+    const onTeal = measured(
+      [token('fg', '#fff'), token('veil', 'rgb(0 102 102 / 0.8)')],
+      pair('fg', 'veil', unknown),
+    )
+    expect(onTeal.ratio).toBe(contrastRatio(1, relativeLuminance(51, 133, 133)))
+  })
+
   it('answers 1 where the foreground is lighter than some backdrops and darker than others', () => {
     const tokens = [token('fg', '#777777'), token('scrim', 'rgb(0 0 0 / 0.1)')]
     expect(measured(tokens, pair('fg', 'scrim', unknown))).toMatchObject({
@@ -180,6 +193,18 @@ describe('tight', () => {
     const opaque = measured([token('fg', '#767676')], pair('fg', 'ground'))
     expect(truncated(opaque.ratio)).toBe(4.54)
     expect(opaque).not.toHaveProperty('tight')
+  })
+
+  it('leaves translucent layers that an opaque one hides uncounted', () => {
+    const hidden = [token('glass', 'rgb(0 0 0 / 0.5)'), token('board', '#fff')]
+    const onBoard = (a: number) =>
+      measured(
+        [...hidden, token('fg', `rgb(0 0 0 / ${a / 255})`)],
+        pair('fg', 'board', { backdrop: ['glass'] }),
+      )
+    expect(onBoard(meeting)).toMatchObject({ tight: true })
+    expect(onBoard(meeting + 1)).not.toHaveProperty('tight')
+    expect(onBoard(meeting - 2)).not.toHaveProperty('tight')
   })
 
   it('answers two levels for two translucent layers', () => {

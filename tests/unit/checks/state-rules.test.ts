@@ -213,14 +213,23 @@ describe('room', () => {
   })
 
   it('answers the opposite side where a step would lose more than half of the mapped chroma', () => {
-    // A light red in a dark theme: lighter by 0.2 it is nearly white, darker it keeps its chroma.
-    const kept = mappedChroma(0.95, 0.13, 20) / mappedChroma(0.75, 0.13, 20)
-    expect(kept).toBeLessThan(0.5)
-    const states = { hover: { lightness: 0.2 } }
-    const more = { states: ['hover' as const] }
-    const model = system({ tokens: [fill('oklch(0.75 0.13 20)', states, more)] })
-    expect(lightnessAt(model, 'fill dark hover')).toBeCloseTo(0.55, 12)
-    expect(read(model, 'fill dark hover').provenance).toMatchObject({ step: { side: 'opposite' } })
+    // A red and a green in a dark theme: lighter, one keeps a third of its chroma, the other 0.57 of it.
+    const kept = (l: number, c: number, h: number, step: number) =>
+      mappedChroma(l + step, c, h) / mappedChroma(l, c, h)
+    expect(kept(0.7, 0.17, 30, 0.2)).toBeLessThan(0.4)
+    expect(kept(0.85, 0.2, 130, 0.12)).toBeGreaterThan(0.55)
+    const hover = (text: string, lightness: number) => {
+      const more = { states: ['hover' as const] }
+      const model = system({ tokens: [fill(text, { hover: { lightness } }, more)] })
+      return read(model, 'fill dark hover')
+    }
+    expect(hover('oklch(0.7 0.17 30)', 0.2)).toMatchObject({
+      provenance: { step: { side: 'opposite' } },
+    })
+    expect(hover('oklch(0.7 0.17 30)', 0.2).oklch.l).toBeCloseTo(0.5, 12)
+    expect(hover('oklch(0.85 0.2 130)', 0.12)).toMatchObject({
+      provenance: { step: { side: 'preferred' } },
+    })
   })
 
   it('leaves chroma untested where rest has less than 0.02 of it', () => {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type { ThemeModel, ThemeRule, TokenModel } from '#shared/checks/model.ts'
-import type { RenderedColor } from '#shared/color/render.ts'
+import { type RenderedColor, renderColor } from '#shared/color/render.ts'
 import { naiveRatio, paintAll } from './naive-contrast.ts'
 import { pair, system, theme, token, value } from './model-builder.ts'
 import { findings, hexAt, lightnessAt, read } from './reading.ts'
@@ -94,6 +94,39 @@ describe('match-contrast', () => {
       const ground = read(model, 'ground dark').rendered
       expect(ratioOf(read(under, 't').rendered, ground)).toBeLessThanOrEqual(got)
     }
+  })
+
+  it('answers the far end after 14 halvings between the reference and the extreme', () => {
+    const model = ruled('oklch(0.5 0.15 258)', rule)
+    const wanted = ratioOf(read(model, 't').rendered, read(model, 'ground').rendered)
+    const ground = read(model, 'ground dark').rendered
+    let [near, far] = [G2, 1]
+    for (let halving = 0; halving < 14; halving++) {
+      const l = (near + far) / 2
+      if (ratioOf(renderColor({ l, c: 0.15, h: 258, alpha: 1 }), ground) >= wanted) far = l
+      else near = l
+    }
+    expect(lightnessAt(model, 't dark')).toBe(far)
+  })
+
+  it('answers the extreme itself where only it has the parent’s ratio', () => {
+    const base = system({ tokens: [token('t', '#000000')], dark: { rule } })
+    const [ground, ink] = [
+      token('ground', '#ffffff', { values: { dark: { rest: value('#000000') } } }),
+      token('ink', '#000000', { values: { dark: { rest: value('#ffffff') } } }),
+    ]
+    const model = { ...base, tokens: [ground, ink, ...base.tokens.slice(2)] }
+    const { provenance } = read(model, 't dark')
+    expect(hexAt(model, 't dark')).toBe('#ffffff')
+    expect(provenance).not.toHaveProperty('short')
+  })
+
+  it('answers against ink on the side away from ink’s own, as from ground to ink', () => {
+    // In the parent the token is lighter than its ink, on the ground's side; in dark that is darker.
+    const model = ruled('oklch(0.6 0 0)', { kind: 'match-contrast', against: 'ink' })
+    expect(lightnessAt(model, 't dark')).toBeLessThan(I2)
+    const beyond = ruled('oklch(0.2 0 0)', { kind: 'match-contrast', against: 'ink' })
+    expect(lightnessAt(beyond, 't dark')).toBeGreaterThan(I2)
   })
 
   it('answers on ink’s side where the parent lies on ink’s side, and on the other otherwise', () => {
