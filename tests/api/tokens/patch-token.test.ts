@@ -159,6 +159,33 @@ describe('patchToken', () => {
     expect(body.errors).toMatchObject([{ code: 'theme-span' }])
   })
 
+  it('answers a key with tokens:write as its owner, and logs the key', async () => {
+    const { body: key } = await system.maintainer
+      .post(`${system.url}/keys`)
+      .send({ name: 'Nightly import', scopes: ['tokens:write'] })
+      .expect(201)
+    const { body } = await test
+      .withKey(key.key)
+      .patch(at('ink'))
+      .set('If-Match', (await read('ink')).etag)
+      .send({ value: '#020202' })
+      .expect(200)
+    const { body: revision } = await system.maintainer.get(
+      `${system.url}/revisions/${body.effect.revision}`,
+    )
+    expect(revision.author.name).toBe('Ines Marrow')
+    const [entry] = await rowsOf(
+      `select actor_kind, actor_id from audit_entries where actor_id = '${key.id}'`,
+    )
+    expect(entry).toEqual({ actor_kind: 'key', actor_id: key.id })
+    const refused = await test
+      .withKey(key.key)
+      .post(`${system.url}/pairs`)
+      .send({ foreground: 'ink', background: 'paper', use: 'text' })
+      .expect(403)
+    expect(refused.body.type).toBe('/problems/scope-missing')
+  })
+
   it('logs each edit in the audit chain of the system', async () => {
     const { revision } = await system.editToken('ink', { value: '#010101' })
     const [entry] = await rowsOf(
