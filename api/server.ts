@@ -45,7 +45,10 @@ async function serve(config: Extract<typeof read, { ok: true }>['config']): Prom
   }
 }
 
-const at = (path: string): string => fileURLToPath(new URL(`../${path}`, import.meta.url))
+/** Hoisted: the service starts above, before a constant here would be set. */
+function at(path: string): string {
+  return fileURLToPath(new URL(`../${path}`, import.meta.url))
+}
 
 /** How many migrations were built with the service. */
 async function countBuiltMigrations(): Promise<number> {
