@@ -5,7 +5,7 @@ import { systemQueries } from '#console/features/systems/systems.queries.ts'
 import { valueInWords } from '#console/features/tokens/present-value.ts'
 import { SavedNote, SaveLine } from '#console/features/tokens/save-line.tsx'
 import { saveFaults, SaveRefusal } from '#console/features/tokens/save-refusal.tsx'
-import { saveToken, tokenQueries } from '#console/features/tokens/tokens.queries.ts'
+import { saveToken } from '#console/features/tokens/tokens.queries.ts'
 import type { TrialReading } from '#console/features/tokens/trial.ts'
 import { type PresentColor, TrialFields } from '#console/features/tokens/trial-fields.tsx'
 import { isRefusal } from '#console/lib/api.ts'
@@ -38,8 +38,9 @@ export function SaveForm(props: SaveFormProps) {
       onPutBack()
     },
     onError: async (error) => {
-      const { queryKey } = tokenQueries.one(system, token.name)
-      if (isRefusal(error, 412)) await queryClient.invalidateQueries({ queryKey })
+      if (isRefusal(error, 412)) {
+        await queryClient.invalidateQueries({ queryKey: ['system', system] })
+      }
     },
   })
   const faults = saveFaults(saving.error)

@@ -1,4 +1,10 @@
-import { type LoaderFunctionArgs, Outlet, redirect, ScrollRestoration } from 'react-router-dom'
+import {
+  type LoaderFunctionArgs,
+  Outlet,
+  redirect,
+  ScrollRestoration,
+  useNavigation,
+} from 'react-router-dom'
 import { paths } from '#console/app/paths.ts'
 import { sessionQueries } from '#console/features/session/session.queries.ts'
 import { isRefusal } from '#console/lib/api.ts'
@@ -24,8 +30,24 @@ export function Component() {
       >
         To the content
       </a>
+      <Opening />
       <Outlet />
       <ScrollRestoration />
     </>
+  )
+}
+
+/** A line along the top while the next page is fetched; not seen where that takes no time. */
+function Opening() {
+  const isOpening = useNavigation().state === 'loading'
+  return (
+    <div role="status" className="fixed inset-x-0 top-0 z-30 overflow-hidden">
+      {isOpening && (
+        <div className="after-a-while">
+          <span className="sr-only">Opening</span>
+          <div className="waiting-line h-2 w-1/4 bg-ink" />
+        </div>
+      )}
+    </div>
   )
 }

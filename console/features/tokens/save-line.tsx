@@ -61,14 +61,14 @@ export function SaveLine({
 export function SavedNote({ saved }: { saved: SavedToken }) {
   const { revision, opened, resolved } = saved.effect
   const parts = [
-    `${countOf(opened.length, 'breach', 'breaches')} opened`,
-    `${countOf(resolved.length, 'breach', 'breaches')} resolved`,
-  ]
+    opened.length > 0 ? `${countOf(opened.length, 'breach', 'breaches')} opened` : undefined,
+    resolved.length > 0 ? `${countOf(resolved.length, 'breach', 'breaches')} resolved` : undefined,
+  ].filter((part) => part !== undefined)
   return (
     <div role="status" className="mt-12">
       <p>
         <span className="font-semibold">Saved as revision {revision}.</span>{' '}
-        {startSentence(joinWords(parts))}.
+        {parts.length === 0 ? 'No verdict moved' : startSentence(joinWords(parts))}.
       </p>
       {opened.length > 0 && (
         <ul className="mt-4 flex flex-wrap gap-x-22">
