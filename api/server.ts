@@ -4,7 +4,7 @@ import { setTimeout as sleep } from 'node:timers/promises'
 import { fileURLToPath } from 'node:url'
 import type { Files } from './app.ts'
 import { compose, type Service } from './compose.ts'
-import { readConfig } from './config.ts'
+import { type Config, readConfig } from './config.ts'
 import { AppError } from './errors.ts'
 import { failureOf } from './platform/database-error.ts'
 import { readDatabaseSettings, unsafeSettings } from './platform/database-settings.ts'
@@ -19,11 +19,14 @@ const TIMEOUTS = {
   connectionsCheckingInterval: 2_000,
 }
 
+/** A file that was built beside the server. */
+const at = (path: string): string => fileURLToPath(new URL(`../${path}`, import.meta.url))
+
 const read = readConfig(process.env)
 if (read.ok) await serve(read.config)
 else refuse(read.refusals)
 
-async function serve(config: Extract<typeof read, { ok: true }>['config']): Promise<void> {
+async function serve(config: Config): Promise<void> {
   const [files, expectedMigrations] = await Promise.all([readFiles(), countBuiltMigrations()])
   const service = compose({ config, files, expectedMigrations })
   const refusals = await bootRefusals(service, config)
