@@ -1,8 +1,7 @@
-import { type Consequence, consequences } from '#shared/checks/consequences.ts'
+import type { Consequence } from '#shared/checks/consequences.ts'
 import { applyEdits } from '#shared/checks/edits.ts'
 import type { GovernedEdits, GovernedSystem } from '#shared/checks/governed-model.ts'
-import type { Verdict } from '#shared/checks/model.ts'
-import { verdictOf } from '#shared/checks/verdict.ts'
+import { ENGINE_STAMP } from '#shared/checks/engine.ts'
 import type { Decision, Refusal } from '#shared/contracts/governed-system.ts'
 import type { Fault } from '#shared/contracts/problems.ts'
 import { actorOf, type SystemAccess } from '#api/caller.ts'
@@ -11,6 +10,7 @@ import type { BreachesService } from '#api/features/breaches/breaches.service.ts
 import { type IfMatch, preconditionFailed } from '#api/precondition.ts'
 import type { Repositories, Transact } from '#api/repositories.ts'
 import type { LockedHead } from './heads.repository.ts'
+import { verdictIn } from './head-tally.rules.ts'
 import { advanceHead, editedHead, type Head, type HeadsService } from './heads.service.ts'
 import { stateDigest } from './state-digest.ts'
 import { changesBetween, isEmpty, type VersionChanges } from './version-changes.rules.ts'
@@ -64,7 +64,6 @@ interface Plan {
   readonly next?: {
     readonly head: Head
     readonly changes: VersionChanges
-    readonly verdict: Verdict
     readonly moved: readonly Consequence[]
   }
 }
@@ -115,9 +114,7 @@ async function planOn(
     })
     throw new AppError('system-unresolvable', { faults })
   }
-  const verdict = verdictOf(edited.head.evaluation, { include: 'none' })
-  const moved = consequences(head.evaluation, edited.head.evaluation)
-  return { head, next: { head: edited.head, changes, verdict, moved } }
+  return { head, next: { head: edited.head, changes, moved: edited.moved } }
 }
 
 async function compare(
@@ -177,7 +174,7 @@ async function writeRevision(
   if (mode === 'review') throw new AppError('review-required')
   const revision = await repositories.heads.advance(system.id)
   await repositories.versions.write({ systemId: system.id, revision }, next.changes)
-  const { verdict, counts, engine } = next.verdict
+  const verdict = verdictIn(next.head.tally)
   await repositories.heads.addRevision({
     systemId: system.id,
     number: revision,
@@ -185,10 +182,10 @@ async function writeRevision(
     authorUserId: system.caller.userId,
     message: message || null,
     verdict,
-    counts,
-    engineVersion: engine.version,
-    gamutMap: engine.gamutMap,
-    ruleSet: engine.ruleSet,
+    counts: next.head.tally.counts,
+    engineVersion: ENGINE_STAMP.version,
+    gamutMap: ENGINE_STAMP.gamutMap,
+    ruleSet: ENGINE_STAMP.ruleSet,
     digest: stateDigest(next.head.model),
     at: locked.at,
   })
@@ -202,15 +199,15 @@ async function writeRevision(
     cause: 'edit',
   })
   const head: Head = { ...next.head, revision, epoch: locked.epoch }
-  return { head, effect: effectOf({ before: plan.head, after: head, verdict, moved: next.moved }) }
+  return { head, effect: effectOf({ before: plan.head, after: head, moved: next.moved }) }
 }
 
 const editedModel = (head: Head, edits: GovernedEdits) =>
   applyEdits(head.model, edits) as GovernedSystem
 
-function unmoved(head: Head): Written {
-  const { verdict } = verdictOf(head.evaluation, { include: 'none' })
-  return { head, effect: effectOf({ before: head, after: head, verdict, moved: [] }) }
-}
+const unmoved = (head: Head): Written => ({
+  head,
+  effect: effectOf({ before: head, after: head, moved: [] }),
+})
 
 const refusalError = ({ code, ...options }: Refusal) => new AppError(code, options)

@@ -1,8 +1,10 @@
+import { type Consequence, consequences } from '#shared/checks/consequences.ts'
 import { checkSystem } from '#shared/checks/check-system.ts'
 import type { Checked, Evaluation } from '#shared/checks/evaluation.ts'
 import type { GovernedEdits, GovernedSystem } from '#shared/checks/governed-model.ts'
 import { recheck } from '#shared/checks/recheck.ts'
 import { indexSystem, type SystemIndex } from '#shared/contracts/governed-system.ts'
+import { movedTally, type Tally, tallyOf } from './head-tally.rules.ts'
 import type { HeadMark, HeadsRepository } from './heads.repository.ts'
 import type { VersionsReads } from './versions.reads.ts'
 
@@ -12,6 +14,7 @@ export interface Head extends HeadMark {
   readonly model: GovernedSystem
   readonly index: SystemIndex
   readonly evaluation: Evaluation
+  readonly tally: Tally
 }
 
 export interface HeadsDeps {
@@ -42,7 +45,7 @@ export function createHeadsService({ heads, versions }: HeadsDeps) {
     const known = kept.get(systemId)
     const head = known
       ? await advanceHead(known, mark, versions)
-      : evaluated(systemId, mark, checkSystem(await versions.systemAt(systemId, mark.revision)))
+      : firstHead(systemId, mark, await versions.systemAt(systemId, mark.revision))
     keep(head)
     return head
   }
@@ -72,6 +75,12 @@ export type HeadsService = ReturnType<typeof createHeadsService>
 const isAt = (head: HeadMark, mark: HeadMark) =>
   head.revision >= mark.revision && head.epoch >= mark.epoch
 
+function firstHead(systemId: string, mark: HeadMark, model: GovernedSystem): Head {
+  const evaluation = committed(systemId, mark, checkSystem(model))
+  const { revision, epoch } = mark
+  return { systemId, revision, epoch, tally: tallyOf(evaluation), ...measured(evaluation) }
+}
+
 /** The head that a kept one becomes at a later mark, by what lies between the two. */
 export async function advanceHead(
   head: Head,
@@ -81,27 +90,37 @@ export async function advanceHead(
   const { systemId } = head
   if (head.revision >= revision) return { ...head, epoch: Math.max(epoch, head.epoch) }
   const edits = await versions.editsIn({ systemId, after: head.revision, upTo: revision })
-  return evaluated(systemId, { revision, epoch }, recheck(head.evaluation, edits))
+  const evaluation = committed(systemId, { revision, epoch }, recheck(head.evaluation, edits))
+  return followed(head, { revision, epoch }, evaluation).head
 }
 
-/** The head that edits lead to, or the faults of resolution. */
+/** The head that edits lead to and what they moved, or the faults of resolution. */
 export function editedHead(
   head: Head,
   edits: GovernedEdits,
-): { ok: true; head: Head } | Extract<Checked, { ok: false }> {
+): { ok: true; head: Head; moved: readonly Consequence[] } | Extract<Checked, { ok: false }> {
   const checked = recheck(head.evaluation, edits)
   if (!checked.ok) return checked
-  return { ok: true, head: evaluated(head.systemId, head, checked) }
+  return { ok: true, ...followed(head, head, checked.evaluation) }
 }
 
-function evaluated(systemId: string, mark: HeadMark, checked: Checked): Head {
-  if (!checked.ok) {
-    const details = checked.faults.map(({ detail }) => detail).join('; ')
-    throw new Error(`Revision ${mark.revision} of ${systemId} cannot be resolved: ${details}`)
-  }
-  const { evaluation } = checked
+/** A head whose evaluation follows from another's. */
+function followed(head: Head, { revision, epoch }: HeadMark, evaluation: Evaluation) {
+  const moved = consequences(head.evaluation, evaluation)
+  const tally = movedTally(head.tally, moved)
+  const { systemId } = head
+  return { head: { systemId, revision, epoch, tally, ...measured(evaluation) }, moved }
+}
+
+function measured(evaluation: Evaluation) {
   // The engine hands on the very items that it was given.
   const model = evaluation.resolved.model as GovernedSystem
-  const { revision, epoch } = mark
-  return { systemId, revision, epoch, model, index: indexSystem(model), evaluation }
+  return { model, index: indexSystem(model), evaluation }
+}
+
+/** What was committed resolves, or something is wrong with the database or the engine. */
+function committed(systemId: string, { revision }: HeadMark, checked: Checked): Evaluation {
+  if (checked.ok) return checked.evaluation
+  const details = checked.faults.map(({ detail }) => detail).join('; ')
+  throw new Error(`Revision ${revision} of ${systemId} cannot be resolved: ${details}`)
 }

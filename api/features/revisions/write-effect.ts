@@ -1,8 +1,9 @@
 import type * as z from 'zod'
 import type { Consequence } from '#shared/checks/consequences.ts'
-import type { Finding, Verdict } from '#shared/checks/model.ts'
+import type { Finding } from '#shared/checks/model.ts'
 import type { effectSchema } from '#shared/contracts/findings.ts'
 import { presentFinding } from '#shared/contracts/present-finding.ts'
+import { verdictIn } from './head-tally.rules.ts'
 import type { Head } from './heads.service.ts'
 
 export type Effect = z.output<typeof effectSchema>
@@ -10,13 +11,12 @@ export type Effect = z.output<typeof effectSchema>
 interface Move {
   readonly before: Head
   readonly after: Head
-  readonly verdict: Verdict['verdict']
   /** What the edits moved, furthest short first. */
   readonly moved: readonly Consequence[]
 }
 
 /** Tells how a write moved the verdict: breaches that were not there before, and those that no longer are. */
-export function effectOf({ before, after, verdict, moved }: Move): Effect {
+export function effectOf({ before, after, moved }: Move): Effect {
   const opened = moved.flatMap((move) =>
     isBreach(move.after) && !isBreach(move.before) ? [move.after] : [],
   )
@@ -25,7 +25,7 @@ export function effectOf({ before, after, verdict, moved }: Move): Effect {
   )
   return {
     revision: after.revision,
-    verdict,
+    verdict: verdictIn(after.tally),
     opened: opened.map((finding) => presentFinding(finding, after.index.names)),
     resolved: resolved.map((finding) => presentFinding(finding, before.index.names)),
   }
