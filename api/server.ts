@@ -19,9 +19,6 @@ const TIMEOUTS = {
   connectionsCheckingInterval: 2_000,
 }
 
-/** A file that was built beside the server. */
-const at = (path: string): string => fileURLToPath(new URL(`../${path}`, import.meta.url))
-
 const read = readConfig(process.env)
 if (read.ok) await serve(read.config)
 else refuse(read.refusals)
