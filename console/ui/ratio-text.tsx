@@ -40,7 +40,11 @@ const FIGURES: { readonly [outcome in Outcome]: string } = {
 }
 
 function Figure({ ratio, outcome }: Measured) {
-  return <span className={FIGURES[outcome]}>{truncateRatio(ratio, 2)}</span>
+  return (
+    <span data-ratio className={FIGURES[outcome]}>
+      {truncateRatio(ratio, 2)}
+    </span>
+  )
 }
 
 /** Before and after a trial: `3.88 → 6.36 of 4.5`. */
@@ -49,7 +53,9 @@ export function RatioMove({ before, ...measured }: Measured & { before: number |
     <span className="figures inline-flex items-baseline whitespace-nowrap">
       {before !== undefined && (
         <>
-          <span className="min-w-38 text-end">{truncateRatio(before, 2)}</span>
+          <span data-ratio="before" className="min-w-38 text-end">
+            {truncateRatio(before, 2)}
+          </span>
           <Arrow />
         </>
       )}

@@ -55,6 +55,7 @@ export function BreachSteps({
           )}
           {step.labelled && (
             <text
+              data-ratio
               x={x(step.from)}
               y={y(step.ratio) + (step.ratio < breach.required ? 18 : -8)}
               className={`font-semibold ${step.ratio < breach.required ? 'fill-madder' : 'fill-ink'}`}
