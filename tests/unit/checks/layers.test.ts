@@ -165,6 +165,14 @@ describe('two bases', () => {
     expect([off.basis, off.ratio]).toEqual(['srgb', off.ratios.srgb])
   })
 
+  it('answers P3 for a vivid background under a plain foreground, not for a layer of no opacity', () => {
+    const tokens = [vivid, token('plain', '#123456'), token('none', 'rgb(255 0 0 / 0)')]
+    const on = (background: string) =>
+      measured(tokens, pair('plain', background), { settings: P3 }).ratios
+    expect(on('vivid')).toHaveProperty('p3')
+    expect(on('none')).not.toHaveProperty('p3')
+  })
+
   it('answers P3 for a translucent layer inside sRGB, but not for one that is hidden', () => {
     const tokens = [token('glass', 'rgb(0 0 0 / 0.5)'), token('board', '#123456')]
     const shown = measured(tokens, pair('glass', 'board'), { settings: P3 })

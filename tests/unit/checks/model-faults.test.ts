@@ -111,6 +111,7 @@ describe('faults', () => {
         token('a', '{gone}'),
         token('b', '#777', { values: { dark: { hover: value('{gone}') } } }),
         token('c', '#777', {
+          states: ['hover'],
           rules: {
             states: { hover: { towards: { direction: 'away', reference: { token: 'gone' } } } },
           },

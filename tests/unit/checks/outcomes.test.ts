@@ -63,6 +63,14 @@ it('answers a ratio just under its requirement as a breach, never rounded into a
   expect(finding!.ratio).toBeCloseTo(4.478, 3)
 })
 
+it('answers pass at exactly the required ratio, and breach at the least above it', () => {
+  const at = (minimum?: number) =>
+    findings(lightSystem([pair('ink', 'ground', minimum === undefined ? {} : { minimum })]))[0]!
+  const { ratio } = at()
+  expect(at(ratio).outcome).toBe('pass')
+  expect(at(ratio + 1e-12).outcome).toBe('breach')
+})
+
 it('answers focus-change at AA as measured with nothing required', () => {
   const [finding] = findings(lightSystem([pair('ground', 'ground', { use: 'focus-change' })]))
   expect(finding).toMatchObject({ ratio: 1, required: 0, outcome: 'pass' })

@@ -160,6 +160,15 @@ it('answers newly breaching first, then newly passing, then the rest, the furthe
   expect(moves[0]!.before!.outcome).toBe('pass')
 })
 
+it('answers a breach whose pair is taken away as gone, not as passing', () => {
+  const before = evaluate(system({ tokens: [token('a', '#777')], pairs: [pair('a', 'ground')] }))
+  const again = recheck(before, { pairs: { remove: ['a on ground'] } })
+  if (!again.ok) throw new Error('faulty')
+  const [light] = consequences(before, again.evaluation)
+  expect(light).toMatchObject({ before: { outcome: 'breach' }, newly: null })
+  expect(light).not.toHaveProperty('after')
+})
+
 it('refuses edits with a fault, naming every one, and leaves the evaluation as it was', () => {
   const before = evaluate(system({ tokens: [token('a', '#777'), token('b', '{a}')] }))
   const again = recheck(before, {

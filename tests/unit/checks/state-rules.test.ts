@@ -140,6 +140,13 @@ describe('direction', () => {
   })
 })
 
+it('answers alike wherever in the ledger the reference stands', () => {
+  const states = { hover: { towards: away('last') } }
+  const first = fill('oklch(0.6 0 0)', states, { states: ['hover'] })
+  const model = system({ tokens: [first, token('last', '#fff')] })
+  expect(lightnessAt(model, 'fill hover')).toBeCloseTo(0.55, 12)
+})
+
 describe('one direction for all states of a token', () => {
   it('answers with the reference of the largest step for the smaller steps too', () => {
     const states = {

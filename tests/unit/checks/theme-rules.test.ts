@@ -109,6 +109,17 @@ describe('match-contrast', () => {
     expect(lightnessAt(model, 't dark')).toBe(far)
   })
 
+  it('answers the very same colour where ground and reference are the same in both themes', () => {
+    const tokens = ['ground', 'ink'].map((id, at) => {
+      const text = at === 0 ? '#ffffff' : '#000000'
+      return token(id, text, { values: { dark: { rest: value(text) } } })
+    })
+    const base = system({ tokens: [token('t', '#777777')], dark: { rule } })
+    expect(hexAt({ ...base, tokens: [...tokens, ...base.tokens.slice(2)] }, 't dark')).toBe(
+      '#777777',
+    )
+  })
+
   it('answers the extreme itself where only it has the parent’s ratio', () => {
     const base = system({ tokens: [token('t', '#000000')], dark: { rule } })
     const [ground, ink] = [

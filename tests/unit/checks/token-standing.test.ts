@@ -38,6 +38,12 @@ it('answers own pairs, and further pairs of all tokens that follow by alias', ()
   ])
 })
 
+it('leaves a pair of its own out of those through aliases', () => {
+  const tokens = [token('sand', '#8a8a8a'), token('label', '{sand}')]
+  const both = system({ themes: [theme('light')], tokens, pairs: [pair('label', 'sand')] })
+  expect(standingOf(evaluate(both)).get('sand')).toMatchObject({ pairs: 1, aliased: 0 })
+})
+
 it('answers the finding furthest short of its requirement, not the lowest ratio', () => {
   const fill = standingOf(evaluation).get('fill')!
   // Both are the same grey on white; as text it needs 4.5, as a boundary 3.
