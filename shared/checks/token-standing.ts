@@ -16,7 +16,10 @@ export interface TokenStanding {
   readonly breaches: number
   readonly waived: number
   readonly mark: StandingMark | null
-  /** The finding furthest short of what it must reach, exempt ones left out; absent where none requires anything. */
+  /**
+   * The finding furthest short of what it must reach; left out are exempt ones and those that another member of
+   * their group stands in for. Absent where none requires anything.
+   */
   readonly lowest?: Finding
 }
 
@@ -100,12 +103,12 @@ function markOf(outcome: Outcome, isForeground: boolean): StandingMark | undefin
 }
 
 function addEntry(draft: Draft, entry: Entry, aim: { isForeground: boolean; reach: number }): void {
-  const { outcome } = entry.judgement
+  const { outcome, reason } = entry.judgement
   const mark = markOf(outcome, aim.isForeground)
   if (mark !== undefined) draft.marks.add(mark)
   if (outcome === 'breach') draft.breaches++
   if (outcome === 'waived') draft.waived++
-  if (outcome !== 'exempt' && aim.reach < draft.reach) {
+  if (outcome !== 'exempt' && reason !== 'any-of' && aim.reach < draft.reach) {
     draft.lowest = entry
     draft.reach = aim.reach
   }

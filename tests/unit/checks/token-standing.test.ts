@@ -83,3 +83,16 @@ it('answers the findings of a token by its part in them', () => {
     new Set(['background label', 'background note', 'background deep']),
   )
 })
+
+it('leaves findings that another member of their group stands in for out of the lowest', () => {
+  const tokens = [token('paper', '#ffffff'), token('inner', '#f0f0f0'), token('outer', '#767676')]
+  const ring = { use: 'focus-adjacent', anyOf: 'ring' } as const
+  const pairs = [pair('inner', 'paper', ring), pair('outer', 'paper', ring)]
+  const bands = evaluate(system({ themes: [theme('light')], tokens, pairs }))
+  // #f0f0f0 on white is 1.13 and passes by the other band only; #767676 on white is 4.54 by itself.
+  expect(standingOf(bands).get('paper')).toMatchObject({
+    mark: null,
+    lowest: { foreground: 'outer', outcome: 'pass' },
+  })
+  expect(standingOf(bands).get('inner')).not.toHaveProperty('lowest')
+})
