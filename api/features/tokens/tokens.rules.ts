@@ -143,12 +143,16 @@ function coloursMoved(before: GovernedToken, after: GovernedToken): boolean {
   return part(before) !== part(after)
 }
 
-function pointersOf({ names }: SystemIndex, token: GovernedToken) {
-  return (fault: ModelFault): string | undefined => {
-    if (fault.token !== token.id) return undefined
-    const own = fault.theme === undefined ? undefined : token.values[fault.theme]
-    if (own === undefined || fault.theme === undefined) return '/value'
-    const at = `/values/${pointerSegment(names.themeKey(fault.theme))}`
-    return fault.state !== undefined && own[fault.state] ? `${at}/${fault.state}` : at
+function pointersOf({ model, names, themesById }: SystemIndex, token: GovernedToken) {
+  return ({ code, theme, state, ...fault }: ModelFault): string | undefined => {
+    const { ground, ink } = themesById.get(theme ?? '') ?? {}
+    const isItsTheme = ground === token.id || ink === token.id
+    if (fault.token !== token.id && !(fault.token === undefined && isItsTheme)) return undefined
+    const own = theme === undefined ? undefined : token.values[theme]
+    const isBase = theme === undefined || theme === model.themes[0]?.id
+    if (own === undefined) return isBase || code !== 'theme-unset' ? '/value' : '/values'
+    if (theme === undefined) return '/value'
+    const at = `/values/${pointerSegment(names.themeKey(theme))}`
+    return state !== undefined && own[state] ? `${at}/${state}` : at
   }
 }

@@ -153,10 +153,18 @@ describe('patchToken', () => {
     expect((await read('a')).value).toMatchObject({ colorSpace: 'oklch' })
   })
 
+  it('refuses to take from a theme its own ground, pointing at the values', async () => {
+    const values = { paper: { rest: '#0b1220' }, ink: { rest: '#ffffff' } }
+    await system.putTheme('dark', { name: 'Dark', ground: 'paper', ink: 'ink', values })
+    const { status, body } = await patch('paper', { values: {} })
+    expect(status).toBe(422)
+    expect(body.errors[0]).toMatchObject({ pointer: '/values', code: 'theme-unset' })
+  })
+
   it('refuses a ground and ink that come closer than 4.5 to 1', async () => {
     const { status, body } = await patch('ink', { value: '#999999' })
     expect(status).toBe(422)
-    expect(body.errors).toMatchObject([{ code: 'theme-span' }])
+    expect(body.errors).toMatchObject([{ pointer: '/value', code: 'theme-span' }])
   })
 
   it('answers a key with tokens:write as its owner, and logs the key', async () => {
