@@ -35,7 +35,7 @@ export function Choice<Value extends string>({
             <ListBoxItem
               id={option.value}
               textValue={option.text}
-              className="flex min-h-30 items-center border-l-4 border-transparent pr-16 pl-10 data-[focused]:bg-woad-wash data-[selected]:border-ink data-[selected]:font-semibold data-[focus-visible]:-outline-offset-2"
+              className="flex min-h-30 items-center border-l-4 border-transparent forced-colors:border-[Canvas] pr-16 pl-10 data-[focused]:bg-woad-wash data-[selected]:border-ink forced-colors:data-[selected]:border-[CanvasText] data-[selected]:font-semibold data-[focus-visible]:-outline-offset-2"
             >
               {option.text}
             </ListBoxItem>

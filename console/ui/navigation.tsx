@@ -26,7 +26,7 @@ export function Navigation({
             <li key={place.href}>
               <NavLink
                 to={place.href}
-                className="flex h-40 items-center border-b-4 border-transparent pt-2 text-ink-soft hover:text-ink aria-[current=page]:border-ink aria-[current=page]:font-semibold aria-[current=page]:text-ink"
+                className="flex h-40 items-center border-b-4 border-transparent pt-2 forced-colors:border-[Canvas] text-ink-soft hover:text-ink aria-[current=page]:border-ink! forced-colors:aria-[current=page]:border-[LinkText]! aria-[current=page]:font-semibold aria-[current=page]:text-ink"
               >
                 {place.text}
                 {place.count !== undefined && (

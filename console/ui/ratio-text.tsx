@@ -50,7 +50,7 @@ function Figure({ ratio, outcome }: Measured) {
 /** Before and after a trial: `3.88 → 6.36 of 4.5`. */
 export function RatioMove({ before, ...measured }: Measured & { before: number | undefined }) {
   return (
-    <span className="figures inline-flex items-baseline whitespace-nowrap">
+    <span className="figures ml-auto inline-flex items-baseline whitespace-nowrap">
       {before !== undefined && (
         <>
           <span data-ratio="before" className="min-w-38 text-end">

@@ -10,6 +10,11 @@ export function useWindowHeight(): number {
   return useSyncExternalStore(onResize, () => window.innerHeight)
 }
 
+/** Width of the window in px. */
+export function useWindowWidth(): number {
+  return useSyncExternalStore(onResize, () => window.innerWidth)
+}
+
 /** ≤ 720 px: the strip and the rows are laid out anew; ≤ 900 px the ways out go into a menu. */
 const NARROW = '(max-width: 720px)'
 const COMPACT = '(max-width: 900px)'

@@ -4,6 +4,7 @@ import { PairSample } from '#console/ui/pair-sample.tsx'
 import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import type { RowLinkProps } from '#console/ui/row-walk.ts'
 import type { BreachWire } from '#shared/contracts/breaches.contract.ts'
+import type { BreachColumns } from './breach-columns.ts'
 import { BreachStatus } from './breach-status.tsx'
 import { firstSeenInWords, outcomeOf } from './breach-words.ts'
 
@@ -15,7 +16,8 @@ export interface BreachRowProps {
   readonly isOpened: boolean
 }
 
-export function BreachRow({ breach, href, link, isOpened }: BreachRowProps) {
+export function BreachRow({ columns, ...row }: BreachRowProps & { columns: BreachColumns }) {
+  const { breach, href, isOpened } = row
   const navigate = useNavigate()
   return (
     <tr
@@ -34,11 +36,13 @@ export function BreachRow({ breach, href, link, isOpened }: BreachRowProps) {
         </span>
       </td>
       <td className="truncate">
-        <BreachLink breach={breach} href={href} link={link} isOpened={isOpened} />
+        <BreachLink {...row} />
       </td>
-      <td className="truncate font-normal! text-ink-soft @max-[760px]:hidden">
-        {breach.theme}, {stateInWords(breach.state)}
-      </td>
+      {columns.where && (
+        <td className="truncate font-normal! text-ink-soft">
+          {breach.theme}, {stateInWords(breach.state)}
+        </td>
+      )}
       <td>
         <span className="flex justify-end pr-6 font-normal">
           <RatioColumns
@@ -48,15 +52,17 @@ export function BreachRow({ breach, href, link, isOpened }: BreachRowProps) {
           />
         </span>
       </td>
-      <td className="figures truncate font-normal! text-ink-soft @max-[960px]:hidden">
-        <span className="pl-16">{firstSeenInWords(breach)}</span>
-      </td>
+      {columns.firstSeen && (
+        <td className="figures truncate font-normal! text-ink-soft">
+          <span className="pl-16">{firstSeenInWords(breach)}</span>
+        </td>
+      )}
       <td>
         <BreachStatus breach={breach} />
       </td>
-      <td className="truncate font-normal! text-ink-soft @max-[1100px]:hidden">
-        {breach.assignee?.name}
-      </td>
+      {columns.assignee && (
+        <td className="truncate font-normal! text-ink-soft">{breach.assignee?.name}</td>
+      )}
     </tr>
   )
 }

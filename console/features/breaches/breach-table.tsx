@@ -1,7 +1,8 @@
 import { Fragment, type ReactNode } from 'react'
 import { useRowWalk } from '#console/ui/row-walk.ts'
-import { useNarrow } from '#console/ui/window-size.ts'
+import { useNarrow, useWindowWidth } from '#console/ui/window-size.ts'
 import type { BreachWire } from '#shared/contracts/breaches.contract.ts'
+import { type BreachColumns, breachColumns } from './breach-columns.ts'
 import { BreachLine } from './breach-line.tsx'
 import { BreachRow } from './breach-row.tsx'
 
@@ -14,13 +15,12 @@ export interface BreachTableProps {
   readonly href: (breach: BreachWire) => string
 }
 
-export const BREACH_COLUMNS = 8
-
 /** The breach log; one breach may be opened, its history under its row. */
 export function BreachTable(props: BreachTableProps) {
   const { breaches, opened, under, href } = props
   const walk = useRowWalk(breaches.length)
   const narrow = useNarrow()
+  const columns = breachColumns(useWindowWidth())
   const rows = breaches.map((breach, index) => ({
     breach,
     href: href(breach),
@@ -43,14 +43,14 @@ export function BreachTable(props: BreachTableProps) {
     // biome-ignore lint/a11y/noStaticElementInteractions: the arrows walk the row links inside, which are operable
     <div ref={walk.container} onKeyDown={walk.onKeyDown} className="ledger">
       <table aria-label="Breaches">
-        <BreachHead />
+        <BreachHead columns={columns} />
         <tbody>
           {rows.map((row) => (
             <Fragment key={row.breach.id}>
-              <BreachRow {...row} />
+              <BreachRow {...row} columns={columns} />
               {row.isOpened && (
                 <tr data-under>
-                  <td colSpan={BREACH_COLUMNS}>{under}</td>
+                  <td colSpan={columns.count}>{under}</td>
                 </tr>
               )}
             </Fragment>
@@ -61,24 +61,26 @@ export function BreachTable(props: BreachTableProps) {
   )
 }
 
-function BreachHead() {
+function BreachHead({ columns }: { columns: BreachColumns }) {
   return (
     <thead>
       <tr>
         <th className="number w-30">No.</th>
-        <th className="w-140">
+        <th className="w-124">
           <span className="pl-16">Seen as</span>
         </th>
         <th>Pair</th>
-        <th className="w-[max(130px,15cqw)] @max-[760px]:hidden">Where</th>
+        {columns.where && <th className="w-[max(130px,15cqw)]">Where</th>}
         <th className="w-122">
           <span className="block w-64 text-end">Ratio</span>
         </th>
-        <th className="w-150 @max-[960px]:hidden">
-          <span className="pl-16">First seen</span>
-        </th>
+        {columns.firstSeen && (
+          <th className="w-150">
+            <span className="pl-16">First seen</span>
+          </th>
+        )}
         <th className="w-[max(120px,15cqw)]">Status</th>
-        <th className="w-130 @max-[1100px]:hidden">With</th>
+        {columns.assignee && <th className="w-130">With</th>}
       </tr>
     </thead>
   )

@@ -31,9 +31,12 @@ export function ShipsTable(props: ShipsTableProps) {
       <table aria-label="As it ships">
         <thead>
           <tr>
-            <th className="w-88 @max-[600px]:w-64">Theme</th>
-            <th className="w-70">State</th>
-            <th className="w-124 @max-[600px]:w-auto">Seen on its ground</th>
+            <th className="w-88 @max-[600px]:w-52">Theme</th>
+            <th className="w-70 @max-[600px]:w-64">State</th>
+            <th className="w-124 @max-[600px]:w-auto">
+              <span className="@max-[600px]:hidden">Seen on its ground</span>
+              <span className="hidden @max-[600px]:inline">Seen</span>
+            </th>
             <th className="w-150 @max-[980px]:hidden">
               <SourceHeads />
             </th>
@@ -42,8 +45,8 @@ export function ShipsTable(props: ShipsTableProps) {
             </th>
             <th className="w-132 @max-[1180px]:hidden">Display P3</th>
             <th className="@max-[820px]:hidden">Made by</th>
-            <th className="w-129">
-              <span className="block w-71 text-end">Lowest</span>
+            <th className="w-129 @max-[600px]:w-104">
+              <span className="block w-71 text-end @max-[600px]:w-46">Lowest</span>
             </th>
             <th className="w-184 @max-[1100px]:hidden">Against</th>
           </tr>
@@ -146,7 +149,7 @@ function LowestCells({
   return (
     <>
       <td>
-        <span className="flex justify-end pr-6">
+        <span className="flex justify-end @min-[600px]:pr-6">
           <RatioColumns
             ratio={lowest.ratio}
             required={isExempt ? 0 : lowest.required}

@@ -71,7 +71,7 @@ function LedgerHead({ light, dark }: { light: string; dark: string }) {
     <thead>
       <tr aria-rowindex={1}>
         <th className="w-88">Group</th>
-        <th className="w-[max(120px,168px+(100cqw-1280px)*0.4)]">Name</th>
+        <th className="w-[max(120px,160px+(100cqw-1280px)*0.4)]">Name</th>
         <th className="w-134">{startSentence(light === dark ? light : `${light}, ${dark}`)}</th>
         <th className="w-194 @max-[960px]:hidden">
           <span className="pl-14 inline-block">
@@ -98,7 +98,7 @@ function Spacer({ rows }: { rows: number }) {
   return (
     <tbody aria-hidden="true">
       <tr>
-        <td colSpan={9} style={{ height: rows * ROW_HEIGHT }} />
+        <td style={{ height: rows * ROW_HEIGHT }} />
       </tr>
     </tbody>
   )

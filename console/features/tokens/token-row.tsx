@@ -71,7 +71,7 @@ export function TokenRow({ row, span, shown, base, breach, href, link, onLead }:
         )}
       </td>
       <Measures standing={standing} />
-      <td>
+      <td className="whitespace-nowrap">
         <TokenMark row={row} />
       </td>
     </tr>

@@ -5,6 +5,7 @@ import {
   readBreachFilter,
   writeBreachFilter,
 } from '#console/features/breaches/breach-filter.ts'
+import { breachColumns } from '#console/features/breaches/breach-columns.ts'
 import { stepsOf } from '#console/features/breaches/breach-time.ts'
 import type { BreachEventWire } from '#shared/contracts/breaches.contract.ts'
 
@@ -48,5 +49,13 @@ describe('the steps of a breach', () => {
     const events = [event('2026-10-01T00:00:00.000Z', 4.3), event('2026-10-01T01:00:00.000Z', 4.2)]
     const steps = stepsOf(events, '2026-10-20T00:00:00.000Z')
     expect(steps.map(({ labelled }) => labelled)).toEqual([false, true])
+  })
+})
+
+describe('the columns of the log', () => {
+  it('answers as many as there is room for, and their number', () => {
+    expect(breachColumns(1440)).toEqual({ where: true, firstSeen: true, assignee: true, count: 8 })
+    expect(breachColumns(1100)).toMatchObject({ firstSeen: true, assignee: false, count: 7 })
+    expect(breachColumns(768)).toMatchObject({ where: false, count: 5 })
   })
 })
