@@ -28,10 +28,10 @@ const SPACES_OF_COLOR: { readonly [name: string]: ColorSpace } = {
 
 /** Functions that give a colour only together with a page, a reader's settings or other colours. */
 const NOT_FIXED: { readonly [name: string]: string } = {
-  'color-mix': 'color-mix() is not a fixed color: write its result.',
-  'light-dark': 'light-dark() is two colors: set one per theme.',
-  'contrast-color': 'contrast-color() is chosen by the browser: write the color itself.',
-  'device-cmyk': 'device-cmyk() depends on a printer profile: write a screen color.',
+  'color-mix': 'color-mix() is not a fixed colour: write its result.',
+  'light-dark': 'light-dark() is two colours: set one per theme.',
+  'contrast-color': 'contrast-color() is chosen by the browser: write the colour itself.',
+  'device-cmyk': 'device-cmyk() depends on a printer profile: write a screen colour.',
 }
 
 /**
@@ -42,12 +42,12 @@ const NOT_FIXED: { readonly [name: string]: string } = {
  * @see https://www.w3.org/TR/css-color-4/#color-syntax
  */
 export function readCssColor(text: string): CssReading {
-  if (text.length > LONGEST) return refused(`A color is at most ${LONGEST} characters long.`)
+  if (text.length > LONGEST) return refused(`A colour is at most ${LONGEST} characters long.`)
   const css = text
     .replace(/[\t\n\r\f]/g, ' ')
     .trim()
     .toLowerCase()
-  if (css === '') return refused('The color is empty.')
+  if (css === '') return refused('The colour is empty.')
   if (css.startsWith('#')) return readHex(css)
   const call = FUNCTION.exec(css)
   if (call) return readFunction(css, call[1]!, call[2]!)
@@ -56,27 +56,27 @@ export function readCssColor(text: string): CssReading {
 
 function readHex(css: string): CssReading {
   const color = parseWithLibrary(css)
-  return color ? spaced(color, 'srgb', false) : refused('A hex color has 3, 4, 6 or 8 hex digits.')
+  return color ? spaced(color, 'srgb', false) : refused('A hex colour has 3, 4, 6 or 8 hex digits.')
 }
 
 function readKeyword(css: string): CssReading {
   if (css === 'currentcolor') {
-    return refused('currentcolor depends on where it is used: write the color itself.')
+    return refused('currentcolor depends on where it is used: write the colour itself.')
   }
   const isName = css === 'transparent' || Object.hasOwn(colorsNamed, css)
   const color = isName ? parseWithLibrary(css) : undefined
-  return color ? spaced(color, 'srgb', false) : refused(`"${css}" is not a CSS color.`)
+  return color ? spaced(color, 'srgb', false) : refused(`"${css}" is not a CSS colour.`)
 }
 
 function readFunction(css: string, name: string, body: string): CssReading {
   if (Object.hasOwn(NOT_FIXED, name)) return refused(NOT_FIXED[name]!)
-  if (/^\s*from\b/.test(body)) return refused('A relative color (from …) is not a fixed color.')
+  if (/^\s*from\b/.test(body)) return refused('A relative colour (from …) is not a fixed colour.')
   const space = name === 'color' ? SPACES_OF_COLOR[SPACE.exec(body)?.[1] ?? ''] : spaceOf(name)
   if (!space) {
     return refused(
       name === 'color'
-        ? 'color() starts with a known color space.'
-        : `${name}() is not a CSS color.`,
+        ? 'color() starts with a known colour space.'
+        : `${name}() is not a CSS colour.`,
     )
   }
   // The library trips over a term it does not know, so every term is checked before it sees the text.
@@ -94,10 +94,10 @@ function readFunction(css: string, name: string, body: string): CssReading {
 function reasonForNested(css: string): string {
   const name = /^([a-z-]+)\(/.exec(css)?.[1] ?? ''
   if (Object.hasOwn(NOT_FIXED, name)) return NOT_FIXED[name]!
-  if (/^[a-z]+\(\s*from\b/.test(css)) return 'A relative color (from …) is not a fixed color.'
+  if (/^[a-z]+\(\s*from\b/.test(css)) return 'A relative colour (from …) is not a fixed colour.'
   const math = MATH.exec(css)
   if (math) return `${math[0]}) is not accepted: write the number itself.`
-  return `"${css}" is not a CSS color.`
+  return `"${css}" is not a CSS colour.`
 }
 
 function spaceOf(name: string): ColorSpace | undefined {

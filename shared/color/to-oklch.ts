@@ -61,7 +61,7 @@ export function oklchOf({ space, components, alpha }: SpacedColor): OklchReading
   const converted = toLibraryOklch(libraryColor(space, [first ?? 0, second ?? 0, third ?? 0]))
   const { l, c, h } = converted
   if (!(Number.isFinite(l) && Number.isFinite(c))) {
-    return { ok: false, reason: 'Its conversion to OKLCH is not a finite color.' }
+    return { ok: false, reason: 'Its conversion to OKLCH is not a finite colour.' }
   }
   const achromatic = h === undefined || c <= POWERLESS_CHROMA || isPowerlessLch(space, second)
   return withinLightness({ l, c: achromatic ? 0 : c, h: achromatic ? null : turned(h), alpha })
