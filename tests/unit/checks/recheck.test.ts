@@ -193,3 +193,13 @@ it('answers a changed override value of one theme in that theme alone', () => {
   if (!again.ok) throw new Error('faulty')
   expect(consequences(before, again.evaluation).map(({ after }) => after!.theme)).toEqual(['dark'])
 })
+
+it('answers a system that has no theme yet with no finding, and edits of it', () => {
+  const before = evaluate(
+    system({ themes: [], tokens: [token('a', '#777')], pairs: [pair('a', 'ink')] }),
+  )
+  const again = recheck(before, { tokens: { put: [token('a', '#888'), token('b', '{a}')] } })
+  if (!again.ok) throw new Error('faulty')
+  expect(verdictOf(again.evaluation)).toMatchObject({ verdict: 'pass', findings: [] })
+  expect([...again.evaluation.resolved.tokens.keys()]).toEqual(['ground', 'ink', 'a', 'b'])
+})
