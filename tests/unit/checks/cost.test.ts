@@ -8,11 +8,11 @@ import { Dice } from './random-system.ts'
 
 const TOKENS = 2000
 const PAIRS = 4000
+const states = ['hover', 'active', 'focus', 'disabled'] as const
 
 function largeSystem() {
   const dice = new Dice(20)
   const ids = Array.from({ length: TOKENS }, (_, at) => `t${at}`)
-  const states = ['hover', 'active', 'focus', 'disabled'] as const
   const color = () => `oklch(${dice.next()} ${dice.next() * 0.2} ${dice.next() * 360})`
   return system({
     themes: [
@@ -28,8 +28,6 @@ function largeSystem() {
     ),
   })
 }
-
-const states = ['hover', 'active', 'focus', 'disabled'] as const
 
 /** What an edit of one token computes and measures anew: everything else is the same object as before. */
 function workOf(first: Evaluation, id: string) {
