@@ -42,6 +42,27 @@ describe('getToken', () => {
     },
   )
 
+  it.each(['__proto__', 'constructor', 'a.__proto__.b'])(
+    'answers the token named %s also in a theme, its file and the whole revision',
+    async (name) => {
+      const other = await createSampleSystem(test)
+      const values = { paper: { rest: '#0b1220' }, ink: { rest: '#ffffff' } }
+      await other.putTheme('dark', { name: 'Dark', ground: 'paper', ink: 'ink', values })
+      await other.addToken(name, '#123456', { values: { dark: { rest: '#abcdef' } } })
+      const { body } = await test.people.engineer
+        .get(`${other.url}/tokens/${encodeURIComponent(name)}`)
+        .expect(200)
+      expect(body.resolved.dark.rest.hex).toBe('#abcdef')
+      const theme = await test.people.engineer.get(`${other.url}/themes/dark`).expect(200)
+      expect(Object.keys(theme.body.values)).toContain(name)
+      const file = await test.people.engineer.get(`${other.url}/themes/dark.json`).expect(200)
+      expect(file.text).toContain('#abcdef')
+      const { body: revisions } = await test.people.engineer.get(`${other.url}/revisions?limit=1`)
+      const at = `${other.url}/revisions/${revisions.items[0].number}`
+      expect((await test.people.engineer.get(at).expect(200)).text).toContain(name)
+    },
+  )
+
   it('answers names with dots as one name, exactly', async () => {
     await system.addToken('Chart.Route.1', '#123456')
     await test.people.engineer.get(at('Chart.Route.1')).expect(200)
