@@ -145,12 +145,20 @@ async function buildGate(folder) {
 /** @param {string} folder */
 async function buildConsole(folder) {
   const vite = await import('vite')
-  await vite.build({
-    configFile: join(ROOT, 'vite.config.ts'),
-    mode: 'production',
-    logLevel: 'warn',
-    build: { outDir: join(folder, 'console') },
-  })
+  const mode = process.env.NODE_ENV
+  // Vite keeps a NODE_ENV that is set: tests would be given React's development build.
+  process.env.NODE_ENV = 'production'
+  try {
+    await vite.build({
+      configFile: join(ROOT, 'vite.config.ts'),
+      mode: 'production',
+      logLevel: 'warn',
+      build: { outDir: join(folder, 'console') },
+    })
+  } finally {
+    if (mode === undefined) Reflect.deleteProperty(process.env, 'NODE_ENV')
+    else process.env.NODE_ENV = mode
+  }
 }
 
 /** @returns {string} */
