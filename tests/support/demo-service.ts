@@ -1,5 +1,6 @@
 import { createServer } from 'node:http'
 import type { AddressInfo } from 'node:net'
+import type { Files } from '#api/app.ts'
 import { compose } from '#api/compose.ts'
 import { readConfig } from '#api/config.ts'
 import demo from '#scripts/demo/demo-accounts.json' with { type: 'json' }
@@ -15,8 +16,11 @@ export interface DemoService extends Service {
   close(): Promise<void>
 }
 
-/** Composes the service on a database of its own, makes the demo's accounts, and seeds it over HTTP. */
-export async function startDemoService(): Promise<DemoService> {
+/**
+ * Composes the service on a database of its own, makes the demo's accounts, and seeds it over HTTP.
+ * With `files` it serves them too, such as the built console.
+ */
+export async function startDemoService(files?: Files): Promise<DemoService> {
   const database = await createTestDatabase()
   const read = readConfig({
     NODE_ENV: 'test',
@@ -27,7 +31,7 @@ export async function startDemoService(): Promise<DemoService> {
     LOG_LEVEL: 'error',
   })
   if (!read.ok) throw new Error(read.refusals.join('\n'))
-  const { app, services, close } = compose({ config: read.config })
+  const { app, services, close } = compose({ config: read.config, files })
   const server = createServer(app)
   await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve))
   const baseUrl = `http://127.0.0.1:${(server.address() as AddressInfo).port}`
