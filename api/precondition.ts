@@ -1,4 +1,5 @@
-import { canonicalJson, sha256Hex } from './canonical-json.ts'
+import { canonicalJson } from '#shared/formats/canonical-json.ts'
+import { sha256Hex } from './sha256.ts'
 import { AppError } from './errors.ts'
 
 /** What an `If-Match` field asks for. */

@@ -1,5 +1,5 @@
 import type { Request, Response } from 'express'
-import { sha256Hex } from '#api/canonical-json.ts'
+import { sha256Hex } from '#api/sha256.ts'
 import type { AnswerOf, Contract } from '#shared/contracts/route.ts'
 import { isUnmodified } from './conditional.ts'
 

@@ -1,6 +1,6 @@
 import { type IRouter, Router } from 'express'
 import swagger from 'swagger-ui-express'
-import { sha256Hex } from '#api/canonical-json.ts'
+import { sha256Hex } from '#api/sha256.ts'
 import { isUnmodified } from './conditional.ts'
 import { setReferenceHeaders } from './headers.ts'
 

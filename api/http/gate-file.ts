@@ -1,5 +1,5 @@
 import { type IRouter, Router } from 'express'
-import { sha256Hex } from '#api/canonical-json.ts'
+import { sha256Hex } from '#api/sha256.ts'
 import { isUnmodified } from './conditional.ts'
 
 /** Serves the CI client to pipelines. */

@@ -32,8 +32,6 @@ export const PROBLEM_ADVICE: Readonly<Record<ProblemCode, string>> = {
   'token-locked': 'The token is locked. Unlock it in an edit of its own, then change it.',
   'pair-already-declared':
     'A pair with the same colours, use, relation, backdrop, group and product is declared already. Edit that one.',
-  'theme-already-exists':
-    'A theme has this key already. Replace it with If-Match, or choose another key.',
   'theme-in-use': 'Another theme derives from it, or it is the base. Change that first.',
   'css-name-collision':
     'Two token names come to the same CSS custom property; detail names both. Rename one.',

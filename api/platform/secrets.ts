@@ -1,5 +1,5 @@
 import { randomBytes } from 'node:crypto'
-import { sha256Hex } from '#api/canonical-json.ts'
+import { sha256Hex } from '#api/sha256.ts'
 
 const ALPHABET = 'abcdefghijkmnpqrstuvwxyz23456789'
 const RANDOM_LETTERS = 32

@@ -23,7 +23,6 @@ export const PROBLEMS = {
   'token-in-use': { status: 409, title: 'The token is used elsewhere' },
   'token-locked': { status: 409, title: 'The token is locked' },
   'pair-already-declared': { status: 409, title: 'This pair is declared already' },
-  'theme-already-exists': { status: 409, title: 'Another theme has this key' },
   'theme-in-use': { status: 409, title: 'The theme is used elsewhere' },
   'css-name-collision': { status: 409, title: 'Two tokens come to one CSS name' },
   'review-required': { status: 409, title: 'This system takes edits by review only' },

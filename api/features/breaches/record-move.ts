@@ -1,4 +1,4 @@
-import { sha256Hex } from '#api/canonical-json.ts'
+import { sha256Hex } from '#api/sha256.ts'
 import type { NewId } from '#api/platform/ids.ts'
 import type { Evaluation } from '#shared/checks/evaluation.ts'
 import type { Finding, WaiverModel } from '#shared/checks/model.ts'

@@ -1,5 +1,5 @@
 import { actorOf, type KeyCaller, requirePermission, type SystemAccess } from '#api/caller.ts'
-import { sha256Hex } from '#api/canonical-json.ts'
+import { sha256Hex } from '#api/sha256.ts'
 import { AppError, invalidRequest } from '#api/errors.ts'
 import type { NewId } from '#api/platform/ids.ts'
 import { isApiKeyShaped, newApiKey } from '#api/platform/secrets.ts'

@@ -1,4 +1,4 @@
-import { sha256Hex } from '#api/canonical-json.ts'
+import { sha256Hex } from '#api/sha256.ts'
 import type { Caller, UserCaller } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
 import type { NewId } from '#api/platform/ids.ts'

@@ -1,4 +1,5 @@
-import { canonicalJson, sha256Hex } from '#api/canonical-json.ts'
+import { sha256Hex } from '#api/sha256.ts'
+import { canonicalJson } from '#shared/formats/canonical-json.ts'
 import type { AuditActor } from '#api/caller.ts'
 
 /** One act, as its hash covers it. */

@@ -1,6 +1,6 @@
 import { eq, sql } from 'drizzle-orm'
 import type { AuditActor } from '#api/caller.ts'
-import { canonicalJson } from '#api/canonical-json.ts'
+import { canonicalJson } from '#shared/formats/canonical-json.ts'
 import type { Executor } from '#api/platform/database.ts'
 import { auditChains, auditEntries } from '#drizzle/schema/audit.ts'
 import { CHAIN_START, entryHash } from './audit-chain.ts'

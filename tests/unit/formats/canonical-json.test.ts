@@ -43,6 +43,16 @@ describe('canonicalJson', () => {
     )
   })
 
+  it('answers the string sample with its escapes', () => {
+    // RFC 8785, 3.2.2.
+    const string = '\u20ac$\u000F\u000aA\'\u0042\u0022\u005c\\"\u002f'
+    expect(canonicalJson({ string })).toBe('{"string":"€$\\u000f\\nA\'B\\"\\\\\\\\\\"/"}')
+  })
+
+  it('answers a date as its text', () => {
+    expect(canonicalJson({ at: new Date(0) })).toBe('{"at":"1970-01-01T00:00:00.000Z"}')
+  })
+
   it('leaves members out that are undefined', () => {
     expect(canonicalJson({ a: undefined, b: 1 })).toBe('{"b":1}')
   })
