@@ -7,8 +7,7 @@ import { createRaceTrack, type RaceTrack } from '#tests/support/races.ts'
 
 /**
  * Several clients at two processes count up in one token, each from what it has just read. A lost update shows
- * as a count that is lower than the edits that were acknowledged. Published measure: TRUST.md findings 1 and 3
- * of the project's specification; no outside source.
+ * as a count that is lower than the edits that were acknowledged. Common practice, no source.
  */
 let track: RaceTrack
 beforeAll(async () => {

@@ -13,8 +13,8 @@ import { createRaceTrack, type RaceTrack } from '#tests/support/races.ts'
 
 /**
  * Two editors at two processes: one moves a foreground, the other its background. Each move alone is legal,
- * both together breach. Whichever comes second must be judged on what the first left. Published measure:
- * TRUST.md finding 2 of the project's specification; no outside source.
+ * both together breach. Whichever comes second must be judged on what the first left. Common
+ * practice, no source.
  */
 let track: RaceTrack
 beforeAll(async () => {

@@ -19,7 +19,7 @@ describe('getThemeFile', () => {
     const { text, headers } = await get('light.css').expect(200)
     expect(headers['content-type']).toBe('text/css; charset=utf-8')
     expect(headers['cache-control']).toContain('no-cache')
-    // ENGINE.md 1: the colour is mapped to #00c248, never clipped by the browser.
+    // CSS Color 4, gamut mapping: the colour is mapped to #00c248, never clipped by the browser.
     expect(text).toContain('--action-fill: #00c248;')
     expect(text).toMatch(/--action-fill-hover: #[0-9a-f]{6};/)
     expect(text).toContain('--veil: #00000080;')

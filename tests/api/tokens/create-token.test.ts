@@ -48,7 +48,7 @@ describe('createToken', () => {
 
   it('answers sRGB bytes and mapped P3 for what sRGB cannot hold', async () => {
     const { body } = await post({ name: 'beyond', value: 'oklch(0.7 0.4 150)' }).expect(201)
-    // ENGINE.md 1: mapping gives #00c248, where clipping would give #00d600.
+    // CSS Color 4, gamut mapping gives #00c248, where clipping would give #00d600.
     expect(body.resolved.light.rest).toMatchObject({ hex: '#00c248', gamut: 'beyond' })
     expect(body.resolved.light.rest.p3.colorSpace).toBe('display-p3')
   })

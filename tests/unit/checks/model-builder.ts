@@ -17,7 +17,7 @@ export function value(text: string): SourceValue {
   return { kind: 'color', color: parsed.color }
 }
 
-/** A token whose id and name are the same, so that tests read like the specification. */
+/** A token whose id and name are the same, so that tests read like the rules. */
 export function token(id: string, text: string, more: Partial<TokenModel> = {}): TokenModel {
   return { id, name: id, value: value(text), states: [], values: {}, ...more }
 }

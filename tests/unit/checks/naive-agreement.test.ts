@@ -7,7 +7,7 @@ import { NaiveSystem } from './naive-resolution.ts'
 import { naiveFindings } from './naive-verdict.ts'
 import { Dice, randomSystem } from './random-system.ts'
 
-it('answers every value and finding of random systems as a naive reading of the specification does', () => {
+it('answers every value and finding of random systems as a naive reading of the rules does', () => {
   const tally = { systems: 0, findings: 0, breaches: 0, p3: 0, tight: 0, merged: 0 }
   fc.assert(
     fc.property(fc.integer(), (seed) => {

@@ -14,7 +14,7 @@ import { renderColor } from '#shared/color/render.ts'
 import { naiveRatio, paintAll } from './naive-contrast.ts'
 
 /**
- * The resolution of the specification written a second time, straight from its text: recursive, slow,
+ * Resolution written a second time, straight from the rules in DEVELOPERS.md: recursive, slow,
  * sharing nothing with the engine but colour arithmetic. Only for models without faults.
  */
 const ORDER: readonly DerivedState[] = ['hover', 'active', 'focus', 'disabled']
