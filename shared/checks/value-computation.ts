@@ -56,11 +56,18 @@ function follow(
   return { color: adjusted(target.color, adjustment), provenance, aliasDepth: 0 }
 }
 
-function sideOf(pass: ValuePass, theme: number, reference: number): ThemeSide | undefined {
-  const ground = restColor(pass, pass.graph.grounds[theme]!, theme)
-  const ink = restColor(pass, pass.graph.inks[theme]!, theme)
-  const against = restColor(pass, reference, theme)
-  return ground && ink && against ? { ground, ink, reference: against } : undefined
+/** A theme's side of a rule; for what the rule does not look at, and so does not wait for, the ground stands in. */
+function sideOf(
+  pass: ValuePass,
+  theme: number,
+  looksAt: { readonly ink: boolean; readonly reference: number | undefined },
+): ThemeSide | undefined {
+  const { grounds, inks } = pass.graph
+  const groundAt = grounds[theme]!
+  const ground = restColor(pass, groundAt, theme)
+  const ink = restColor(pass, looksAt.ink ? inks[theme]! : groundAt, theme)
+  const reference = restColor(pass, looksAt.reference ?? groundAt, theme)
+  return ground && ink && reference ? { ground, ink, reference } : undefined
 }
 
 function ruleByTheme(
@@ -75,10 +82,11 @@ function ruleByTheme(
   const rule = isKept(graph, plan, place) ? { kind: 'keep' as const } : plan.rule
   let span: ThemeSpan | undefined
   if (rule.kind !== 'keep' && rule.kind !== 'shift') {
-    const references = matchReferences(graph, plan, place.theme)
-    const isMatch = rule.kind === 'match-contrast'
-    const own = sideOf(pass, place.theme, isMatch ? references.own : graph.grounds[place.theme]!)
-    const from = sideOf(pass, parent, isMatch ? references.parent : graph.grounds[parent]!)
+    const against =
+      rule.kind === 'match-contrast' ? matchReferences(graph, plan, place.theme) : undefined
+    const ink = rule.kind !== 'relative'
+    const own = sideOf(pass, place.theme, { ink, reference: against?.own })
+    const from = sideOf(pass, parent, { ink, reference: against?.parent })
     if (!own || !from) return undefined
     span = { own, parent: from }
   }

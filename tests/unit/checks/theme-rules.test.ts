@@ -1,5 +1,10 @@
 import { describe, expect, it } from 'vitest'
-import type { ThemeModel, ThemeRule, TokenModel } from '#shared/checks/model.ts'
+import {
+  THEME_RULE_KINDS,
+  type ThemeModel,
+  type ThemeRule,
+  type TokenModel,
+} from '#shared/checks/model.ts'
 import { type RenderedColor, renderColor } from '#shared/color/render.ts'
 import { naiveRatio, paintAll } from './naive-contrast.ts'
 import { pair, system, theme, token, value } from './model-builder.ts'
@@ -270,4 +275,28 @@ describe('rule scopes', () => {
     expect(outcomeOf({ kind: 'match-contrast' })).toEqual(['pass', 'pass'])
     expect(outcomeOf({ kind: 'shift', lightness: 0.3 })).toEqual(['pass', 'pass'])
   })
+})
+
+it('answers alike wherever in the ledger ground and ink stand', () => {
+  for (const kind of THEME_RULE_KINDS) {
+    const model = ruled('oklch(0.99 0.01 80)', { kind })
+    const [ground, ink, t] = model.tokens as [TokenModel, TokenModel, TokenModel]
+    const wanted = read(model, 't dark')
+    for (const tokens of [
+      [t, ink, ground],
+      [ground, t, ink],
+      [ink, t, ground],
+    ]) {
+      expect(read({ ...model, tokens }, 't dark')).toEqual(wanted)
+    }
+  }
+})
+
+it('leaves ink free to alias a token that relative moves, since relative looks at the grounds alone', () => {
+  const rules = { themes: { dark: { kind: 'relative', k: -10 } } } as const
+  const base = system({ tokens: [token('pale', 'oklch(0.9 0 0)', { rules })] })
+  const [ground, ink, pale] = base.tokens as [TokenModel, TokenModel, TokenModel]
+  const aliased = { ...ink, values: { dark: { rest: value('{pale}') } } }
+  const model = { ...base, tokens: [ground, aliased, pale] }
+  expect(lightnessAt(model, 'ink dark')).toBeCloseTo(0.92, 12)
 })
