@@ -7,6 +7,9 @@ export const GAMUT_MAP = 'css-color-4-binary-search-local-minde'
 /** Hue is powerless at or below this OKLCH chroma: the colour counts as achromatic (CSS Color 4, powerless components). */
 export const POWERLESS_CHROMA = 0.000004
 
+/** Further out the cubes of the conversion overflow a double, and no colour maps otherwise than from here. */
+const FARTHEST_CHROMA = 1e100
+
 const JND = 0.02
 const EPSILON = 0.0001
 
@@ -57,7 +60,7 @@ export function mappedChroma(l: number, c: number, h: number): number {
  * @param h Hue in degrees.
  */
 export function isInGamut(l: number, c: number, h: number, gamut: Gamut): boolean {
-  const chroma = c <= POWERLESS_CHROMA ? 0 : c
+  const chroma = countedChroma(c)
   const angle = (h * Math.PI) / 180
   return isNearlyInside(
     writeLinear(l, chroma * Math.cos(angle), chroma * Math.sin(angle), gamut, trial),
@@ -72,7 +75,7 @@ function writeMappedLinear(
   gamut: Gamut,
   out: Float64Array,
 ): boolean {
-  const chroma = c <= POWERLESS_CHROMA ? 0 : c
+  const chroma = countedChroma(c)
   if (l >= 1 || l <= 0) {
     out.fill(l >= 1 ? 1 : 0)
     return chroma === 0
@@ -127,6 +130,10 @@ function clipDistance(l: number, a: number, b: number, gamut: Gamut): number {
   const da = clippedLab[1]! - a
   const db = clippedLab[2]! - b
   return Math.sqrt(dl * dl + da * da + db * db)
+}
+
+function countedChroma(c: number): number {
+  return c <= POWERLESS_CHROMA ? 0 : Math.min(c, FARTHEST_CHROMA)
 }
 
 function unit(component: number): number {

@@ -55,7 +55,9 @@ describe('oklchOf', () => {
   })
 
   it('refuses a lightness outside 0 to 1 and clamps what is only an error of conversion', () => {
-    expect(oklchOf({ space: 'oklch', components: [1.1, 0, 0], alpha: 1 }).ok).toBe(false)
+    for (const l of [1.1, 1.00002, -0.00002]) {
+      expect(oklchOf({ space: 'oklch', components: [l, 0, 0], alpha: 1 }).ok).toBe(false)
+    }
     expect(oklchOf({ space: 'srgb', components: [1, 1, 1], alpha: 1 })).toMatchObject({
       color: { l: 1, c: 0, h: null },
     })

@@ -85,8 +85,15 @@ describe('renderColor', () => {
   it('answers P3 bytes from the shipped hex inside sRGB, from its own mapping outside', () => {
     const inside = render('#3366cc')
     expect([inside.p3r, inside.p3g, inside.p3b]).toEqual([...srgbBytesToP3Bytes(51, 102, 204)])
+    // Rounded to its hex first: on its own, oklch(0.5 0.1 20) would be 138 77 77 in P3.
+    const rounded = render('oklch(0.5 0.1 20)')
+    expect([rounded.r, rounded.g, rounded.b]).toEqual([148, 74, 75])
+    expect([rounded.p3r, rounded.p3g, rounded.p3b]).toEqual([138, 78, 77])
     const outside = render('color(display-p3 0 1 0)')
     expect([outside.p3r, outside.p3g, outside.p3b]).toEqual([0, 255, 0])
+    // Value by colorjs.io, toGamut({ method: 'css', space: 'p3' }).
+    const beyond = render('oklch(0.7 0.4 150)')
+    expect([beyond.p3r, beyond.p3g, beyond.p3b]).toEqual([0, 200, 50])
     expect(formatHex(outside.r, outside.g, outside.b)).toBe('#00fb29')
   })
 
@@ -105,6 +112,14 @@ describe('renderColor', () => {
   it('answers white and black for any lightness at the ends, whatever the chroma', () => {
     expect(hexOf('oklch(1 0.3 20)')).toBe('#ffffff')
     expect(hexOf('oklch(0 0.3 20)')).toBe('#000000')
+  })
+
+  it('answers bytes for any chroma that a double holds', () => {
+    const far = renderColor({ l: 0.5, c: 1e6, h: 40, alpha: 1 })
+    for (const c of [1e100, 1e103, 1e200, Number.MAX_VALUE, Number.POSITIVE_INFINITY]) {
+      expect(renderColor({ l: 0.5, c, h: 40, alpha: 1 })).toEqual(far)
+      expect(mappedChroma(0.5, c, 40)).toBeCloseTo(mappedChroma(0.5, 1e6, 40), 2)
+    }
   })
 
   it('answers halves upwards', () => {
