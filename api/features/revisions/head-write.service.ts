@@ -38,6 +38,8 @@ export interface HeadWrite {
   /** What the edit is meant for, and what stands there now. */
   readonly expected?: {
     readonly ifMatch: IfMatch | 'nothing-there'
+    /** What stands there can change without a move of the head: it is compared under the lock, always. */
+    readonly beyondHead?: true
     readonly current: (
       head: Head,
       reading: Writing,
@@ -138,12 +140,14 @@ async function writeUnderLock(
   const { id } = request.system
   const locked = await deps.guards.lock(repositories.heads, id)
   if (locked === undefined) throw new AppError('not-found')
-  const plan = deps.guards.isCurrent(prepared.head, locked)
-    ? prepared
-    : await planOn(deps, request, {
-        head: await advanceHead(prepared.head, locked, repositories.versions),
-        reading: repositories,
-      })
+  const isSettled = request.expected?.beyondHead !== true
+  const plan =
+    isSettled && deps.guards.isCurrent(prepared.head, locked)
+      ? prepared
+      : await planOn(deps, request, {
+          head: await advanceHead(prepared.head, locked, repositories.versions),
+          reading: repositories,
+        })
   const written =
     plan.next === undefined
       ? unmoved(plan.head)

@@ -69,6 +69,7 @@ export function createSystemsService({ reads, transact, begins, writes, newId }:
         message: body.message,
         expected: {
           ifMatch,
+          beyondHead: true,
           current: async (_, reading) => tagged(await found(reading, system.id)),
         },
         decide: ({ index }) => decidePatch(index, body, { authority, writeMode }),

@@ -71,6 +71,20 @@ describe('patchSystem', () => {
     }
   })
 
+  it.each([{ name: 'Ferries' }, { writeMode: 'review' }, { level: 'AAA' }])(
+    'answers one of two edits at once that were meant for the same system: %j',
+    async (body) => {
+      const { etag } = await read()
+      const rename = { name: 'Larkhaven' }
+      const answers = await Promise.all(
+        [body, rename, rename].map((edit) =>
+          system.maintainer.patch(system.url).set('If-Match', etag).send(edit),
+        ),
+      )
+      expect(answers.map(({ status }) => status).toSorted()).toEqual([200, 412, 412])
+    },
+  )
+
   it('refuses an edit without, and with a stale If-Match', async () => {
     await system.maintainer.patch(system.url).send({ name: 'X' }).expect(428)
     const { etag } = await read()
