@@ -20,6 +20,7 @@ export function readJsonBody(bytes: Uint8Array, limitBytes: number): unknown {
   const text = decode(bytes)
   measure(text, Math.ceil((limitBytes / 2 ** 20) * MEMBERS_PER_MEBIBYTE))
   const value = parse(text)
+  if (HALF_CHARACTER.test(text)) refuseHalfCharacters(value)
   if (PROTOTYPE_NAME.test(text)) refusePrototypeNames(value)
   return value
 }
@@ -65,20 +66,42 @@ function measure(text: string, mostMembers: number): void {
   }
 }
 
+/** The bytes were UTF-8, so only an escape can bring in half of a surrogate pair. */
+const HALF_CHARACTER = /\\u[dD][89a-fA-F]/
+
+/** What is no Unicode text can be neither stored nor sent back. @see https://www.rfc-editor.org/rfc/rfc8259#section-8.2 */
+function refuseHalfCharacters(value: unknown): void {
+  const detail = 'Half of a surrogate pair is no character'
+  const faults = faultsWithin(value, (node, name) =>
+    [node, name].some((text) => typeof text === 'string' && !isWellFormed(text)),
+  ).map((pointer) => ({ pointer, detail }))
+  if (faults.length > 0) throw new AppError('request-unreadable', { faults })
+}
+
+const isWellFormed = (text: string): boolean => !/\p{Surrogate}/u.test(text)
+
 /** Also with its underscores escaped. */
 const PROTOTYPE_NAME = /"(?:_|\\u005[fF]){2}proto/
 
 /** A validator drops this name without a word, so it is refused aloud. */
 function refusePrototypeNames(value: unknown): void {
-  const faults: { pointer: string; detail: string }[] = []
-  const walk = (node: unknown, path: readonly PropertyKey[]): void => {
-    if (typeof node !== 'object' || node === null) return
-    for (const [name, member] of Object.entries(node)) {
-      if (name === '__proto__') {
-        faults.push({ pointer: pointerOf([...path, name]), detail: 'This name cannot be used' })
-      } else walk(member, [...path, name])
+  const detail = 'This name cannot be used'
+  const pointers = faultsWithin(value, (_, name) => name === '__proto__')
+  if (pointers.length > 0) throw invalidRequest(pointers.map((pointer) => ({ pointer, detail })))
+}
+
+/** Answers the pointers of the outermost members that are at fault. */
+function faultsWithin(
+  value: unknown,
+  isFault: (node: unknown, name: string | undefined) => boolean,
+): string[] {
+  const pointers: string[] = []
+  const walk = (node: unknown, path: readonly string[]): void => {
+    if (isFault(node, path.at(-1))) pointers.push(pointerOf(path))
+    else if (typeof node === 'object' && node !== null) {
+      for (const [name, member] of Object.entries(node)) walk(member, [...path, name])
     }
   }
   walk(value, [])
-  if (faults.length > 0) throw invalidRequest(faults)
+  return pointers
 }

@@ -30,6 +30,29 @@ describe('unreadable', () => {
     expect(code(answer)).toBe('request-unreadable')
   })
 
+  it.each([
+    ['a name', { name: 'half \ud800', value: 'red' }, '/name'],
+    ['a text', { name: 'a', value: 'red', description: '\udfff other half' }, '/description'],
+    [
+      'a text within',
+      { name: 'a', value: 'red', deprecated: { reason: '\ud83d' } },
+      '/deprecated/reason',
+    ],
+  ])('refuses half of a character in %s with 400, and says where', async (_, body, pointer) => {
+    // JSON.stringify escapes a lone surrogate, so the bytes are UTF-8 and the text is none (RFC 8259, 8.2).
+    const answer = await post(JSON.stringify(body)).expect(400)
+    expect(code(answer)).toBe('request-unreadable')
+    expect(answer.body.errors).toMatchObject([{ pointer }])
+  })
+
+  it('refuses half of a character in the name of a member', async () => {
+    await post('{"\\uD83D": 1}').expect(400)
+  })
+
+  it('reads a character that is escaped in two halves', async () => {
+    await post('{"name": "a.\\ud83c\\udfa8", "value": "red"}').expect(201)
+  })
+
   it('reads a nesting of 32, and brackets in strings are none', async () => {
     await post(nested(32)).expect(422)
     await post(JSON.stringify({ name: '['.repeat(200), value: '"}}' })).expect(422)
