@@ -74,32 +74,51 @@ export function createExpressRouter({ routes, context }: ApiRouter): IRouter {
   const ordered = [...routes].sort((a, b) => (breadthOf(a) < breadthOf(b) ? -1 : 1))
   for (const route of ordered) {
     const method = route.contract.method.toLowerCase() as 'get'
-    router[method](expressPathOf(route.contract.path), runRoute(route, context))
+    const siblings = ordered.filter((other) => shapeOf(other) === shapeOf(route))
+    router[method](expressPathOf(route.contract.path), runRoute({ route, siblings }, context))
   }
-  for (const path of new Set(ordered.map((route) => expressPathOf(route.contract.path)))) {
-    router.all(path, refuseMethod(ordered, path))
+  for (const shape of new Set(ordered.map(shapeOf))) {
+    const siblings = ordered.filter((route) => shapeOf(route) === shape)
+    router.all(expressPathOf(siblings[0]?.contract.path ?? ''), refuseMethod(siblings))
   }
   return router
 }
 
-const refuseMethod = (routes: readonly Route[], path: string): RequestHandler => {
-  const methods = routes
-    .filter(({ contract }) => expressPathOf(contract.path) === path)
-    .flatMap(({ contract }) => (contract.method === 'GET' ? ['GET', 'HEAD'] : [contract.method]))
-  return (request, response, next) => {
-    if (methods.includes(request.method)) next()
-    else {
-      response.set('Allow', methods.join(', '))
-      next(new AppError('method-not-allowed', { detail: `It takes ${methods.join(', ')}` }))
-    }
+/** Templates of one shape are met by the same addresses. */
+const shapeOf = ({ contract }: Route): string => expressPathOf(contract.path).replace(/:\w+/g, ':')
+
+const isOfFiles = ({ contract }: Route): boolean => FILE_SEGMENT.test(contract.path)
+
+/** Where one of the siblings takes files, a last segment with a dot is a file's, and no other is. */
+function takes(route: Route, siblings: readonly Route[], request: Request): boolean {
+  if (!siblings.some(isOfFiles)) return true
+  const last = Object.values(request.params as Record<string, string>).at(-1)
+  return isOfFiles(route) === last?.includes('.')
+}
+
+const methodsOf = ({ contract: { method } }: Route): readonly string[] =>
+  method === 'GET' ? ['GET', 'HEAD'] : [method]
+
+const refuseMethod =
+  (siblings: readonly Route[]): RequestHandler =>
+  (request, response, next) => {
+    const methods = siblings.filter((route) => takes(route, siblings, request)).flatMap(methodsOf)
+    if (methods.includes(request.method)) return next()
+    response.set('Allow', methods.join(', '))
+    next(new AppError('method-not-allowed', { detail: `It takes ${methods.join(', ')}` }))
   }
+
+interface Placed {
+  readonly route: Route
+  readonly siblings: readonly Route[]
 }
 
 const runRoute =
-  ({ contract, handler }: Route, context: RouteContext): RequestHandler =>
+  ({ route, siblings }: Placed, context: RouteContext): RequestHandler =>
   async (request, response, next) => {
+    if (!takes(route, siblings, request)) return next()
+    const { contract, handler } = route
     const params = pathParamsOf(contract, request)
-    if (params === undefined) return next()
     try {
       const exchange = await readExchange(contract, context, { request, response, params })
       const answer = await handler(exchange)
@@ -110,14 +129,12 @@ const runRoute =
     }
   }
 
-/** Nothing where the last segment has no dot and the template wants one: another route's request. */
-function pathParamsOf(contract: Contract, request: Request): Record<string, string> | undefined {
+function pathParamsOf(contract: Contract, request: Request): Record<string, string> {
   const given = request.params as Record<string, string>
   const names = FILE_SEGMENT.exec(contract.path)
   if (names === null) return given
   const { file = '', ...others } = given
   const dot = file.indexOf('.')
-  if (dot < 0) return undefined
   return {
     ...others,
     [String(names[1])]: file.slice(0, dot),

@@ -69,6 +69,21 @@ describe('method', () => {
     expect(body.type).toBe('/problems/method-not-allowed')
   })
 
+  it.each([
+    ['post', 'themes/light', 'DELETE, GET, HEAD, PATCH, PUT'],
+    ['put', 'themes/light.css', 'GET, HEAD'],
+    ['delete', 'themes/light%2Ejson', 'GET, HEAD'],
+    ['post', 'tokens/a.b', 'DELETE, GET, HEAD, PATCH'],
+  ] as const)(
+    'lists for %s %s what a theme, its file and a token take',
+    async (method, path, allow) => {
+      const answer = await test.people.maintainer[method](`/v1/systems/larkhaven/${path}`).expect(
+        405,
+      )
+      expect(answer.headers.allow?.split(', ').sort().join(', ')).toBe(allow)
+    },
+  )
+
   it('answers HEAD as GET, without the body', async () => {
     const { headers: full } = await get('/v1/systems/larkhaven/members').expect(200)
     const { headers, text } = await test.people.maintainer
