@@ -25,11 +25,12 @@ interface Property {
  * Writes a theme as CSS custom properties: hex, eight digits where translucent, and under
  * `@media (color-gamut: p3)` the already mapped `color(display-p3 …)` of each colour that P3 shows otherwise.
  * Nothing is left for the browser to map.
+ * @param shipsP3 Whether Display P3 values ship; false leaves hex alone.
  * @returns The text, in token order; or every collision, since two names can give one property.
  * @see https://www.w3.org/TR/css-variables-1/
  * @see https://www.w3.org/TR/mediaqueries-4/#color-gamut
  */
-export function themeCss(tokens: readonly ThemeToken[]): ThemeCss {
+export function themeCss(tokens: readonly ThemeToken[], shipsP3: boolean): ThemeCss {
   const properties = tokens.flatMap((token) =>
     token.states.map(({ state, rendered }): Property => {
       const isRest = state === 'rest'
@@ -42,7 +43,7 @@ export function themeCss(tokens: readonly ThemeToken[]): ThemeCss {
   )
   const collisions = collisionsIn(properties)
   if (collisions.length > 0) return { ok: false, collisions }
-  const wide = properties.filter(({ rendered }) => differsInP3(rendered))
+  const wide = shipsP3 ? properties.filter(({ rendered }) => differsInP3(rendered)) : []
   const base = `:root {\n${properties.map((each) => `  ${declared(each, hexOf)}\n`).join('')}}\n`
   if (wide.length === 0) return { ok: true, css: base }
   const p3 = wide.map((each) => `    ${declared(each, p3Of)}\n`).join('')

@@ -26,7 +26,7 @@ export function presentThemeFile(
 ): PresentedFile {
   const tokens = system.model.tokens.map((token) => themeToken(system, theme, token))
   if (format === 'css') {
-    const written = themeCss(tokens)
+    const written = themeCss(tokens, system.model.settings.p3)
     return written.ok
       ? { ok: true, file: { text: written.css, media: 'text/css; charset=utf-8' } }
       : { ok: false, details: written.collisions.map(({ detail }) => detail) }

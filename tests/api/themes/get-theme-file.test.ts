@@ -7,6 +7,7 @@ let system: SampleSystem
 beforeAll(async () => {
   test = await createTestApp()
   system = await createSampleSystem(test)
+  await system.patchSettings({ p3: true })
   await system.addToken('action.fill', 'oklch(0.7 0.4 150)', { states: ['hover'] })
   await system.addToken('veil', 'rgb(0 0 0 / 0.5)', { description: 'Over a picture' })
 })
@@ -37,6 +38,15 @@ describe('getThemeFile', () => {
       $description: 'Over a picture',
       $value: { colorSpace: 'srgb', components: [0, 0, 0], alpha: 128 / 255 },
     })
+  })
+
+  it('leaves P3 out where the system does not ship it, since it is not measured', async () => {
+    await system.patchSettings({ p3: false })
+    const { text } = await get('light.css').expect(200)
+    expect(text).toContain('--action-fill: #00c248;')
+    expect(text).not.toContain('p3')
+    await system.patchSettings({ p3: true })
+    expect((await get('light.css').expect(200)).text).toContain('color(display-p3')
   })
 
   it('answers 304 until a colour of the theme moves', async () => {

@@ -17,7 +17,7 @@ const token = (name: string, states: Record<string, string>, rest = {}): ThemeTo
   ...rest,
 })
 const cssOf = (tokens: readonly ThemeToken[]) => {
-  const result = themeCss(tokens)
+  const result = themeCss(tokens, true)
   if (!result.ok) throw new Error(JSON.stringify(result.collisions))
   return result.css
 }
@@ -89,12 +89,15 @@ describe('themeCss', () => {
   })
 
   it('refuses names that become one property, naming both', () => {
-    const collide = themeCss([
-      token('a.b', { rest: '#fff' }),
-      token('a-b', { rest: '#000' }),
-      token('fill', { rest: '#fff', hover: '#eee' }),
-      token('fill.hover', { rest: '#000' }),
-    ])
+    const collide = themeCss(
+      [
+        token('a.b', { rest: '#fff' }),
+        token('a-b', { rest: '#000' }),
+        token('fill', { rest: '#fff', hover: '#eee' }),
+        token('fill.hover', { rest: '#000' }),
+      ],
+      true,
+    )
     expect(collide).toEqual({
       ok: false,
       collisions: [
