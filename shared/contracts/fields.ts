@@ -135,14 +135,15 @@ export const stateValuesInputSchema = perState(valueInputSchema).meta({ id: 'Sta
 export const themeValuesSchema = z.record(slugSchema, stateValuesSchema)
 export const themeValuesInputSchema = z.record(slugSchema, stateValuesInputSchema)
 
+const countSchema = (most: number) => z.coerce.number().int().min(1).max(most)
+
 export const limitSchema = (most: number, fallback: number) =>
-  z.coerce
-    .number()
-    .int()
-    .min(1)
-    .max(most)
+  countSchema(most)
     .default(fallback)
     .meta({ type: 'integer', minimum: 1, maximum: most, default: fallback })
+/** For a list of which one view answers everything at once: the operation says what absence means. */
+export const openLimitSchema = (most: number, description: string) =>
+  countSchema(most).optional().meta({ type: 'integer', minimum: 1, maximum: most, description })
 export const cursorSchema = z
   .string()
   .max(512)

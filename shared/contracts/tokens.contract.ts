@@ -5,8 +5,8 @@ import {
   dtcgColorSchema,
   etagSchema,
   idSchema,
-  limitSchema,
   messageSchema,
+  openLimitSchema,
   slugSchema,
   systemParams,
   themeValuesInputSchema,
@@ -208,7 +208,7 @@ export const listTokens = defineContract({
     group: z.string().max(255).optional().meta({ description: 'First name segment' }),
     mark: z.enum(['breach', 'breach-on-it', 'waived', 'exempt', 'none']).optional(),
     sort: z.enum(['ledger', 'name', 'lowest']).default('ledger'),
-    limit: limitSchema(500, 100),
+    limit: openLimitSchema(500, 'Absent: 100, and with view=ledger all'),
     cursor: cursorSchema,
   }),
   success: {

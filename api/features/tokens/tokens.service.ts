@@ -33,6 +33,7 @@ export interface NamedEdit {
 }
 
 type ListQuery = ParsedOf<typeof listTokens>['query']
+const PAGE = 100
 
 const placeSchema = z.strictObject({
   id: z.string(),
@@ -55,8 +56,9 @@ export function createTokensService({ heads, writes, newId }: TokensDeps) {
       const entries = selectEntries(reading.entries(), query, query.sort)
       const place = decodeCursor(placeSchema, query.cursor)
       const start = place ? startAfter(entries, place, query.sort) : 0
-      const shown = entries.slice(start, start + query.limit)
-      const last = entries.length > start + query.limit ? shown.at(-1) : undefined
+      const limit = query.limit ?? (query.view === 'ledger' ? entries.length : PAGE)
+      const shown = entries.slice(start, start + limit)
+      const last = entries.length > start + limit ? shown.at(-1) : undefined
       const next = last && encodeCursor(placeOf(last))
       if (query.view === 'ledger') {
         return { body: { items: shown.map(({ id }) => reading.ledger().strip(id)) }, next }

@@ -84,6 +84,22 @@ describe('listTokens', () => {
     })
   })
 
+  it('answers a strip of more tokens than a page at once, and a page of it when asked', async () => {
+    await test.createSystem('long-strip')
+    const url = '/v1/systems/long-strip/tokens'
+    for (let at = 0; at < 101; at += 1) {
+      await test.people.maintainer
+        .post(url)
+        .send({ name: `t.${at}`, value: '#fff' })
+        .expect(201)
+    }
+    const whole = await test.people.engineer.get(`${url}?view=ledger`).expect(200)
+    expect([whole.body.items.length, whole.headers.link]).toEqual([101, undefined])
+    const page = await test.people.engineer.get(`${url}?view=ledger&limit=7`).expect(200)
+    expect([page.body.items.length, page.headers.link]).toEqual([7, expect.any(String)])
+    expect((await test.people.engineer.get(url).expect(200)).body.items).toHaveLength(100)
+  })
+
   it.each([
     ['?named=TEXT', ['text.muted', 'text.body']],
     ['?group=button', ['button.fill', 'button.label']],
