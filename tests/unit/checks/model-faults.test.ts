@@ -86,6 +86,18 @@ describe('faults', () => {
     ])
   })
 
+  it('refuses ink at 4.478 on its ground and takes it at 4.542', () => {
+    // #777777 and #767676 on white (common practice, no source).
+    const on = (ink: string) => {
+      const base = system({ themes: [theme('light')] })
+      return { ...base, tokens: [token('ground', '#ffffff'), token('ink', ink)] }
+    }
+    expect(faultsOf(on('#777777')).map(({ code, detail }) => [code, detail])).toEqual([
+      ['theme-span', 'Ink on the ground of theme light is 4.47:1, less than 4.5:1'],
+    ])
+    expect(codes(on('#767676'))).toEqual([])
+  })
+
   it('refuses theme parents that lead back, and a base with a parent', () => {
     const themes = [
       theme('light'),
