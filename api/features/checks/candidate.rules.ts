@@ -115,17 +115,36 @@ function lackedByPairs(head: SystemIndex, removed: ReadonlySet<string>): Fault[]
   })
 }
 
-/** Names equal after NFC are one name to a reader. */
+/** A new name must not be an old one composed differently, nor make a name a group and a token at once. */
 function clashingNames(head: SystemIndex, tokens: readonly CandidateToken[]): Fault[] {
   const fresh = tokens.filter(({ name }) => !head.tokensByName.has(name))
   if (fresh.length === 0) return []
-  const standing = new Set(head.model.tokens.map(({ name }) => name.normalize('NFC')))
-  return fresh
-    .filter(({ name }) => standing.has(name.normalize('NFC')))
-    .map(({ name, pointer }) => ({
-      pointer,
-      detail: `Another token has the name ${name}, composed differently`,
-    }))
+  const standing = new Map(head.model.tokens.map(({ name }) => [name.normalize('NFC'), name]))
+  const groups = new Map(
+    [...standing].flatMap(([normal, name]) => groupsOf(normal).map((group) => [group, name])),
+  )
+  return fresh.flatMap(({ name, pointer }) => {
+    const normal = name.normalize('NFC')
+    const within = groupsOf(normal).find((group) => standing.has(group))
+    const member = groups.get(normal)
+    return [
+      ...(standing.has(normal) ? [`Another token has the name ${name}, composed differently`] : []),
+      ...(within === undefined ? [] : [`${standing.get(within)} is a token, so it holds none`]),
+      ...(member === undefined ? [] : [`${name} is a group: ${member} is in it`]),
+    ].map((detail) => ({ pointer, detail }))
+  })
+}
+
+/** The groups that a name lies in, outermost first. */
+const groupsOf = (name: string): string[] => {
+  const segments = name.split('.')
+  return segments.slice(1).map((_, at) => segments.slice(0, at + 1).join('.'))
+}
+
+/** The member of a pair that a fault of resolution lies in. */
+const MEMBERS: { readonly [code in ModelFault['code']]?: string } = {
+  'level-lower': '/level',
+  'minimum-lower': '/minimum',
 }
 
 function pointersOf(head: SystemIndex, { tokens, pairs }: Candidate) {
@@ -135,6 +154,9 @@ function pointersOf(head: SystemIndex, { tokens, pairs }: Candidate) {
   pairs.forEach((_, position) => {
     pointers.set(newPairId(position), `/pairs/${position}`)
   })
-  return ({ token, pair }: ModelFault) =>
-    pointers.get(pair ?? '') ?? pointers.get(token ?? '') ?? (tokens ? '/tokens' : undefined)
+  return ({ token, pair, code }: ModelFault) => {
+    const ofPair = pointers.get(pair ?? '')
+    if (ofPair !== undefined) return `${ofPair}${MEMBERS[code] ?? ''}`
+    return pointers.get(token ?? '') ?? (tokens ? '/tokens' : undefined)
+  }
 }

@@ -177,7 +177,7 @@ describe('createCheck refuses', () => {
       errors: [{ pointer: '/tokens', code: 'theme-span' }],
     })
     const lower = [{ foreground: 'ink', background: 'paper', use: 'text', minimum: 2 }]
-    expect(await pointersOf({ pairs: lower }, 'system-unresolvable')).toEqual(['/pairs/0'])
+    expect(await pointersOf({ pairs: lower }, 'system-unresolvable')).toEqual(['/pairs/0/minimum'])
     const text = JSON.stringify(answer.body)
     expect(text).not.toMatch(/tok_|thm_/)
   })

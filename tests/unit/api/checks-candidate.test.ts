@@ -222,6 +222,17 @@ describe('measureCandidate', () => {
     expect(clash.faults?.map(({ pointer }) => pointer)).toEqual([`/tokens/${parted}`])
   })
 
+  it('refuses what would make a name a group and a token at once', () => {
+    const deck = token('tok_deck', 'surface.deck', color('#ffffff'))
+    const on = headOf({ ...MODEL, tokens: [...MODEL.tokens, deck] })
+    const sent = { paper: { note: hex('000000') }, surface: hex('000000') }
+    expect(refusalOf({ tokens: sent }, on).faults).toEqual([
+      { pointer: '/tokens/paper/note', detail: 'paper is a token, so it holds none' },
+      { pointer: '/tokens/surface', detail: 'surface is a group: surface.deck is in it' },
+    ])
+    expect(measure({ tokens: { surface: { rail: hex('000000') } } }, on)).toBeDefined()
+  })
+
   it('refuses what the engine cannot resolve, pointing at the token or pair that does it', () => {
     const circle = refusalOf({ tokens: { soft: alias('link'), link: alias('soft') } })
     expect(circle.faults?.[0]?.pointer).toMatch(/^\/tokens\/(soft|link)/)
@@ -233,7 +244,7 @@ describe('measureCandidate', () => {
     const pairs = [{ foreground: 'ink', background: 'paper', use: 'text', minimum: 3 }]
     expect(refusalOf({ pairs })).toMatchObject({
       code: 'system-unresolvable',
-      faults: [{ pointer: '/pairs/0', code: 'minimum-lower' }],
+      faults: [{ pointer: '/pairs/0/minimum', code: 'minimum-lower' }],
     })
   })
 
