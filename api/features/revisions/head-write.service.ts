@@ -4,6 +4,7 @@ import type { GovernedEdits, GovernedSystem } from '#shared/checks/governed-mode
 import { ENGINE_STAMP } from '#shared/checks/engine.ts'
 import type { Decision, Refusal } from '#shared/contracts/governed-system.ts'
 import type { Fault } from '#shared/contracts/problems.ts'
+import { canonicalJson } from '#shared/formats/canonical-json.ts'
 import { actorOf, type SystemAccess } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
 import type { BreachesService } from '#api/features/breaches/breaches.service.ts'
@@ -176,6 +177,7 @@ async function writeRevision(
 ): Promise<Written> {
   const mode = await repositories.heads.writeModeOf(system.id)
   if (mode === 'review') throw new AppError('review-required')
+  await followEngine(breaches, { systemId: system.id, head: plan.head, locked, repositories })
   const revision = await repositories.heads.advance(system.id)
   await repositories.versions.write({ systemId: system.id, revision }, next.changes)
   const verdict = verdictIn(next.head.tally)
@@ -204,6 +206,31 @@ async function writeRevision(
   })
   const head: Head = { ...next.head, revision, epoch: locked.epoch }
   return { head, effect: effectOf({ before: plan.head, after: head, moved: next.moved }) }
+}
+
+interface Measured {
+  readonly systemId: string
+  readonly head: Head
+  readonly locked: LockedHead
+  readonly repositories: Writing
+}
+
+/** Where another engine measured the head, the log is first set against what this one measures. */
+async function followEngine(
+  breaches: HeadWriteDeps['breaches'],
+  { systemId, head, locked, repositories }: Measured,
+): Promise<void> {
+  const engine = await repositories.heads.engineOf(systemId, locked.revision)
+  if (canonicalJson(engine) === canonicalJson(ENGINE_STAMP)) return
+  await breaches.recordHead(repositories, {
+    systemId,
+    revision: locked.revision,
+    at: locked.at,
+    actor: null,
+    before: null,
+    after: head.evaluation,
+    cause: 'engine',
+  })
 }
 
 const editedModel = (head: Head, edits: GovernedEdits) =>

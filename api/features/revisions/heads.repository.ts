@@ -1,4 +1,5 @@
-import { eq, sql } from 'drizzle-orm'
+import { and, eq, sql } from 'drizzle-orm'
+import type { EngineStamp } from '#shared/checks/model.ts'
 import type { Executor } from '#api/platform/database.ts'
 import { revisions } from '#drizzle/schema/revisions.ts'
 import { systemHeads, systems } from '#drizzle/schema/systems.ts'
@@ -54,6 +55,16 @@ export function createHeadsRepository(db: Executor) {
 
     async addRevision(row: typeof revisions.$inferInsert): Promise<void> {
       await db.insert(revisions).values(row)
+    },
+
+    /** What a revision was measured with when it was made. */
+    async engineOf(systemId: string, number: number): Promise<EngineStamp | undefined> {
+      const { engineVersion: version, gamutMap, ruleSet } = revisions
+      const [row] = await db
+        .select({ version, gamutMap, ruleSet })
+        .from(revisions)
+        .where(and(eq(revisions.systemId, systemId), eq(revisions.number, number)))
+      return row
     },
 
     async writeModeOf(systemId: string): Promise<'direct' | 'review' | undefined> {

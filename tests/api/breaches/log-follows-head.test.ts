@@ -1,7 +1,9 @@
-import { eq } from 'drizzle-orm'
+import { and, eq } from 'drizzle-orm'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { createRepositories } from '#api/repositories.ts'
-import { systems } from '#drizzle/schema/systems.ts'
+import { breaches } from '#drizzle/schema/breaches.ts'
+import { revisions } from '#drizzle/schema/revisions.ts'
+import { systemHeads, systems } from '#drizzle/schema/systems.ts'
 import { recheck } from '#shared/checks/recheck.ts'
 import type { BreachWire } from '#shared/contracts/breaches.contract.ts'
 import { createTestApp, type TestApp } from '#tests/support/app.ts'
@@ -103,7 +105,51 @@ describe('the breach log', () => {
       { foreground: 'dim', status: 'open', number: 2 },
     ])
   })
+
+  it('is set against the head by the first write after another engine measured it', async () => {
+    await system.addToken('soft', '#aaaaaa')
+    await system.addToken('dim', '#777777')
+    await system.addPair({ foreground: 'soft', background: 'paper', use: 'text' })
+    await system.addPair({ foreground: 'dim', background: 'paper', use: 'text' })
+    await system.editToken('dim', { value: '#767676' })
+    await measuredElsewhere(await systemId())
+    await system.addToken('bystander', '#123456')
+    expect(await system.breaches(ALL)).toMatchObject([
+      { foreground: 'soft', status: 'open', lastSeenAt: null },
+      { foreground: 'dim', status: 'resolved', closingReason: 'engine-changed' },
+    ])
+    expect(await logged()).toEqual(await measured())
+    const settled = await system.breaches(ALL)
+    await system.addToken('another', '#123456')
+    expect(await system.breaches(ALL)).toEqual(settled)
+  })
 })
+
+/** The head as an engine left it to which soft passed and dim fell short. */
+async function measuredElsewhere(id: string): Promise<void> {
+  const { db } = test.service.platform.database
+  const last = (await test.services.heads.current(id)).revision
+  const at = and(eq(revisions.systemId, id), eq(revisions.number, last))
+  const [row] = await db.select().from(revisions).where(at)
+  if (row === undefined) throw new TypeError('No such revision')
+  await db.insert(revisions).values({ ...row, number: last + 1, engineVersion: '0.0.1' })
+  await db
+    .update(systemHeads)
+    .set({ revision: last + 1 })
+    .where(eq(systemHeads.systemId, id))
+  const entries = await db.select().from(breaches).where(eq(breaches.systemId, id))
+  for (const entry of entries) {
+    const isOpen = entry.names.foreground === 'dim'
+    await db
+      .update(breaches)
+      .set(
+        isOpen
+          ? { status: 'open', resolvedAt: null, lastSeenAt: null, closingReason: null }
+          : { status: 'resolved', resolvedAt: row.at, lastSeenAt: row.at, closingReason: 'fixed' },
+      )
+      .where(eq(breaches.id, entry.id))
+  }
+}
 
 type Seen = Pick<BreachWire, 'foreground' | 'theme' | 'state' | 'ratio' | 'required' | 'gating'>
 const sameOrder = (rows: readonly Seen[]) =>
