@@ -13,7 +13,7 @@ export type Place = 'body' | 'parameter'
  * @see https://www.rfc-editor.org/rfc/rfc6901
  */
 export function faultsOf(error: z.ZodError, input: unknown, place: Place = 'body'): Fault[] {
-  const spots = error.issues.flatMap((issue) => spotsOf(issue, input, []))
+  const spots = leadingIssues(error.issues).flatMap((issue) => spotsOf(issue, input, []))
   return spots.map(({ path, detail }) =>
     place === 'body'
       ? { pointer: pointerOf(path), detail }
@@ -24,6 +24,16 @@ export function faultsOf(error: z.ZodError, input: unknown, place: Place = 'body
 /** Answers the RFC 6901 pointer of a path. */
 export const pointerOf = (path: Path): string =>
   path.map((step) => `/${String(step).replaceAll('~', '~0').replaceAll('/', '~1')}`).join('')
+
+/** Of a value of the wrong type its length or form says nothing more. */
+function leadingIssues(issues: readonly Issue[]): Issue[] {
+  const mistyped = new Set(
+    issues.filter(({ code }) => code === 'invalid_type').map(({ path }) => pointerOf(path)),
+  )
+  return issues.filter(
+    ({ code, path }) => code === 'invalid_type' || !mistyped.has(pointerOf(path)),
+  )
+}
 
 interface Spot {
   readonly path: Path
@@ -99,10 +109,12 @@ const detailOf = (issue: Issue, value: unknown): string => {
   return issue.message.replace(/^Invalid (?:input|string): /, 'Not usable: ')
 }
 
+/** A value that was taken for a list of one stands for its element too. */
 function valueAt(input: unknown, path: Path): unknown {
   let value = input
   for (const step of path) {
-    if (typeof value !== 'object' || value === null || !Object.hasOwn(value, step)) return undefined
+    if (typeof value !== 'object' || value === null) return value
+    if (!Object.hasOwn(value, step)) return undefined
     value = (value as Record<PropertyKey, unknown>)[step]
   }
   return value

@@ -26,6 +26,12 @@ describe('query', () => {
     expect(body.errors.map((fault: { parameter: string }) => fault.parameter)).toEqual([parameter])
   })
 
+  it('says what a parameter may be that can be given once or more often', async () => {
+    const { body } = await get('/v1/systems/larkhaven/breaches?status=shut').expect(400)
+    const detail = 'Expected "open" or "waived" or "resolved"'
+    expect(body.errors).toEqual([{ parameter: 'status', detail }])
+  })
+
   it('refuses any parameter where none is known', async () => {
     const { body } = await get('/v1/me?verbose=1').expect(400)
     expect(body.errors).toEqual([{ parameter: 'verbose', detail: 'Unknown parameter' }])

@@ -138,6 +138,14 @@ describe('faults', () => {
     ])
   })
 
+  it('tells of a value of the wrong type nothing but that', async () => {
+    const { body } = await test.anonymous
+      .post('/v1/sign-in')
+      .send({ email: 'a@b.example', password: [] })
+      .expect(422)
+    expect(body.errors).toEqual([{ pointer: '/password', detail: 'Expected text' }])
+  })
+
   it('points at the whole body where that is of the wrong type', async () => {
     const { body } = await post('[]').expect(422)
     expect(body.errors).toEqual([{ pointer: '', detail: 'Expected an object' }])
