@@ -48,7 +48,9 @@ async function tabTo(page: Page, wanted: Locator): Promise<void> {
 
 /** Finds the token with `/`, walks to it with the arrows and opens it, all by keyboard. */
 async function openByKeyboard(page: Page, name: string): Promise<void> {
+  await page.getByRole('table', { name: 'Tokens' }).waitFor()
   await page.keyboard.press('/')
+  await page.locator('#find:focus').waitFor()
   await page.keyboard.type(name.split('.')[0] ?? '')
   await page.getByRole('status').filter({ hasText: ' of 122 tokens' }).waitFor()
   const rows = page.getByRole('table', { name: 'Tokens' }).locator('a[data-row]')
