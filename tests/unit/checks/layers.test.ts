@@ -215,6 +215,15 @@ describe('tight', () => {
     expect(onBoard(meeting - 2)).not.toHaveProperty('tight')
   })
 
+  it('leaves a P3 ratio that does not gate from making a verdict tight', () => {
+    const glass = token('glass', 'oklch(0.5 0.3 280 / 0.9)')
+    const settings = { p3: true, p3Gates: false }
+    const got = measured([glass], pair('glass', 'ground', { minimum: 6.35 }), { settings })
+    expect([truncated(got.ratios.srgb), truncated(got.ratios.p3!)]).toEqual([6.52, 6.25])
+    expect(got.outcome).toBe('pass')
+    expect(got).not.toHaveProperty('tight')
+  })
+
   it('answers two levels for two translucent layers', () => {
     // A second, all but invisible layer makes the foreground side move by two.
     const two = (a: number) =>

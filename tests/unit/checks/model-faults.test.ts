@@ -117,6 +117,13 @@ describe('faults', () => {
     expect(codes(model)).toEqual(['level-lower', 'level-lower', 'minimum-lower'])
   })
 
+  it('refuses a minimum below the level that the pair itself asks for', () => {
+    const asking = (minimum: number) =>
+      codes(system({ pairs: [pair('ink', 'ground', { level: 'AAA', minimum })] }))
+    expect(asking(6.9)).toEqual(['minimum-lower'])
+    expect(asking(7)).toEqual([])
+  })
+
   it('refuses every missing reference and lightness out of range at once', () => {
     const model = system({
       tokens: [

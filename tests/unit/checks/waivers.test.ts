@@ -91,4 +91,16 @@ describe('newOnly', () => {
     const passing = breachRatios(verdictOf(evaluate(at('#333'))))
     expect(findings(at('#888888'), { known: passing })[0]!.outcome).toBe('breach')
   })
+
+  it('answers known before pass, and waived before known, where findings share an identity', () => {
+    const large = pair('grey', 'ground', { id: 'large', use: 'large-text' })
+    const high = pair('grey', 'ground', { id: 'high', level: 'AAA' })
+    const plain = pair('grey', 'ground')
+    expect(findings(lightSystem([large, plain]), { known })[0]!.outcome).toBe('known')
+    const waiver = { id: 'w', foreground: 'grey', background: 'ground', kind: 'text' as const }
+    const waivers = [{ ...waiver, floorRatio: 1, required: 4.5, endsAt: '2030-01-01T00:00:00Z' }]
+    const options = { known, waivers }
+    expect(findings(lightSystem([high]), options)[0]!.outcome).toBe('known')
+    expect(findings(lightSystem([high, plain]), options)[0]!.outcome).toBe('waived')
+  })
 })
