@@ -90,7 +90,7 @@ const summaryExample = {
   engine: {
     version: '1.0.0',
     gamutMap: 'css-color-4-binary-search-local-minde',
-    ruleSet: 'wcag-2.2/1',
+    ruleSet: 'wcag-2.2',
   },
   against: { revision: 214 },
   at: '2026-11-24T09:12:00.000Z',
@@ -153,6 +153,7 @@ export const listChecks = defineContract({
   },
   problems: READ_PROBLEMS,
   access: 'checks:read',
+  conditional: true,
 })
 
 export const getCheck = defineContract({

@@ -81,7 +81,7 @@ export const engineSchema = z
     example: {
       version: '1.0.0',
       gamutMap: 'css-color-4-binary-search-local-minde',
-      ruleSet: 'wcag-2.2/1',
+      ruleSet: 'wcag-2.2',
     },
   })
 

@@ -60,6 +60,7 @@ export const listKeys = defineContract({
   },
   problems: READ_PROBLEMS,
   access: 'keys:own',
+  conditional: true,
 })
 
 export const createKey = defineContract({

@@ -85,7 +85,7 @@ const summaryExample = {
   engine: {
     version: '1.0.0',
     gamutMap: 'css-color-4-binary-search-local-minde',
-    ruleSet: 'wcag-2.2/1',
+    ruleSet: 'wcag-2.2',
   },
   digest: 'b5bb9d8014a0f9b1d61e21e796d78dccdf1352f23cd32812f4850b878ae4944c',
 } as const

@@ -76,4 +76,5 @@ export const getMe = defineContract({
   success: { status: 200, body: meSchema, example: meExample },
   problems: READ_PROBLEMS,
   access: 'known',
+  conditional: true,
 })
