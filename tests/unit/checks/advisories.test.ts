@@ -53,6 +53,13 @@ describe('state-invisible', () => {
     })
     expect(one('#777', step(0.005))).toEqual(['state-invisible t light hover'])
     expect(one('#777', step(0.05))).toEqual([])
+    // CIEDE2000 between these greys: 1.98 and 2.09.
+    const hover = (text: string) => ({
+      states: ['hover' as const],
+      values: { light: { hover: value(text) } },
+    })
+    expect(one('#707070', hover('#757575'))).toEqual(['state-invisible t light hover'])
+    expect(one('#505050', hover('#565656'))).toEqual([])
   })
 
   it('answers a disabled grey, which the default rule leaves as it is but for alpha on its own ground', () => {
@@ -65,6 +72,11 @@ describe('state-invisible', () => {
     expect(one('#777', { states: ['focus'] })).toEqual([])
     const same = { states: ['focus' as const], values: { light: { focus: value('#777') } } }
     expect(one('#777', same)).toEqual(['state-invisible t light focus'])
+  })
+
+  it('leaves an alias of a state whose rule changes nothing', () => {
+    const tokens = [token('t', '#777', { states: ['focus'] }), token('u', '{t}')]
+    expect(advisoriesOf(system({ themes: [theme('light')], tokens }))).toEqual([])
   })
 
   it('answers colours composited on the ground', () => {
