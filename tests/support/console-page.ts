@@ -58,7 +58,7 @@ export function watchedConsole(): ConsoleUnderTest {
     person = createPeople(service)
   })
   afterEach(async () => {
-    await Promise.all(contexts.splice(0).map((context) => context.close()))
+    await Promise.all(contexts.splice(0).map(closeQuietened))
     expect(complaints.splice(0)).toEqual([])
   })
   afterAll(async () => {
@@ -117,6 +117,13 @@ async function signIn(context: BrowserContext, account: Account): Promise<void> 
     data: { email: emailOf(account), password: demo.password },
   })
   expect(answer.status()).toBe(200)
+}
+
+/** Lets pages tell what they have still to tell: a report of the policy is a task of its own. */
+async function closeQuietened(context: BrowserContext): Promise<void> {
+  const turn = () => new Promise<void>((done) => setTimeout(done))
+  await Promise.all(context.pages().map((page) => page.evaluate(turn)))
+  await context.close()
 }
 
 /** Writes down whatever a page should never do. */
