@@ -9,9 +9,9 @@ import {
 } from '#shared/contracts/breaches.contract.ts'
 import type { FindingWire } from '#shared/contracts/findings.ts'
 import { listRevisions } from '#shared/contracts/revisions.contract.ts'
-import { emailOf, watchedConsole } from '#tests/support/console-page.ts'
+import { emailOf, NARROW, watchedConsole } from '#tests/support/console-page.ts'
 import { type MeasuredHead, measureHead, measureWith } from '#tests/support/measured-head.ts'
-import { type Answers, claimedFigures } from '#tests/support/ratio-claims.ts'
+import { type Answers, claimedFigures, findingsOn } from '#tests/support/ratio-claims.ts'
 import { type RatioPlace, readRatios } from '#tests/support/screen-ratios.ts'
 
 const TOKEN = 'sea.7'
@@ -197,5 +197,35 @@ describe('a maintainer at the console', () => {
       events: await eventsOf(page),
     })
     expect(linkBreach(mended)).toMatchObject({ status: 'resolved', closingReason: 'fixed' })
+  })
+  it.each(['light', 'dark', 'kiosk'])(
+    'answers the ratios of %s alone, as the API has them',
+    async (theme) => {
+      const page = await site.open(`/systems/larkhaven/tokens?theme=${theme}`, { as: 'engineer' })
+      await page.getByRole('table', { name: 'Tokens' }).waitFor()
+      const head = await measureHead(await api())
+      await expectRatios(page, ['tokens'], { head, theme })
+      const { ratios } = await readRatios(page)
+      const measured = [...head.tokens.keys()].filter((token) =>
+        findingsOn(head.findings, token, theme).some(({ outcome }) => outcome !== 'exempt'),
+      )
+      expect(ratios.map(({ label }) => label)).toEqual(measured)
+    },
+  )
+
+  it('answers the same ratios on a screen of 320 px', async () => {
+    const page = await site.open('/systems/larkhaven/tokens', { as: 'engineer', size: NARROW })
+    await page.getByRole('link', { name: 'sea.7' }).last().waitFor()
+    const head = await measureHead(await api())
+    await expectRatios(page, ['tokens'], { head })
+    const measured = [...head.tokens.values()].filter(({ standing }) => standing.lowest !== null)
+    expect((await readRatios(page)).ratios).toHaveLength(measured.length)
+    await page.goto('/systems/larkhaven/breaches')
+    await page
+      .getByRole('link', { name: /^Breach / })
+      .first()
+      .press('Enter')
+    await page.getByRole('heading', { name: 'History' }).waitFor()
+    await expectRatios(page, ['breaches', 'history'], { head, events: await eventsOf(page) })
   })
 })

@@ -6,6 +6,8 @@ import type { ScreenRatio } from './screen-ratios.ts'
 /** What the API says, to hold a page against. */
 export interface Answers {
   readonly head: MeasuredHead
+  /** The theme that the token table is measured in; all of them where absent. */
+  readonly theme?: string
   /** The opened token's name. */
   readonly token?: string
   /** Findings with what is tried laid over the head. */
@@ -77,21 +79,27 @@ function one(shown: ScreenRatio, found: readonly FindingWire[]): FindingWire {
   return first
 }
 
-function ofToken(shown: ScreenRatio, { head }: Answers): Figures {
-  const lowest = head.tokens.get(shown.label)?.standing.lowest
+function ofToken(shown: ScreenRatio, { head, theme }: Answers): Figures {
+  const lowest =
+    theme === undefined
+      ? head.tokens.get(shown.label)?.standing.lowest
+      : lowestOf(findingsOn(head.findings, shown.label, theme))
   if (lowest == null) fail(shown, 'the API measures nothing of this token')
-  const where = `${lowest.theme}, ${stateWords(lowest.state)}`
-  if (!shown.parts.join(' ').includes(where)) fail(shown, `the row does not say ${where}`)
-  const { foreground, background, theme, state, required } = lowest
-  const found = head.findings.filter(
+  const claimed = head.findings.filter((finding) => {
+    const isItsOwn = finding.foreground === shown.label || finding.background === shown.label
+    const where = `${finding.theme}, ${stateWords(finding.state)}`
+    const isSame = finding.ratio === lowest.ratio && finding.required === lowest.required
+    return isItsOwn && isSame && shown.parts.some((part) => part.endsWith(where))
+  })
+  return figuresOf(one(shown, claimed))
+}
+
+/** Findings of one theme with the token on either side. */
+export function findingsOn(findings: readonly FindingWire[], token: string, theme: string) {
+  return findings.filter(
     (finding) =>
-      finding.foreground === foreground &&
-      finding.background === background &&
-      finding.theme === theme &&
-      finding.state === state &&
-      finding.required === required,
+      finding.theme === theme && (finding.foreground === token || finding.background === token),
   )
-  return figuresOf(one(shown, found))
 }
 
 interface Relation {
