@@ -35,9 +35,9 @@ export function sameOklch(first: Oklch, second: Oklch): boolean {
   )
 }
 
-/** A factor on a component; what is missing stays missing. */
+/** A factor on a component; what is missing stays missing, and what a double cannot hold stops at its largest. */
 export function scaled(component: number | null, factor: number): number | null {
-  return component === null ? null : component * factor
+  return component === null ? null : Math.min(Number.MAX_VALUE, component * factor)
 }
 
 /** A hue turned by degrees, 0 ≤ h < 360; a missing hue stays missing. */

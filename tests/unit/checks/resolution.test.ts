@@ -186,3 +186,13 @@ describe('derived tokens', () => {
     expect(lightnessAt(system({ tokens: [a, t] }), 't dark')).toBeCloseTo(0.8, 12)
   })
 })
+
+it('leaves a multiplied chroma finite, so that it can be stored and sent', () => {
+  const tokens = [
+    token('t', 'oklch(0.5 1e308 40)'),
+    { ...token('far', '#fff'), value: derived('t', { chroma: 10 }) },
+  ]
+  const { c } = read(system({ themes: [theme('light')], tokens }), 'far').oklch
+  expect(c).toBe(Number.MAX_VALUE)
+  expect(JSON.stringify(c)).not.toBe('null')
+})
