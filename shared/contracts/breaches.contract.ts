@@ -10,7 +10,7 @@ import {
   slugSchema,
   systemParams,
 } from './fields.ts'
-import { hexSchema, pairStateSchema, ratioSchema } from './findings.ts'
+import { basisSchema, hexSchema, pairStateSchema, ratioSchema } from './findings.ts'
 import { READ_PROBLEMS } from './problems.ts'
 import { defineContract } from './route.ts'
 
@@ -41,7 +41,7 @@ export const breachSchema = z
     kind: contrastKindSchema,
     theme: slugSchema,
     state: pairStateSchema,
-    basis: z.enum(['srgb', 'p3']),
+    basis: basisSchema,
     status: breachStatusSchema,
     gating: z.boolean(),
     ratio: ratioSchema.meta({ description: 'As measured last' }),

@@ -22,6 +22,12 @@ export const hexSchema = z
     example: '#2283c1',
   })
 
+export const basisSchema = z.enum(['srgb', 'p3']).meta({
+  id: 'Basis',
+  description:
+    "srgb: the WCAG measure. p3: WCAG's ratio on P3 luminance, outside its definition, where it is the lower one",
+})
+
 export const countsSchema = z
   .strictObject({
     pass: z.int(),
@@ -41,7 +47,7 @@ export const findingSchema = z
     use: useSchema,
     ratio: ratioSchema,
     required: z.number().min(0).max(21),
-    basis: z.enum(['srgb', 'p3']),
+    basis: basisSchema,
     outcome: outcomeSchema,
     reason: z.string().optional(),
     tight: z
