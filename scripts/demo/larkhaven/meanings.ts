@@ -47,7 +47,7 @@ const actions = [
   token(
     'action.board.fill',
     'oklch(0.545 0.128 243)',
-    'Background of the board button on all three products; border.chosen and seat.yours follow it',
+    'Background of the board button on all three products',
     {
       states: [...ALL_STATES],
       rules: { themes: { kiosk: { kind: 'shift', lightness: -0.15, chroma: 1.05 } } },
