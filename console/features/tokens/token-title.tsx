@@ -47,14 +47,13 @@ export function TokenTitle({
 
 const MOST_NAMED = 3
 
-/** What it is for, and what follows it, where the description does not name that itself. */
+/** What it is for, in its own words, and what follows it just now. */
 function aboutToken({ description }: LedgerTokenWire, followers: readonly string[]): string {
-  const unnamed = followers.filter((name) => description?.includes(name) !== true)
   const named =
-    unnamed.length > MOST_NAMED
-      ? [...unnamed.slice(0, MOST_NAMED), `${unnamed.length - MOST_NAMED} more`]
-      : unnamed
-  const follow = `${joinWords(named)} ${unnamed.length === 1 ? 'follows' : 'follow'} it`
+    followers.length > MOST_NAMED
+      ? [...followers.slice(0, MOST_NAMED), `${followers.length - MOST_NAMED} more`]
+      : followers
+  const follow = `${joinWords(named)} ${followers.length === 1 ? 'follows' : 'follow'} it`
   const parts = [description?.replace(/\.$/, ''), named.length > 0 ? follow : undefined]
   const sentence = parts.filter((part) => part !== undefined).join('; ')
   return sentence === '' ? '' : `${sentence}.`
