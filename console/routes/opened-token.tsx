@@ -1,7 +1,9 @@
 import { useSuspenseQuery } from '@tanstack/react-query'
 import { type ReactNode, type Ref, useMemo, useState } from 'react'
+import { useLocation, useNavigate } from 'react-router-dom'
 import { themeQueries } from '#console/features/themes/themes.queries.ts'
 import { ConsequenceList, type ModelNames } from '#console/features/tokens/consequence-list.tsx'
+import { keptTrial } from '#console/features/tokens/kept-trial.ts'
 import { presentColor, presentText } from '#console/features/tokens/present-value.ts'
 import { ShipsTable } from '#console/features/tokens/ships-table.tsx'
 import { TokenPairs } from '#console/features/tokens/token-pairs.tsx'
@@ -33,7 +35,8 @@ export function OpenedToken({
   const { data: tokens } = useSuspenseQuery(tokenQueries.ledger(system))
   const { data: themes } = useSuspenseQuery(themeQueries.all(system))
   const base = themes[0]?.key ?? ''
-  const [draft, setDraft] = useState<string>()
+  const { kept, drop } = useKept(token.id)
+  const [draft, setDraft] = useState(kept?.text)
   const present = presentText(token, base)
   const text = draft ?? present
   const isTried = text.trim() !== present
@@ -73,8 +76,12 @@ export function OpenedToken({
         present={presentColor(token, base)}
         base={base}
         isTried={isTried}
+        keptMessage={kept?.message ?? ''}
         onText={setDraft}
-        onPutBack={() => setDraft(undefined)}
+        onPutBack={() => {
+          setDraft(undefined)
+          drop()
+        }}
       />
       {children}
       {known !== undefined && (
@@ -109,6 +116,19 @@ export function OpenedToken({
       </section>
     </>
   )
+}
+
+/** What was kept of a trial through signing in; dropped, it does not come back. */
+function useKept(token: string) {
+  const { state, pathname, search } = useLocation()
+  const navigate = useNavigate()
+  const kept = keptTrial(state, token)
+  const drop = () => {
+    if (kept !== undefined) {
+      void navigate(pathname + search, { replace: true, state: null, preventScrollReset: true })
+    }
+  }
+  return { kept, drop }
 }
 
 function dependInWords(count: number): string {

@@ -1,7 +1,11 @@
-import { useMutation, useSuspenseQuery } from '@tanstack/react-query'
+import { useMutation, useQuery, useSuspenseQuery } from '@tanstack/react-query'
 import { type FormEvent, useState } from 'react'
+import { Link, useLocation } from 'react-router-dom'
+import { paths } from '#console/app/paths.ts'
+import { memberQueries } from '#console/features/members/members.queries.ts'
 import { mayDo } from '#console/features/session/session.queries.ts'
 import { systemQueries } from '#console/features/systems/systems.queries.ts'
+import type { KeptTrial } from '#console/features/tokens/kept-trial.ts'
 import { valueInWords } from '#console/features/tokens/present-value.ts'
 import { SavedNote, SaveLine } from '#console/features/tokens/save-line.tsx'
 import { saveFaults, SaveRefusal } from '#console/features/tokens/save-refusal.tsx'
@@ -21,6 +25,8 @@ interface SaveFormProps {
   readonly present: PresentColor
   readonly base: string
   readonly isTried: boolean
+  /** The message of a trial that was kept. */
+  readonly keptMessage: string
   readonly onText: (text: string) => void
   readonly onPutBack: () => void
 }
@@ -28,7 +34,7 @@ interface SaveFormProps {
 /** The fields of the trial, and the decision to save it. */
 export function SaveForm(props: SaveFormProps) {
   const { system, token, text, reading, present, base, isTried, onText, onPutBack } = props
-  const [message, setMessage] = useState('')
+  const [message, setMessage] = useState(props.keptMessage)
   const obstacle = useObstacle(props)
   const saving = useMutation({
     mutationFn: saveToken,
@@ -81,19 +87,39 @@ export function SaveForm(props: SaveFormProps) {
         }}
       />
       {saving.isError && (
-        <SaveRefusal error={saving.error} now={valueInWords(token, base)} onAgain={save} />
+        <SaveRefusal
+          error={saving.error}
+          now={valueInWords(token, base)}
+          signIn={<SignInAgain kept={{ token: token.id, text, message }} />}
+          onAgain={save}
+        />
       )}
       {saving.isSuccess && <SavedNote saved={saving.data} />}
     </form>
   )
 }
 
-/** Why nothing can be saved just now, in one sentence. */
+/** To signing in, and back to this page with what was typed. */
+function SignInAgain({ kept }: { kept: KeptTrial }) {
+  const { pathname, search } = useLocation()
+  return (
+    <Link to={paths.signIn(pathname + search)} state={{ kept }} className="word-woad">
+      Sign in and come back to it
+    </Link>
+  )
+}
+
+/** Why nothing can be saved just now, in a sentence or two. */
 function useObstacle({ system, token, reading, isTried }: SaveFormProps): string | undefined {
   const me = useMe()
   const { data: settings } = useSuspenseQuery(systemQueries.one(system))
-  if (!mayDo(me, system, 'tokens:write'))
-    return 'Saving takes a maintainer; trying is for everyone.'
+  const mayWrite = mayDo(me, system, 'tokens:write')
+  const { data: members = [] } = useQuery({ ...memberQueries.all(system), enabled: !mayWrite })
+  if (!mayWrite) {
+    const maintainer = members.find(({ role }) => role === 'maintainer')
+    const named = maintainer === undefined ? '' : ` ${maintainer.name} is one.`
+    return `Trying is for everyone; saving takes a maintainer.${named}`
+  }
   if (token.locked) return 'This token is locked.'
   if (settings.writeMode === 'review') return 'This system takes edits by review only.'
   if (reading.kind === 'unread') return 'What is written is not a colour.'

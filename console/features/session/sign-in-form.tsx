@@ -30,7 +30,7 @@ export function SignInForm({ onSignedIn }: { onSignedIn: (me: MeWire) => Promise
         type="email"
         autoComplete="username"
         fault={missing.email}
-        className="[&_input]:h-36 [&_input]:text-16"
+        className="[&_input]:h-38 [&_input]:text-16"
       />
       <LineField
         label="Password"
@@ -38,7 +38,7 @@ export function SignInForm({ onSignedIn }: { onSignedIn: (me: MeWire) => Promise
         type="password"
         autoComplete="current-password"
         fault={missing.password}
-        className="mt-20 [&_input]:h-36 [&_input]:text-16"
+        className="mt-20 [&_input]:h-38 [&_input]:text-16"
       />
       {signing.isError && (
         <p role="alert" className="mt-16 font-semibold text-madder">

@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react'
 import { WordButton } from '#console/ui/button.tsx'
 import { ApiError } from '#shared/client/client.ts'
 
@@ -26,13 +27,26 @@ export function saveFaults(error: Error | null): SaveFaults {
 export function SaveRefusal({
   error,
   now,
+  signIn,
   onAgain,
 }: {
   error: Error
   /** What the token is set to now, in words. */
   now: string
+  /** The way to a new session, and back to what was typed. */
+  signIn: ReactNode
   onAgain: () => void
 }) {
+  if (error instanceof ApiError && error.status === 401) {
+    return (
+      <div role="alert" className="mt-14 border-t border-ink pt-10">
+        <p>
+          <span className="font-semibold">Your session has ended, nothing was saved.</span> What you
+          typed is kept. {signIn}
+        </p>
+      </div>
+    )
+  }
   if (error instanceof ApiError && error.status === 412) {
     return (
       <div role="alert" className="mt-14 border-t border-ink pt-10">
