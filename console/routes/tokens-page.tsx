@@ -22,8 +22,9 @@ import { TokenSentence } from '#console/features/tokens/token-sentence.tsx'
 import { tokenQueries } from '#console/features/tokens/tokens.queries.ts'
 import { queryClient } from '#console/lib/query-client.ts'
 import { Waiting } from '#console/ui/page-states.tsx'
+import type { LedgerTokenWire } from '#shared/contracts/tokens.contract.ts'
 import { useFrame, useStripBands } from './system-frame.tsx'
-import { useThemeStandings } from './theme-standings.ts'
+import { useMeasuredTokens } from './theme-standings.ts'
 
 export async function loader({ params: { system = '' } }: LoaderFunctionArgs) {
   await queryClient.ensureQueryData(tokenQueries.ledger(system))
@@ -36,8 +37,8 @@ export function Component() {
   const { data: themes } = useSuspenseQuery(themeQueries.all(system))
   const { data: settings } = useSuspenseQuery(systemQueries.one(system))
   const { filter, setFilter } = useTokenFilter()
-  const standings = useThemeStandings(system, filter.theme)
-  const rows = useMemo(() => rowsOf(tokens, standings.data), [tokens, standings.data])
+  const measured = useMeasuredTokens(system, filter.theme)
+  const rows = useMemo(() => rowsOf(tokens, measured.data), [tokens, measured.data])
   const chosen = useMemo(() => chosenRows(rows, filter), [rows, filter])
   const field = useFindField()
   if (tokens.length === 0) return <NoTokenYet />
@@ -53,12 +54,11 @@ export function Component() {
       >
         {found(chosen.length, tokens.length)}, {settings.counts.pairs} pairs, {themes.length} themes
       </TokenSentence>
-      {standings.isLoading ? (
+      {measured.isLoading && filter.theme !== 'all' ? (
         <Waiting>Measuring every pair in {filter.theme}</Waiting>
       ) : chosen.length === 0 ? (
         <NoTokenFound
-          named={filter.named}
-          near={namesNear(tokens, filter.named)}
+          near={isHad(tokens, filter.named) ? undefined : namesNear(tokens, filter.named)}
           href={(name) => paths.token(system, name)}
           onAll={() => setFilter({ ...EVERY_TOKEN, order: filter.order })}
         />
@@ -67,6 +67,12 @@ export function Component() {
       )}
     </>
   )
+}
+
+/** Whether some token has the name, so that the rest of the sentence leaves it out. */
+function isHad(tokens: readonly LedgerTokenWire[], named: string): boolean {
+  const typed = named.trim().toLowerCase()
+  return tokens.some(({ name }) => name.toLowerCase().includes(typed))
 }
 
 function found(chosen: number, all: number): string {

@@ -1,4 +1,5 @@
 import type { LedgerTokenWire, StandingWire } from '#shared/contracts/tokens.contract.ts'
+import type { MeasuredTokens } from './measure-theme.ts'
 import type { TokenFilter } from './token-filter.ts'
 
 /** A token as a row: its name parted into the hanging group and the rest. */
@@ -8,6 +9,8 @@ export interface LedgerRow {
   /** `.board.fill`; the whole name where it has one segment. */
   readonly rest: string
   readonly standing: StandingWire
+  /** Nothing of it has to reach its own line: another member of its group does. */
+  readonly isByGroup: boolean
 }
 
 export interface LedgerGroup {
@@ -15,17 +18,16 @@ export interface LedgerGroup {
   readonly rows: readonly LedgerRow[]
 }
 
-export function rowsOf(
-  tokens: readonly LedgerTokenWire[],
-  standings?: ReadonlyMap<string, StandingWire>,
-): LedgerRow[] {
+export function rowsOf(tokens: readonly LedgerTokenWire[], measured?: MeasuredTokens): LedgerRow[] {
   return tokens.map((token) => {
     const [group = token.name] = token.name.split('.', 1)
+    const standing = measured?.standings?.get(token.name) ?? token.standing
     return {
       token,
       group,
       rest: token.name.slice(group.length) || token.name,
-      standing: standings?.get(token.name) ?? token.standing,
+      standing,
+      isByGroup: standing.lowest === null && measured?.byGroup.has(token.id) === true,
     }
   })
 }
@@ -52,6 +54,11 @@ function hasMark(standing: StandingWire, mark: TokenFilter['mark']): boolean {
   return standing.mark === mark
 }
 
+/** Whether the service's standing says of a token that has pairs neither what is lowest nor that it breaches. */
+export function isUnexplained({ standing: { pairs, lowest } }: LedgerTokenWire): boolean {
+  return pairs > 0 && lowest === null
+}
+
 /** How far over its line; a token that nothing measures comes last. */
 function margin({ standing: { lowest } }: LedgerRow): number {
   return lowest === null || lowest.required === 0 ? Infinity : lowest.ratio / lowest.required
@@ -68,13 +75,19 @@ export function groupRows(rows: readonly LedgerRow[]): LedgerGroup[] {
   return groups
 }
 
-/** Names that begin with what was typed before its last segment, to offer where nothing was found. */
-export function namesNear(tokens: readonly LedgerTokenWire[], named: string): string[] {
+/** Names to offer where nothing was found, and the start that they share with what was typed. */
+export interface NearNames {
+  readonly start: string
+  readonly names: readonly string[]
+}
+
+/** The names that share the longest start with what was typed. */
+export function namesNear(tokens: readonly LedgerTokenWire[], named: string): NearNames {
   const typed = named.trim().toLowerCase()
   for (let length = typed.length; length > 0; length--) {
     const start = typed.slice(0, length)
     const near = tokens.filter(({ name }) => name.toLowerCase().startsWith(start))
-    if (near.length > 0) return near.map(({ name }) => name)
+    if (near.length > 0) return { start, names: near.map(({ name }) => name) }
   }
-  return []
+  return { start: '', names: [] }
 }

@@ -25,6 +25,15 @@ export function passesByGroup(finding: Pick<Finding, 'outcome' | 'ratio' | 'requ
   return finding.outcome === 'pass' && finding.ratio < finding.required
 }
 
+/** Tokens that stand in a finding which passes by its group alone, by id. */
+export function groupPasses(findings: readonly Finding[]): Set<string> {
+  return new Set(
+    findings
+      .filter(passesByGroup)
+      .flatMap(({ foreground, background }) => [foreground, background]),
+  )
+}
+
 /** Findings in which the token itself stands in that theme and state. */
 export function findingsIn(
   findings: readonly Finding[],

@@ -2,6 +2,7 @@ import { Link } from 'react-router-dom'
 import { countInWords, startSentence } from '#console/lib/format.ts'
 import { WordButton } from '#console/ui/button.tsx'
 import { NothingHere } from '#console/ui/page-states.tsx'
+import type { NearNames } from './ledger-rows.ts'
 
 /** A system before its first token. */
 export function NoTokenYet() {
@@ -16,22 +17,23 @@ const MOST_OFFERED = 8
 
 /** Nothing answers to the sentence; names that begin alike are offered. */
 export function NoTokenFound({
-  named,
   near,
   href,
   onAll,
 }: {
-  named: string
-  near: readonly string[]
+  /** What is near to the name that no token has; none where it is the rest of the sentence that finds nothing. */
+  near: NearNames | undefined
   href: (name: string) => string
   onAll: () => void
 }) {
-  const isNamed = named.trim() !== ''
+  const offered = near === undefined || near.names.length > MOST_OFFERED ? [] : near.names
   return (
-    <NothingHere title={isNamed ? namedTitle(near.length) : 'No token answers to this sentence.'}>
-      {isNamed && near.length > 0 && near.length <= MOST_OFFERED && (
+    <NothingHere
+      title={near === undefined ? 'No token answers to this sentence.' : titleFor(near, offered)}
+    >
+      {offered.length > 0 && (
         <ul className="flex flex-wrap gap-x-22 gap-y-4">
-          {near.map((name) => (
+          {offered.map((name) => (
             <li key={name}>
               <Link to={href(name)} className="word-woad font-medium">
                 {name}
@@ -49,8 +51,9 @@ export function NoTokenFound({
   )
 }
 
-function namedTitle(near: number): string {
-  if (near === 0 || near > MOST_OFFERED) return 'No token has this name.'
-  const begin = near === 1 ? 'begins' : 'begin'
-  return `No token has this name. ${startSentence(countInWords(near))} ${begin} with it.`
+function titleFor({ start }: NearNames, offered: readonly string[]): string {
+  if (offered.length === 0) return 'No token has this name.'
+  const begin = offered.length === 1 ? 'begins' : 'begin'
+  const count = startSentence(countInWords(offered.length))
+  return `No token has this name. ${count} ${begin} with ${start.replace(/\.$/, '')}.`
 }

@@ -70,7 +70,7 @@ export function TokenRow({ row, span, shown, base, breach, href, link, onLead }:
           </span>
         )}
       </td>
-      <Measures standing={standing} />
+      <Measures row={row} />
       <td className="whitespace-nowrap">
         <TokenMark row={row} />
       </td>
@@ -82,7 +82,8 @@ function pairCount(standing: StandingWire): string {
   return standing.pairs === 0 && standing.pairsThroughAliases === 0 ? '–' : String(standing.pairs)
 }
 
-function Measures({ standing: { lowest } }: { standing: StandingWire }) {
+function Measures({ row }: { row: LedgerRow }) {
+  const { lowest } = row.standing
   return (
     <>
       <td>
@@ -95,11 +96,13 @@ function Measures({ standing: { lowest } }: { standing: StandingWire }) {
       <td className="@max-[1180px]:hidden">
         <RatioRuler measured={lowest} />
       </td>
-      <td
-        className="truncate pr-8! text-ink-soft @max-[700px]:hidden"
-        title={lowest === null ? undefined : stateInWords(lowest.state)}
-      >
-        {lowest !== null && `${lowest.theme}, ${stateInWords(lowest.state)}`}
+      <td className="pr-8! text-ink-soft @max-[700px]:hidden">
+        {lowest !== null && (
+          <span className="block leading-18">
+            {lowest.theme}, {stateInWords(lowest.state)}
+          </span>
+        )}
+        {row.isByGroup && 'its group passes'}
       </td>
     </>
   )

@@ -54,8 +54,17 @@ describe('the steps of a breach', () => {
 
 describe('the columns of the log', () => {
   it('answers as many as there is room for, and their number', () => {
-    expect(breachColumns(1440)).toEqual({ where: true, firstSeen: true, assignee: true, count: 8 })
-    expect(breachColumns(1100)).toMatchObject({ firstSeen: true, assignee: false, count: 7 })
-    expect(breachColumns(768)).toMatchObject({ where: false, count: 5 })
+    expect(breachColumns(1440, true)).toEqual({
+      where: true,
+      firstSeen: true,
+      assignee: true,
+      count: 8,
+    })
+    expect(breachColumns(1100, true)).toMatchObject({ firstSeen: true, assignee: false, count: 7 })
+    expect(breachColumns(768, true)).toMatchObject({ where: false, count: 5 })
+  })
+
+  it('leaves out the column of assignees while nobody is assigned', () => {
+    expect(breachColumns(1440, false)).toMatchObject({ assignee: false, count: 7 })
   })
 })

@@ -82,8 +82,27 @@ describe('the rows of the ledger', () => {
   })
 
   it('answers the names that begin as the one looked for does', () => {
-    expect(namesNear(tokens, 'text.mutter')).toEqual(['text.muted'])
-    expect(namesNear(tokens, 'zzz')).toEqual([])
+    expect(namesNear(tokens, 'Text.mutter')).toEqual({ start: 'text.mut', names: ['text.muted'] })
+    expect(namesNear(tokens, 'text.x').start).toBe('text.')
+    expect(namesNear(tokens, 'zzz')).toEqual({ start: '', names: [] })
+  })
+
+  it('answers that a token passes by its group alone where nothing of it has a line of its own', () => {
+    const byGroup = new Set(['tok_plain', 'tok_text.primary'])
+    expect(rowsOf(tokens, { byGroup }).map(({ isByGroup }) => isByGroup)).toEqual([
+      false,
+      false,
+      false,
+      true,
+    ])
+    expect(rowsOf(tokens).some(({ isByGroup }) => isByGroup)).toBe(false)
+  })
+
+  it('answers the standings of one theme in place of those over all', () => {
+    const lone = { pairs: 1, pairsThroughAliases: 0, breaches: 3, mark: 'breach', lowest: null }
+    const standings = new Map([['plain', lone as StandingWire]])
+    const measured = rowsOf(tokens, { standings, byGroup: new Set() })
+    expect(measured.map(({ standing }) => standing.breaches)).toEqual([0, 0, 0, 3])
   })
 
   it('answers the filter from the address and writes only what differs', () => {

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import {
   findingsIn,
+  groupPasses,
   lowestFinding,
   passesByGroup,
 } from '#console/features/tokens/lowest-finding.ts'
@@ -47,6 +48,11 @@ describe('the lowest finding', () => {
 
   it('answers that a pass under its line is one by its group', () => {
     expect([byGroup, nearText, exempt].map(passesByGroup)).toEqual([true, false, false])
+  })
+
+  it('answers both tokens of a finding that passes by its group, and no others', () => {
+    const other = finding({ foreground: 'c', background: 'd' })
+    expect([...groupPasses([byGroup, other, exempt])]).toEqual(['a', 'b'])
   })
 
   it('answers the findings in which the token itself stands in a state', () => {
