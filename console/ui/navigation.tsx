@@ -30,7 +30,7 @@ export function Navigation({
               >
                 {place.text}
                 {place.count !== undefined && (
-                  <span className="figures ml-6 text-12 font-normal">{place.count}</span>
+                  <span className="ml-6 text-12 font-normal">{place.count}</span>
                 )}
               </NavLink>
             </li>

@@ -59,7 +59,7 @@ export function RatioMove({ before, ...measured }: Measured & { before: number |
           <Arrow />
         </>
       )}
-      <span className="inline-flex min-w-90 justify-end">
+      <span className="inline-flex min-w-94 justify-end">
         <RatioColumns {...measured} />
       </span>
     </span>

@@ -8,9 +8,9 @@ export interface BreachColumns {
 
 const ALWAYS = 5
 
-/** The columns of the log in a window so many px wide. */
-export function breachColumns(width: number): BreachColumns {
-  const [where, firstSeen, assignee] = [width >= 900, width >= 1060, width >= 1240]
+/** The columns of the log in a window so many px wide; assignees take one only where there are some. */
+export function breachColumns(width: number, isAssigned: boolean): BreachColumns {
+  const [where, firstSeen, assignee] = [width >= 900, width >= 1060, isAssigned && width >= 1240]
   const optional = [where, firstSeen, assignee].filter(Boolean).length
   return { where, firstSeen, assignee, count: ALWAYS + optional }
 }

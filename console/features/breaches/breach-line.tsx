@@ -1,7 +1,7 @@
 import type { ReactNode } from 'react'
 import { stateInWords } from '#console/lib/finding-words.ts'
 import { PairSample } from '#console/ui/pair-sample.tsx'
-import { RatioText } from '#console/ui/ratio-text.tsx'
+import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import { BreachLink, type BreachRowProps } from './breach-row.tsx'
 import { outcomeOf } from './breach-words.ts'
 import { BreachStatus } from './breach-status.tsx'
@@ -20,15 +20,23 @@ export function BreachLine({ under, ...row }: BreachRowProps & { under: ReactNod
             <BreachStatus breach={breach} />
           </span>
         </div>
-        <div className="flex items-center justify-between gap-12 pb-6">
+        <div className="line-measures pb-6">
           <PairSample {...breach.rendered} breaches={breach.status === 'open'} />
-          <RatioText ratio={breach.ratio} required={breach.required} outcome={outcomeOf(breach)} />
-          <span className="min-w-0 truncate text-12 text-ink-soft">
+          <RatioColumns
+            ratio={breach.ratio}
+            required={breach.required}
+            outcome={outcomeOf(breach)}
+          />
+          <span>
             {breach.theme}, {stateInWords(breach.state)}
           </span>
         </div>
       </li>
-      {isOpened && <li className="border-b-2 border-ink py-14">{under}</li>}
+      {isOpened && (
+        <li data-under className="py-14">
+          {under}
+        </li>
+      )}
     </>
   )
 }

@@ -20,7 +20,10 @@ export function BreachTable(props: BreachTableProps) {
   const { breaches, opened, under, href } = props
   const walk = useRowWalk(breaches.length)
   const narrow = useNarrow()
-  const columns = breachColumns(useWindowWidth())
+  const columns = breachColumns(
+    useWindowWidth(),
+    breaches.some(({ assignee }) => assignee !== null),
+  )
   const rows = breaches.map((breach, index) => ({
     breach,
     href: href(breach),

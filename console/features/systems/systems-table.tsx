@@ -70,6 +70,9 @@ function SystemRow({
         <Link to={href} {...link} className="block truncate py-6 font-semibold">
           {system.key}
         </Link>
+        <span className="-mt-6 mb-6 hidden truncate text-13 text-ink-soft @max-[760px]:block">
+          {system.name}
+        </span>
       </td>
       <td className="truncate @max-[760px]:hidden">{system.name}</td>
       <td className="number figures @max-[500px]:hidden">{counts.tokens}</td>

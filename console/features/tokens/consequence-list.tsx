@@ -99,9 +99,16 @@ function MovedItem({ line, names }: { line: MovedLine; names: ModelNames }) {
           {whereInWords(names.theme(line.theme), line.states)}
         </span>
       </span>
-      {line.outcome === 'breach' && <OutcomeMark kind="breach">breach</OutcomeMark>}
-      {passesByGroup(line) && <span className="text-13 text-ink-soft">its group passes</span>}
-      <RatioMove {...line} />
+      <span className="ml-auto flex items-baseline gap-16">
+        {line.outcome === 'breach' && <OutcomeMark kind="breach">breach</OutcomeMark>}
+        {passesByGroup(line) && <span className="text-13 text-ink-soft">its group passes</span>}
+        <RatioMove
+          before={line.before}
+          ratio={line.ratio}
+          required={line.required}
+          outcome={line.outcome}
+        />
+      </span>
     </li>
   )
 }

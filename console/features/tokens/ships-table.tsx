@@ -1,10 +1,11 @@
+import type { ReactNode } from 'react'
 import { stateInWords } from '#console/lib/finding-words.ts'
 import { OutcomeMark } from '#console/ui/outcome-mark.tsx'
 import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import { type Finding, STATES, type State } from '#shared/checks/model.ts'
 import type { ResolvedColorWire, TokenWire } from '#shared/contracts/tokens.contract.ts'
 import type { ModelNames } from './consequence-list.tsx'
-import { findingsIn, lowestFinding } from './lowest-finding.ts'
+import { findingsIn, lowestFinding, passesByGroup } from './lowest-finding.ts'
 import { RelationPhrase } from './relation-phrase.tsx'
 import { relationTo } from './relation-words.ts'
 import { Components, numberOrMissing, SourceHeads } from './token-source.tsx'
@@ -40,10 +41,10 @@ export function ShipsTable(props: ShipsTableProps) {
             <th className="w-150 @max-[980px]:hidden">
               <SourceHeads />
             </th>
-            <th className="w-134 @max-[600px]:hidden">
+            <th className="w-144 @max-[600px]:hidden">
               <span className="pl-14">sRGB</span>
             </th>
-            <th className="w-132 @max-[1180px]:hidden">Display P3</th>
+            <th className="w-154 @max-[1180px]:hidden">Display P3</th>
             <th className="@max-[820px]:hidden">Made by</th>
             <th className="w-129 @max-[600px]:w-104">
               <span className="block w-71 text-end @max-[600px]:w-46">Lowest</span>
@@ -118,9 +119,7 @@ function ColorCells({
           ? 'as sRGB'
           : color.p3.components.map((part) => Number(part).toFixed(3)).join(' ')}
       </td>
-      <td className="truncate @max-[820px]:hidden" title={color.provenance.text}>
-        {color.provenance.text}
-      </td>
+      <td className="py-4! pr-16! leading-18 @max-[820px]:hidden">{color.provenance.text}</td>
     </>
   )
 }
@@ -156,19 +155,30 @@ function LowestCells({
             outcome={lowest.outcome}
           />
         </span>
+        <span className="flex justify-end text-12 text-ink-soft @min-[1100px]:hidden">
+          <LowestMark lowest={lowest} />
+        </span>
       </td>
       <td
-        className="truncate text-ink-soft @max-[1100px]:hidden"
+        className="py-4! leading-18 text-ink-soft @max-[1100px]:hidden"
         title={stateInWords(`${lowest.foregroundState}/${lowest.backgroundState}`)}
       >
-        {lowest.outcome === 'breach' ? (
-          <OutcomeMark kind="breach">{words}</OutcomeMark>
-        ) : isExempt ? (
-          <OutcomeMark kind="exempt">exempt</OutcomeMark>
-        ) : (
-          words
-        )}
+        <LowestMark lowest={lowest} words={words} />
       </td>
+    </>
+  )
+}
+
+/** The mark of a lowest finding, and what it is against where there is room for that. */
+function LowestMark({ lowest, words }: { lowest: Finding; words?: ReactNode }) {
+  if (lowest.outcome === 'breach') {
+    return <OutcomeMark kind="breach">{words ?? 'breach'}</OutcomeMark>
+  }
+  if (lowest.outcome === 'exempt') return <OutcomeMark kind="exempt">exempt</OutcomeMark>
+  return (
+    <>
+      {words}
+      {passesByGroup(lowest) && (words === undefined ? 'its group passes' : ', its group passes')}
     </>
   )
 }

@@ -1,6 +1,6 @@
 import { Link } from 'react-router-dom'
 import { stateInWords } from '#console/lib/finding-words.ts'
-import { RatioText } from '#console/ui/ratio-text.tsx'
+import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import { type RowLinkProps, useRowWalk } from '#console/ui/row-walk.ts'
 import { groupRows, type LedgerRow } from './ledger-rows.ts'
 import { TokenCell } from './token-cell.tsx'
@@ -57,7 +57,7 @@ function TokenLine({
           <TokenMark row={row} />
         </span>
       </div>
-      <div className="flex items-center justify-between gap-12 py-6">
+      <div className="line-measures py-6">
         <TokenCell
           name={token.name}
           resolved={token.resolved}
@@ -67,12 +67,13 @@ function TokenLine({
         />
         {lowest !== null && (
           <>
-            <RatioText {...lowest} />
-            <span className="min-w-0 truncate text-12 text-ink-soft">
+            <RatioColumns {...lowest} />
+            <span>
               {lowest.theme}, {stateInWords(lowest.state)}
             </span>
           </>
         )}
+        {row.isByGroup && <span>its group passes</span>}
       </div>
     </li>
   )

@@ -35,17 +35,19 @@ export function TokenPairs({
                 {use}, lowest in {whereInWords(names.theme(shown.theme), [states])}
               </span>
             </span>
-            {shown.outcome === 'breach' && <OutcomeMark kind="breach">breach</OutcomeMark>}
-            {passesByGroup(shown) && (
-              <span className="text-13 text-ink-soft">its group passes</span>
-            )}
-            {shown.outcome === 'exempt' && <OutcomeMark kind="exempt">exempt</OutcomeMark>}
-            <RatioMove
-              before={after === undefined ? undefined : before.ratio}
-              ratio={shown.ratio}
-              required={shown.required}
-              outcome={shown.outcome}
-            />
+            <span className="ml-auto flex items-baseline gap-16">
+              {shown.outcome === 'breach' && <OutcomeMark kind="breach">breach</OutcomeMark>}
+              {passesByGroup(shown) && (
+                <span className="text-13 text-ink-soft">its group passes</span>
+              )}
+              {shown.outcome === 'exempt' && <OutcomeMark kind="exempt">exempt</OutcomeMark>}
+              <RatioMove
+                before={after === undefined ? undefined : before.ratio}
+                ratio={shown.ratio}
+                required={shown.required}
+                outcome={shown.outcome}
+              />
+            </span>
           </li>
         )
       })}
