@@ -1,10 +1,13 @@
 import type { Advisory, ContrastKind, ModelFault, PairModel } from './model.ts'
 import type { ResolvedSystem } from './resolved.ts'
 
-/** What a row says before groups, waivers and comparison: met, short, exempt, or under the floor for disabled. */
+/** What a row says before groups, waivers and comparison: its requirement is met, or there is none. */
 export const ROW_MET = 0
+/** Under what is required. */
 export const ROW_SHORT = 1
+/** Nothing is asked of it, by WCAG or by declaration. */
 export const ROW_EXEMPT = 2
+/** Exempt, and under the system’s own floor for disabled. */
 export const ROW_UNDER_FLOOR = 3
 
 /**

@@ -2,13 +2,19 @@ import type { Oklch } from '#shared/color/oklch.ts'
 
 /** The states a token can take part in, in the order in which ties are broken; `rest` is implied. */
 export const DERIVED_STATES = ['hover', 'active', 'focus', 'disabled'] as const
+/** Every state, CSS’s own words; `rest` first. */
 export const STATES = ['rest', ...DERIVED_STATES] as const
+/** A state that follows from rest. */
 export type DerivedState = (typeof DERIVED_STATES)[number]
+/** A state of a token. */
 export type State = (typeof STATES)[number]
 
+/** Levels of conformance, from lax to strict. @see https://www.w3.org/TR/WCAG22/#cc1 */
 export const LEVELS = ['AA', 'AAA'] as const
+/** One of the levels. */
 export type Level = (typeof LEVELS)[number]
 
+/** What a foreground is on its background; what each asks for stands in `uses.ts`. */
 export const USES = [
   'text',
   'large-text',
@@ -17,12 +23,17 @@ export const USES = [
   'focus-change',
   'link-in-text',
 ] as const
+/** One of the uses. */
 export type Use = (typeof USES)[number]
 
+/** `inside`: a foreground within a container, each with its own state; `together`: one component, one state. */
 export const RELATIONS = ['inside', 'together'] as const
+/** One of the relations. */
 export type Relation = (typeof RELATIONS)[number]
 
+/** What WCAG exempts and only a declaration can tell. @see https://www.w3.org/TR/WCAG22/#contrast-minimum */
 export const EXEMPTIONS = ['logotype', 'decorative', 'inactive'] as const
+/** One of the exemptions. */
 export type ExemptionKind = (typeof EXEMPTIONS)[number]
 
 /** What a token is set to. Other tokens are referred to by id, so that a rename moves nothing. */
@@ -48,6 +59,7 @@ export interface StateRule extends Adjustment {
   readonly towards?: { readonly direction: 'away' | 'towards'; readonly reference: Reference }
 }
 
+/** The ways in which a theme’s value can follow from its parent’s. */
 export const THEME_RULE_KINDS = ['mirror', 'relative', 'match-contrast', 'keep', 'shift'] as const
 
 /** How a theme's value follows from its parent's; merged field by field from wide to narrow. */
@@ -65,6 +77,7 @@ export interface ThemeRule {
   readonly hue?: number
 }
 
+/** State rules by state; one that is left out leaves the wider scope’s. */
 export type StateRules = { readonly [state in DerivedState]?: StateRule }
 
 /** Rules of one scope: the system, a name prefix, or a token. Theme rules are keyed by theme id. */
@@ -73,11 +86,13 @@ export interface RuleScope {
   readonly themes?: { readonly [themeId: string]: ThemeRule }
 }
 
+/** Rules of all tokens whose names begin with the same segments. */
 export interface PrefixRules extends RuleScope {
   /** Whole name segments: `action` covers `action` and `action.board`, not `actions`. */
   readonly prefix: string
 }
 
+/** A token as it is declared. */
 export interface TokenModel {
   readonly id: string
   readonly name: string
@@ -90,6 +105,7 @@ export interface TokenModel {
   readonly rules?: RuleScope
 }
 
+/** A theme as it is declared; tokens by id. */
 export interface ThemeModel {
   readonly id: string
   readonly key: string
@@ -104,6 +120,7 @@ export interface ThemeModel {
   readonly gating: boolean
 }
 
+/** A pair as it is declared; tokens and themes by id. */
 export interface PairModel {
   readonly id: string
   readonly foreground: string
@@ -125,6 +142,7 @@ export interface PairModel {
   readonly exempt?: { readonly kind: ExemptionKind; readonly reason: string }
 }
 
+/** What holds for a whole system. */
 export interface SystemSettings {
   readonly level: Level
   /** Whether Display P3 values ship, and so are measured. */
@@ -147,7 +165,9 @@ export interface SystemModel {
   readonly pairs: readonly PairModel[]
 }
 
+/** What a finding is about, as far as its identity goes: a change from `text` to `large-text` keeps its history. */
 export const CONTRAST_KINDS = ['text', 'non-text', 'focus', 'link'] as const
+/** One of the kinds. */
 export type ContrastKind = (typeof CONTRAST_KINDS)[number]
 
 /** A granted waiver that is in force now; the caller, not the engine, knows the time. Absent members cover all. */
@@ -167,7 +187,9 @@ export interface WaiverModel {
   readonly endsAt: string
 }
 
+/** What can come of a finding; `known` only where new breaches alone count. */
 export const OUTCOMES = ['pass', 'breach', 'waived', 'exempt', 'known'] as const
+/** One of the outcomes. */
 export type Outcome = (typeof OUTCOMES)[number]
 
 /** One entry of a check: what was measured of two tokens in a theme and a state, and what follows from it. */
@@ -203,6 +225,7 @@ export interface Finding {
   readonly identity: string
 }
 
+/** Something to look at that is no breach; token and theme by id. */
 export interface Advisory {
   readonly code: 'double-flip' | 'state-invisible'
   readonly token: string
@@ -210,6 +233,7 @@ export interface Advisory {
   readonly state?: State
 }
 
+/** What a verdict was made with, so that it can be made again. */
 export interface EngineStamp {
   readonly version: string
   /** The pinned gamut mapping. */
@@ -217,6 +241,7 @@ export interface EngineStamp {
   readonly ruleSet: string
 }
 
+/** A check’s answer: `fail` on any gating breach. */
 export interface Verdict {
   readonly verdict: 'pass' | 'fail'
   readonly counts: { readonly [outcome in Outcome]: number }

@@ -27,6 +27,7 @@ export interface ThemeSpan {
 
 const HALVINGS = 14
 
+/** Where a value came from that a theme rule made. */
 export type ThemeProvenance = Extract<Provenance, { from: 'theme-rule' }>
 type Short = NonNullable<ThemeProvenance['short']>
 

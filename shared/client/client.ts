@@ -47,6 +47,7 @@ export class ApiError extends Error {
   }
 }
 
+/** How a client reaches the service. */
 export interface ClientOptions {
   /** Origin of the service; empty for the page's own. */
   readonly baseUrl: string
@@ -55,6 +56,7 @@ export interface ClientOptions {
   readonly headers?: Readonly<Record<string, string>>
 }
 
+/** Sends one operation and gives its answer. @throws {ApiError} (rejects) where the service refuses */
 export type Call = <C extends Contract>(
   contract: C,
   input: InputOf<C>,

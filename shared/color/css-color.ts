@@ -2,6 +2,7 @@ import { type Color, colorsNamed } from 'culori/fn'
 import { parseWithLibrary } from './color-library.ts'
 import type { ColorSpace, Components, SpacedColor } from './to-oklch.ts'
 
+/** A colour as CSS wrote it, or in one sentence why it is none. */
 export type CssReading =
   | { readonly ok: true; readonly value: SpacedColor }
   | { readonly ok: false; readonly reason: string }

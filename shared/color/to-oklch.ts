@@ -23,6 +23,7 @@ export const COLOR_SPACES = [
   'oklab',
   'oklch',
 ] as const
+/** One of the spaces. */
 export type ColorSpace = (typeof COLOR_SPACES)[number]
 
 /** Three components in a space's own units: hsl and hwb in degrees and 0 to 100, lab and lch with L 0 to 100. */
@@ -36,6 +37,7 @@ export interface SpacedColor {
   readonly alpha: number | null
 }
 
+/** A colour in OKLCH, unrounded, or in one sentence why it has none. */
 export type OklchReading =
   | { readonly ok: true; readonly color: Oklch }
   | { readonly ok: false; readonly reason: string }

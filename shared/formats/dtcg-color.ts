@@ -14,6 +14,7 @@ import {
 /** A color space of the DTCG color module: those of CSS but `display-p3-linear`. */
 export type DtcgColorSpace = Exclude<ColorSpace, 'display-p3-linear'>
 
+/** A component in the units of its space; `none` is a missing one. */
 export type DtcgComponent = number | 'none'
 
 /** A colour value of the DTCG color module. */
@@ -25,6 +26,7 @@ export interface DtcgColor {
   hex?: string
 }
 
+/** The colour in OKLCH, unrounded, or every fault of the value. */
 export type DtcgColorReading =
   | { readonly ok: true; readonly color: Oklch }
   | { readonly ok: false; readonly faults: DtcgFault[] }

@@ -23,10 +23,12 @@ export const DTCG_TYPES = [
   'gradient',
   'typography',
 ] as const
+/** One of the types. */
 export type DtcgType = (typeof DTCG_TYPES)[number]
 
 const TOKEN_MEMBERS = ['$value', '$ref', '$type', '$description', '$deprecated', '$extensions']
 const GROUP_MEMBERS = ['$type', '$description', '$deprecated', '$extensions', '$extends', '$root']
+/** The name of the token that a group itself is. */
 export const ROOT_TOKEN = '$root'
 
 /** Every group and token as written, before anything is inherited. */
@@ -53,6 +55,7 @@ export function childNamesOf(group: JsonObject): string[] {
   return Object.keys(group).filter((name) => childOf(group, name) !== undefined)
 }
 
+/** Tells whether the format module has a type of that name; case matters. */
 export function isTypeName(type: unknown): type is DtcgType {
   return DTCG_TYPES.some((known) => known === type)
 }

@@ -53,6 +53,7 @@ export interface DtcgFault {
   readonly code: DtcgFaultCode
 }
 
+/** An object as JSON has it, members not yet known. */
 export interface JsonObject {
   readonly [member: string]: unknown
 }

@@ -16,6 +16,7 @@ export interface DtcgLink {
   readonly type: DtcgType | undefined
 }
 
+/** Every token with what its reference leads to, in the order of the entries. */
 export interface DtcgLinks {
   readonly links: readonly DtcgLink[]
   readonly faults: readonly DtcgFault[]

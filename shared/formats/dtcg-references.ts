@@ -43,6 +43,7 @@ interface Document {
   readonly entries: ReadonlyMap<string, DtcgEntry>
 }
 
+/** Gives the ways to follow a reference in a document: by alias, by JSON pointer. */
 export function createReferences(
   layers: DtcgLayers,
   entries: ReadonlyMap<string, DtcgEntry>,

@@ -14,6 +14,7 @@ export type ResolverSource =
   | { readonly kind: 'tokens'; readonly tokens: JsonObject; readonly pointer: string }
   | { readonly kind: 'set'; readonly name: string; readonly pointer: string }
 
+/** A choice of one among named contexts. */
 export interface ResolverModifier {
   readonly name: string
   readonly contexts: ReadonlyMap<string, readonly ResolverSource[]>
@@ -25,6 +26,7 @@ export type ResolverStep =
   | { readonly kind: 'set'; readonly name: string; readonly sources: readonly ResolverSource[] }
   | { readonly kind: 'modifier'; readonly modifier: ResolverModifier }
 
+/** What a resolver file says, before any document is put together. */
 export interface ResolverShape {
   readonly sets: ReadonlyMap<string, readonly ResolverSource[]>
   readonly order: readonly ResolverStep[]

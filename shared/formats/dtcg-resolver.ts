@@ -40,10 +40,12 @@ export interface DtcgResolver {
   readonly permutations: () => ResolverPermutation[]
 }
 
+/** A resolver, or every fault of its file. */
 export type ResolverReading =
   | { readonly ok: true; readonly resolver: DtcgResolver }
   | { readonly ok: false; readonly faults: readonly DtcgFault[] }
 
+/** The document of one choice, or every fault of the choice. */
 export type DocumentReading =
   | { readonly ok: true; readonly document: JsonObject }
   /** Pointers lead into the input. */

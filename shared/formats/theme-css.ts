@@ -11,6 +11,7 @@ export interface PropertyCollision {
   readonly detail: string
 }
 
+/** The style sheet, or every collision of names. */
 export type ThemeCss =
   | { readonly ok: true; readonly css: string }
   | { readonly ok: false; readonly collisions: readonly PropertyCollision[] }

@@ -18,6 +18,7 @@ export interface NestingConflict {
   readonly detail: string
 }
 
+/** The document, or every conflict of names. */
 export type ThemeJson =
   | { readonly ok: true; readonly document: ThemeJsonGroup }
   | { readonly ok: false; readonly conflicts: readonly NestingConflict[] }
