@@ -134,6 +134,16 @@ export function isLive(
   return true
 }
 
+/** Whether a theme leaves a token that is its ground or ink without a rest of its own; the base cannot. */
+export function isRoleUnset(
+  graph: ModelGraph,
+  { token, theme }: { readonly token: number; readonly theme: number },
+): boolean {
+  if (theme === 0 || (graph.grounds[theme] !== token && graph.inks[theme] !== token)) return false
+  const { id } = graph.model.themes[theme]!
+  return graph.model.tokens[token]!.values[id]?.rest === undefined
+}
+
 /** Position of a state in STATES. */
 export function stateAt(state: State): number {
   return STATES.indexOf(state)

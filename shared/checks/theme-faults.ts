@@ -1,6 +1,6 @@
 import { contrastRatio, relativeLuminance } from '#shared/color/luminance.ts'
 import type { RenderedColor } from '#shared/color/render.ts'
-import type { ModelGraph } from './model-graph.ts'
+import { isRoleUnset, type ModelGraph } from './model-graph.ts'
 import type { ModelFault, ThemeModel } from './model.ts'
 
 /** What a theme's ink must have to its ground. */
@@ -35,7 +35,7 @@ function parentFaults(graph: ModelGraph): ModelFault[] {
   return faults
 }
 
-function roleFaults(graph: ModelGraph, theme: ThemeModel, isBase: boolean): ModelFault[] {
+function roleFaults(graph: ModelGraph, theme: ThemeModel, at: number): ModelFault[] {
   const faults: ModelFault[] = []
   for (const role of ['ground', 'ink'] as const) {
     const id = theme[role]
@@ -46,9 +46,9 @@ function roleFaults(graph: ModelGraph, theme: ThemeModel, isBase: boolean): Mode
       faults.push({ code: 'reference-missing', detail, ...about })
       continue
     }
-    const token = graph.model.tokens[position]!
-    if (!isBase && token.values[theme.id]?.rest === undefined) {
-      const detail = `Theme ${theme.key} sets no value for its ${role} ${token.name}`
+    if (isRoleUnset(graph, { token: position, theme: at })) {
+      const { name } = graph.model.tokens[position]!
+      const detail = `Theme ${theme.key} sets no value for its ${role} ${name}`
       faults.push({ code: 'theme-unset', detail, ...about })
     }
   }
@@ -64,7 +64,7 @@ export function themeFaults(graph: ModelGraph): ModelFault[] {
       const detail = `Theme ${theme.key} asks for AA where the system holds AAA`
       return { code: 'level-lower', detail, theme: theme.id }
     })
-  const roles = themes.flatMap((theme, position) => roleFaults(graph, theme, position === 0))
+  const roles = themes.flatMap((theme, position) => roleFaults(graph, theme, position))
   return [...parentFaults(graph), ...roles, ...lower]
 }
 

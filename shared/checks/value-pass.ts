@@ -1,4 +1,4 @@
-import { type ModelGraph, stateAt } from './model-graph.ts'
+import { isRoleUnset, type ModelGraph, stateAt } from './model-graph.ts'
 import { type ModelFault, STATES } from './model.ts'
 import { type ResolvedCell, STATE_COUNT } from './resolved.ts'
 import { type LargestStep, largestStep } from './state-rule.ts'
@@ -39,6 +39,8 @@ function reportCycle(walk: Walk, stack: readonly number[], back: number): void {
   const { model } = walk.graph
   const open = stack.filter((node) => walk.progress[node] === OPEN)
   const places = [...open.slice(open.indexOf(back)), back].map((node) => placeOf(walk, node))
+  // A theme that computes its ground from its ground has not set it: that is a fault of its own.
+  if (places.some((place) => place.state === 'rest' && isRoleUnset(walk.graph, place))) return
   const names = places.map(({ token }) => model.tokens[token]!.name)
   const key = [...new Set(names)].sort().join('\n')
   if (walk.reported.has(key)) return

@@ -21,6 +21,25 @@ describe('faults', () => {
     expect(faults.map(({ code, theme: at }) => [code, at])).toEqual([['reference-cycle', 'dark']])
   })
 
+  it.each(['mirror', 'relative', 'match-contrast'] as const)(
+    'refuses a theme that leaves ground and ink to its %s rule, without calling that a cycle',
+    (kind) => {
+      const dusk = { ...theme('dusk'), rule: { kind } }
+      const model = system({ tokens: [token('a', '#777')], themes: [theme('light'), dusk] })
+      expect(faultsOf(model).map(({ code, token: at }) => [code, at])).toEqual([
+        ['theme-unset', 'ground'],
+        ['theme-unset', 'ink'],
+      ])
+    },
+  )
+
+  it('refuses a cycle beside a theme that leaves its ground unset', () => {
+    const dusk = { ...theme('dusk'), rule: { kind: 'mirror' as const } }
+    const tokens = [token('a', '{b}'), token('b', '{a}')]
+    const model = system({ tokens, themes: [theme('light'), dusk] })
+    expect(codes(model)).toEqual(['theme-unset', 'theme-unset', 'reference-cycle'])
+  })
+
   it('refuses a cycle through match-contrast', () => {
     const against = (id: string) => ({
       rules: { themes: { dark: { kind: 'match-contrast' as const, against: { token: id } } } },
