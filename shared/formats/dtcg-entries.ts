@@ -1,5 +1,5 @@
-import { type DtcgType, isToken, isTypeName } from './dtcg-document.ts'
-import { type DtcgFault, fault, type JsonObject } from './dtcg-fault.ts'
+import { childOf, type DtcgType, isToken, isTypeName } from './dtcg-document.ts'
+import { type DtcgFault, fault, type JsonObject, pointerTo } from './dtcg-fault.ts'
 import type { DtcgLayers, Layers } from './dtcg-layers.ts'
 
 /** A token under the name it is referred to by, with what its groups give it. */
@@ -33,24 +33,42 @@ interface Place {
   readonly layers: Layers
   readonly groupType: DtcgType | undefined
   readonly deprecated: boolean | string | undefined
+  /** The written group that this is inherited by; nothing where it is written at its place itself. */
+  readonly inheritedBy: JsonObject | undefined
 }
 
 const MOST = 100_000
+/** Groups that extend groups that extend groups multiply without end. */
+const MOST_INHERITED = 20_000
 
-/** Names every group and token, inherited ones included, and hands types and deprecations down. */
-export function namedEntries(layers: DtcgLayers): DtcgEntries {
+/**
+ * Names every group and token, inherited ones included, and hands types and deprecations down.
+ * @param pointerOf the pointer of a written group
+ * @returns past either limit the fault alone, so that nothing is done for a document that is refused
+ */
+export function namedEntries(
+  layers: DtcgLayers,
+  pointerOf: (group: JsonObject) => string,
+): DtcgEntries {
   const entries: DtcgEntry[] = []
   const groups: DtcgGroup[] = []
   const waiting: Place[] = [
-    { name: '', layers: layers.root, groupType: undefined, deprecated: undefined },
+    {
+      name: '',
+      layers: layers.root,
+      groupType: undefined,
+      deprecated: undefined,
+      inheritedBy: undefined,
+    },
   ]
+  let inherited = 0
   for (let place = waiting.pop(); place; place = waiting.pop()) {
-    // Groups that extend groups that extend groups can multiply without end.
+    const { name, layers: own, groupType, deprecated, inheritedBy } = place
+    if (inheritedBy) inherited += 1
+    if (inheritedBy && inherited > MOST_INHERITED) return tooManyInherited(inheritedBy, pointerOf)
     if (entries.length + groups.length >= MOST) {
-      const detail = `A document has at most ${MOST} groups and tokens once it is extended.`
-      return { entries, groups, faults: [fault('too-many-tokens', '', detail)] }
+      return refused('', `A document has at most ${MOST} groups and tokens.`)
     }
-    const { name, layers: own, groupType, deprecated } = place
     const [first] = own
     if (first && isToken(first) && name !== '') {
       const { $deprecated } = first
@@ -66,10 +84,27 @@ export function namedEntries(layers: DtcgLayers): DtcgEntries {
       layers: layers.childLayers(own, child),
       groupType: members.type ?? groupType,
       deprecated: members.own.deprecated ?? deprecated,
+      inheritedBy: inheritedBy ?? (first && !childOf(first, child) ? first : undefined),
     }))
     for (const child of children.reverse()) waiting.push(child)
   }
   return { entries, groups, faults: [] }
+}
+
+const refused = (pointer: string, detail: string): DtcgEntries => ({
+  entries: [],
+  groups: [],
+  faults: [fault('too-many-tokens', pointer, detail)],
+})
+
+function tooManyInherited(
+  group: JsonObject,
+  pointerOf: (group: JsonObject) => string,
+): DtcgEntries {
+  const at = pointerOf(group)
+  const pointer = Object.hasOwn(group, '$extends') ? pointerTo(at, '$extends') : at
+  const detail = `A document has at most ${MOST_INHERITED} groups and tokens by $extends.`
+  return refused(pointer, detail)
 }
 
 function membersOf(layers: Layers) {

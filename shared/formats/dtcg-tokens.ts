@@ -69,7 +69,7 @@ export function readDtcgTokens(document: unknown): DtcgDocument {
   }
   const survey = surveyDocument(root)
   const layers = layerDocument(root, survey)
-  const named = namedEntries(layers)
+  const named = namedEntries(layers, (group) => survey.pointerOf.get(group)!)
   const entries = new Map(named.entries.map((entry) => [entry.name, entry]))
   const references = createReferences(layers, entries)
   const linked = linkEntries(entries, survey, references)
