@@ -36,6 +36,7 @@ const PLANTS: readonly Plant[] = [
   imports('api/http/b.ts', '#drizzle/schema/tokens.ts'),
   imports('api/features/tokens/tokens.routes.ts', '#drizzle/schema/tokens.ts'),
   imports('api/features/tokens/more.routes.ts', '#api/features/pairs/pairs.repository.ts'),
+  imports('api/features/tokens/reading.routes.ts', './tokens.reads.ts'),
   imports('api/features/tokens/tokens.service.ts', 'express'),
   imports('api/features/tokens/more.service.ts', '#api/http/route.ts'),
   imports('api/features/tokens/other.service.ts', '#api/features/pairs/pairs.repository.ts'),
@@ -44,6 +45,13 @@ const PLANTS: readonly Plant[] = [
   imports('api/features/tokens/tokens.repository.ts', '#shared/contracts/tokens.contract.ts'),
   imports('api/features/tokens/tokens.reads.ts', 'express'),
   imports('api/features/tokens/tokens.presenter.ts', '#drizzle/schema/tokens.ts'),
+  imports('api/features/tokens/deciding.rules.ts', './tokens.reads.ts'),
+  // of every role, what api/ as a whole never imports
+  ...['routes', 'service', 'rules', 'repository', 'reads', 'presenter'].flatMap((role) =>
+    ['console', 'openapi', 'scripts', 'tests'].map((folder) =>
+      imports(`api/features/tokens/of-${folder}.${role}.ts`, `#${folder}/x.ts`),
+    ),
+  ),
   // console: app → routes → features → ui, lib
   imports('console/app/a.tsx', '#api/app.ts'),
   imports('console/app/b.tsx', 'node:path'),
@@ -51,6 +59,9 @@ const PLANTS: readonly Plant[] = [
   imports('console/features/tokens/b.tsx', '#console/routes/tokens-page.tsx'),
   imports('console/ui/a.tsx', '@tanstack/react-query'),
   imports('console/ui/b.tsx', '#shared/client/client.ts'),
+  ...['api', 'drizzle', 'openapi', 'scripts', 'tests'].map((folder) =>
+    imports(`console/ui/of-${folder}.ts`, `#${folder}/x.ts`),
+  ),
   // scripts and tests
   imports('scripts/gate/a.ts', '#drizzle/schema/tokens.ts'),
   imports('scripts/gate/b.ts', '#api/app.ts'),
