@@ -49,11 +49,6 @@ export function findings(model: SystemModel, options: VerdictOptions = {}): read
   return verdictOf(evaluate(model), options).findings
 }
 
-/** `theme fg/bg` of each finding. */
-export function placesOf(all: readonly Finding[]): string[] {
-  return all.map((one) => `${one.theme} ${one.foregroundState}/${one.backgroundState}`)
-}
-
 /** Cut to decimals, never rounded. */
 export function truncated(ratio: number, decimals = 2): number {
   return Math.floor(ratio * 10 ** decimals) / 10 ** decimals
