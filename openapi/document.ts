@@ -19,6 +19,7 @@ import {
 const HEADERS = {
   'X-Request-Id': { description: 'Finds the line in the log', schema: { type: 'string' } },
   ETag: { description: 'Strong validator', schema: { type: 'string' } },
+  Location: { description: 'The address of what was made', schema: { type: 'string' } },
   Link: { description: 'rel="next" where a further page is', schema: { type: 'string' } },
   'Set-Cookie': { description: 'The session, HttpOnly', schema: { type: 'string' } },
   'WWW-Authenticate': { description: 'Bearer', schema: { type: 'string' } },
@@ -106,6 +107,7 @@ function operationOf(contract: Contract, problems: RouteConfig['responses']): Ro
     },
     responses: {
       [contract.success.status]: successOf(contract),
+      ...(contract.precondition === 'create' ? { 201: madeOf(contract) } : {}),
       ...(contract.conditional
         ? { 304: { description: 'Not modified since', headers: { ...REQUEST_ID, ...ETAG } } }
         : {}),
@@ -163,6 +165,7 @@ function bodyOf({ body, bodyExample }: Contract) {
 }
 
 const ETAG = headerRef('ETag')
+const LOCATION = headerRef('Location')
 
 function successOf(contract: Contract): ResponseConfig {
   const { success, conditional, precondition, query, operationId } = contract
@@ -172,6 +175,7 @@ function successOf(contract: Contract): ResponseConfig {
     ...REQUEST_ID,
     ...(hasEtag ? ETAG : {}),
     ...(isPaged ? headerRef('Link') : {}),
+    ...(success.status === 201 ? LOCATION : {}),
     ...(operationId === 'signIn' ? headerRef('Set-Cookie') : {}),
   }
   if (success.status === 204) return { description: 'Done', headers }
@@ -183,4 +187,10 @@ function successOf(contract: Contract): ResponseConfig {
     headers,
     content: Object.fromEntries(bare.map((type) => [type, { schema, example }])),
   }
+}
+
+/** What a PUT answers that made something: as its replacement does, with the address besides. */
+function madeOf(contract: Contract): ResponseConfig {
+  const { headers, ...replaced } = successOf(contract)
+  return { ...replaced, description: 'Made', headers: { ...headers, ...LOCATION } }
 }

@@ -9,22 +9,31 @@ interface Accompanied {
   readonly headers?: Readonly<Record<string, string | readonly string[]>>
 }
 
+/** 201 says where that is which was made; a PUT that can make says it where it did. */
+type Located<C extends Contract> = C['success'] extends { status: 201 }
+  ? { readonly location: string }
+  : C extends { precondition: 'create' }
+    ? { readonly location?: string | undefined }
+    : unknown
+
 /** What a handler answers: JSON, text of one of the contract's media types, or nothing. */
 export type Answer<C extends Contract> = C['success'] extends { status: 204 }
   ? undefined | Accompanied
   : C['success'] extends { media: readonly string[] }
     ? Accompanied & { readonly text: string; readonly media: string }
-    : Accompanied & {
-        readonly body: AnswerOf<C>
-        /** Cursor of the next page, where there is one. */
-        readonly next?: string | undefined
-      }
+    : Accompanied &
+        Located<C> & {
+          readonly body: AnswerOf<C>
+          /** Cursor of the next page, where there is one. */
+          readonly next?: string | undefined
+        }
 
 interface LooseAnswer extends Accompanied {
   readonly body?: unknown
   readonly text?: string
   readonly media?: string
   readonly next?: string | undefined
+  readonly location?: string | undefined
 }
 
 /** The answer is not what the contract says: a bug, found by a test. */
@@ -70,8 +79,9 @@ export function sendAnswer(
     response.status(304).end()
     return
   }
+  if (answer?.location !== undefined) response.set('Location', answer.location)
   response
-    .status(success.status)
+    .status(answer?.location === undefined ? success.status : 201)
     .set('Content-Type', answer?.media ?? 'application/json; charset=utf-8')
     .end(request.method === 'HEAD' ? undefined : text)
 }

@@ -1,4 +1,4 @@
-import type { Contract, InputOf, OutputOf } from '#shared/contracts/route.ts'
+import { addressOf, type Contract, type InputOf, type OutputOf } from '#shared/contracts/route.ts'
 import type { Problem } from '#shared/contracts/problems.ts'
 
 /** One request as the transport gets it. */
@@ -70,10 +70,8 @@ interface LooseInput {
   readonly ifNoneMatch?: string
 }
 
-const urlOf = (baseUrl: string, path: string, { params, query }: LooseInput): string => {
-  const filled = path.replace(/\{(\w+)\}/g, (_, name: string) =>
-    encodeURIComponent(String(params?.[name])),
-  )
+const urlOf = (baseUrl: string, contract: Contract, { params, query }: LooseInput): string => {
+  const filled = addressOf(contract, params)
   const search = new URLSearchParams()
   for (const [name, value] of Object.entries(query ?? {})) {
     for (const one of Array.isArray(value) ? value : [value]) {
@@ -120,7 +118,7 @@ export function createClient(options: ClientOptions): Call {
     const given = input as LooseInput
     const answer = await options.send({
       method: contract.method,
-      url: urlOf(options.baseUrl, contract.path, given),
+      url: urlOf(options.baseUrl, contract, given),
       headers: headersOf(options, contract, given),
       ...(given.body === undefined ? {} : { body: JSON.stringify(given.body) }),
     })

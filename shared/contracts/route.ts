@@ -42,7 +42,10 @@ export interface Contract {
   readonly success: Success
   readonly problems: readonly ProblemCode[]
   readonly access: Access
-  /** `required`: 428 without If-Match. `create`: PUT that takes `If-None-Match: *` or If-Match. */
+  /**
+   * `required`: 428 without If-Match. `create`: PUT that makes with `If-None-Match: *` and answers 201, or
+   * replaces with If-Match and answers its success. @see https://www.rfc-editor.org/rfc/rfc9110#section-9.3.4
+   */
   readonly precondition?: 'required' | 'create'
   /** The answer carries a strong ETag and `If-None-Match` is honoured with 304. */
   readonly conditional?: boolean
@@ -52,6 +55,16 @@ export interface Contract {
 export function defineContract<const C extends Contract>(contract: C): C {
   return contract
 }
+
+/**
+ * Answers the address of an operation: its path with the parameters filled in, percent-encoded.
+ * @see https://www.rfc-editor.org/rfc/rfc3986#section-2.1
+ */
+export const addressOf = (
+  { path }: Pick<Contract, 'path'>,
+  params: Readonly<Record<string, unknown>> = {},
+): string =>
+  path.replace(/\{(\w+)\}/g, (_, name: string) => encodeURIComponent(String(params[name])))
 
 type Part<C, K extends string, Out extends 'input' | 'output'> =
   C extends Record<K, infer S extends z.ZodType>

@@ -127,7 +127,7 @@ export const putTheme = defineContract({
   feature: 'themes',
   summary: 'Makes or replaces a theme; makes one revision',
   description:
-    'The first theme of a system is its base and derives from none. Creation takes If-None-Match: *, replacement If-Match.',
+    'The first theme of a system is its base and derives from none. Creation takes If-None-Match: * and answers 201, replacement If-Match and answers 200.',
   params: themeParams,
   body: putThemeBody,
   bodyExample: {

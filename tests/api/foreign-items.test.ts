@@ -21,7 +21,7 @@ beforeAll(async () => {
   await token('ink', '#000')
   await token('action.board.fill', '#bbb')
   const light = { name: 'Light', ground: 'deck', ink: 'ink' }
-  await maintainer.put(`${own}/themes/light`).set('If-None-Match', '*').send(light).expect(200)
+  await maintainer.put(`${own}/themes/light`).set('If-None-Match', '*').send(light).expect(201)
   const pair = { foreground: 'action.board.fill', background: 'deck', use: 'text' }
   const made = await maintainer.post(`${own}/pairs`).send(pair).expect(201)
   const key = await maintainer.post(`${own}/keys`).send({ name: 'x', scopes: ['themes:read'] })

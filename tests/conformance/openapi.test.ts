@@ -101,6 +101,21 @@ describe.each(cases)('%s', (_, contract) => {
   })
 })
 
+it('answers 201 with the address of what was made, and both of a PUT that can make it', () => {
+  const made = contracts.map(operationOf).filter(({ responses }) => responses[201] !== undefined)
+  expect(made.map(({ operationId }) => operationId).sort()).toEqual([
+    'createKey',
+    'createPair',
+    'createSystem',
+    'createToken',
+    'putTheme',
+  ])
+  for (const { responses } of made) expect(responses[201]?.headers?.Location).toBeDefined()
+  const put = made.find(({ operationId }) => operationId === 'putTheme')?.responses
+  expect(put?.[200]?.content).toEqual(put?.[201]?.content)
+  expect(put?.[200]?.headers?.Location).toBeUndefined()
+})
+
 it('answers every operation under a name of its own, equal to its export', () => {
   const ids = Object.values(document.paths).flatMap((item) =>
     Object.values(item).map(({ operationId }) => operationId),

@@ -118,6 +118,9 @@ function operationContradictions(
   if ('ETag' in (response.headers ?? {}) && !/^"[^"]+"$/.test(headers.etag ?? '')) {
     found.push(`has no strong ETag: ${headers.etag}`)
   }
+  if ('Location' in (response.headers ?? {}) && !headers.location?.startsWith('/v1/')) {
+    found.push(`has no Location: ${headers.location}`)
+  }
   if (Object.keys(content).length === 0) return text === '' ? found : [...found, 'has a body']
   if (content[media] === undefined) return [...found, `the document does not list ${media}`]
   if (media !== 'application/json' || sent === 'HEAD') return found

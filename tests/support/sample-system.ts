@@ -76,7 +76,7 @@ function systemAt(url: string, { people }: TestApp): SampleSystem {
     removePair: (id) => remove(`/pairs/${id}`),
     async putTheme(key, theme) {
       const put = maintainer.put(`${url}/themes/${key}`).set('If-None-Match', '*')
-      await put.send(theme).expect(200)
+      await put.send(theme).expect(201)
     },
     async patchTheme(key, members) {
       await patch(`/themes/${key}`, members)

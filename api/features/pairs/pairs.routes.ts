@@ -1,4 +1,5 @@
 import { type ApiRouter, mount } from '#api/http/route.ts'
+import { addressOf } from '#shared/contracts/route.ts'
 import {
   createPair,
   deletePair,
@@ -10,9 +11,10 @@ import type { PairsService } from './pairs.service.ts'
 
 export function mountPairs(router: ApiRouter, pairs: PairsService): void {
   mount(router, listPairs, ({ system, query }) => pairs.list(system, query))
-  mount(router, createPair, async ({ system, body }) => ({
-    body: await pairs.create(system, body),
-  }))
+  mount(router, createPair, async ({ system, params, body }) => {
+    const made = await pairs.create(system, body)
+    return { body: made, location: addressOf(getPair, { ...params, id: made.id }) }
+  })
   mount(router, getPair, async ({ system, params }) => ({
     body: await pairs.get(system, params.id),
   }))

@@ -1,4 +1,5 @@
 import { type ApiRouter, mount } from '#api/http/route.ts'
+import { addressOf } from '#shared/contracts/route.ts'
 import {
   createSystem,
   getSystem,
@@ -13,6 +14,7 @@ export function mountSystems(router: ApiRouter, systems: SystemsService): void {
   }))
   mount(router, createSystem, async ({ caller, body }) => ({
     body: await systems.create(caller, body),
+    location: addressOf(getSystem, { system: body.key }),
   }))
   mount(router, getSystem, async ({ system }) => ({ body: await systems.get(system) }))
   mount(router, patchSystem, async ({ system, ifMatch, body }) => ({

@@ -1,4 +1,5 @@
 import { type ApiRouter, mount } from '#api/http/route.ts'
+import { addressOf } from '#shared/contracts/route.ts'
 import {
   deleteTheme,
   getTheme,
@@ -25,6 +26,7 @@ export function mountThemes(router: ApiRouter, themes: ThemesService): void {
       { key: params.theme, ifMatch: createOnly ? undefined : ifMatch },
       body,
     ),
+    location: createOnly ? addressOf(getTheme, params) : undefined,
   }))
   mount(router, patchTheme, async ({ system, params, ifMatch, body }) => ({
     body: await themes.patch(system, { key: params.theme, ifMatch }, body),

@@ -1,4 +1,5 @@
 import { type ApiRouter, mount } from '#api/http/route.ts'
+import { addressOf } from '#shared/contracts/route.ts'
 import {
   createToken,
   deleteToken,
@@ -10,8 +11,9 @@ import type { TokensService } from './tokens.service.ts'
 
 export function mountTokens(router: ApiRouter, tokens: TokensService): void {
   mount(router, listTokens, ({ system, query }) => tokens.list(system, query))
-  mount(router, createToken, async ({ system, body }) => ({
+  mount(router, createToken, async ({ system, params, body }) => ({
     body: await tokens.create(system, body),
+    location: addressOf(getToken, { ...params, name: body.name }),
   }))
   mount(router, getToken, async ({ system, params }) => ({
     body: await tokens.get(system, params.name),

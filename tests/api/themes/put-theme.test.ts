@@ -29,7 +29,9 @@ const replace = async (key: string, body: object, agent = system.maintainer) => 
 
 describe('putTheme', () => {
   it('answers the theme made, at the end, its values on the tokens', async () => {
-    const { body } = await create('dark', DARK).expect(200)
+    const { body, headers } = await create('dark', DARK).expect(201)
+    expect(headers.location).toBe(at('dark'))
+    expect(headers.etag).toBe(body.etag)
     expect(body).toMatchObject({
       key: 'dark',
       position: 1,
@@ -50,7 +52,7 @@ describe('putTheme', () => {
   })
 
   it('makes one revision of all that it edits', async () => {
-    const { body } = await create('dark', DARK).expect(200)
+    const { body } = await create('dark', DARK).expect(201)
     const { body: revision } = await system.maintainer.get(
       `${system.url}/revisions/${body.effect.revision}`,
     )
@@ -63,7 +65,9 @@ describe('putTheme', () => {
   it('answers a replacement that no longer sets what it does not name', async () => {
     await system.addToken('accent', '#ff0000')
     await create('dark', { ...DARK, values: { ...DARK.values, accent: { rest: '#aa0000' } } })
-    const { body } = await replace('dark', { ...DARK, name: 'Night' })
+    const { body, status, headers } = await replace('dark', { ...DARK, name: 'Night' })
+    // RFC 9110, 9.3.4: 201 for what was not there, 200 for what was.
+    expect([status, headers.location]).toEqual([200, undefined])
     expect(body.name).toBe('Night')
     expect(Object.keys(body.values).sort()).toEqual(['ink', 'paper'])
     const { body: token } = await system.maintainer.get(`${system.url}/tokens/accent`)
@@ -127,15 +131,15 @@ describe('putTheme', () => {
   })
 
   it('refuses parents that lead back to themselves', async () => {
-    await create('dark', DARK).expect(200)
-    await create('night', { ...DARK, from: 'dark' }).expect(200)
+    await create('dark', DARK).expect(201)
+    await create('night', { ...DARK, from: 'dark' }).expect(201)
     const { status, body } = await replace('dark', { ...DARK, from: 'night' })
     expect(status).toBe(422)
     expect(body.errors[0]).toMatchObject({ pointer: '/from', code: 'theme-cycle' })
   })
 
   it('refuses a ninth theme', async () => {
-    for (let made = 1; made < 8; made += 1) await create(`t${made}`, DARK).expect(200)
+    for (let made = 1; made < 8; made += 1) await create(`t${made}`, DARK).expect(201)
     await create('ninth', DARK).expect(422)
   })
 
@@ -147,7 +151,7 @@ describe('putTheme', () => {
 
   it('refuses the lead all but level and gating', async () => {
     await create('dark', DARK, test.people.lead).expect(403)
-    await create('dark', DARK).expect(200)
+    await create('dark', DARK).expect(201)
     const gates = await replace('dark', { ...DARK, gating: false, level: 'AAA' }, test.people.lead)
     expect(gates.body).toMatchObject({ gating: false, level: 'AAA' })
     const named = await replace('dark', { ...DARK, name: 'Other' }, test.people.lead)
