@@ -23,7 +23,7 @@ export function usesOf(model: GovernedSystem, id: string): readonly TokenUse[] {
 
 const MOST_NAMED = 5
 
-/** The uses in one line, such as `pairs: a on b, a on c; aliases: d`. */
+/** The uses in one line, such as `by pairs: a on b, a on c; by aliases: d; as ink of theme e`. */
 export function describeUses(uses: readonly TokenUse[]): string {
   const parts = Object.entries(LABELS).flatMap(([as, label]) => {
     const names = [...new Set(uses.flatMap((use) => (use.as === as ? [use.by] : [])))]
@@ -36,10 +36,10 @@ export function describeUses(uses: readonly TokenUse[]): string {
 }
 
 const LABELS: Record<TokenUse['as'], string> = {
-  pair: 'pairs:',
-  alias: 'aliases:',
-  derivation: 'derived tokens:',
-  rule: 'rules of',
+  pair: 'by pairs:',
+  alias: 'by aliases:',
+  derivation: 'by derived tokens:',
+  rule: 'by rules of',
   ground: 'as ground of',
   ink: 'as ink of',
   replacement: 'as replacement of',

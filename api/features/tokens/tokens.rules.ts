@@ -58,7 +58,8 @@ export function decidePatch(
   const token = patched(index, before, body, reading)
   if (reading.faults.length > 0) return refuseFaults(reading.faults)
   if (before.locked && token.locked && coloursMoved(before, token)) {
-    return refuse('token-locked', `${before.name} is locked; unlock it in its own edit first`)
+    const detail = `${before.name} is locked: send "locked": false with this edit, or before it`
+    return refuse('token-locked', detail)
   }
   return { ok: true, edits: { tokens: { put: [token] } }, pointerOf: pointersOf(index, token) }
 }
@@ -68,7 +69,7 @@ export function decideDelete(index: SystemIndex, token: GovernedToken): Decision
   if (token.locked) return refuse('token-locked', `${token.name} is locked`)
   const uses = usesOf(index.model, token.id)
   if (uses.length > 0) {
-    return refuse('token-in-use', `${token.name} is used by ${describeUses(uses)}`)
+    return refuse('token-in-use', `${token.name} is used ${describeUses(uses)}`)
   }
   return { ok: true, edits: { tokens: { remove: [token.id] } } }
 }

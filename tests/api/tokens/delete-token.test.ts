@@ -53,7 +53,11 @@ describe('deleteToken', () => {
       expect(body.detail).toContain(user)
     }
     const ground = await remove('paper')
-    expect(ground.body.detail).toContain('as ground of theme light')
+    expect(ground.body.detail).toBe('paper is used as ground of theme light')
+    await system.addToken('old', '#666666', { deprecated: { replacement: 'other' } })
+    expect((await remove('other')).body.detail).toBe(
+      'other is used by pairs: base on other, ink on other; as replacement of old',
+    )
   })
 
   it('refuses a locked token, a missing and a stale If-Match', async () => {

@@ -138,6 +138,9 @@ describe('patchToken', () => {
     ]) {
       const refused = await patch('ink', body)
       expect([refused.status, refused.body.type]).toEqual([409, '/problems/token-locked'])
+      expect(refused.body.detail).toBe(
+        'ink is locked: send "locked": false with this edit, or before it',
+      )
     }
     expect((await patch('ink', { description: 'May be told' })).status).toBe(200)
     expect((await patch('ink', { locked: false, value: '#111111' })).status).toBe(200)
