@@ -108,7 +108,7 @@ export const createCheck = defineContract({
   feature: 'checks',
   summary: 'Measures every pair, of the head or of a candidate, and gives the verdict',
   description:
-    'Without tokens and pairs it checks against as it stands. Contrast is one criterion; a verdict is no statement of conformity.',
+    'Without tokens and pairs it checks against as it stands. Only an accessibility lead in person may send exempt pairs. Contrast is one criterion; a verdict is no statement of conformity.',
   params: systemParams,
   query: findingsQuery,
   body: createCheckBody,

@@ -38,7 +38,7 @@ export function createChecksService(deps: ChecksDeps) {
     /** Answers a verdict: a candidate that fails is no refusal. */
     async create(system: SystemAccess, { body, query }: Asked): Promise<CheckWire> {
       const head = await heads.current(system.id)
-      const measured = measureCandidate(head, body)
+      const measured = measureCandidate(head, body, { exempts: mayExempt(system) })
       if (!measured.ok) {
         const { code, ...options } = measured.refusal
         throw new AppError(code, options)
@@ -84,6 +84,10 @@ export function createChecksService(deps: ChecksDeps) {
     },
   }
 }
+
+/** Exemptions are the accessibility lead's own: a key is nobody, whoever owns it. */
+const mayExempt = ({ role, caller }: SystemAccess): boolean =>
+  caller.kind === 'user' && (role === 'accessibility-lead' || role === 'admin')
 
 /** The key that may read only what it asked for itself. */
 const ownKeyOf = ({ ownOnly, caller }: SystemAccess): string | undefined =>

@@ -22,16 +22,34 @@ export type Measured =
   | { readonly ok: true; readonly evaluation: Evaluation }
   | { readonly ok: false; readonly refusal: Refusal }
 
+/** What the caller's role allows: to exempt the pairs that are sent along. */
+export interface Authority {
+  readonly exempts: boolean
+}
+
 /** Measures what a check asks for, from the head by what differs; without a candidate, the head itself. */
-export function measureCandidate(head: Compared, request: CheckRequest): Measured {
+export function measureCandidate(
+  head: Compared,
+  request: CheckRequest,
+  { exempts }: Authority,
+): Measured {
   const read = readCandidate(head.index, request)
-  if (!read.ok) return refuseFaults(read.faults)
+  const exempted = exempts ? [] : exemptedPairs(request)
+  const faults = [...exempted, ...(read.ok ? [] : read.faults)]
+  if (!read.ok || faults.length > 0) return refuseFaults(faults)
   if (Object.keys(read.edits).length === 0) return { ok: true, evaluation: head.evaluation }
   const checked = recheck(head.evaluation, read.edits)
   if (checked.ok) return checked
-  const faults = checked.faults.map((fault) => faultOf(fault, read, head.index))
-  return refuse('system-unresolvable', undefined, faults)
+  const unresolved = checked.faults.map((fault) => faultOf(fault, read, head.index))
+  return refuse('system-unresolvable', undefined, unresolved)
 }
+
+const exemptedPairs = ({ pairs = [] }: CheckRequest): Fault[] =>
+  pairs.flatMap(({ exempt }, at) =>
+    exempt === undefined
+      ? []
+      : [{ pointer: `/pairs/${at}/exempt`, detail: 'Only an accessibility-lead exempts a pair' }],
+  )
 
 function readCandidate(head: SystemIndex, request: CheckRequest): CandidateEdits {
   const { mode, pairs = [], tokens: given } = request

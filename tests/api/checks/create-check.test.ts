@@ -182,6 +182,29 @@ describe('createCheck refuses', () => {
     expect(text).not.toMatch(/tok_|thm_/)
   })
 
+  it('an exemption of a pair from whoever is no accessibility lead, and from any key', async () => {
+    const exempt = { kind: 'logotype', reason: 'The line of the brand name' }
+    const soft = { foreground: 'ink', background: 'paper', use: 'text' }
+    const sent = { pairs: [soft, { ...soft, exempt }, { ...soft, foreground: 'no', exempt }] }
+    expect(await pointersOf(sent)).toEqual([
+      '/pairs/1/exempt',
+      '/pairs/2/exempt',
+      '/pairs/2/foreground',
+    ])
+    const made = await test.people.admin
+      .post(`${system.url}/keys`)
+      .send({ name: 'pipeline', scopes: ['checks:write'] })
+      .expect(201)
+    const one = { pairs: [{ ...soft, exempt }] }
+    const refused = await test.withKey(made.body.key).post(`${system.url}/checks`).send(one)
+    expect(refused.status).toBe(422)
+    expect(refused.body.errors).toMatchObject([{ pointer: '/pairs/0/exempt' }])
+    for (const agent of [test.people.lead, test.people.admin]) {
+      const { body } = await agent.post(`${system.url}/checks`).send(one).expect(200)
+      expect(body.counts.exempt).toBeGreaterThan(0)
+    }
+  })
+
   it('another revision than head, and members that nobody knows', async () => {
     expect(await pointersOf({ against: '1.0.0' })).toEqual(['/against'])
     expect(await pointersOf({ tokns: {} })).toEqual(['/tokns'])
