@@ -180,7 +180,7 @@ export const deleteTheme = defineContract({
   params: themeParams,
   query: z.strictObject({ message: messageSchema }),
   success: { status: 204 },
-  problems: [...EDIT_PROBLEMS, 'theme-in-use'],
+  problems: [...EDIT_PROBLEMS, 'theme-in-use', 'token-locked'],
   access: 'themes:write',
   precondition: 'required',
 })

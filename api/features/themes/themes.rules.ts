@@ -81,11 +81,14 @@ export function decideDelete(
     const ids = only.map(({ id }) => id).join(', ')
     return refuse('theme-in-use', `Pairs that occur in ${theme.key} alone: ${ids}`)
   }
+  const tokens = model.tokens.flatMap((token) => withoutTheme(token, theme.id))
+  const refusal = lockedAmong(tokens)
+  if (refusal) return refusal
   return {
     ok: true,
     edits: {
       themes: model.themes.filter(({ id }) => id !== theme.id),
-      tokens: { put: model.tokens.flatMap((token) => withoutTheme(token, theme.id)) },
+      tokens: { put: tokens },
       pairs: {
         put: model.pairs.flatMap((pair) =>
           pair.themes?.includes(theme.id)
@@ -103,6 +106,12 @@ const leadRefusal = refuse(
   'A maintainer edits themes; an accessibility-lead level and gating only',
 )
 
+/** A lock holds what themes set for the token, whichever way it would change. */
+function lockedAmong(moved: readonly GovernedToken[]) {
+  const names = moved.filter(({ locked }) => locked).map(({ name }) => name)
+  return names.length > 0 ? refuse('token-locked', `Locked: ${names.join(', ')}`) : undefined
+}
+
 type ThemeMembers = Omit<PutThemeBody, 'message' | 'values'>
 interface ThemeInput {
   readonly members: ThemeMembers
@@ -119,8 +128,8 @@ function decideTheme(index: SystemIndex, edit: ThemeEdit, input: ThemeInput): De
   if (!edit.editsAll && (tokens.length > 0 || reaches(edit.before, theme))) {
     return leadRefusal
   }
-  const locked = tokens.filter((token) => token.locked).map(({ name }) => name)
-  if (locked.length > 0) return refuse('token-locked', `Locked: ${locked.join(', ')}`)
+  const refusal = lockedAmong(tokens)
+  if (refusal) return refusal
   const themes =
     edit.before === undefined
       ? [...model.themes, theme]

@@ -61,6 +61,23 @@ describe('deleteTheme', () => {
     expect((await remove('night')).status).toBe(409)
   })
 
+  it('refuses while a locked token has an override or a rule in it, as setting one would', async () => {
+    await system.addToken('mark', '#555555', {
+      values: { night: { rest: '#777777' } },
+      locked: true,
+    })
+    await system.addToken('note', '#555555', {
+      rules: { themes: { night: { kind: 'keep' } } },
+      locked: true,
+    })
+    const refused = await remove('night')
+    expect([refused.status, refused.body.type]).toEqual([409, '/problems/token-locked'])
+    expect(refused.body.detail).toBe('Locked: mark, note')
+    await system.editToken('mark', { locked: false })
+    await system.editToken('note', { locked: false })
+    expect((await remove('night')).status).toBe(204)
+  })
+
   it('refuses the lead, and a missing or stale If-Match', async () => {
     expect((await remove('night', test.people.lead)).status).toBe(403)
     const url = `${system.url}/themes/night`
