@@ -9,7 +9,7 @@ import { createHeadsService } from './features/revisions/heads.service.ts'
 import { createRevisionsReads } from './features/revisions/revisions.reads.ts'
 import { createRevisionsService } from './features/revisions/revisions.service.ts'
 import { createRulesService } from './features/rules/rules.service.ts'
-import { createSystemsService } from './features/systems/systems.service.ts'
+import { createSystemsService, type SystemsDeps } from './features/systems/systems.service.ts'
 import { createThemesService } from './features/themes/themes.service.ts'
 import { createTokensService } from './features/tokens/tokens.service.ts'
 import type { Repositories, Transact } from './repositories.ts'
@@ -18,12 +18,13 @@ import type { Platform } from './services.ts'
 interface Reach {
   readonly reads: Repositories
   readonly transact: Transact<keyof Repositories>
+  readonly findAccess: SystemsDeps['findAccess']
 }
 
 /** Wires what a revision governs, around the one head and the one write. */
 export function createGovernedServices(
   { newId, clock, database, writeGuards }: Platform,
-  { reads, transact }: Reach,
+  { reads, transact, findAccess }: Reach,
 ) {
   const heads = createHeadsService({ heads: reads.heads, versions: reads.versions })
   const breaches = createBreachesService({ reads: createBreachesReads(database.db), newId })
@@ -38,7 +39,7 @@ export function createGovernedServices(
   return {
     heads,
     breaches,
-    systems: createSystemsService({ reads, transact, begins, writes, newId }),
+    systems: createSystemsService({ reads, transact, begins, writes, newId, findAccess }),
     tokens: createTokensService({ heads, writes, newId }),
     pairs: createPairsService({ heads, writes, newId }),
     themes: createThemesService({ heads, writes, newId }),

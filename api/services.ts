@@ -31,12 +31,14 @@ export function createServices(platform: Platform, config: Config, expectedMigra
   const { newId, database, passwords } = platform
   const reads = createRepositories(database.db)
   const transact = createTransactOver(platform.transact)
+  const members = createMembersService({ transact, reads })
+  const { findAccess } = members
   return {
-    ...createGovernedServices(platform, { reads, transact }),
+    ...createGovernedServices(platform, { reads, transact, findAccess }),
     accounts: createAccountsService({ transact, reads, newId, passwords }),
     sessions: createSessionsService({ transact, reads, newId, passwords }),
     keys: createKeysService({ transact, reads, newId }),
-    members: createMembersService({ transact, reads }),
+    members,
     health: createHealthService({
       countMigrations: database.countMigrations,
       expectedMigrations,

@@ -41,7 +41,7 @@ export const ROLE_PERMISSIONS = {
 export const ADMIN_PERMISSIONS = ['systems:create', 'members:write'] as const
 
 export const SCOPE_PERMISSIONS = {
-  'themes:read': ['themes:read', 'tokens:read'],
+  'themes:read': ['system:read', 'themes:read', 'tokens:read'],
   'checks:write': ['checks:write', 'checks:read-own'],
   'tokens:write': ['tokens:read', 'tokens:write'],
 } as const satisfies Record<Scope, readonly string[]>

@@ -1,4 +1,4 @@
-import { actorOf, type Caller, type SystemAccess } from '#api/caller.ts'
+import { actorOf, type Caller, type KeyCaller, type SystemAccess } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
 import type { HeadBeginService } from '#api/features/revisions/head-begin.service.ts'
 import type { HeadWriteService, Writing } from '#api/features/revisions/head-write.service.ts'
@@ -22,18 +22,21 @@ export interface SystemsDeps {
   readonly begins: HeadBeginService
   readonly writes: HeadWriteService
   readonly newId: NewId
+  /** What a caller may do in a system; nothing where they may not know of it. */
+  readonly findAccess: (caller: Caller, systemKey: string) => Promise<SystemAccess | undefined>
 }
 
 /** Systems: what they are called, how they are written, and the settings that revisions govern. */
-export function createSystemsService({ reads, transact, begins, writes, newId }: SystemsDeps) {
+export function createSystemsService(deps: SystemsDeps) {
+  const { reads, transact, begins, writes, newId } = deps
   return {
+    /** Every role reads its system; of keys some do. */
     async list(caller: Caller): Promise<SystemWire[]> {
-      const rows =
-        caller.kind === 'user' && caller.isAdmin
-          ? await reads.systems.listAll()
-          : await reads.systems.listOfMember(caller.userId)
-      const own = rows.filter(({ id }) => caller.kind === 'user' || caller.systemId === id)
-      return own.map(tagged)
+      if (caller.kind === 'key') return ofKey(deps, caller)
+      const rows = caller.isAdmin
+        ? await reads.systems.listAll()
+        : await reads.systems.listOfMember(caller.userId)
+      return rows.map(tagged)
     },
 
     async get(system: SystemAccess): Promise<SystemWire> {
@@ -63,16 +66,21 @@ export function createSystemsService({ reads, transact, begins, writes, newId }:
 
     async patch(system: SystemAccess, ifMatch: IfMatch, body: PatchSystemBody) {
       const authority = authorityIn(system)
-      const { writeMode } = await found(reads, system.id)
+      let standing: SystemFound
       const { effect } = await writes.write({
         system,
         message: body.message,
         expected: {
           ifMatch,
           beyondHead: true,
-          current: async (_, reading) => tagged(await found(reading, system.id)),
+          current: async (_, reading) => {
+            standing = await found(reading, system.id)
+            return tagged(standing)
+          },
         },
-        decide: ({ index }) => decidePatch(index, body, { authority, writeMode }),
+        // Asked after `current`, each time: the mode that counts is the one read under the lock.
+        decide: ({ index }) =>
+          decidePatch(index, body, { authority, writeMode: standing.writeMode }),
         audit: { action: 'settings.edited', subject: system.id },
         ...(body.name === undefined && body.writeMode === undefined
           ? {}
@@ -83,6 +91,12 @@ export function createSystemsService({ reads, transact, begins, writes, newId }:
   }
 }
 export type SystemsService = ReturnType<typeof createSystemsService>
+
+async function ofKey({ reads, findAccess }: SystemsDeps, caller: KeyCaller) {
+  const row = await reads.systems.find(caller.systemId)
+  const access = row && (await findAccess(caller, row.key))
+  return row && access?.allows('system:read') ? [tagged(row)] : []
+}
 
 const authorityIn = ({ role }: SystemAccess): SettingsAuthority => ({
   maintains: role === 'maintainer' || role === 'admin',

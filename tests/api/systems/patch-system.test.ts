@@ -1,11 +1,23 @@
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
+import { WRITE_GUARDS } from '#api/features/revisions/write-guards.ts'
 import { createTestApp, type TestApp } from '#tests/support/app.ts'
 import { createSampleSystem, type SampleSystem } from '#tests/support/sample-system.ts'
 
 let test: TestApp
 let system: SampleSystem
+/** Runs once, just before the next write takes its lock. */
+let beforeLock: (() => Promise<void>) | undefined
 beforeAll(async () => {
-  test = await createTestApp()
+  const writeGuards: typeof WRITE_GUARDS = {
+    ...WRITE_GUARDS,
+    async lock(heads, systemId) {
+      const meanwhile = beforeLock
+      beforeLock = undefined
+      await meanwhile?.()
+      return WRITE_GUARDS.lock(heads, systemId)
+    },
+  }
+  test = await createTestApp({ platform: { writeGuards } })
 })
 beforeEach(async () => {
   system = await createSampleSystem(test)
@@ -62,6 +74,18 @@ describe('patchSystem', () => {
     expect((await read()).name).not.toBe('Half')
     expect((await patch({ writeMode: 'direct' })).status).toBe(403)
     expect((await patch({ writeMode: 'direct' }, test.people.lead)).body.writeMode).toBe('direct')
+  })
+
+  it('refuses to end a review that began while the edit waited for its turn', async () => {
+    beforeLock = async () => {
+      await patch({ writeMode: 'review' }, test.people.lead)
+    }
+    const answer = await system.maintainer
+      .patch(system.url)
+      .set('If-Match', '*')
+      .send({ writeMode: 'direct' })
+    expect([answer.status, answer.body.type]).toEqual([403, '/problems/role-missing'])
+    expect((await read()).writeMode).toBe('review')
   })
 
   it('refuses the lead what is not level and write mode', async () => {
