@@ -3,9 +3,8 @@ import { whereInWords } from '#console/lib/finding-words.ts'
 import { countInWords, startSentence } from '#console/lib/format.ts'
 import { WordButton } from '#console/ui/button.tsx'
 import { OutcomeMark } from '#console/ui/outcome-mark.tsx'
-import { RatioMove } from '#console/ui/ratio-text.tsx'
 import type { MovedGroups, MovedLine } from './moved-lines.ts'
-import { passesByGroup } from './lowest-finding.ts'
+import { JudgedRatio } from './judged-ratio.tsx'
 import { RelationPhrase } from './relation-phrase.tsx'
 
 /** How names are read out of ids. */
@@ -94,21 +93,19 @@ function MovedItem({ line, names }: { line: MovedLine; names: ModelNames }) {
   return (
     <li className="flex min-h-34 flex-wrap items-center gap-x-16 gap-y-2 border-b border-feint py-4">
       <span className="min-w-0 flex-1 basis-200">
-        <RelationPhrase relation={line.relation} nameOf={names.token} />{' '}
-        <span className="ml-4 text-13 text-ink-soft">
+        <span className="mr-4">
+          <RelationPhrase relation={line.relation} nameOf={names.token} />
+        </span>{' '}
+        <span className="text-13 text-ink-soft">
           {whereInWords(names.theme(line.theme), line.states)}
         </span>
       </span>
-      <span className="ml-auto flex items-baseline gap-16">
-        {line.outcome === 'breach' && <OutcomeMark kind="breach">breach</OutcomeMark>}
-        {passesByGroup(line) && <span className="text-13 text-ink-soft">its group passes</span>}
-        <RatioMove
-          before={line.before}
-          ratio={line.ratio}
-          required={line.required}
-          outcome={line.outcome}
-        />
-      </span>
+      <JudgedRatio
+        before={line.before}
+        ratio={line.ratio}
+        required={line.required}
+        outcome={line.outcome}
+      />
     </li>
   )
 }
