@@ -33,23 +33,23 @@ export function ShipsTable(props: ShipsTableProps) {
         <thead>
           <tr>
             <th className="w-88 @max-[600px]:w-52">Theme</th>
-            <th className="w-70 @max-[600px]:w-64">State</th>
-            <th className="w-124 @max-[600px]:w-auto">
+            <th className="w-66 @max-[600px]:w-64">State</th>
+            <th className="w-120 @max-[600px]:w-auto">
               <span className="@max-[600px]:hidden">Seen on its ground</span>
               <span className="hidden @max-[600px]:inline">Seen</span>
             </th>
             <th className="w-150 @max-[980px]:hidden">
               <SourceHeads />
             </th>
-            <th className="w-144 @max-[600px]:hidden">
+            <th className="w-136 @max-[600px]:hidden">
               <span className="pl-14">sRGB</span>
             </th>
-            <th className="w-154 @max-[1180px]:hidden">Display P3</th>
+            <th className="w-145 @max-[1180px]:hidden">Display P3</th>
             <th className="@max-[820px]:hidden">Made by</th>
             <th className="w-129 @max-[600px]:w-104">
               <span className="block w-71 text-end @max-[600px]:w-46">Lowest</span>
             </th>
-            <th className="w-184 @max-[1100px]:hidden">Against</th>
+            <th className="w-178 @max-[1100px]:hidden">Against</th>
           </tr>
         </thead>
         {props.themes.map((theme) => (
@@ -119,7 +119,7 @@ function ColorCells({
           ? 'as sRGB'
           : color.p3.components.map((part) => Number(part).toFixed(3)).join(' ')}
       </td>
-      <td className="py-4! pr-16! leading-18 @max-[820px]:hidden">{color.provenance.text}</td>
+      <td className="py-4! pr-2! leading-18 @max-[820px]:hidden">{color.provenance.text}</td>
     </>
   )
 }
@@ -155,7 +155,7 @@ function LowestCells({
             outcome={lowest.outcome}
           />
         </span>
-        <span className="flex justify-end text-12 text-ink-soft @min-[1100px]:hidden">
+        <span className="flex justify-end pb-3 text-12 text-ink-soft @min-[600px]:pr-6 @min-[1100px]:hidden">
           <LowestMark lowest={lowest} />
         </span>
       </td>
