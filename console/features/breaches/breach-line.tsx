@@ -27,7 +27,7 @@ export function BreachLine({ under, ...row }: BreachRowProps & { under: ReactNod
             required={breach.required}
             outcome={outcomeOf(breach)}
           />
-          <span>
+          <span className="line-where">
             {breach.theme}, {stateInWords(breach.state)}
           </span>
         </div>

@@ -1,3 +1,4 @@
+import { stateInWords } from '#console/lib/finding-words.ts'
 import type { LedgerTokenWire, StandingWire } from '#shared/contracts/tokens.contract.ts'
 import type { MeasuredTokens } from './measure-theme.ts'
 import type { TokenFilter } from './token-filter.ts'
@@ -62,6 +63,12 @@ export function isUnexplained({ standing: { pairs, lowest } }: LedgerTokenWire):
 /** How far over its line; a token that nothing measures comes last. */
 function margin({ standing: { lowest } }: LedgerRow): number {
   return lowest === null || lowest.required === 0 ? Infinity : lowest.ratio / lowest.required
+}
+
+/** Where it is lowest: `light, rest on hover`; or that it is its group that passes. */
+export function placeInWords({ standing: { lowest }, isByGroup }: LedgerRow): string {
+  if (lowest === null) return isByGroup ? 'its group passes' : ''
+  return `${lowest.theme}, ${stateInWords(lowest.state)}`
 }
 
 /** Rows that follow each other under one group name. */

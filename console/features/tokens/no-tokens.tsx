@@ -32,7 +32,7 @@ export function NoTokenFound({
       title={near === undefined ? 'No token answers to this sentence.' : titleFor(near, offered)}
     >
       {offered.length > 0 && (
-        <ul className="flex flex-wrap gap-x-22 gap-y-4">
+        <ul className="flex flex-col gap-x-22 gap-y-4 wide:flex-row wide:flex-wrap">
           {offered.map((name) => (
             <li key={name}>
               <Link to={href(name)} className="word-woad font-medium">

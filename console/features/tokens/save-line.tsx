@@ -37,7 +37,7 @@ export function SaveLine({
       />
       <div className="flex flex-1 flex-wrap items-center justify-end gap-x-22 gap-y-8">
         {obstacle !== undefined && (
-          <p id="save-obstacle" className="text-13 text-ink-soft">
+          <p id="save-obstacle" className="w-full text-13 text-ink-soft wide:text-end full:w-auto">
             {obstacle}
           </p>
         )}

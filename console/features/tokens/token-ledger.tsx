@@ -71,7 +71,7 @@ function LedgerHead({ light, dark }: { light: string; dark: string }) {
     <thead>
       <tr aria-rowindex={1}>
         <th className="w-88">Group</th>
-        <th className="w-[max(120px,146px+(100cqw-1280px)*0.5)]">Name</th>
+        <th className="w-[max(120px,156px+(100cqw-1280px)*0.5)]">Name</th>
         <th className="w-128">{startSentence(light === dark ? light : `${light}, ${dark}`)}</th>
         <th className="w-194 @max-[960px]:hidden">
           <span className="pl-14 inline-block">
@@ -86,7 +86,7 @@ function LedgerHead({ light, dark }: { light: string; dark: string }) {
           <span className="sr-only">Ratio, from 1 to 21</span>
           <RulerHead />
         </th>
-        <th className="w-[max(104px,156px+(100cqw-1280px)*0.2)] @max-[700px]:hidden">Where</th>
+        <th className="w-[max(104px,146px+(100cqw-1280px)*0.2)] @max-[700px]:hidden">Where</th>
         <th>Mark</th>
       </tr>
     </thead>

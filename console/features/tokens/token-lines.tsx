@@ -1,8 +1,7 @@
 import { Link } from 'react-router-dom'
-import { stateInWords } from '#console/lib/finding-words.ts'
 import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import { type RowLinkProps, useRowWalk } from '#console/ui/row-walk.ts'
-import { groupRows, type LedgerRow } from './ledger-rows.ts'
+import { groupRows, type LedgerRow, placeInWords } from './ledger-rows.ts'
 import { TokenCell } from './token-cell.tsx'
 import type { TokenLedgerProps } from './token-ledger.tsx'
 import { TokenMark } from './token-mark.tsx'
@@ -65,15 +64,8 @@ function TokenLine({
           breach={breaches.get(token.name)}
           size="line"
         />
-        {lowest !== null && (
-          <>
-            <RatioColumns {...lowest} />
-            <span>
-              {lowest.theme}, {stateInWords(lowest.state)}
-            </span>
-          </>
-        )}
-        {row.isByGroup && <span>its group passes</span>}
+        {lowest !== null && <RatioColumns {...lowest} />}
+        <span className="line-where">{placeInWords(row)}</span>
       </div>
     </li>
   )

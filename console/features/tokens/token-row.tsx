@@ -1,11 +1,10 @@
 import { Link, useNavigate } from 'react-router-dom'
-import { stateInWords } from '#console/lib/finding-words.ts'
 import { RatioRuler } from '#console/ui/ratio-ruler.tsx'
 import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import type { RowLinkProps } from '#console/ui/row-walk.ts'
 import type { StripBand } from '#console/ui/strip-geometry.ts'
 import type { StandingWire } from '#shared/contracts/tokens.contract.ts'
-import type { LedgerRow } from './ledger-rows.ts'
+import { type LedgerRow, placeInWords } from './ledger-rows.ts'
 import type { StripThemes } from './strip-bands.ts'
 import { TokenCell } from './token-cell.tsx'
 import { TokenMark } from './token-mark.tsx'
@@ -84,6 +83,7 @@ function pairCount(standing: StandingWire): string {
 
 function Measures({ row }: { row: LedgerRow }) {
   const { lowest } = row.standing
+  const where = placeInWords(row)
   return (
     <>
       <td>
@@ -92,17 +92,15 @@ function Measures({ row }: { row: LedgerRow }) {
             <RatioColumns {...lowest} />
           </span>
         )}
+        <span className="-mt-3 hidden pr-6 pb-2 text-end text-12 text-ink-soft @max-[700px]:block">
+          {where}
+        </span>
       </td>
       <td className="@max-[1180px]:hidden">
         <RatioRuler measured={lowest} />
       </td>
       <td className="pr-8! text-ink-soft @max-[700px]:hidden">
-        {lowest !== null && (
-          <span className="block leading-18">
-            {lowest.theme}, {stateInWords(lowest.state)}
-          </span>
-        )}
-        {row.isByGroup && 'its group passes'}
+        <span className="block leading-18">{where}</span>
       </td>
     </>
   )
