@@ -35,7 +35,7 @@ export function BreachRow({ columns, ...row }: BreachRowProps & { columns: Breac
           <PairSample {...breach.rendered} breaches={breach.status === 'open'} />
         </span>
       </td>
-      <td className="truncate">
+      <td>
         <BreachLink {...row} />
       </td>
       {columns.where && (
@@ -76,7 +76,7 @@ export function BreachLink({ breach, href, link, isOpened }: BreachRowProps) {
       {...link}
       aria-expanded={isOpened}
       aria-label={`Breach ${breach.number}: ${breach.foreground} on ${breach.background}`}
-      className="block py-6 break-words wide:truncate"
+      className="block py-6 pr-10 break-words wide:py-1 wide:leading-18"
     >
       <span className={isOpened ? 'font-semibold' : 'font-medium'}>{breach.foreground}</span>
       {' on '}

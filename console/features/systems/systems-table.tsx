@@ -27,7 +27,9 @@ export function SystemsTable({ systems, href, role }: SystemsTableProps) {
               <span className="pl-28">Head</span>
             </th>
             <th className="@max-[900px]:hidden">Your role</th>
-            <th className="w-140">Breaches</th>
+            <th className="w-140 @min-[500px]:w-168">
+              <span className="@min-[500px]:pl-28">Breaches</span>
+            </th>
           </tr>
         </thead>
         <tbody>
@@ -85,11 +87,13 @@ function SystemRow({
       </td>
       <td className="text-ink-soft @max-[900px]:hidden">{role}</td>
       <td>
-        {counts.openBreaches > 0 ? (
-          <OutcomeMark kind="breach">{counts.openBreaches} open</OutcomeMark>
-        ) : (
-          <span className="text-ink-soft">none open</span>
-        )}
+        <span className="@min-[500px]:pl-28">
+          {counts.openBreaches > 0 ? (
+            <OutcomeMark kind="breach">{counts.openBreaches} open</OutcomeMark>
+          ) : (
+            <span className="text-ink-soft">none open</span>
+          )}
+        </span>
       </td>
     </tr>
   )
