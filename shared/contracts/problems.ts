@@ -75,7 +75,8 @@ export const problemSchema = z
     status: z.int().meta({ example: 422 }),
     detail: z.string().optional(),
     instance: z.string().optional(),
-    errors: z.array(faultSchema).optional(),
+    errors: z.array(faultSchema).max(100).optional(),
+    more: z.int().min(1).optional().meta({ description: 'Faults besides those in errors' }),
     requestId: z.string(),
   })
   .meta({ id: 'Problem', description: 'Problem document of RFC 9457' })
