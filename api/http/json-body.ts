@@ -1,5 +1,5 @@
 import { AppError, invalidRequest } from '#api/errors.ts'
-import { pointerOf } from './faults.ts'
+import { pointerOf } from '#shared/contracts/faults.ts'
 
 /** How deep a body may be nested. */
 export const MOST_DEPTH = 32

@@ -7,6 +7,7 @@ import {
   themeValuesInputSchema,
   tokenNameSchema,
 } from '#shared/contracts/fields.ts'
+import { faultsOf } from '#shared/contracts/faults.ts'
 import type { Fault } from '#shared/contracts/problems.ts'
 import type { ParsedOf } from '#shared/contracts/route.ts'
 import { ruleScopeSchema } from '#shared/contracts/rules.contract.ts'
@@ -92,10 +93,13 @@ function candidateToken(token: DtcgToken, faults: Fault[]): CandidateToken {
   for (const { message } of tokenNameSchema.safeParse(name).error?.issues ?? []) {
     faults.push({ pointer, detail: message })
   }
-  const extension = extensionSchema.safeParse(token.extensions?.[EXTENSION] ?? {})
-  for (const { path, message } of extension.error?.issues ?? []) {
-    const at = ['$extensions', EXTENSION, ...path].map((step) => pointerSegment(String(step)))
-    faults.push({ pointer: [pointer, ...at].join('/'), detail: message })
+  const own = token.extensions?.[EXTENSION] ?? {}
+  const extension = extensionSchema.safeParse(own)
+  if (extension.error) {
+    const at = `${pointer}/$extensions/${EXTENSION}`
+    for (const fault of faultsOf(extension.error, own)) {
+      faults.push({ ...fault, pointer: `${at}${fault.pointer}` })
+    }
   }
   return { name, value, pointer, extension: extension.data ?? {} }
 }

@@ -149,3 +149,27 @@ describe('measureCandidate', () => {
     expect(measured).toBeGreaterThan(50)
   })
 })
+
+describe('measureCandidate refuses', () => {
+  const faultsWith = (own: unknown) => {
+    const $value = { colorSpace: 'srgb', components: [0, 1, 0] }
+    const fresh = { $type: 'color', $value, $extensions: { 'dev.dyewright': own } }
+    const parsed = createCheckBody.parse({ tokens: { fresh } })
+    const outcome = measureCandidate(head, parsed, { exempts: true })
+    return outcome.ok ? [] : outcome.refusal.faults
+  }
+  const at = '/tokens/fresh/$extensions/dev.dyewright'
+
+  it('what our own extension does not know, at the member and in words', () => {
+    const own = { rules: { q: 1 }, states: ['rest'], values: { light: { rest: 'nope' } } }
+    expect(faultsWith(own)).toEqual([
+      {
+        pointer: `${at}/states/0`,
+        detail: 'Expected "hover" or "active" or "focus" or "disabled"',
+      },
+      { pointer: `${at}/values/light/rest`, detail: expect.stringContaining('nope') },
+      { pointer: `${at}/rules/q`, detail: 'Unknown member' },
+    ])
+    expect(faultsWith([])).toEqual([{ pointer: at, detail: 'Expected an object' }])
+  })
+})

@@ -1,5 +1,5 @@
 import type * as z from 'zod'
-import type { Fault } from '#shared/contracts/problems.ts'
+import type { Fault } from './problems.ts'
 
 type Issue = z.core.$ZodIssue
 type Path = readonly PropertyKey[]
@@ -17,7 +17,7 @@ export function faultsOf(error: z.ZodError, input: unknown, place: Place = 'body
   return spots.map(({ path, detail }) =>
     place === 'body'
       ? { pointer: pointerOf(path), detail }
-      : { parameter: String(path[0]), detail },
+      : { parameter: String(path[0]), detail: detail === UNKNOWN ? 'Unknown parameter' : detail },
   )
 }
 
@@ -35,6 +35,8 @@ function leadingIssues(issues: readonly Issue[]): Issue[] {
   )
 }
 
+const UNKNOWN = 'Unknown member'
+
 interface Spot {
   readonly path: Path
   readonly detail: string
@@ -45,7 +47,7 @@ function spotsOf(issue: Issue, input: unknown, base: Path): Spot[] {
   const path = [...base, ...issue.path]
   switch (issue.code) {
     case 'unrecognized_keys':
-      return issue.keys.map((key) => ({ path: [...path, key], detail: 'Unknown member' }))
+      return issue.keys.map((key) => ({ path: [...path, key], detail: UNKNOWN }))
     case 'invalid_union':
       return issue.errors.length === 0
         ? [{ path, detail: issue.message }]
@@ -61,19 +63,23 @@ function spotsOf(issue: Issue, input: unknown, base: Path): Spot[] {
 
 /**
  * Of a union, the branch that was most likely meant speaks: one that takes this type of value at all, then the
- * one with the fewest faults. Where no branch takes it, all say what they take.
+ * one that knows the most of its members, then the one with the fewest faults. Where no branch takes it, all say
+ * what they take.
  */
 function unionSpots(branches: readonly Issue[][], input: unknown, path: Path): Spot[] {
   const fitting = branches.filter((issues) => !issues.some(refusesWhole))
   const best = fitting
     .map((issues) => issues.flatMap((issue) => spotsOf(issue, input, path)))
-    .sort((a, b) => a.length - b.length)[0]
+    .sort((a, b) => unknownIn(a) - unknownIn(b) || a.length - b.length)[0]
   if (best !== undefined) return best
   const value = valueAt(input, path)
   if (value === undefined) return [{ path, detail: 'Missing' }]
   const wanted = branches.flatMap((issues) => issues.filter(refusesWhole).map(wantedBy))
   return [{ path, detail: `Expected ${[...new Set(wanted)].join(' or ')}` }]
 }
+
+const unknownIn = (spots: readonly Spot[]): number =>
+  spots.filter(({ detail }) => detail === UNKNOWN).length
 
 /** Says that the value as a whole is of the wrong kind. */
 const refusesWhole = (issue: Issue): boolean =>
