@@ -1,5 +1,7 @@
 import * as z from 'zod'
 import { DERIVED_STATES, LEVELS, STATES } from '#shared/checks/model.ts'
+import { parseColor } from '#shared/color/parse-color.ts'
+import { readDtcgColor } from '#shared/formats/dtcg-color.ts'
 
 /** Slug of a system or a theme: no dot, so that a theme's file name splits at its first dot. */
 export const slugSchema = z
@@ -109,9 +111,38 @@ export const valueSchema = z
   .meta({ id: 'Value' })
 export type ValueWire = z.infer<typeof valueSchema>
 
+/** A colour object as a write gives it: each component within the range of its space, whatever else is wrong. */
+const colorInputSchema = dtcgColorSchema
+  .superRefine(
+    (value, context) => {
+      const read = readDtcgColor(value)
+      if (read.ok) return
+      for (const { code, pointer, detail } of read.faults) {
+        if (code !== 'color-range') continue
+        const path = pointer.slice(1).split('/')
+        context.addIssue({ code: 'custom', path, message: detail })
+      }
+    },
+    { when: () => true },
+  )
+  .meta({ id: 'ColorInput', description: 'Each component lies in the range of its space' })
+
+const isBraced = (text: string): boolean => text.startsWith('{') && text.endsWith('}')
+
+/** A CSS colour, or a name in braces: whether there is a token of that name is not for a contract to say. */
+const textInputSchema = z
+  .string()
+  .trim()
+  .min(1, { abort: true })
+  .max(255, { abort: true })
+  .superRefine((text, context) => {
+    const read = isBraced(text) ? undefined : parseColor(text)
+    if (read?.ok === false) context.addIssue({ code: 'custom', message: read.reason })
+  })
+
 /** What a write takes: also any CSS Color 4 string. */
 export const valueInputSchema = z
-  .union([z.string().trim().min(1).max(255), dtcgColorSchema, derivedValueSchema])
+  .union([textInputSchema, colorInputSchema, derivedValueSchema])
   .meta({
     id: 'ValueInput',
     description: 'A CSS Color 4 string, a colour object, a token name in braces, or a derivation',
@@ -135,7 +166,18 @@ export const stateValuesInputSchema = perState(valueInputSchema).meta({ id: 'Sta
 export const themeValuesSchema = z.record(slugSchema, stateValuesSchema)
 export const themeValuesInputSchema = z.record(slugSchema, stateValuesInputSchema)
 
-const countSchema = (most: number) => z.coerce.number().int().min(1).max(most)
+const WHOLE_NUMBER = /^(?:0|-?[1-9]\d*)$/
+
+/** A whole number in a path or a query: decimal digits alone, not what else `Number` takes (0x10, 1e2, spaces). */
+export const wholeNumberSchema = (least: number, most: number) =>
+  z.preprocess((given, context) => {
+    if (typeof given !== 'string') return given
+    if (WHOLE_NUMBER.test(given)) return Number(given)
+    context.addIssue({ code: 'invalid_type', expected: 'int', input: given })
+    return z.NEVER
+  }, z.int().min(least).max(most))
+
+const countSchema = (most: number) => wholeNumberSchema(1, most)
 
 export const limitSchema = (most: number, fallback: number) =>
   countSchema(most)

@@ -11,6 +11,7 @@ import {
   themeValuesSchema,
   tokenNameSchema,
   valueSchema,
+  wholeNumberSchema,
 } from './fields.ts'
 import { countsSchema, engineSchema, verdictSchema } from './findings.ts'
 import { pairSchema } from './pairs.contract.ts'
@@ -115,7 +116,7 @@ export const getRevision = defineContract({
   feature: 'revisions',
   summary: 'One revision, whole',
   params: systemParams.extend({
-    number: z.coerce.number().int().min(0).max(4_294_967_294).meta({ type: 'integer' }),
+    number: wholeNumberSchema(0, 4_294_967_294).meta({ type: 'integer' }),
   }),
   success: {
     status: 200,

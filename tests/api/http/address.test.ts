@@ -15,6 +15,11 @@ describe('query', () => {
     ['a repeated one', 'limit=1&limit=2', 'limit'],
     ['a number out of range', 'limit=0', 'limit'],
     ['a text for a number', 'limit=ten', 'limit'],
+    ['a hexadecimal number', 'limit=0x10', 'limit'],
+    ['a number after a space', 'limit=%205', 'limit'],
+    ['a number with a zero before it', 'limit=05', 'limit'],
+    ['a number with an exponent', 'limit=1e1', 'limit'],
+    ['no number', 'limit=', 'limit'],
     ['a word that is none of those known', 'view=wide', 'view'],
     ['broken percent-encoding', 'named=%zz', 'named'],
     ['bytes that are not UTF-8', 'named=%ff%fe', 'named'],
@@ -30,6 +35,18 @@ describe('query', () => {
     const { body } = await get('/v1/systems/larkhaven/breaches?status=shut').expect(400)
     const detail = 'Expected "open" or "waived" or "resolved"'
     expect(body.errors).toEqual([{ parameter: 'status', detail }])
+  })
+
+  it('says that a parameter is unknown, not a member', async () => {
+    const { body } = await get('/v1/systems/larkhaven/pairs?colour=red').expect(400)
+    expect(body.errors).toEqual([{ parameter: 'colour', detail: 'Unknown parameter' }])
+  })
+
+  it('says that a limit is a whole number, also where it is below the least', async () => {
+    const detailOf = async (limit: string) =>
+      (await get(`/v1/systems/larkhaven/pairs?limit=${limit}`).expect(400)).body.errors[0].detail
+    expect(await detailOf('1.5')).toBe('Expected a whole number')
+    expect(await detailOf('-5')).toMatch(/>=1/)
   })
 
   it('refuses any parameter where none is known', async () => {
@@ -56,6 +73,14 @@ describe('path', () => {
     const { body } = await get('/v1/systems/Not%20A%20Slug').expect(400)
     expect(body.errors[0].parameter).toBe('system')
   })
+
+  it.each(['0x1', '01', '1.0', '%201', '1e0', '-0'])(
+    'refuses %s as the number of a revision with 400',
+    async (number) => {
+      const { body } = await get(`/v1/systems/larkhaven/revisions/${number}`).expect(400)
+      expect(body.errors).toEqual([{ parameter: 'number', detail: 'Expected a whole number' }])
+    },
+  )
 
   it.each([
     '/v1/nothing',

@@ -130,6 +130,73 @@ describe('faults', () => {
     ])
   })
 
+  it('answers faults of value beside faults of shape', async () => {
+    const pointersOf = async (sent: object) => {
+      const { body } = await post(JSON.stringify(sent)).expect(422)
+      return body.errors.map(({ pointer }: { pointer: string }) => pointer).sort()
+    }
+    expect(await pointersOf({ name: 'a..b', value: 'color-mix(in oklab, red, blue)' })).toEqual([
+      '/name',
+      '/value',
+    ])
+    const ranges = { colorSpace: 'srgb', components: [1.5, 2, -1], alpha: 2 }
+    const components = ['/value/components/0', '/value/components/1', '/value/components/2']
+    expect(await pointersOf({ name: 'a.b', value: ranges })).toEqual([
+      '/value/alpha',
+      ...components,
+    ])
+    const mixed = { ...ranges, components: [1.5, 'x', -1], hex: 'red', extra: 1 }
+    expect(await pointersOf({ name: 'a.b', value: mixed })).toEqual([
+      '/value/alpha',
+      ...components,
+      '/value/extra',
+      '/value/hex',
+    ])
+    const dark = { rest: 'nope', hover: { ...ranges, alpha: 1 } }
+    expect(await pointersOf({ name: '$', value: '#12', values: { dark } })).toEqual([
+      '/name',
+      '/value',
+      '/values/dark/hover/components/0',
+      '/values/dark/hover/components/1',
+      '/values/dark/hover/components/2',
+      '/values/dark/rest',
+    ])
+  })
+
+  it('says what is wrong with a color once, and why', async () => {
+    const { body } = await post('{"name": "a", "value": "nope"}').expect(422)
+    expect(body.errors).toHaveLength(1)
+    expect(body.errors[0].detail).toContain('nope')
+    const long = JSON.stringify({ name: 'a', value: 'x'.repeat(256) })
+    expect((await post(long).expect(422)).body.errors).toHaveLength(1)
+  })
+
+  it('answers 100 faults at most, and how many more there are', async () => {
+    const many = Object.fromEntries(Array.from({ length: 5000 }, (_, at) => [`member ${at}`, at]))
+    const { body, text } = await post(JSON.stringify(many)).expect(422)
+    expect(body.errors).toHaveLength(100)
+    expect(body.more).toBe(5002 - 100)
+    expect(text.length).toBeLessThan(20_000)
+  })
+
+  it('leaves out how many more there are where all are named', async () => {
+    const { body } = await post('{}').expect(422)
+    expect(body.errors).toHaveLength(2)
+    expect(body).not.toHaveProperty('more')
+  })
+
+  it('answers faults under a long name no longer than its request', async () => {
+    const bad = Array.from({ length: 90 }, (_, at) => [`t${at}`, { $value: at }])
+    const tokens = { ['n'.repeat(50_000)]: { $type: 'color', ...Object.fromEntries(bad) } }
+    const { body, text } = await test.people.maintainer
+      .post('/v1/systems/larkhaven/checks')
+      .send({ tokens })
+      .expect(422)
+    expect(body.errors.length).toBeGreaterThan(0)
+    expect(body.errors.length + body.more).toBe(90)
+    expect(text.length).toBeLessThan(200_000)
+  })
+
   it('tells an absent member from one of the wrong type', async () => {
     const { body } = await post('{"value": 12}').expect(422)
     expect(body.errors).toEqual([

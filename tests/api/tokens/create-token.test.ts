@@ -66,10 +66,10 @@ describe('createToken', () => {
     expect(derived.body.resolved.light.rest.hex).toMatch(/^#[0-9a-f]{6}80$/)
   })
 
-  it('refuses every fault of a body at once, each with its pointer', async () => {
+  it('refuses every name that the system does not have, each with its pointer', async () => {
     const { body } = await post({
       name: 'faulty',
-      value: 'color-mix(in oklab, red, blue)',
+      value: { derive: '{nobody}' },
       values: { light: { hover: '{nowhere}' }, night: { rest: '#fff' } },
       rules: {
         states: { hover: { lightness: 0.1, away: '{gone}' } },
@@ -83,7 +83,7 @@ describe('createToken', () => {
       '/rules/states/hover/away',
       '/rules/themes/dusk',
       '/rules/themes/dusk/against',
-      '/value',
+      '/value/derive',
       '/values/light/hover',
       '/values/night',
     ])
