@@ -4,10 +4,12 @@ import { cpSync, existsSync, mkdtempSync, readFileSync, rmSync, symlinkSync } fr
 import { tmpdir } from 'node:os'
 import { dirname, join } from 'node:path'
 import { setTimeout as delay } from 'node:timers/promises'
+import { createConnection } from 'mysql2/promise'
 import { afterAll, beforeAll, describe, expect, inject, test } from 'vitest'
 import { freePort } from '#scripts/start/free-port.mjs'
 import { findProcesses, processIdentity } from '#scripts/start/processes.mjs'
 import { demoPeople } from '#scripts/start/seeding.mjs'
+import { createTestDatabase, type TestDatabase } from '#tests/support/database.ts'
 
 const ROOT = process.cwd()
 const READY = 'Dyewright is ready:'
@@ -135,6 +137,49 @@ describe('npm start', () => {
     expect(production.output()).toMatch(
       /refused to start: the database has \d+ accounts of the demo/,
     )
+  })
+})
+
+describe('npm start in production on a database of one’s own', () => {
+  let database: TestDatabase
+  beforeAll(async () => {
+    database = await createTestDatabase()
+  })
+  afterAll(async () => {
+    await setFlush(0)
+    await database.drop()
+  })
+
+  /** The server of the tests does not flush at commit, until told to. */
+  async function setFlush(value: 0 | 1): Promise<void> {
+    const connection = await createConnection(database.adminUrl)
+    await connection.query(`set global innodb_flush_log_at_trx_commit = ${value}`)
+    await connection.end()
+  }
+
+  const startInProduction = () =>
+    start({
+      NODE_ENV: 'production',
+      PUBLIC_URL: 'https://dyewright.example',
+      DATABASE_URL: database.serveUrl,
+      MIGRATE_DATABASE_URL: database.migrateUrl,
+    })
+
+  test('refuses one that does not flush at commit, by name', async () => {
+    const refused = startInProduction()
+    expect(await exitOf(refused.child)).toBe(1)
+    expect(refused.output()).toContain('innodb_flush_log_at_trx_commit')
+  })
+
+  test('serves from a safe one, with no private database and no demo', async () => {
+    await setFlush(1)
+    const safe = startInProduction()
+    await untilSaid(safe, READY)
+    expect(findProcesses(`--datadir=${join(folder, '.data/mariadb')}`)).toEqual([])
+    expect(safe.output()).not.toMatch(/^(MariaDB|Database|Accounts|Demo) /m)
+    expect(safe.output()).not.toContain(demoPeople().password)
+    expect(await statusOf('/readyz')).toBe(200)
+    expect(await stop(safe)).toBe(0)
   })
 })
 
