@@ -39,7 +39,7 @@ interface Place {
 
 const MOST = 100_000
 /** Groups that extend groups that extend groups multiply without end. */
-const MOST_INHERITED = 20_000
+const MOST_INHERITED = 10_000
 
 /**
  * Names every group and token, inherited ones included, and hands types and deprecations down.

@@ -58,7 +58,7 @@ describe('readDtcgTokens on hostile documents', () => {
     faultsOf(document)
     const started = performance.now()
     expect(faultsOf(document)).toHaveLength(1)
-    expect(performance.now() - started).toBeLessThan(150)
+    expect(performance.now() - started).toBeLessThan(250)
   })
 
   it('answers 10,000 tokens that one group takes from another', () => {
