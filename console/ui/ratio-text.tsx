@@ -9,17 +9,10 @@ export interface Measured {
   readonly outcome: Outcome
 }
 
-/** What it measures, of what it needs: `3.88 of 4.5`; a breach in madder. */
-export function RatioText(measured: Measured) {
-  return (
-    <span className="figures whitespace-nowrap">
-      <Figure {...measured} />
-      {measured.required > 0 && <span className="ml-6 text-ink-soft">of {measured.required}</span>}
-    </span>
-  )
-}
-
-/** The same as two aligned columns: the figure ends at the decimal column, `of 4.5` has 46 px of its own. */
+/**
+ * What it measures, of what it needs: `3.88 of 4.5`; a breach in madder. Two aligned columns: the figure ends at
+ * the decimal column, `of 4.5` has 46 px of its own.
+ */
 export function RatioColumns(measured: Measured) {
   return (
     <span className="figures inline-flex whitespace-nowrap">

@@ -89,7 +89,6 @@ export const dtcgColorSchema = z
     description: 'Colour value of the Design Tokens Color Module 2025.10',
     example: { colorSpace: 'oklch', components: [0.585, 0.128, 243], alpha: 1 },
   })
-export type DtcgColorWire = z.infer<typeof dtcgColorSchema>
 
 export const derivedValueSchema = z
   .strictObject({

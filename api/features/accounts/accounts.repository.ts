@@ -10,8 +10,6 @@ export interface AccountRow {
   readonly isAdmin: boolean
 }
 
-export type AccountsRepository = ReturnType<typeof createAccountsRepository>
-
 export const createAccountsRepository = (db: Executor) => ({
   /** The active account of this address, spelled as it is kept. */
   findByEmail: async (email: string): Promise<AccountRow | undefined> => {

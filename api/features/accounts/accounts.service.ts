@@ -16,8 +16,6 @@ export interface AccountsDependencies {
 /** Nobody's real address ends so. @see https://www.rfc-editor.org/rfc/rfc2606#section-2 */
 const DEMO_DOMAIN = '.example'
 
-export type AccountsService = ReturnType<typeof createAccountsService>
-
 /** Makes accounts. Only people at the machine call it; nothing on the wire does. */
 export const createAccountsService = ({
   transact,

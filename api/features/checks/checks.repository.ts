@@ -6,8 +6,6 @@ import { systemCounters } from '#drizzle/schema/systems.ts'
 export type CheckRow = typeof checks.$inferSelect
 export type NewCheckRow = typeof checks.$inferInsert
 
-export type ChecksRepository = ReturnType<typeof createChecksRepository>
-
 /** Keeps checks; numbers come from a counter beside the head, so that no check waits for a write. */
 export function createChecksRepository(db: Executor) {
   return {

@@ -10,8 +10,6 @@ export interface MemberRow {
   readonly role: 'engineer' | 'maintainer' | 'accessibility-lead'
 }
 
-export type MembersRepository = ReturnType<typeof createMembersRepository>
-
 export const createMembersRepository = (db: Executor) => ({
   /** The system of this key and how the person stands in it; a stranger's role is null. */
   findStanding: async (systemKey: string, userId: string) => {

@@ -9,10 +9,6 @@ import { tokenVersions } from '#drizzle/schema/tokens.ts'
 import { users } from '#drizzle/schema/users.ts'
 
 /** Where a version begins and ends, as revision numbers; the end is not in it. */
-export interface VersionSpan {
-  readonly fromRevision: number
-  readonly toRevision: number
-}
 
 export interface RevisionPage {
   /** Number of the last revision of the page before. */
@@ -74,8 +70,6 @@ export function createRevisionsReads(db: Executor) {
 }
 
 export type ListedRevision = Awaited<ReturnType<RevisionsReads['list']>>[number]
-export type VersionsTouched = Awaited<ReturnType<RevisionsReads['versionsTouched']>>
-
 const selectRevisions = (db: Executor) =>
   db
     .select({ revision: revisions, author: { id: users.id, name: users.name } })

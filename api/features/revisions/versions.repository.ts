@@ -31,7 +31,6 @@ export function createVersionsRepository(db: Executor) {
     },
   }
 }
-export type VersionsRepository = ReturnType<typeof createVersionsRepository>
 
 const begin = ({ systemId, revision }: Turn) => ({ systemId, fromRevision: revision })
 

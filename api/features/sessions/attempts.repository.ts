@@ -6,8 +6,6 @@ import { rateCounters } from '#drizzle/schema/limits.ts'
 const MEMORY_MINUTES = 30
 const MEMORY = sql.raw(`interval ${MEMORY_MINUTES} minute`)
 
-export type AttemptsRepository = ReturnType<typeof createAttemptsRepository>
-
 /** Attempts to sign in, counted in the database so that all processes share the count. */
 export const createAttemptsRepository = (tx: Executor) => ({
   /** Locks the bucket; nothing counted, or all forgotten: zero. */

@@ -11,8 +11,6 @@ export interface NewSession {
   readonly tokenHash: string
 }
 
-export type SessionsRepository = ReturnType<typeof createSessionsRepository>
-
 /** Sessions start, idle and end by the database's clock. */
 export const createSessionsRepository = (db: Executor) => ({
   insert: async (session: NewSession): Promise<void> => {

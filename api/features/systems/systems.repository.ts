@@ -93,4 +93,3 @@ export function createSystemsRepository(db: Executor) {
     },
   }
 }
-export type SystemsRepository = ReturnType<typeof createSystemsRepository>

@@ -55,10 +55,11 @@ describe('readDtcgTokens on hostile documents', () => {
     for (let i = 1; i <= 25; i++) {
       document[`g${i}`] = { x: { $extends: `{g${i - 1}}` }, y: { $extends: `{g${i - 1}}` } }
     }
-    faultsOf(document)
-    const started = performance.now()
-    expect(faultsOf(document)).toHaveLength(1)
-    expect(performance.now() - started).toBeLessThan(250)
+    const faults = faultsOf(document)
+    expect(faults).toHaveLength(1)
+    // Group n holds 2 to the n tokens, so the 10,000 are passed at the 13th: nothing beyond it is built.
+    const [, group] = /^too-many-tokens \/g(\d+)\//.exec(faults[0]!) ?? []
+    expect(Number(group)).toBeLessThanOrEqual(13)
   })
 
   it('answers 10,000 tokens that one group takes from another', () => {
@@ -90,8 +91,7 @@ describe('readDtcgTokens on hostile documents', () => {
       t: { $type: 'shadow', $value: members },
       u: color({ $ref: '#/t/$value/o59/s' }),
     }
-    const started = performance.now()
+    // 5 to the 60 steps without a limit: this line would not return.
     expect(faultsOf(document)).toHaveLength(1)
-    expect(performance.now() - started).toBeLessThan(500)
   })
 })
