@@ -1,5 +1,7 @@
+import { truncatedRatio } from '#shared/checks/truncated-ratio.ts'
 import type { CheckWire } from '#shared/contracts/checks.contract.ts'
 import type { FindingWire } from '#shared/contracts/findings.ts'
+import { sarifOf } from '#shared/formats/sarif.ts'
 import { painterFor } from './paint.ts'
 import { folded, plain } from './terminal-text.ts'
 
@@ -16,12 +18,6 @@ const counted = (count: number, one: string, many = one): string =>
   `${WORDS[count] ?? count} ${count === 1 ? one : many}`
 
 const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)
-
-/** Four decimals, cut off and never rounded, so that 4.49999 never reads 4.5000. */
-export function truncatedRatio(ratio: number): string {
-  const [whole, decimals = ''] = String(ratio).split('.')
-  return `${whole}.${decimals.slice(0, 4).padEnd(4, '0')}`
-}
 
 /** `fg/bg` as one word where both agree, else `hover on rest`. */
 export function stateText(state: string): string {
@@ -112,7 +108,7 @@ export function reportOf(check: CheckWire, system: string, surface: Surface): st
     '',
     ...(check.advisories.length > 0
       ? [
-          `${capital(counted(check.advisories.length, 'advisory', 'advisories'))} besides; the json format lists them.`,
+          `${capital(counted(check.advisories.length, 'advisory', 'advisories'))} besides; the json and sarif formats list them.`,
         ]
       : []),
     ...folded(`Engine ${plain(version)}, ${plain(gamutMap)}, ${plain(ruleSet)}.`, surface.columns),
@@ -124,4 +120,9 @@ export function reportOf(check: CheckWire, system: string, surface: Surface): st
 /** The check as the service answered it. */
 export function jsonOf(check: CheckWire): string {
   return `${JSON.stringify(check, null, 2)}\n`
+}
+
+/** The check as the service would answer it to `Accept: application/sarif+json`. */
+export function sarifTextOf(check: CheckWire, system: string): string {
+  return `${JSON.stringify(sarifOf(check, system), null, 2)}\n`
 }

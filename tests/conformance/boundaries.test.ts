@@ -65,6 +65,7 @@ const PLANTS: readonly Plant[] = [
   // scripts and tests
   imports('scripts/gate/a.ts', '#drizzle/schema/tokens.ts'),
   imports('scripts/gate/b.ts', '#api/app.ts'),
+  imports('scripts/gate/c.ts', '#shared/formats/theme-css.ts'),
   imports('tests/unit/a.ts', '../api/app.ts'),
   // every file
   {

@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest'
 import { createCheckCall, isCheck } from '#scripts/gate/check-call.ts'
 import { hasColor } from '#scripts/gate/paint.ts'
-import { jsonOf, reportOf, stateText, truncatedRatio } from '#scripts/gate/report.ts'
+import { jsonOf, reportOf, stateText } from '#scripts/gate/report.ts'
 import { folded, plain } from '#scripts/gate/terminal-text.ts'
+import { truncatedRatio } from '#shared/checks/truncated-ratio.ts'
 import { type CheckWire, createCheck } from '#shared/contracts/checks.contract.ts'
 import type { FindingWire } from '#shared/contracts/findings.ts'
 
