@@ -168,7 +168,7 @@ const ETAG = headerRef('ETag')
 const LOCATION = headerRef('Location')
 
 function successOf(contract: Contract): ResponseConfig {
-  const { success, conditional, precondition, query, operationId } = contract
+  const { success, alternatives = [], conditional, precondition, query, operationId } = contract
   const isPaged = query !== undefined && 'cursor' in query.shape
   const hasEtag = success.status !== 204 && (conditional || precondition !== undefined)
   const headers = {
@@ -185,7 +185,15 @@ function successOf(contract: Contract): ResponseConfig {
   return {
     description: 'Success',
     headers,
-    content: Object.fromEntries(bare.map((type) => [type, { schema, example }])),
+    content: {
+      ...Object.fromEntries(bare.map((type) => [type, { schema, example }])),
+      ...Object.fromEntries(
+        alternatives.map(({ media: type, body, example: shown }) => [
+          type,
+          { schema: body, example: shown },
+        ]),
+      ),
+    },
   }
 }
 

@@ -1,6 +1,6 @@
 import type { Request, Response } from 'express'
 import { sha256Hex } from '#api/sha256.ts'
-import type { AnswerOf, Contract } from '#shared/contracts/route.ts'
+import type { Alternative, AnswerOf, Contract } from '#shared/contracts/route.ts'
 import { isUnmodified } from './conditional.ts'
 
 interface Accompanied {
@@ -16,17 +16,26 @@ type Located<C extends Contract> = C['success'] extends { status: 201 }
     ? { readonly location?: string | undefined }
     : unknown
 
+/** Another form of the body, as one of the contract's alternatives describes it. */
+type Alternate<C extends Contract> = C extends {
+  alternatives: readonly (infer A extends Alternative)[]
+}
+  ? Accompanied & { readonly body: object; readonly media: A['media'] }
+  : never
+
 /** What a handler answers: JSON, text of one of the contract's media types, or nothing. */
 export type Answer<C extends Contract> = C['success'] extends { status: 204 }
   ? undefined | Accompanied
   : C['success'] extends { media: readonly string[] }
     ? Accompanied & { readonly text: string; readonly media: string }
-    : Accompanied &
-        Located<C> & {
-          readonly body: AnswerOf<C>
-          /** Cursor of the next page, where there is one. */
-          readonly next?: string | undefined
-        }
+    :
+        | Alternate<C>
+        | (Accompanied &
+            Located<C> & {
+              readonly body: AnswerOf<C>
+              /** Cursor of the next page, where there is one. */
+              readonly next?: string | undefined
+            })
 
 interface LooseAnswer extends Accompanied {
   readonly body?: unknown
@@ -50,7 +59,8 @@ export function checkAnswer(contract: Contract, answer: LooseAnswer | undefined)
       throw contradiction(contract, `${answer.media}`)
     return
   }
-  const parsed = success.body.safeParse(answer?.body)
+  const other = contract.alternatives?.find(({ media }) => media === answer?.media)
+  const parsed = (other ?? success).body.safeParse(answer?.body)
   if (!parsed.success) throw contradiction(contract, parsed.error.message)
 }
 
@@ -64,6 +74,7 @@ export function sendAnswer(
   const { success } = contract
   response.set('Cache-Control', contract.conditional ? 'private, no-cache' : 'no-store')
   response.vary('Authorization, Cookie')
+  if (contract.alternatives !== undefined) response.vary('Accept')
   for (const [name, value] of Object.entries(answer?.headers ?? {})) {
     response.setHeader(name, typeof value === 'string' ? value : [...value])
   }

@@ -4,7 +4,7 @@ import type { Caller, SystemAccess } from '#api/caller.ts'
 import { AppError, invalidRequest } from '#api/errors.ts'
 import type { IfMatch } from '#api/precondition.ts'
 import { faultsOf } from '#shared/contracts/faults.ts'
-import type { Contract, ParsedOf } from '#shared/contracts/route.ts'
+import type { Contract, MediaOf, ParsedOf } from '#shared/contracts/route.ts'
 import { preconditionMissing, readIfMatch } from './conditional.ts'
 import { parseQuery } from './query.ts'
 import { readBody } from './request-body.ts'
@@ -18,6 +18,8 @@ export interface Exchange<C extends Contract> extends ParsedOf<C> {
   readonly ifMatch: C extends { precondition: 'required' } ? IfMatch : IfMatch | undefined
   /** `If-None-Match: *` on a PUT that can create: nothing may stand there yet. */
   readonly createOnly: boolean
+  /** What `Accept` chose of JSON and the contract's alternatives. */
+  readonly media: MediaOf<C>
   readonly requestId: string
   readonly request: Request
   readonly response: Response

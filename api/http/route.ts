@@ -12,6 +12,7 @@ import {
   readQuery,
   readValidBody,
 } from './exchange.ts'
+import { negotiate } from './negotiate.ts'
 import { refuseForeignOrigin } from './origin.ts'
 import { refusalOf } from './problem.ts'
 import { requestIdOf } from './request-id.ts'
@@ -164,7 +165,7 @@ async function readExchange(
     caller === undefined || access === 'anyone'
       ? undefined
       : await authorize(caller, access, given.system, context.findAccess)
-  refuseAccept(contract, request)
+  const media = negotiate(contract, request)
   const query = readQuery(contract, request)
   const precondition = readPrecondition(contract, request)
   const body = await readValidBody(contract, request, response)
@@ -172,6 +173,7 @@ async function readExchange(
   return {
     ...({ params, query, body } as Pick<Exchange<Contract>, 'params' | 'query' | 'body'>),
     ...precondition,
+    media,
     caller,
     system,
     requestId,
@@ -185,13 +187,6 @@ function guardOrigin(contract: Contract, context: RouteContext, request: Request
   if (contract.method === 'GET' || request.headers.authorization !== undefined) return
   const hasCookie = cookieOf(request, context.cookie.name) !== undefined
   if (hasCookie || contract.access === 'anyone') refuseForeignOrigin(request, context.publicUrl)
-}
-
-/** A browser's Accept asks for a page or for XML before JSON: it gets JSON. */
-function refuseAccept(contract: Contract, request: Request): void {
-  if (!contract.problems.includes('not-acceptable')) return
-  if (request.accepts(['application/json', 'text/html']) !== false) return
-  throw new AppError('not-acceptable', { detail: 'application/json can be given' })
 }
 
 /** @returns the error; a refusal that the contract does not list becomes a bug of ours */

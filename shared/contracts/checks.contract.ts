@@ -1,4 +1,5 @@
 import * as z from 'zod'
+import { sarifOf } from '#shared/formats/sarif.ts'
 import { cursorSchema, idSchema, instantSchema, limitSchema, systemParams } from './fields.ts'
 import {
   advisorySchema,
@@ -11,6 +12,7 @@ import {
 import { pairInputSchema } from './pairs.contract.ts'
 import { READ_PROBLEMS, WRITE_PROBLEMS } from './problems.ts'
 import { defineContract } from './route.ts'
+import { sarifLogSchema } from './sarif-log.ts'
 
 export const checkSourceSchema = z
   .strictObject({
@@ -97,6 +99,14 @@ const summaryExample = {
 } as const
 const checkExample = { ...summaryExample, findings: [findingExample], advisories: [] } as const
 
+const alternatives = [
+  {
+    media: 'application/sarif+json',
+    body: sarifLogSchema,
+    example: sarifOf(checkExample, 'larkhaven'),
+  },
+] as const
+
 const findingsQuery = z.strictObject({
   findings: z.enum(['short', 'all']).default('short').meta({ description: 'short: all but pass' }),
 })
@@ -128,6 +138,7 @@ export const createCheck = defineContract({
     source: { repository: 'larkhaven/timetable', branch: 'main' },
   },
   success: { status: 200, body: checkSchema, example: checkExample },
+  alternatives,
   problems: [...WRITE_PROBLEMS, 'system-unresolvable', 'not-acceptable', 'requests-too-many'],
   access: 'checks:write',
 })
@@ -165,7 +176,8 @@ export const getCheck = defineContract({
   description: 'Findings that pass are not kept with a check.',
   params: systemParams.extend({ id: idSchema }),
   success: { status: 200, body: checkSchema, example: checkExample },
-  problems: READ_PROBLEMS,
+  alternatives,
+  problems: [...READ_PROBLEMS, 'not-acceptable'],
   access: 'checks:read',
   conditional: true,
 })

@@ -18,6 +18,13 @@ export type Success =
     }
   | { readonly status: 204; readonly body?: undefined }
 
+/** Another form of a success than JSON, for whoever asks for it by `Accept`. */
+export interface Alternative {
+  readonly media: string
+  readonly body: z.ZodType
+  readonly example: unknown
+}
+
 /**
  * One operation, said once: the router mounts it, the document describes it, the client calls it and the
  * guard tests attack it.
@@ -40,6 +47,8 @@ export interface Contract {
   /** What the body may have at most, default 1 MiB. */
   readonly maxBodyBytes?: number
   readonly success: Success
+  /** JSON is answered where `Accept` prefers none of them, or names `text/html`; 406 where it excludes all. */
+  readonly alternatives?: readonly Alternative[]
   readonly problems: readonly ProblemCode[]
   readonly access: Access
   /**
@@ -98,6 +107,11 @@ export interface ParsedOf<C extends Contract> {
 export type OutputOf<C extends Contract> = C['success'] extends { body: infer S extends z.ZodType }
   ? z.output<S>
   : undefined
+
+/** The media types a caller of the operation can be answered in. */
+export type MediaOf<C extends Contract> =
+  | 'application/json'
+  | (C extends { alternatives: readonly (infer A extends Alternative)[] } ? A['media'] : never)
 
 /** What a handler must answer. */
 export type AnswerOf<C extends Contract> = C['success'] extends { body: infer S extends z.ZodType }

@@ -37,6 +37,7 @@ const escapeStep = (step: string): string =>
   encodeURIComponent(step.replaceAll('~', '~0').replaceAll('/', '~1'))
 const pointer = (...steps: readonly string[]): string => `#/${steps.map(escapeStep).join('/')}`
 
+const JSON_MEDIA: readonly string[] = ['application/json', 'application/sarif+json']
 const PROBLEM_MEDIA = 'application/problem+json'
 
 /** Narrow templates first: a literal beats a file name, a file name beats a parameter. */
@@ -123,7 +124,7 @@ function operationContradictions(
   }
   if (Object.keys(content).length === 0) return text === '' ? found : [...found, 'has a body']
   if (content[media] === undefined) return [...found, `the document does not list ${media}`]
-  if (media !== 'application/json' || sent === 'HEAD') return found
+  if (!JSON_MEDIA.includes(media) || sent === 'HEAD') return found
   const errors = schemaErrors(
     pointer('paths', template, method, 'responses', String(status), 'content', media, 'schema'),
     JSON.parse(text),
