@@ -37,6 +37,8 @@ Files
 Formats
   text   a table of breaches (the default)
   json   the check as the service answered it
+  sarif  a SARIF 2.1.0 log: a rule for each WCAG criterion, fingerprints that
+         outlive renames, tokens as logical locations
   Several at once are fine where all but one go to a file.
 
 Environment
@@ -55,7 +57,7 @@ Exit codes
 Examples
   DYEWRIGHT_KEY=dyw_ci_… dyewright gate --url https://colors.example.com \\
     --system larkhaven --tokens tokens/core.json tokens/site.json
-  dyewright gate --new-only --format text json=dyewright-check.json
+  dyewright gate --new-only --format text json=check.json sarif=check.sarif
 `
 
 const readSeconds = (text: string): number => {
@@ -77,7 +79,7 @@ const gateCommand = (): Command =>
     .option('--tokens <file...>', 'candidate token files, later ones over earlier ones')
     .option('--pairs <file>', 'pairs to measure besides the declared ones')
     .option('--new-only', 'fail on new or worsened breaches only')
-    .option('--format <format...>', 'text or json; NAME=FILE writes to a file')
+    .option('--format <format...>', 'text, json or sarif; NAME=FILE writes to a file')
     .option('--config <file>', 'configuration file')
     .option('--timeout <seconds>', 'limit of the run, retries included (default 60)', readSeconds)
     .allowExcessArguments(false)

@@ -3,9 +3,9 @@ import type { CheckWire } from '#shared/contracts/checks.contract.ts'
 import { requestCheck } from './check-call.ts'
 import { EXIT, type ExitCode } from './exit-codes.ts'
 import { hasColor } from './paint.ts'
-import { type Plan, planFrom } from './plan.ts'
+import { type Format, type Plan, planFrom } from './plan.ts'
 import { reasonOf, refusalOf } from './refusal.ts'
-import { jsonOf, reportOf } from './report.ts'
+import { jsonOf, reportOf, sarifTextOf } from './report.ts'
 import type { ReadText } from './settings.ts'
 import { plain } from './terminal-text.ts'
 
@@ -27,10 +27,18 @@ const surfaceOf = (isFile: boolean) => ({
   columns: isFile ? 80 : Math.min(120, Math.max(60, process.stdout.columns ?? 80)),
 })
 
+type Written = (check: CheckWire, system: string, isFile: boolean) => string
+
+const textIn: Readonly<Record<Format, Written>> = {
+  text: (check, system, isFile) => reportOf(check, system, surfaceOf(isFile)),
+  json: jsonOf,
+  sarif: sarifTextOf,
+}
+
 const writeOutputs = (check: CheckWire, { outputs, system }: Plan): string[] =>
   outputs.flatMap(({ format, file }) => {
     const isFile = file !== undefined
-    const text = format === 'json' ? jsonOf(check) : reportOf(check, system, surfaceOf(isFile))
+    const text = textIn[format](check, system, isFile)
     if (!isFile) {
       process.stdout.write(text)
       return []

@@ -3,7 +3,7 @@ import { type Candidate, candidateFrom } from './candidate.ts'
 import { readCommandLine } from './command-line.ts'
 import { type Environment, type ReadText, settingsFrom, splitFormat } from './settings.ts'
 
-export const FORMATS = ['text', 'json'] as const
+export const FORMATS = ['text', 'json', 'sarif'] as const
 export type Format = (typeof FORMATS)[number]
 
 /** One output: a file, or the standard output. */

@@ -11,6 +11,7 @@ import { createClient } from '#shared/client/client.ts'
 import { getCheck, listChecks } from '#shared/contracts/checks.contract.ts'
 import { createKey } from '#shared/contracts/keys.contract.ts'
 import { getSystem } from '#shared/contracts/systems.contract.ts'
+import type { SarifLog } from '#shared/formats/sarif-log.ts'
 import { type DemoService, startDemoService } from '#tests/support/demo-service.ts'
 import { createGateProcess, type GateProcess, type GateRun } from '#tests/support/gate-process.ts'
 
@@ -117,11 +118,33 @@ describe('a verdict', () => {
     expect(check).toEqual(body)
   })
 
-  it('answers both formats at once', async () => {
-    const { code, out } = await gate(['--format', 'text', 'json=check.json'])
-    expect(code).toBe(1)
-    const check = JSON.parse(readFileSync(join(pipeline.folder, 'check.json'), 'utf8'))
+  it('answers every format at once, all of the same check', async () => {
+    const formats = ['text', 'json=check.json', 'sarif=check.sarif']
+    const { code, out, err } = await gate(['--format', ...formats])
+    expect({ code, err }).toEqual({ code: 1, err: '' })
+    const written = (name: string) => JSON.parse(readFileSync(join(pipeline.folder, name), 'utf8'))
+    const check = written('check.json')
     expect(out).toContain(`Check ${check.number} of larkhaven fails`)
+    const served = await fetch(`${service.baseUrl}/v1/systems/larkhaven/checks/${check.id}`, {
+      headers: { accept: 'application/sarif+json', authorization: `Bearer ${key}` },
+    })
+    expect(served.headers.get('content-type')).toBe('application/sarif+json')
+    expect(written('check.sarif')).toEqual(await served.json())
+  })
+
+  it('answers SARIF whose errors are the gating breaches, and with new-only none', async () => {
+    const levelsOf = async (...options: string[]) => {
+      const { code, out } = await gate(['--format', 'sarif', ...options])
+      const [run] = (JSON.parse(out) as SarifLog).runs
+      return { code, levels: run?.results.map(({ level }) => level) }
+    }
+    const all = await levelsOf()
+    expect(all.code).toBe(1)
+    expect(all.levels).toContain('error')
+    const fresh = await levelsOf('--new-only')
+    expect(fresh.code).toBe(0)
+    expect(fresh.levels).not.toContain('error')
+    expect(fresh.levels).toContain('note')
   })
 
   it('answers a breach of a pair of the build', async () => {

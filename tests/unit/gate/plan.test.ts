@@ -45,8 +45,12 @@ describe('a plan from flags', () => {
   })
 
   it('answers several formats, one to the output and one to a file', () => {
-    const { outputs } = planned(plan(`${WHERE} --format text json=out/check=1.json`))
-    expect(outputs).toEqual([{ format: 'text' }, { format: 'json', file: 'out/check=1.json' }])
+    const { outputs } = planned(plan(`${WHERE} --format text json=out/check=1.json sarif=a`))
+    expect(outputs).toEqual([
+      { format: 'text' },
+      { format: 'json', file: 'out/check=1.json' },
+      { format: 'sarif', file: 'a' },
+    ])
   })
 
   it('answers the key of the environment and of nowhere else', () => {
@@ -133,7 +137,7 @@ describe('usage', () => {
     [`${WHERE} spare`, 'too many arguments'],
     [`${WHERE} --timeout 0`, 'Give seconds above 0'],
     [`${WHERE} --timeout soon`, 'Give seconds above 0'],
-    [`${WHERE} --format sarif`, 'There is no format "sarif"'],
+    [`${WHERE} --format xml`, 'There is no format "xml"'],
     [`${WHERE} --format json=`, 'json= names no file'],
     [`${WHERE} --format json text`, 'Two formats would go to one place'],
     [`${WHERE} --tokens no.json`, 'no.json cannot be read: there is no such file'],
