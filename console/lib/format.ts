@@ -1,10 +1,3 @@
-/** A ratio cut, never rounded, to a fixed number of decimals: 4.499 reads 4.49. */
-export function truncateRatio(ratio: number, decimals: number): string {
-  if (!Number.isFinite(ratio)) throw new TypeError(`a ratio is a finite number, not ${ratio}`)
-  const [whole = '0', fraction = ''] = String(ratio).split('.')
-  return decimals === 0 ? whole : `${whole}.${fraction.slice(0, decimals).padEnd(decimals, '0')}`
-}
-
 /** Lightness or chroma, three decimals. */
 export function formatComponent(value: number | null): string {
   return value === null ? 'none' : value.toFixed(3)
@@ -12,32 +5,6 @@ export function formatComponent(value: number | null): string {
 
 export function formatHue(value: number | null): string {
   return value === null ? 'none' : `${Math.round(value) % 360}°`
-}
-
-const SMALL_NUMBERS = [
-  'no',
-  'one',
-  'two',
-  'three',
-  'four',
-  'five',
-  'six',
-  'seven',
-  'eight',
-  'nine',
-  'ten',
-  'eleven',
-  'twelve',
-]
-
-/** A count in a sentence: words to twelve, then figures. */
-export function countInWords(count: number): string {
-  return SMALL_NUMBERS[count] ?? String(count)
-}
-
-/** `two breaches`, `one breach`, `no breaches`. */
-export function countOf(count: number, one: string, many = `${one}s`): string {
-  return `${countInWords(count)} ${count === 1 ? one : many}`
 }
 
 export function startSentence(text: string): string {

@@ -1,4 +1,4 @@
-import { truncateRatio } from '#console/lib/format.ts'
+import { truncateRatio } from '#shared/checks/finding-words.ts'
 import type { Outcome } from '#shared/checks/model.ts'
 
 /** A ratio, what it needs, and how that was judged: a pair may pass under its line, by its group or an exemption. */

@@ -1,4 +1,4 @@
-import { truncatedRatio } from '#shared/checks/truncated-ratio.ts'
+import { countOf, stateInWords, truncateRatio } from '#shared/checks/finding-words.ts'
 import type { CheckWire } from '#shared/contracts/checks.contract.ts'
 import type { FindingWire } from '#shared/contracts/findings.ts'
 import { sarifOf } from '#shared/formats/sarif.ts'
@@ -11,19 +11,7 @@ export interface Surface {
   readonly columns: number
 }
 
-const WORDS = 'no one two three four five six seven eight nine ten eleven twelve'.split(' ')
-
-/** Numbers as words to twelve. */
-const counted = (count: number, one: string, many = one): string =>
-  `${WORDS[count] ?? count} ${count === 1 ? one : many}`
-
 const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)
-
-/** `fg/bg` as one word where both agree, else `hover on rest`. */
-export function stateText(state: string): string {
-  const [foreground, background] = state.split('/')
-  return foreground === background ? `${foreground}` : `${foreground} on ${background}`
-}
 
 const shortfall = ({ ratio, required }: FindingWire): number => ratio / required
 
@@ -57,9 +45,9 @@ const tableOf = (breaches: readonly FindingWire[], { hasColor, columns }: Surfac
     const themes = folded(plain(finding.theme), themeColumns)
     const foreground = plain(finding.rendered.foreground)
     const background = plain(finding.rendered.background)
-    const measured = `${truncatedRatio(finding.ratio).padStart(7)}  ${`${finding.required}`.padStart(8)}`
+    const measured = `${truncateRatio(finding.ratio, 4).padStart(7)}  ${`${finding.required}`.padStart(8)}`
     const sample = paint.sample(foreground, background)
-    const row = `${lead(themes[0] ?? '', stateText(plain(finding.state)))}  ${paint.short(measured)}  ${sample}${foreground} on ${background}`
+    const row = `${lead(themes[0] ?? '', stateInWords(plain(finding.state)))}  ${paint.short(measured)}  ${sample}${foreground} on ${background}`
     const remarks = remarksOn(finding).map(plain).join('; ')
     return [
       row,
@@ -84,11 +72,11 @@ const tableOf = (breaches: readonly FindingWire[], { hasColor, columns }: Surfac
 const countsText = ({ counts }: CheckWire): string =>
   capital(
     [
-      counted(counts.breach, 'breach', 'breaches'),
-      ...(counts.known > 0 ? [counted(counts.known, 'known')] : []),
-      ...(counts.waived > 0 ? [counted(counts.waived, 'waived')] : []),
-      counted(counts.exempt, 'exempt'),
-      counted(counts.pass, 'passing', 'passing'),
+      countOf(counts.breach, 'breach', 'breaches'),
+      ...(counts.known > 0 ? [countOf(counts.known, 'known', 'known')] : []),
+      ...(counts.waived > 0 ? [countOf(counts.waived, 'waived', 'waived')] : []),
+      countOf(counts.exempt, 'exempt', 'exempt'),
+      countOf(counts.pass, 'passing', 'passing'),
     ].join(', '),
   )
 
@@ -108,7 +96,7 @@ export function reportOf(check: CheckWire, system: string, surface: Surface): st
     '',
     ...(check.advisories.length > 0
       ? [
-          `${capital(counted(check.advisories.length, 'advisory', 'advisories'))} besides; the json and sarif formats list them.`,
+          `${capital(countOf(check.advisories.length, 'advisory', 'advisories'))} besides; the json and sarif formats list them.`,
         ]
       : []),
     ...folded(`Engine ${plain(version)}, ${plain(gamutMap)}, ${plain(ruleSet)}.`, surface.columns),

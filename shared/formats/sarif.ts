@@ -1,6 +1,6 @@
 import type { Basis } from '#shared/checks/layers.ts'
 import type { Advisory, EngineStamp, Outcome } from '#shared/checks/model.ts'
-import { truncatedRatio } from '#shared/checks/truncated-ratio.ts'
+import { stateInWords, truncateRatio } from '#shared/checks/finding-words.ts'
 import type {
   SarifKind,
   SarifLevel,
@@ -89,10 +89,8 @@ const remarksOn = (finding: CheckedFinding): string[] => {
 
 const textOf = (finding: CheckedFinding): string => {
   const { foreground, background, use, theme, state, ratio, required } = finding
-  const [over, under] = state.split('/')
-  const place = over === under ? over : `${over} on ${under}`
   const wanted = required > 0 ? `${required}:1 is required` : 'nothing is required'
-  const measured = `${foreground} on ${background} (${use}) is ${truncatedRatio(ratio)}:1 in ${theme}, ${place}; ${wanted}.`
+  const measured = `${foreground} on ${background} (${use}) is ${truncateRatio(ratio, 4)}:1 in ${theme}, ${stateInWords(state)}; ${wanted}.`
   return [measured, ...remarksOn(finding)].join(' ')
 }
 

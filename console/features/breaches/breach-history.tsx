@@ -1,7 +1,7 @@
+import { stateInWords } from '#shared/checks/finding-words.ts'
 import { useSuspenseQuery } from '@tanstack/react-query'
 import { Link } from 'react-router-dom'
 import { formatLongDay, formatMoment, startSentence } from '#console/lib/format.ts'
-import { stateInWords } from '#console/lib/finding-words.ts'
 import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import { useNarrow } from '#console/ui/window-size.ts'
 import type { BreachEventWire, BreachWire } from '#shared/contracts/breaches.contract.ts'

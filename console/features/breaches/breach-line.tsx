@@ -1,5 +1,5 @@
+import { stateInWords } from '#shared/checks/finding-words.ts'
 import type { ReactNode } from 'react'
-import { stateInWords } from '#console/lib/finding-words.ts'
 import { PairSample } from '#console/ui/pair-sample.tsx'
 import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import { BreachLink, type BreachRowProps } from './breach-row.tsx'

@@ -1,5 +1,5 @@
+import { stateInWords } from '#shared/checks/finding-words.ts'
 import { Link, useNavigate } from 'react-router-dom'
-import { stateInWords } from '#console/lib/finding-words.ts'
 import { PairSample } from '#console/ui/pair-sample.tsx'
 import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import type { RowLinkProps } from '#console/ui/row-walk.ts'

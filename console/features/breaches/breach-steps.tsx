@@ -1,4 +1,5 @@
-import { formatDay, truncateRatio } from '#console/lib/format.ts'
+import { truncateRatio } from '#shared/checks/finding-words.ts'
+import { formatDay } from '#console/lib/format.ts'
 import { ratioPosition } from '#console/ui/ratio-scale.ts'
 import type { BreachEventWire, BreachWire } from '#shared/contracts/breaches.contract.ts'
 import { stepsOf } from './breach-time.ts'

@@ -1,4 +1,4 @@
-import { truncateRatio } from '#console/lib/format.ts'
+import { truncateRatio } from '#shared/checks/finding-words.ts'
 import {
   CONSOLE_COLOR_GROUPS,
   type ConsoleColor,

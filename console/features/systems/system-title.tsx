@@ -1,5 +1,6 @@
+import { countOf } from '#shared/checks/finding-words.ts'
 import { Link } from 'react-router-dom'
-import { countOf, formatMoment, startSentence } from '#console/lib/format.ts'
+import { formatMoment, startSentence } from '#console/lib/format.ts'
 import { OutcomeMark } from '#console/ui/outcome-mark.tsx'
 import type { SystemWire } from '#shared/contracts/systems.contract.ts'
 

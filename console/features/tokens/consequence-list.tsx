@@ -1,6 +1,7 @@
+import { countInWords } from '#shared/checks/finding-words.ts'
 import { useState } from 'react'
 import { whereInWords } from '#console/lib/finding-words.ts'
-import { countInWords, startSentence } from '#console/lib/format.ts'
+import { startSentence } from '#console/lib/format.ts'
 import { WordButton } from '#console/ui/button.tsx'
 import { OutcomeMark } from '#console/ui/outcome-mark.tsx'
 import type { MovedGroups, MovedLine } from './moved-lines.ts'

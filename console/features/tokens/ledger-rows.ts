@@ -1,4 +1,4 @@
-import { stateInWords } from '#console/lib/finding-words.ts'
+import { stateInWords } from '#shared/checks/finding-words.ts'
 import type { LedgerTokenWire, StandingWire } from '#shared/contracts/tokens.contract.ts'
 import type { MeasuredTokens } from './measure-theme.ts'
 import type { TokenFilter } from './token-filter.ts'

@@ -1,5 +1,6 @@
+import { countInWords } from '#shared/checks/finding-words.ts'
 import { Link } from 'react-router-dom'
-import { countInWords, startSentence } from '#console/lib/format.ts'
+import { startSentence } from '#console/lib/format.ts'
 import { WordButton } from '#console/ui/button.tsx'
 import { NothingHere } from '#console/ui/page-states.tsx'
 import type { NearNames } from './ledger-rows.ts'

@@ -1,4 +1,5 @@
-import { joinWords, countOf, startSentence } from '#console/lib/format.ts'
+import { countOf } from '#shared/checks/finding-words.ts'
+import { joinWords, startSentence } from '#console/lib/format.ts'
 import { SolidButton, WordButton } from '#console/ui/button.tsx'
 import { LineField } from '#console/ui/line-field.tsx'
 import { OutcomeMark } from '#console/ui/outcome-mark.tsx'

@@ -1,5 +1,5 @@
+import { stateInWords } from '#shared/checks/finding-words.ts'
 import type { ReactNode } from 'react'
-import { stateInWords } from '#console/lib/finding-words.ts'
 import { OutcomeMark } from '#console/ui/outcome-mark.tsx'
 import { RatioColumns } from '#console/ui/ratio-text.tsx'
 import { type Finding, STATES, type State } from '#shared/checks/model.ts'

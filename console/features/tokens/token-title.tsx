@@ -1,6 +1,7 @@
+import { countOf } from '#shared/checks/finding-words.ts'
 import type { ReactNode, Ref } from 'react'
 import { OutcomeMark } from '#console/ui/outcome-mark.tsx'
-import { countOf, joinWords, startSentence } from '#console/lib/format.ts'
+import { joinWords, startSentence } from '#console/lib/format.ts'
 import type { LedgerTokenWire } from '#shared/contracts/tokens.contract.ts'
 
 /** An opened token: its whole name, what it is for, how it stands, and its cells. */

@@ -1,9 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import { createCheckCall, isCheck } from '#scripts/gate/check-call.ts'
 import { hasColor } from '#scripts/gate/paint.ts'
-import { jsonOf, reportOf, stateText } from '#scripts/gate/report.ts'
+import { jsonOf, reportOf } from '#scripts/gate/report.ts'
 import { folded, plain } from '#scripts/gate/terminal-text.ts'
-import { truncatedRatio } from '#shared/checks/truncated-ratio.ts'
 import { type CheckWire, createCheck } from '#shared/contracts/checks.contract.ts'
 import type { FindingWire } from '#shared/contracts/findings.ts'
 
@@ -124,16 +123,6 @@ describe('the report', () => {
 })
 
 describe('words of the report', () => {
-  it('answers ratios cut off, never rounded', () => {
-    expect([4.499999999999999, 3.88049, 21, 4.5, 1.00001].map(truncatedRatio)).toEqual([
-      ...['4.4999', '3.8804', '21.0000', '4.5000', '1.0000'],
-    ])
-  })
-
-  it('answers one word where both states agree', () => {
-    expect(['rest/rest', 'hover/rest'].map(stateText)).toEqual(['rest', 'hover on rest'])
-  })
-
   it('answers names folded before a dot, nothing left out', () => {
     expect(folded('surface.deck.of.the.ferry', 14)).toEqual(['surface.deck', '.of.the.ferry'])
     expect(folded('👩‍👩‍👧'.repeat(3), 4).join('')).toBe('👩‍👩‍👧'.repeat(3))

@@ -1,42 +1,12 @@
-import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import {
-  countOf,
   formatComponent,
   formatHue,
   formatMoment,
   joinWords,
   startSentence,
-  truncateRatio,
 } from '#console/lib/format.ts'
-import { stateInWords, whereInWords } from '#console/lib/finding-words.ts'
-
-describe('truncateRatio', () => {
-  it.each([
-    [4.499, 2, '4.49'],
-    [4.4999999, 4, '4.4999'],
-    [4.35, 2, '4.35'],
-    [1.15, 2, '1.15'],
-    [21, 2, '21.00'],
-    [7, 0, '7'],
-    [3.8804, 4, '3.8804'],
-  ])('answers %d to %d decimals as %s', (ratio, decimals, text) => {
-    expect(truncateRatio(ratio, decimals)).toBe(text)
-  })
-
-  it('leaves every ratio at or above the figure it shows, and less than one unit from it', () => {
-    fc.assert(
-      fc.property(fc.double({ min: 1, max: 21, noNaN: true }), (ratio) => {
-        const shown = Number(truncateRatio(ratio, 2))
-        return shown <= ratio && ratio - shown < 0.01 + 1e-12
-      }),
-    )
-  })
-
-  it('refuses what is no number', () => {
-    expect(() => truncateRatio(Number.NaN, 2)).toThrow(TypeError)
-  })
-})
+import { whereInWords } from '#console/lib/finding-words.ts'
 
 describe('figures and words', () => {
   it('answers components with three decimals, hue as a degree, and none where missing', () => {
@@ -45,13 +15,6 @@ describe('figures and words', () => {
       '0°',
       'none',
     ])
-  })
-
-  it('answers counts as words to twelve, then as figures', () => {
-    expect(countOf(0, 'breach', 'breaches')).toBe('no breaches')
-    expect(countOf(1, 'breach', 'breaches')).toBe('one breach')
-    expect(countOf(12, 'finding')).toBe('twelve findings')
-    expect(countOf(13, 'finding')).toBe('13 findings')
   })
 
   it('answers lists as a sentence has them', () => {
@@ -69,9 +32,7 @@ describe('figures and words', () => {
     )
   })
 
-  it('answers a state by one word where both sides agree', () => {
-    expect(stateInWords('focus/focus')).toBe('focus')
-    expect(stateInWords('hover/rest')).toBe('hover on rest')
+  it('answers a theme with its states', () => {
     expect(whereInWords('light', ['rest/rest', 'focus/focus'])).toBe('light, rest and focus')
   })
 })

@@ -1,6 +1,6 @@
+import { truncateRatio } from '#shared/checks/finding-words.ts'
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
-import { truncateRatio } from '#console/lib/format.ts'
 import {
   CONSOLE_COLORS,
   CONSOLE_GROUNDS,
