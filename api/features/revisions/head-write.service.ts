@@ -221,7 +221,7 @@ async function followEngine(
   { systemId, head, locked, repositories }: Measured,
 ): Promise<void> {
   const engine = await repositories.heads.engineOf(systemId, locked.revision)
-  if (canonicalJson(engine) === canonicalJson(ENGINE_STAMP)) return
+  if (engine === undefined || canonicalJson(engine) === canonicalJson(ENGINE_STAMP)) return
   await breaches.recordHead(repositories, {
     systemId,
     revision: locked.revision,
