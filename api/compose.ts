@@ -7,6 +7,9 @@ import { createApiRouter } from './http/route.ts'
 import { systemClock } from './platform/clock.ts'
 import { createDatabase } from './platform/database.ts'
 import { createNewId } from './platform/ids.ts'
+import { followEnclosing, joinEnclosing } from './platform/enclosing-transaction.ts'
+import { IDEMPOTENCY_GUARDS } from './platform/idempotency/idempotency-guards.ts'
+import { createIdempotencyStore } from './platform/idempotency/idempotency-store.ts'
 import { createLogger } from './platform/logger.ts'
 import { createPasswords } from './platform/passwords.ts'
 import { mountAll } from './routes.ts'
@@ -39,6 +42,7 @@ export function compose(composition: Composition): Service {
     findAccess: services.members.findAccess,
     cookie: sessionCookieFor(config.publicUrl),
     publicUrl: config.publicUrl,
+    idempotency: createIdempotencyStore(platform.database, platform.idempotencyGuards),
     strictAnswers: config.mode !== 'production',
   })
   mountAll(router, services)
@@ -50,14 +54,16 @@ function createPlatform(config: Config, given: Partial<Platform>): Platform {
   const database =
     given.database ??
     createDatabase({ url: config.databaseUrl, connections: config.databaseConnections })
+  const transact = given.transact ?? database.transact
   return {
     clock: systemClock,
     newId: createNewId(),
     logger: given.logger ?? createLogger({ level: config.logLevel }),
     passwords: given.passwords ?? createPasswords(config.passwordCost),
-    transact: database.transact,
     writeGuards: WRITE_GUARDS,
+    idempotencyGuards: IDEMPOTENCY_GUARDS,
     ...given,
-    database,
+    transact: joinEnclosing(transact),
+    database: { ...database, db: followEnclosing(database.db) },
   }
 }

@@ -8,6 +8,7 @@ import type { WriteGuards } from './features/revisions/write-guards.ts'
 import { createGovernedServices } from './governed-services.ts'
 import type { Clock } from './platform/clock.ts'
 import type { Database, RunTransaction } from './platform/database.ts'
+import type { IdempotencyGuards } from './platform/idempotency/idempotency-guards.ts'
 import type { NewId } from './platform/ids.ts'
 import type { Logger } from './platform/logger.ts'
 import type { Passwords } from './platform/passwords.ts'
@@ -24,6 +25,8 @@ export interface Platform {
   readonly transact: RunTransaction
   /** The head's lock and comparisons, unless a test leaves one out on purpose. */
   readonly writeGuards: WriteGuards
+  /** The lock and the common transaction of an Idempotency-Key, unless a test leaves one out on purpose. */
+  readonly idempotencyGuards: IdempotencyGuards
 }
 
 /** Wires every use case to the world. */

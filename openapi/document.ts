@@ -8,7 +8,7 @@ import * as z from 'zod'
 import { contracts } from '#shared/contracts/contracts.ts'
 import { rolesWith, scopesWith } from '#shared/contracts/permissions.ts'
 import { PROBLEMS, type ProblemCode, problemSchema } from '#shared/contracts/problems.ts'
-import type { Contract } from '#shared/contracts/route.ts'
+import { type Contract, takesIdempotencyKey } from '#shared/contracts/route.ts'
 import {
   createProblemResponses,
   headerRef,
@@ -136,9 +136,18 @@ const takesKeys = (permission: Exclude<Contract['access'], 'known' | 'anyone'>):
 
 const validator = (description: string) => z.string().meta({ description, example: '"9c3e1f20"' })
 
-function requestHeaders({ precondition, conditional }: Contract) {
+/** @see https://datatracker.ietf.org/doc/draft-ietf-httpapi-idempotency-key-header */
+const IDEMPOTENCY_KEY = z.string().optional().meta({
+  description:
+    'Names the request, best by a UUID. Sent again with the same key by the same caller to the same address within 24 hours, it has no second effect and is answered as the first time, without what is shown once; with another body it is refused with 422, while the first still runs with 409. Only successes are kept.',
+  example: '"8e03978e-40d5-43dd-bc93-6894a57f9324"',
+})
+
+function requestHeaders(contract: Contract) {
+  const { precondition, conditional } = contract
   const ifMatch = validator('The ETag that was read')
   const fields = {
+    ...(takesIdempotencyKey(contract) ? { 'Idempotency-Key': IDEMPOTENCY_KEY } : {}),
     ...(precondition === 'required' ? { 'If-Match': ifMatch } : {}),
     ...(precondition === 'create'
       ? {

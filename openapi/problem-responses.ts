@@ -1,16 +1,11 @@
 import type { OpenAPIRegistry } from '@asteasolutions/zod-to-openapi'
-import {
-  GENERAL_PROBLEMS,
-  type Problem,
-  PROBLEMS,
-  type ProblemCode,
-} from '#shared/contracts/problems.ts'
-import type { Contract } from '#shared/contracts/route.ts'
+import { type Problem, PROBLEMS, type ProblemCode } from '#shared/contracts/problems.ts'
+import { type Contract, problemsOf } from '#shared/contracts/route.ts'
 
 const MEDIA = 'application/problem+json'
 
 const WITH_POINTER: readonly ProblemCode[] = ['request-invalid', 'system-unresolvable']
-const WITH_PARAMETER: readonly ProblemCode[] = ['parameter-invalid']
+const WITH_PARAMETER: readonly ProblemCode[] = ['parameter-invalid', 'idempotency-key-reused']
 
 /** What a refusal looks like on the wire. */
 export function problemExample(code: ProblemCode): Problem {
@@ -50,7 +45,7 @@ export function createProblemResponses(registry: OpenAPIRegistry) {
   }
   /** Every code an operation can be refused with, grouped by status. */
   return (contract: Contract) => {
-    const codes = [...new Set<ProblemCode>([...contract.problems, ...GENERAL_PROBLEMS])].sort()
+    const codes = problemsOf(contract).sort()
     const statuses = [...new Set(codes.map((code) => PROBLEMS[code].status))]
     return Object.fromEntries(
       statuses.map((status) => [
@@ -66,7 +61,11 @@ export function createProblemResponses(registry: OpenAPIRegistry) {
 
 const responseOf = (status: number, codes: readonly ProblemCode[]) => ({
   description: codes.map((code) => `${code}: ${PROBLEMS[code].title}`).join('; '),
-  headers: { ...REQUEST_ID, ...HEADERS[status] },
+  headers: {
+    ...REQUEST_ID,
+    ...HEADERS[status],
+    ...(codes.includes('idempotency-key-running') ? headerRef('Retry-After') : {}),
+  },
   content: {
     [MEDIA]: {
       schema: { $ref: '#/components/schemas/Problem' },

@@ -37,7 +37,8 @@ export type Answer<C extends Contract> = C['success'] extends { status: 204 }
               readonly next?: string | undefined
             })
 
-interface LooseAnswer extends Accompanied {
+/** An answer whatever its contract. */
+export interface LooseAnswer extends Accompanied {
   readonly body?: unknown
   readonly text?: string
   readonly media?: string

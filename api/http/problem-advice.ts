@@ -35,6 +35,8 @@ export const PROBLEM_ADVICE: Readonly<Record<ProblemCode, string>> = {
   'theme-in-use': 'Another theme derives from it, or it is the base. Change that first.',
   'css-name-collision':
     'Two token names come to the same CSS custom property; detail names both. Rename one.',
+  'idempotency-key-running':
+    'A request with the same Idempotency-Key is being worked on. Wait as long as Retry-After says, then send it again: it is answered as the first was.',
   'review-required':
     'The system takes edits by review only. An accessibility lead may set direct writes again.',
   'precondition-failed':
@@ -44,6 +46,8 @@ export const PROBLEM_ADVICE: Readonly<Record<ProblemCode, string>> = {
   'media-type-unsupported': 'Send the body as application/json in UTF-8, not compressed.',
   'request-invalid':
     'The request was read, but it cannot be done as it is. Each entry of errors points at one fault in the body; all of them are listed.',
+  'idempotency-key-reused':
+    'The same Idempotency-Key came with another body, query or Accept within 24 hours. Give every new request a key of its own.',
   'system-unresolvable':
     'With this edit a colour of the system could not be computed: a reference leads nowhere or in a circle, or a theme breaks a rule. Each entry of errors names one fault.',
   'precondition-required':

@@ -1,7 +1,7 @@
 import { type IRouter, type Request, type RequestHandler, type Response, Router } from 'express'
 import { AppError } from '#api/errors.ts'
-import { GENERAL_PROBLEMS } from '#shared/contracts/problems.ts'
-import type { Contract } from '#shared/contracts/route.ts'
+import type { IdempotencyStore } from '#api/platform/idempotency/idempotency-store.ts'
+import { type Contract, problemsOf } from '#shared/contracts/route.ts'
 import { type Answer, checkAnswer, sendAnswer } from './answer.ts'
 import { authenticate, cookieOf, type Identify, type SessionCookie } from './authenticate.ts'
 import { authorize, type FindAccess } from './authorize.ts'
@@ -12,6 +12,7 @@ import {
   readQuery,
   readValidBody,
 } from './exchange.ts'
+import { answerOnce } from './idempotency.ts'
 import { negotiate } from './negotiate.ts'
 import { refuseForeignOrigin } from './origin.ts'
 import { refusalOf } from './problem.ts'
@@ -29,6 +30,7 @@ export interface RouteContext {
   readonly findAccess: FindAccess
   readonly cookie: SessionCookie
   readonly publicUrl: URL
+  readonly idempotency: IdempotencyStore
   /** Parse answers by their contract and refuse codes it does not list: always but in production. */
   readonly strictAnswers: boolean
 }
@@ -122,8 +124,11 @@ const runRoute =
     const params = pathParamsOf(contract, request)
     try {
       const exchange = await readExchange(contract, context, { request, response, params })
-      const answer = await handler(exchange)
-      if (context.strictAnswers) checkAnswer(contract, answer)
+      const answer = await answerOnce(context.idempotency, { contract, exchange }, async () => {
+        const given = await handler(exchange)
+        if (context.strictAnswers) checkAnswer(contract, given)
+        return given
+      })
       sendAnswer(request, response, contract, answer)
     } catch (error) {
       next(context.strictAnswers ? listedOnly(contract, error) : error)
@@ -192,8 +197,7 @@ function guardOrigin(contract: Contract, context: RouteContext, request: Request
 /** @returns the error; a refusal that the contract does not list becomes a bug of ours */
 function listedOnly(contract: Contract, error: unknown): unknown {
   const { code } = refusalOf(error)
-  const listed: readonly string[] = [...contract.problems, ...GENERAL_PROBLEMS]
-  return listed.includes(code)
+  return problemsOf(contract).includes(code)
     ? error
     : new Error(`${contract.operationId} does not list ${code}`, { cause: error })
 }

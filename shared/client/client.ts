@@ -68,6 +68,7 @@ interface LooseInput {
   readonly body?: unknown
   readonly ifMatch?: string
   readonly ifNoneMatch?: string
+  readonly idempotencyKey?: string
 }
 
 const urlOf = (baseUrl: string, contract: Contract, { params, query }: LooseInput): string => {
@@ -89,6 +90,9 @@ const headersOf = (options: ClientOptions, contract: Contract, input: LooseInput
   if (input.body !== undefined) headers['content-type'] = 'application/json'
   if (input.ifMatch !== undefined) headers['if-match'] = input.ifMatch
   if (input.ifNoneMatch !== undefined) headers['if-none-match'] = input.ifNoneMatch
+  if (input.idempotencyKey !== undefined) {
+    headers['idempotency-key'] = JSON.stringify(input.idempotencyKey)
+  }
   return headers
 }
 

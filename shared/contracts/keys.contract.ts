@@ -76,11 +76,16 @@ export const createKey = defineContract({
   bodyExample: { name: 'Timetable pipeline', scopes: ['checks:write'], days: 90 },
   success: {
     status: 201,
-    body: keySchema.extend({ key: z.string() }),
+    body: keySchema.extend({
+      key: z.string().optional().meta({
+        description: 'Shown once: absent where an Idempotency-Key is sent again',
+      }),
+    }),
     example: { ...keyExample, key: 'dyw_ci_(shown once)' },
   },
   problems: WRITE_PROBLEMS,
   access: 'keys:own',
+  secrets: ['key'],
 })
 
 export const deleteKey = defineContract({

@@ -25,11 +25,13 @@ export const PROBLEMS = {
   'pair-already-declared': { status: 409, title: 'This pair is declared already' },
   'theme-in-use': { status: 409, title: 'The theme is used elsewhere' },
   'css-name-collision': { status: 409, title: 'Two tokens come to one CSS name' },
+  'idempotency-key-running': { status: 409, title: 'The first request with this key still runs' },
   'review-required': { status: 409, title: 'This system takes edits by review only' },
   'precondition-failed': { status: 412, title: 'It has changed since it was read' },
   'request-too-large': { status: 413, title: 'The request is too large' },
   'media-type-unsupported': { status: 415, title: 'The service does not read this media type' },
   'request-invalid': { status: 422, title: 'The request was read and refused' },
+  'idempotency-key-reused': { status: 422, title: 'This key was sent with another request' },
   'system-unresolvable': { status: 422, title: 'The colours cannot be resolved with this edit' },
   'precondition-required': { status: 428, title: 'Say which version the edit is meant for' },
   'requests-too-many': { status: 429, title: 'Too many requests' },
@@ -48,6 +50,12 @@ export const GENERAL_PROBLEMS = [
   'method-not-allowed',
   'server-unexpected',
   'service-unavailable',
+] as const satisfies readonly ProblemCode[]
+
+/** What a call with an `Idempotency-Key` can be refused with besides. */
+export const IDEMPOTENCY_PROBLEMS = [
+  'idempotency-key-running',
+  'idempotency-key-reused',
 ] as const satisfies readonly ProblemCode[]
 
 export const faultSchema = z

@@ -1,6 +1,6 @@
 import type * as z from 'zod'
 import type { Permission } from './permissions.ts'
-import type { ProblemCode } from './problems.ts'
+import { GENERAL_PROBLEMS, IDEMPOTENCY_PROBLEMS, type ProblemCode } from './problems.ts'
 
 export type Method = 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE'
 
@@ -58,7 +58,25 @@ export interface Contract {
   readonly precondition?: 'required' | 'create'
   /** The answer carries a strong ETag and `If-None-Match` is honoured with 304. */
   readonly conditional?: boolean
+  /** Members of the answer that are shown once: a repetition with the same Idempotency-Key is answered without them. */
+  readonly secrets?: readonly string[]
 }
+
+/**
+ * Whether `Idempotency-Key` is honoured: on every POST of somebody known. A key is its caller's, and where anyone
+ * may call there is none.
+ */
+export const takesIdempotencyKey = ({ method, access }: Pick<Contract, 'method' | 'access'>) =>
+  method === 'POST' && access !== 'anyone'
+
+/** Every code that an operation can be refused with. */
+export const problemsOf = (contract: Contract): ProblemCode[] => [
+  ...new Set<ProblemCode>([
+    ...contract.problems,
+    ...GENERAL_PROBLEMS,
+    ...(takesIdempotencyKey(contract) ? IDEMPOTENCY_PROBLEMS : []),
+  ]),
+]
 
 /** Keeps the literal types of a contract while checking its shape. */
 export function defineContract<const C extends Contract>(contract: C): C {
@@ -94,7 +112,8 @@ export type InputOf<C extends Contract> = (C extends { params: z.ZodObject }
     ? { ifMatch: string }
     : C extends { precondition: 'create' }
       ? { ifMatch?: string; ifNoneMatch?: '*' }
-      : { ifMatch?: undefined })
+      : { ifMatch?: undefined }) &
+  (C extends { method: 'POST' } ? { idempotencyKey?: string } : { idempotencyKey?: undefined })
 
 /** What a handler receives after parsing. */
 export interface ParsedOf<C extends Contract> {

@@ -4,8 +4,8 @@ import { describe, expect, it } from 'vitest'
 import * as z from 'zod'
 import { createDocument } from '#openapi/document.ts'
 import { contracts } from '#shared/contracts/contracts.ts'
-import { GENERAL_PROBLEMS, PROBLEMS } from '#shared/contracts/problems.ts'
-import type { Contract } from '#shared/contracts/route.ts'
+import { PROBLEMS } from '#shared/contracts/problems.ts'
+import { type Contract, problemsOf } from '#shared/contracts/route.ts'
 
 /** @see https://spec.openapis.org/oas/v3.1.1 */
 interface Media {
@@ -78,7 +78,7 @@ describe.each(cases)('%s', (_, contract) => {
   })
 
   it('lists every code it can be refused with, under its status', () => {
-    for (const code of [...contract.problems, ...GENERAL_PROBLEMS]) {
+    for (const code of problemsOf(contract)) {
       const response = operation.responses[PROBLEMS[code].status]
       const media = response && resolve(response).content?.['application/problem+json']
       expect(media?.examples?.[code]?.$ref).toBe(`#/components/examples/${code}`)
@@ -93,6 +93,10 @@ describe.each(cases)('%s', (_, contract) => {
     const ifMatch = operation.parameters?.find(({ name }) => name === 'If-Match')
     expect(ifMatch?.required).toBe(
       contract.precondition === undefined ? undefined : contract.precondition === 'required',
+    )
+    const names = operation.parameters?.map(({ name }) => name) ?? []
+    expect(names.includes('Idempotency-Key')).toBe(
+      contract.method === 'POST' && contract.access !== 'anyone',
     )
     if (contract.conditional) {
       expect(operation.responses[304]).toBeDefined()

@@ -246,7 +246,7 @@ describe('a key that is refused', () => {
       params,
       body: { name: 'Reader', scopes: ['themes:read'] },
     })
-    const { code, err } = await gate([], { DYEWRIGHT_KEY: body.key })
+    const { code, err } = await gate([], { DYEWRIGHT_KEY: String(body.key) })
     expect({ code, err }).toEqual({ code: 4, err: expect.stringContaining('checks:write') })
   })
 })

@@ -1,4 +1,5 @@
 import { type Consequence, consequences } from '#shared/checks/consequences.ts'
+import { afterCommit } from '#api/platform/enclosing-transaction.ts'
 import { checkSystem } from '#shared/checks/check-system.ts'
 import type { Checked, Evaluation } from '#shared/checks/evaluation.ts'
 import type { GovernedEdits, GovernedSystem } from '#shared/checks/governed-model.ts'
@@ -32,7 +33,7 @@ export function createHeadsService({ heads, versions }: HeadsDeps) {
   const kept = new Map<string, Head>()
   const running = new Map<string, Promise<Head>>()
 
-  const keep = (head: Head): void => {
+  const put = (head: Head): void => {
     const known = kept.get(head.systemId)
     if (known && (known.revision > head.revision || known.epoch > head.epoch)) return
     kept.delete(head.systemId)
@@ -40,6 +41,9 @@ export function createHeadsService({ heads, versions }: HeadsDeps) {
     const [oldest] = kept.keys()
     if (kept.size > MOST_KEPT && oldest !== undefined) kept.delete(oldest)
   }
+
+  /** What a transaction that is given up had led to was never there. */
+  const keep = (head: Head): void => afterCommit(() => put(head))
 
   const follow = async (systemId: string, mark: HeadMark): Promise<Head> => {
     const known = kept.get(systemId)
