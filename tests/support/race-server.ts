@@ -6,32 +6,49 @@ import { compose } from '#api/compose.ts'
 import { readConfig } from '#api/config.ts'
 import { WRITE_GUARDS, type WriteGuards } from '#api/features/revisions/write-guards.ts'
 import { createDatabase, createTransact, type Executor } from '#api/platform/database.ts'
+import { enclose } from '#api/platform/enclosing-transaction.ts'
+import {
+  IDEMPOTENCY_GUARDS,
+  type IdempotencyGuards,
+} from '#api/platform/idempotency/idempotency-guards.ts'
 
 /**
  * One API process for the races: the service as it is, and beside it, each at a port of its own, mutants of
  * its write. Every variant is held up a little while it takes the lock, so that races overlap.
  */
-export const VARIANTS = ['sound', 'no-version-compare', 'no-lock', 'stale-snapshot'] as const
+export const VARIANTS = [
+  'sound',
+  'no-version-compare',
+  'no-lock',
+  'stale-snapshot',
+  'no-key-lock',
+  'record-apart',
+] as const
 export type Variant = (typeof VARIANTS)[number]
 
-/** What the process tells its parent: first where the variants listen, then each overlap of the sound one. */
-export type RaceMessage = { readonly ports: Record<Variant, number> } | { readonly overlap: true }
+/** What the process tells its parent: first where the variants listen, then each overlap of the
+ * sound one, and each effect whose record is not written yet. */
+export type RaceMessage =
+  | { readonly ports: Record<Variant, number> }
+  | { readonly overlap: true }
+  | { readonly unrecorded: true }
 
 const PAUSE_MS = 3
 
-const GUARDS: Record<Variant, WriteGuards> = {
-  sound: {
-    lock: async (heads, systemId) => {
-      await pause(PAUSE_MS)
-      return WRITE_GUARDS.lock(heads, systemId)
-    },
-    isCurrent: (decidedOn, locked) => {
-      const current = WRITE_GUARDS.isCurrent(decidedOn, locked)
-      if (!current) tell({ overlap: true })
-      return current
-    },
-    isMeantFor: WRITE_GUARDS.isMeantFor,
+const SOUND: WriteGuards = {
+  lock: async (heads, systemId) => {
+    await pause(PAUSE_MS)
+    return WRITE_GUARDS.lock(heads, systemId)
   },
+  isCurrent: (decidedOn, locked) => {
+    const current = WRITE_GUARDS.isCurrent(decidedOn, locked)
+    if (!current) tell({ overlap: true })
+    return current
+  },
+  isMeantFor: WRITE_GUARDS.isMeantFor,
+}
+
+const GUARDS: Partial<Record<Variant, WriteGuards>> = {
   'no-version-compare': {
     lock: async (heads, systemId) => {
       await pause(PAUSE_MS)
@@ -53,6 +70,36 @@ const GUARDS: Record<Variant, WriteGuards> = {
     lock: async (heads, systemId) => {
       await pause(PAUSE_MS)
       return WRITE_GUARDS.lock(heads, systemId)
+    },
+  },
+}
+
+const UNRECORDED_MS = 15
+
+/** An effect waits for its record, so that its repetitions meet it running and a kill meets it half done. */
+async function holdUnrecorded(): Promise<void> {
+  tell({ unrecorded: true })
+  await pause(UNRECORDED_MS)
+}
+
+const SOUND_KEYS: IdempotencyGuards = {
+  ...IDEMPOTENCY_GUARDS,
+  together: async (run, effect, record) =>
+    IDEMPOTENCY_GUARDS.together(run, effect, async (tx, produced) => {
+      await holdUnrecorded()
+      await record(tx, produced)
+    }),
+}
+
+const KEY_GUARDS: Partial<Record<Variant, IdempotencyGuards>> = {
+  'no-key-lock': { ...SOUND_KEYS, lock: async () => true },
+  'record-apart': {
+    ...SOUND_KEYS,
+    together: async (run, effect, record) => {
+      const produced = await enclose(run, effect)
+      await holdUnrecorded()
+      await run((tx) => record(tx, produced))
+      return produced
     },
   },
 }
@@ -80,7 +127,8 @@ function serve(variant: Variant): Promise<number> {
     config,
     platform: {
       database,
-      writeGuards: GUARDS[variant],
+      writeGuards: GUARDS[variant] ?? SOUND,
+      idempotencyGuards: KEY_GUARDS[variant] ?? SOUND_KEYS,
       ...(variant === 'stale-snapshot' ? { transact: staleTransact(database.db) } : {}),
     },
   })

@@ -15,10 +15,13 @@ export interface RaceTrack {
   client(process: 0 | 1, variant: Variant): Call
   /** How often the sound variant found, under the lock, that the head had moved. */
   overlaps(): number
+  /** Ends one process by SIGKILL, between its next effect and that one's record, and starts another in its place. */
+  kill(process: 0 | 1): Promise<void>
   close(): Promise<void>
 }
 
 const PROCESSES = 2
+const MESSAGE_PATIENCE_MS = 10_000
 const ACCOUNT = { email: 'race@larkhaven.example', password: 'four horses, one furlong' }
 
 export async function createRaceTrack(): Promise<RaceTrack> {
@@ -33,9 +36,8 @@ export async function createRaceTrack(): Promise<RaceTrack> {
   }
   await addAdministrator(env)
   let overlaps = 0
-  const started = await Promise.all(
-    Array.from({ length: PROCESSES }, () => start(env, () => (overlaps += 1))),
-  )
+  const startOne = () => start(env, () => (overlaps += 1))
+  const started = await Promise.all(Array.from({ length: PROCESSES }, startOne))
   const agent = new Agent({ keepAlive: true, maxSockets: 8 })
   const cookie = await signInAt(originOf(started[0], 'sound'), agent)
   return {
@@ -47,6 +49,15 @@ export async function createRaceTrack(): Promise<RaceTrack> {
         headers: { cookie },
       }),
     overlaps: () => overlaps,
+    kill: async (process) => {
+      const child = started[process]?.child
+      if (child === undefined) throw new TypeError('No such process')
+      await messageOf(child, 'unrecorded')
+      const ended = once(child, 'exit')
+      child.kill('SIGKILL')
+      await ended
+      started[process] = await startOne()
+    },
     close: async () => {
       agent.destroy()
       await Promise.all(started.map(({ child }) => stop(child)))
@@ -85,12 +96,24 @@ async function start(env: Record<string, string>, onOverlap: () => void): Promis
   const ports = await new Promise<Record<Variant, number>>((resolve, reject) => {
     child.on('message', (message: RaceMessage) => {
       if ('ports' in message) resolve(message.ports)
-      else onOverlap()
+      else if ('overlap' in message) onOverlap()
     })
     child.once('exit', (code) => reject(new Error(`The race server ended with ${code}`)))
   })
   return { child, ports }
 }
+
+const messageOf = (child: ChildProcess, name: string): Promise<void> =>
+  new Promise((resolve, reject) => {
+    const tooLate = setTimeout(() => reject(new Error(`No ${name} was told`)), MESSAGE_PATIENCE_MS)
+    const hear = (message: RaceMessage): void => {
+      if (!(name in message)) return
+      clearTimeout(tooLate)
+      child.off('message', hear)
+      resolve()
+    }
+    child.on('message', hear)
+  })
 
 async function stop(child: ChildProcess): Promise<void> {
   if (child.exitCode !== null) return
