@@ -111,6 +111,16 @@ describe('a POST with an Idempotency-Key', () => {
     expect(await recordsHolding(key)).toBe(0)
   })
 
+  it('answers a check in the type it was asked in, and refuses another type', async () => {
+    const check = { key: 'form', body: {}, path: '/v1/systems/larkhaven/checks' }
+    const ask = () => post(test.people.maintainer, check).set('Accept', 'application/sarif+json')
+    const first = await ask().expect(200)
+    const again = await ask().expect(200)
+    expect(again.headers['content-type']).toContain('application/sarif+json')
+    expect(again.text).toBe(first.text)
+    await post(test.people.maintainer, check).set('Accept', 'application/json').expect(422)
+  })
+
   it('refuses whoever has lost the right meanwhile', async () => {
     const { body } = await test.people.maintainer
       .post(KEYS)
