@@ -3,6 +3,7 @@ import swagger from 'swagger-ui-express'
 import { sha256Hex } from '#api/sha256.ts'
 import { isUnmodified } from './conditional.ts'
 import { setReferenceHeaders } from './headers.ts'
+import { REFERENCE_LOOK } from './reference-look.ts'
 
 const DOCUMENT_PATH = '/v1/openapi.json'
 
@@ -23,6 +24,7 @@ export function serveDocument(document: string, publicUrl: URL): IRouter {
     // Set up once: two pages in one process would share their options.
     swagger.setup(undefined, {
       customSiteTitle: 'Dyewright API',
+      customCss: REFERENCE_LOOK,
       swaggerOptions: { url: DOCUMENT_PATH },
     }),
   )

@@ -3,8 +3,8 @@ import { AppError } from '#api/errors.ts'
 import { PROBLEMS, type ProblemCode } from '#shared/contracts/problems.ts'
 import { PROBLEM_ADVICE } from './problem-advice.ts'
 
-const STYLE = `:root { color-scheme: light dark; --ground: #f8f5ee; --ink: #22201c; --line: #cdc6b8 }
-@media (prefers-color-scheme: dark) { :root { --ground: #101a2b; --ink: #ece7dc; --line: #34425a } }
+const STYLE = `:root { color-scheme: light dark; --ground: #f4f3ed; --ink: #132136; --line: #c6d4dd }
+@media (prefers-color-scheme: dark) { :root { --ground: #0e1d30; --ink: #eceae1; --line: #2b3d51 } }
 body { margin: 0; background: var(--ground); color: var(--ink); font: 1rem/1.5 Inter, system-ui, sans-serif }
 main { max-width: 38rem; margin: 0 auto; padding: 3rem 1.25rem }
 h1 { font-size: 1.5rem; line-height: 1.2 }

@@ -1,4 +1,4 @@
-import { countOf } from '#shared/checks/finding-words.ts'
+import { countOf, stateInWords } from '#shared/checks/finding-words.ts'
 import { joinWords, startSentence } from '#console/lib/format.ts'
 import { SolidButton, WordButton } from '#console/ui/button.tsx'
 import { LineField } from '#console/ui/line-field.tsx'
@@ -76,11 +76,12 @@ export function SavedNote({ saved }: { saved: SavedToken }) {
           {opened.slice(0, 4).map((finding) => (
             <li key={finding.fingerprint}>
               <OutcomeMark kind="breach">
-                {finding.foreground} on {finding.background}, {finding.theme}
+                {finding.foreground} on {finding.background}, {finding.theme},{' '}
+                {stateInWords(finding.state)}
               </OutcomeMark>
             </li>
           ))}
-          {opened.length > 4 && <li>and {opened.length - 4} more</li>}
+          {opened.length > 4 && <li>and {opened.length - 4} more in the breach log</li>}
         </ul>
       )}
     </div>
