@@ -18,7 +18,7 @@ body { background: #f4f3ed }
 .swagger-ui .opblock .opblock-section-header { background: #ecebe4; box-shadow: none }
 .swagger-ui .btn[class] { background: none; border: 1px solid #132136; border-radius: 0; box-shadow: none;
   color: #132136 }
-.swagger-ui .btn.authorize svg { fill: #132136 }
+.swagger-ui .btn.authorize[class] svg { fill: #132136 }
 .swagger-ui .btn.execute { background: #132136; color: #f4f3ed }
 .swagger-ui section.models { border: 0; border-top: 1px solid #132136; border-radius: 0 }
 `
