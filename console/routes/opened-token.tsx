@@ -102,8 +102,11 @@ export function OpenedToken({
               </Trouble>
             ) : known.moved === undefined ? (
               <p className="mt-8 max-w-460 text-ink-soft">
-                Nothing is tried. Write another colour, or step a component with the arrow keys:
-                every ratio it moves is listed here before anything is saved.
+                {reading.kind === 'unread'
+                  ? 'What is written is not a colour.'
+                  : 'Nothing is tried.'}{' '}
+                Write another colour, or step a component with the arrow keys: every ratio it moves
+                is listed here before anything is saved.
               </p>
             ) : (
               <ConsequenceList moved={known.moved} names={names} />
@@ -113,6 +116,9 @@ export function OpenedToken({
       )}
       <section className="pt-36 pb-44">
         <h2 className="pb-8 text-16 font-semibold">As it ships</h2>
+        {isTried && (
+          <p className="-mt-6 pb-8 text-13 text-ink-soft">The present colour, not the tried one.</p>
+        )}
         <ShipsTable token={token} themes={ships} findings={known?.findings ?? []} names={names} />
       </section>
     </>
