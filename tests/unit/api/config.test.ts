@@ -56,7 +56,7 @@ describe('production', () => {
     ],
     ['plain http', { PUBLIC_URL: 'http://dye.quay.test' }, 'PUBLIC_URL'],
     ['no public address', { PUBLIC_URL: undefined }, 'PUBLIC_URL'],
-    ['a demo', { SEED_PENDING_FILE: '/tmp/pending' }, 'SEED_PENDING_FILE'],
+    ['a demo', { SEED_PENDING_FILE: 'pending-seed' }, 'SEED_PENDING_FILE'],
     ['cheap passwords', { PASSWORD_MEMORY_KIB: '1024' }, 'PASSWORD_MEMORY_KIB'],
     ['few passes', { PASSWORD_PASSES: '1' }, 'PASSWORD_MEMORY_KIB'],
     ['a database that may lose commits', { DATABASE_RELAXED_FLUSH: '1' }, 'DATABASE_RELAXED_FLUSH'],
