@@ -13,10 +13,7 @@ import type { Oklch } from '#shared/color/oklch.ts'
 import { renderColor } from '#shared/color/render.ts'
 import { naiveRatio, paintAll } from './naive-contrast.ts'
 
-/**
- * Resolution written a second time, straight from the rules in DEVELOPERS.md: recursive, slow,
- * sharing nothing with the engine but colour arithmetic. Only for models without faults.
- */
+/** Resolution written again from DEVELOPERS.md: slow, for models without faults, sharing colour arithmetic only. */
 const ORDER: readonly DerivedState[] = ['hover', 'active', 'focus', 'disabled']
 const clamp = (x: number) => Math.max(0, Math.min(1, x))
 const L = (color: Oklch) => color.l ?? 0
