@@ -1,8 +1,7 @@
 import { fileURLToPath } from 'node:url'
-import { drizzle } from 'drizzle-orm/mysql2'
-import { migrate } from 'drizzle-orm/mysql2/migrator'
 import { createConnection, type RowDataPacket } from 'mysql2/promise'
 import { type Grantee, grantServing } from '#drizzle/grants.ts'
+import { runMigrations } from '#drizzle/migration-run.ts'
 
 const LOCK_WAIT_SECONDS = 120
 
@@ -25,12 +24,9 @@ export async function applyMigrations(run: MigrationRun): Promise<number> {
   const connection = await createConnection({ uri: run.url, timezone: 'Z' })
   try {
     await takeLock(connection)
-    const before = await countApplied(connection)
-    await migrate(drizzle({ client: connection }), {
-      migrationsFolder: run.folder ?? migrationsFolder(),
-    })
+    const added = await runMigrations(connection, run.folder ?? migrationsFolder())
     if (run.grantTo !== undefined) await grantServing(connection, run.grantTo)
-    return (await countApplied(connection)) - before
+    return added
   } finally {
     await connection.end()
   }
@@ -51,15 +47,4 @@ async function takeLock(connection: Connection): Promise<void> {
   if (rows[0]?.taken !== 1) {
     throw new Error(`another process has been migrating for ${LOCK_WAIT_SECONDS} s`)
   }
-}
-
-async function countApplied(connection: Connection): Promise<number> {
-  const [tables] = await connection.query<RowDataPacket[]>(
-    `show tables like '\\_\\_drizzle\\_migrations'`,
-  )
-  if (tables.length === 0) return 0
-  const [rows] = await connection.query<(RowDataPacket & { n: number })[]>(
-    'select count(*) as n from `__drizzle_migrations`',
-  )
-  return rows[0]?.n ?? 0
 }

@@ -1,10 +1,12 @@
 import type { Connection, RowDataPacket } from 'mysql2/promise'
 import { APPEND_ONLY_TABLES } from '#drizzle/append-only.ts'
+import { MIGRATION_STEPS_TABLE, MIGRATIONS_TABLE } from '#drizzle/migration-run.ts'
 
 /** A database account as `user@host`. */
 export type Grantee = `${string}@${string}`
 
-const MIGRATIONS_TABLE = '__drizzle_migrations'
+/** What the service may look at and never touch. */
+const MIGRATORS_TABLES: readonly string[] = [MIGRATIONS_TABLE, MIGRATION_STEPS_TABLE]
 const NO_SUCH_GRANT = 1147
 
 /**
@@ -15,7 +17,7 @@ export async function grantServing(connection: Connection, grantee: Grantee): Pr
   const account = quotedAccount(connection, grantee)
   for (const table of await listTables(connection)) {
     const name = connection.escapeId(table)
-    if (table === MIGRATIONS_TABLE) {
+    if (MIGRATORS_TABLES.includes(table)) {
       await connection.query(`grant select on ${name} to ${account}`)
     } else if (APPEND_ONLY_TABLES.includes(table)) {
       await revokeChanging(connection, `on ${name} from ${account}`)
