@@ -55,11 +55,18 @@ async function runStatement(
   try {
     await connection.query(statement)
   } catch (error) {
-    if (again && DONE_ALREADY.includes((error as { errno?: unknown }).errno)) return
+    if (again && isDoneAlready(error)) return
     await connection.rollback()
     await connection.query(`update ${MIGRATION_STEPS_TABLE} set refused = true`)
     throw error
   }
+}
+
+function isDoneAlready(error: unknown): boolean {
+  const { errno, message } = error as { errno?: unknown; message?: string }
+  // A foreign key of this name is reported as a table that cannot be made.
+  if (errno === 1005) return message?.includes('errno: 121 ') === true
+  return DONE_ALREADY.includes(errno)
 }
 
 async function createNotes(connection: Connection): Promise<void> {
