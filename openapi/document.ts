@@ -108,6 +108,7 @@ function operationOf(contract: Contract, problems: RouteConfig['responses']): Ro
     responses: {
       [contract.success.status]: successOf(contract),
       ...(contract.precondition === 'create' ? { 201: madeOf(contract) } : {}),
+      ...(contract.deferred === undefined ? {} : { 202: deferredOf(contract.deferred) }),
       ...(contract.conditional
         ? { 304: { description: 'Not modified since', headers: { ...REQUEST_ID, ...ETAG } } }
         : {}),
@@ -165,12 +166,29 @@ function requestHeaders(contract: Contract) {
   return Object.keys(fields).length === 0 ? undefined : z.object(fields)
 }
 
-function bodyOf({ body, bodyExample }: Contract) {
+function bodyOf({ body, bodyExample, takesFile }: Contract) {
   const media = {
     schema: body as z.ZodType,
     ...(bodyExample === undefined ? {} : { example: bodyExample }),
   }
-  return { required: true, content: { 'application/json': media } }
+  const form = takesFile ? { 'multipart/form-data': { schema: FORM } } : {}
+  return { required: true, content: { 'application/json': media, ...form } }
+}
+
+const FORM = z.strictObject({
+  file: z.string().meta({
+    format: 'binary',
+    description: 'The same as the JSON body, as a file; a style sheet where it is text/css',
+  }),
+})
+
+/** What an operation answers whose work goes on. */
+function deferredOf({ body, example }: NonNullable<Contract['deferred']>): ResponseConfig {
+  return {
+    description: 'Taken on: ask at Location how far it is',
+    headers: { ...REQUEST_ID, ...LOCATION },
+    content: { 'application/json': { schema: body, example } },
+  }
 }
 
 const ETAG = headerRef('ETag')

@@ -1,4 +1,5 @@
 import type { Request, Response } from 'express'
+import type * as z from 'zod'
 import { sha256Hex } from '#api/sha256.ts'
 import type { Alternative, AnswerOf, Contract } from '#shared/contracts/route.ts'
 import { isUnmodified } from './conditional.ts'
@@ -23,6 +24,11 @@ type Alternate<C extends Contract> = C extends {
   ? Accompanied & { readonly body: object; readonly media: A['media'] }
   : never
 
+/** Work that was taken on and is not done yet, with the address to ask at. */
+type Deferred<C extends Contract> = C extends { deferred: { body: infer D extends z.ZodType } }
+  ? Accompanied & { readonly status: 202; readonly body: z.input<D>; readonly location: string }
+  : never
+
 /** What a handler answers: JSON, text of one of the contract's media types, or nothing. */
 export type Answer<C extends Contract> = C['success'] extends { status: 204 }
   ? undefined | Accompanied
@@ -30,6 +36,7 @@ export type Answer<C extends Contract> = C['success'] extends { status: 204 }
     ? Accompanied & { readonly text: string; readonly media: string }
     :
         | Alternate<C>
+        | Deferred<C>
         | (Accompanied &
             Located<C> & {
               readonly body: AnswerOf<C>
@@ -39,6 +46,8 @@ export type Answer<C extends Contract> = C['success'] extends { status: 204 }
 
 /** An answer whatever its contract. */
 export interface LooseAnswer extends Accompanied {
+  /** Only where it is neither the contract's own nor told by `location`. */
+  readonly status?: 202 | undefined
   readonly body?: unknown
   readonly text?: string
   readonly media?: string
@@ -52,7 +61,12 @@ const contradiction = (contract: Contract, what: string): Error =>
 
 /** @throws {Error} where the answer contradicts its contract */
 export function checkAnswer(contract: Contract, answer: LooseAnswer | undefined): void {
-  const { success } = contract
+  const { success, deferred } = contract
+  if (answer?.status === 202) {
+    const parsed = deferred?.body.safeParse(answer.body)
+    if (parsed?.success) return
+    throw contradiction(contract, parsed?.error.message ?? 'it never defers its work')
+  }
   if (success.status === 204) return
   if ('media' in success) {
     if (typeof answer?.text !== 'string') throw contradiction(contract, 'no text')
@@ -93,10 +107,14 @@ export function sendAnswer(
   }
   if (answer?.location !== undefined) response.set('Location', answer.location)
   response
-    .status(answer?.location === undefined ? success.status : 201)
+    .status(statusOf(contract, answer))
     .set('Content-Type', answer?.media ?? 'application/json; charset=utf-8')
     .end(request.method === 'HEAD' ? undefined : text)
 }
+
+/** 201 where something was made whose address is told. */
+export const statusOf = ({ success }: Contract, answer: LooseAnswer | undefined): number =>
+  answer?.status ?? (answer?.location === undefined ? success.status : 201)
 
 function etagFor(
   contract: Contract,

@@ -4,7 +4,7 @@ import type { IdempotencyStore, KeptAnswer } from '#api/platform/idempotency/ide
 import { sha256Hex } from '#api/sha256.ts'
 import { type Contract, takesIdempotencyKey } from '#shared/contracts/route.ts'
 import { canonicalJson } from '#shared/formats/canonical-json.ts'
-import type { LooseAnswer } from './answer.ts'
+import { type LooseAnswer, statusOf } from './answer.ts'
 import type { Exchange } from './exchange.ts'
 
 const MOST_LETTERS = 255
@@ -82,13 +82,14 @@ const keyHashOf = (caller: Caller, { contract: { method }, path, key }: Keyed): 
 const [LOCATION, ETAG, MEDIA] = ['Location', 'ETag', 'Content-Type']
 
 /** What is shown once is not kept: neither the contract's secrets nor any cookie. */
-function keptOf({ success, secrets = [] }: Contract, answer: LooseAnswer | undefined): KeptAnswer {
+function keptOf(contract: Contract, answer: LooseAnswer | undefined): KeptAnswer {
+  const { secrets = [] } = contract
   const { body, text, media, etag, location, headers = {} } = answer ?? {}
   const own = Object.entries(headers).filter(
     (entry): entry is [string, string] => typeof entry[1] === 'string',
   )
   return {
-    status: location === undefined ? success.status : 201,
+    status: statusOf(contract, answer),
     headers: {
       ...Object.fromEntries(own.filter(([name]) => name.toLowerCase() !== 'set-cookie')),
       ...(location === undefined ? {} : { [LOCATION]: location }),
@@ -104,12 +105,16 @@ const withoutSecrets = (body: unknown, secrets: readonly string[]): unknown =>
     ? Object.fromEntries(Object.entries(body).filter(([name]) => !secrets.includes(name)))
     : body
 
-function answerOf({ success }: Contract, { headers, body }: KeptAnswer): LooseAnswer | undefined {
+function answerOf(
+  { success }: Contract,
+  { status, headers, body }: KeptAnswer,
+): LooseAnswer | undefined {
   const { [LOCATION]: location, [ETAG]: etag, [MEDIA]: media, ...others } = headers
   const content =
     'media' in success ? { text: body } : body === '' ? {} : { body: JSON.parse(body) }
   return {
     ...content,
+    ...(status === 202 && success.status !== 202 ? { status } : {}),
     ...(media === undefined ? {} : { media }),
     headers: others,
     ...(location === undefined ? {} : { location }),

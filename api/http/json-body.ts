@@ -17,7 +17,7 @@ const unreadable = (detail: string, cause?: unknown): AppError =>
  * @see https://www.rfc-editor.org/rfc/rfc8259
  */
 export function readJsonBody(bytes: Uint8Array, limitBytes: number): unknown {
-  const text = decode(bytes)
+  const text = readText(bytes)
   measure(text, Math.ceil((limitBytes / 2 ** 20) * MEMBERS_PER_MEBIBYTE))
   const value = parse(text)
   if (HALF_CHARACTER.test(text)) refuseHalfCharacters(value)
@@ -25,7 +25,11 @@ export function readJsonBody(bytes: Uint8Array, limitBytes: number): unknown {
   return value
 }
 
-function decode(bytes: Uint8Array): string {
+/**
+ * Answers the text of a body; a byte order mark is no part of it.
+ * @throws {AppError} `request-unreadable` for what is not UTF-8
+ */
+export function readText(bytes: Uint8Array): string {
   try {
     return new TextDecoder('utf-8', { fatal: true }).decode(bytes)
   } catch (cause) {

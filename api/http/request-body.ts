@@ -1,7 +1,8 @@
 import express, { type Request, type Response } from 'express'
 import { AppError } from '#api/errors.ts'
 import type { Contract } from '#shared/contracts/route.ts'
-import { readJsonBody } from './json-body.ts'
+import { readJsonBody, readText } from './json-body.ts'
+import { isForm, readFormFile, type UploadedFile } from './multipart-file.ts'
 
 /** What a body may have at most unless its contract says otherwise: 1 MiB. */
 export const BODY_LIMIT_BYTES = 2 ** 20
@@ -18,11 +19,18 @@ export async function readBody(
   response: Response,
   contract: Contract,
 ): Promise<unknown> {
-  refuseOtherTypes(request)
   const limit = contract.maxBodyBytes ?? BODY_LIMIT_BYTES
+  if (contract.takesFile && isForm(request)) {
+    return contentOf(await readFormFile(request, response, limit), limit)
+  }
+  refuseOtherTypes(request)
   const bytes = await readBytes(request, response, limit)
   return readJsonBody(bytes, limit)
 }
+
+/** A style sheet is its text; anything else is read as JSON, whatever type its sender gave it. */
+const contentOf = ({ name, type, bytes }: UploadedFile, limit: number): unknown =>
+  type === 'text/css' || /\.css$/i.test(name) ? readText(bytes) : readJsonBody(bytes, limit)
 
 function refuseOtherTypes(request: Request): void {
   const [type = '', ...parameters] = (request.headers['content-type'] ?? '').split(';')

@@ -46,7 +46,11 @@ export interface Contract {
   readonly bodyExample?: unknown
   /** What the body may have at most, default 1 MiB. */
   readonly maxBodyBytes?: number
+  /** The body may also come as the one file of a form: JSON as it is, a style sheet as text. */
+  readonly takesFile?: boolean
   readonly success: Success
+  /** Long work answers 202 with this and the address to ask at, instead of its success. */
+  readonly deferred?: { readonly body: z.ZodType; readonly example: unknown }
   /** JSON is answered where `Accept` prefers none of them, or names `text/html`; 406 where it excludes all. */
   readonly alternatives?: readonly Alternative[]
   readonly problems: readonly ProblemCode[]
@@ -122,10 +126,10 @@ export interface ParsedOf<C extends Contract> {
   readonly body: Part<C, 'body', 'output'>
 }
 
-/** What a caller gets back; `undefined` for 204. */
-export type OutputOf<C extends Contract> = C['success'] extends { body: infer S extends z.ZodType }
-  ? z.output<S>
-  : undefined
+/** What a caller gets back; `undefined` for 204. Where work may be deferred the status tells which it is. */
+export type OutputOf<C extends Contract> =
+  | (C['success'] extends { body: infer S extends z.ZodType } ? z.output<S> : undefined)
+  | (C extends { deferred: { body: infer D extends z.ZodType } } ? z.output<D> : never)
 
 /** The media types a caller of the operation can be answered in. */
 export type MediaOf<C extends Contract> =
