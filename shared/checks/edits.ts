@@ -1,4 +1,5 @@
 import type {
+  DistinctSet,
   PairModel,
   PrefixRules,
   StateRules,
@@ -14,7 +15,7 @@ export interface ItemEdits<Item> {
   readonly remove?: readonly string[]
 }
 
-/** A set of edits to a system. Members other than tokens and pairs are given whole. */
+/** A set of edits to a system. Members other than tokens, pairs and distinct sets are given whole. */
 export interface SystemEdits {
   readonly tokens?: ItemEdits<TokenModel>
   readonly pairs?: ItemEdits<PairModel>
@@ -22,6 +23,7 @@ export interface SystemEdits {
   readonly prefixes?: readonly PrefixRules[]
   readonly states?: StateRules
   readonly settings?: SystemSettings
+  readonly distinctSets?: ItemEdits<DistinctSet>
 }
 
 /** An item that is both removed and put is put. */
@@ -45,6 +47,7 @@ function applyItemEdits<Item extends { readonly id: string }>(
 
 /** The model as the edits leave it; the one given is untouched, and parts that did not change are shared. */
 export function applyEdits(model: SystemModel, edits: SystemEdits): SystemModel {
+  const distinctSets = applyItemEdits(model.distinctSets ?? [], edits.distinctSets)
   return {
     settings: edits.settings ?? model.settings,
     states: edits.states ?? model.states,
@@ -52,5 +55,6 @@ export function applyEdits(model: SystemModel, edits: SystemEdits): SystemModel 
     themes: edits.themes ?? model.themes,
     tokens: applyItemEdits(model.tokens, edits.tokens),
     pairs: applyItemEdits(model.pairs, edits.pairs),
+    ...(distinctSets.length > 0 ? { distinctSets } : {}),
   }
 }

@@ -153,6 +153,14 @@ export interface SystemSettings {
   readonly disabledFloor?: number
 }
 
+/** Tokens that must stay tellable apart, also with a colour-vision deficiency. It is measured and never gates. */
+export interface DistinctSet {
+  readonly id: string
+  readonly name: string
+  /** Token ids, at least two. */
+  readonly tokens: readonly string[]
+}
+
 /** A system at one revision, as the engine reads it. `themes[0]` is the base. */
 export interface SystemModel {
   readonly settings: SystemSettings
@@ -163,6 +171,8 @@ export interface SystemModel {
   /** In ledger order. */
   readonly tokens: readonly TokenModel[]
   readonly pairs: readonly PairModel[]
+  /** Absent: none. */
+  readonly distinctSets?: readonly DistinctSet[]
 }
 
 /** What a finding is about, as far as its identity goes: a change from `text` to `large-text` keeps its history. */
