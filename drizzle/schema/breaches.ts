@@ -34,6 +34,13 @@ export interface BreachNames {
   readonly theme: string
 }
 
+/** The pair that stands in for a breach by `anyOf`. */
+export interface StandIn {
+  /** Token ids. */
+  readonly foreground: string
+  readonly background: string
+}
+
 /** The breach log: one row an identity and origin, for ever. */
 export const breaches = mysqlTable(
   'breaches',
@@ -83,6 +90,8 @@ export const breaches = mysqlTable(
       'exempted',
       'engine-changed',
     ]),
+    /** What met the requirement in its place, where that closed it. */
+    metBy: json('met_by').$type<StandIn>(),
     assigneeUserId: idColumn('assignee_user_id').references(() => users.id, RESTRICT),
     waiverId: idColumn('waiver_id').references(() => waivers.id, RESTRICT),
     version: versionColumn(),

@@ -19,7 +19,13 @@ import {
 } from './columns.ts'
 import { users } from './users.ts'
 
-/** Name, visibility and write mode are handling: audited, in no revision. */
+/** Whose breaches a check of a pipeline logs; `*` in either stands for any characters. */
+export interface ProtectedBranch {
+  readonly repository: string
+  readonly branch: string
+}
+
+/** Name, visibility, write mode and protected branches are handling: audited, in no revision. */
 export const systems = mysqlTable(
   'systems',
   {
@@ -29,6 +35,10 @@ export const systems = mysqlTable(
     name: varchar('name', { length: 120 }).notNull(),
     visibility: mysqlEnum('visibility', ['members', 'instance']).notNull().default('members'),
     writeMode: mysqlEnum('write_mode', ['direct', 'review']).notNull().default('direct'),
+    protectedBranches: json('protected_branches')
+      .$type<readonly ProtectedBranch[]>()
+      .notNull()
+      .default([]),
     createdAt: insertedAt('created_at'),
     version: versionColumn(),
   },
