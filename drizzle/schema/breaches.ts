@@ -11,7 +11,7 @@ import {
   unique,
   varchar,
 } from 'drizzle-orm/mysql-core'
-import { CONTRAST_KINDS, STATES } from '#shared/checks/model.ts'
+import { CONTRAST_KINDS, STATES, USES } from '#shared/checks/model.ts'
 import { checks } from './checks.ts'
 import {
   digestColumn,
@@ -64,6 +64,8 @@ export const breaches = mysqlTable(
     backgroundTokenId: varchar('background_token_id', { length: 300 }).notNull(),
     names: json('names').$type<BreachNames>().notNull(),
     kind: mysqlEnum('kind', CONTRAST_KINDS).notNull(),
+    /** As measured last; no part of the identity. */
+    use: mysqlEnum('use', USES).notNull(),
     themeId: idColumn('theme_id').notNull(),
     fgState: mysqlEnum('fg_state', STATES).notNull(),
     bgState: mysqlEnum('bg_state', STATES).notNull(),
@@ -128,6 +130,8 @@ export const breachEvents = mysqlTable(
     actorUserId: idColumn('actor_user_id').references(() => users.id, RESTRICT),
     /** A comment's text. */
     body: text('body'),
+    /** Whom an assignment names. */
+    assigneeUserId: idColumn('assignee_user_id').references(() => users.id, RESTRICT),
     at: insertedAt('at'),
   },
   (table) => [index('breach_events_breach_id_idx').on(table.breachId, table.at, table.id)],
@@ -142,15 +146,41 @@ export const ciSightings = mysqlTable(
       .references(() => systems.id, RESTRICT),
     repository: varchar('repository', { length: 255 }).notNull(),
     branch: varchar('branch', { length: 255 }).notNull(),
+    /** SHA-256 of the finding's identity. */
     subjectHash: digestColumn('subject_hash').notNull(),
+    identity: varchar('identity', { length: 1024 }).notNull(),
+    /** Whether the branch was protected when it was seen last: else the row is kept for 30 days. */
+    isProtected: boolean('is_protected').notNull(),
+    /** A candidate's token has no row: these reference nothing. */
+    foregroundTokenId: varchar('foreground_token_id', { length: 300 }).notNull(),
+    backgroundTokenId: varchar('background_token_id', { length: 300 }).notNull(),
+    names: json('names').$type<BreachNames>().notNull(),
+    kind: mysqlEnum('kind', CONTRAST_KINDS).notNull(),
+    use: mysqlEnum('use', USES).notNull(),
+    themeId: idColumn('theme_id').notNull(),
+    fgState: mysqlEnum('fg_state', STATES).notNull(),
+    bgState: mysqlEnum('bg_state', STATES).notNull(),
+    basis: mysqlEnum('basis', ['srgb', 'p3']).notNull(),
+    gating: boolean('gating').notNull(),
+    /** As measured last, unrounded. */
+    ratio: double('ratio').notNull(),
+    required: double('required').notNull(),
+    foregroundHex: varchar('foreground_hex', { length: 9 }).notNull(),
+    backgroundHex: varchar('background_hex', { length: 9 }).notNull(),
     firstSeenAt: instantColumn('first_seen_at').notNull(),
     lastSeenAt: instantColumn('last_seen_at').notNull(),
+    /** Checks that saw it. */
     count: int('count', { unsigned: true }).notNull(),
     lastCommit: varchar('last_commit', { length: 64 }),
+    lastCheckId: idColumn('last_check_id')
+      .notNull()
+      .references(() => checks.id, RESTRICT),
   },
   (table) => [
     primaryKey({
       columns: [table.systemId, table.repository, table.branch, table.subjectHash],
     }),
+    index('ci_sightings_system_id_first_seen_at_idx').on(table.systemId, table.firstSeenAt),
+    index('ci_sightings_is_protected_last_seen_at_idx').on(table.isProtected, table.lastSeenAt),
   ],
 )

@@ -6,6 +6,16 @@ import type { OutcomeCounts } from './revisions.ts'
 import { systems } from './systems.ts'
 import { users } from './users.ts'
 
+/** What a check of a pipeline left in the log. */
+export interface LoggedSightings {
+  /** Whether its branch was protected, so that breaches were opened and resolved. */
+  readonly protected: boolean
+  /** Findings that fell short, also those that newOnly lets pass. */
+  readonly seen: number
+  readonly opened: number
+  readonly resolved: number
+}
+
 /** One evaluation that was asked for: counts, and the findings that are not `pass`. */
 export const checks = mysqlTable(
   'checks',
@@ -31,6 +41,8 @@ export const checks = mysqlTable(
     ruleSet: varchar('rule_set', { length: 64 }).notNull(),
     /** Gzipped JSON: findings that are not `pass`, and advisories, as they were answered. */
     findingsGzip: bytesColumn('findings_gzip').notNull(),
+    /** Null where no repository and branch were named. */
+    logged: json('logged').$type<LoggedSightings>(),
     at: insertedAt('at'),
   },
   (table) => [

@@ -55,6 +55,7 @@ export const memberships = mysqlTable(
       .notNull()
       .references(() => users.id, RESTRICT),
     role: mysqlEnum('role', ['engineer', 'maintainer', 'accessibility-lead']).notNull(),
+    createdAt: insertedAt('created_at'),
     version: versionColumn(),
   },
   (table) => [primaryKey({ columns: [table.systemId, table.userId] })],
