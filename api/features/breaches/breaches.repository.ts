@@ -74,6 +74,7 @@ const MOVING_COLUMNS = {
       [
         'status',
         'names',
+        'use',
         'gating',
         'basis',
         'ratio',

@@ -118,7 +118,12 @@ function rowOf(
   const { id, number } = identity
   if (logged !== undefined) {
     const seen = finding.after ?? finding.before
-    return { ...logged, ...step.state, names: seen ? namesOf(move, seen) : logged.names }
+    return {
+      ...logged,
+      ...step.state,
+      names: seen ? namesOf(move, seen) : logged.names,
+      use: seen?.use ?? logged.use,
+    }
   }
   const { after } = finding
   if (after === undefined) throw new TypeError('Only a finding that is there opens an entry')
@@ -133,6 +138,7 @@ function rowOf(
     backgroundTokenId: after.background,
     names: namesOf(move, after),
     kind: after.kind,
+    use: after.use,
     themeId: after.theme,
     fgState: after.foregroundState,
     bgState: after.backgroundState,

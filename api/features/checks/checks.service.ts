@@ -119,6 +119,7 @@ function rowOf({ id, caller }: SystemAccess, { head, verdict, source }: Outcome)
     againstRevision: head.revision,
     releaseId: null,
     ...callerColumns(caller),
+    logged: null,
     repository: source?.repository ?? null,
     branch: source?.branch ?? null,
     commitSha: source?.commit ?? null,
