@@ -9,7 +9,7 @@ import { checkNodeVersion } from '#scripts/start/node-version.mjs'
 import { ensurePackages } from '#scripts/start/packages.mjs'
 import { ROOT } from '#scripts/start/project.mjs'
 import { endRunning, runProgram } from '#scripts/start/run-program.mjs'
-import { StepFailure, step } from '#scripts/start/steps.mjs'
+import { describeFailure, StepFailure, step } from '#scripts/start/steps.mjs'
 import { reapLeftovers } from '#scripts/start/throw-away.mjs'
 
 /** `npm run check`: everything that needs no browser. */
@@ -41,7 +41,7 @@ try {
   if (!interrupted) await runTests()
 } catch (error) {
   count.failed += 1
-  console.error(error instanceof StepFailure ? `\n${error.message}` : error)
+  console.error(`\n${describeFailure(error)}`)
 }
 await reapLeftovers()
 process.exitCode = interrupted ? 130 : count.failed > 0 ? 1 : 0

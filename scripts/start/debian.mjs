@@ -13,6 +13,9 @@ const FOLDERS = [
   '/usr/bin',
 ]
 
+const LOCK_PATIENCE_SECONDS = 180
+const WAITING = `Another package run holds the lock of dpkg: waiting for it, ${LOCK_PATIENCE_SECONDS} s at most.`
+
 /**
  * @param {string} program
  * @returns {string | undefined} its path; daemons are found although `/usr/sbin` is not in a user's PATH
@@ -46,12 +49,30 @@ export async function ensurePrograms({ programs, packages }) {
     )
   }
   // Another package run may hold the lock for a while; apt waits for it.
-  const patience = ['-o', 'DPkg::Lock::Timeout=180', '-q']
+  const patience = ['-o', `DPkg::Lock::Timeout=${LOCK_PATIENCE_SECONDS}`, '-q']
   const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive', LC_ALL: 'C' }
-  await runProgram('apt-get', ['update', ...patience], { env })
+  const options = { env, onSaid: sayOnce(/Waiting for cache lock/, WAITING) }
+  await runProgram('apt-get', ['update', ...patience], options)
   // Ended half-way, it leaves packages to repair by hand.
-  await runProgram('apt-get', [...install.slice(1), ...patience], { env, patienceMs: 60_000 })
+  await runProgram('apt-get', [...install.slice(1), ...patience], {
+    ...options,
+    patienceMs: 60_000,
+  })
   const still = programs.filter((program) => findProgram(program) === undefined)
   if (still.length > 0) throw new StepFailure(`${packages.join(' ')} came without ${still.join()}`)
   return `installed ${packages.join(', ')}`
+}
+
+/**
+ * @param {RegExp} pattern
+ * @param {string} line shown the first time that a program says what the pattern looks for
+ * @returns {(text: string) => void}
+ */
+function sayOnce(pattern, line) {
+  let isSaid = false
+  return (text) => {
+    if (isSaid || !pattern.test(text)) return
+    isSaid = true
+    console.log(line)
+  }
 }

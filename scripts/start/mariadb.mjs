@@ -164,8 +164,9 @@ async function untilReady({ socket, isRunning, log }) {
     await delay(50)
     if (existsSync(socket) && (await answers(socket))) return
   }
-  const tail = readFileSync(log, 'utf8').trim().split('\n').slice(-15).join('\n  ')
-  throw new StepFailure(`MariaDB did not start. The end of ${log}:\n  ${tail}`)
+  const said = readFileSync(log, 'utf8').trim()
+  const tail = said.split('\n').slice(-15).join('\n  ')
+  throw new StepFailure(`MariaDB did not start. The end of ${log}:\n  ${tail}`, { said })
 }
 
 /** @param {string} socket */

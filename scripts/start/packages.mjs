@@ -11,6 +11,8 @@ import { StepFailure } from '#scripts/start/steps.mjs'
 const STAMP = join(ROOT, 'node_modules', '.dyewright-lock')
 /** Node's major version decides which binaries a package brings. */
 const MAJOR = process.versions.node.split('.')[0]
+/** npm's own pauses make five minutes of a missing network. */
+const RETRIES = ['--fetch-retries=2', '--fetch-retry-mintimeout=1000', '--fetch-retry-factor=4']
 
 /**
  * Leaves `node_modules` as the lock file says. The stamp is written last, so an installation that broke off
@@ -25,7 +27,7 @@ export async function ensurePackages({ serving }) {
     if (isInstalled()) return 'installed by another process'
     if (!serving) await requireNoService()
     // NODE_ENV=production would leave out what the build needs.
-    await npm(['ci', '--include=dev', '--no-audit', '--no-fund'])
+    await npm(['ci', '--include=dev', '--no-audit', '--no-fund', '--prefer-offline', ...RETRIES])
     writeFileSync(STAMP, lockDigest())
     return 'installed'
   } finally {
@@ -52,7 +54,8 @@ async function requireNoService() {
   }
 }
 
-function isInstalled() {
+/** @returns {boolean} */
+export function isInstalled() {
   return existsSync(STAMP) && readFileSync(STAMP, 'utf8') === lockDigest()
 }
 

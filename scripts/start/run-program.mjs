@@ -10,7 +10,8 @@ const running = new Map()
  * Runs a program to its end, quietly; what it said is shown when it fails.
  * @param {string} program
  * @param {string[]} args
- * @param {{ cwd?: string, env?: NodeJS.ProcessEnv, input?: string, patienceMs?: number, keptLines?: number }} [options]
+ * @param {{ cwd?: string, env?: NodeJS.ProcessEnv, input?: string, patienceMs?: number, keptLines?: number,
+ *   onSaid?: (text: string) => void }} [options]
  *   `patienceMs`: how long it may take to end when it is asked to; `keptLines`: how much of
  *   what it said is shown
  * @returns {Promise<string>} its standard output
@@ -18,7 +19,14 @@ const running = new Map()
 export function runProgram(
   program,
   args,
-  { cwd, env = process.env, input = '', patienceMs = 3_000, keptLines = 15 } = {},
+  {
+    cwd,
+    env = process.env,
+    input = '',
+    patienceMs = 3_000,
+    keptLines = 15,
+    onSaid = () => {},
+  } = {},
 ) {
   return new Promise((resolve, reject) => {
     const child = spawn(program, args, { cwd, env, stdio: 'pipe' })
@@ -26,11 +34,13 @@ export function runProgram(
     let said = ''
     child.stdout.setEncoding('utf8').on('data', (text) => {
       stdout += text
-      said += text
     })
-    child.stderr.setEncoding('utf8').on('data', (text) => {
-      said += text
-    })
+    for (const stream of [child.stdout, child.stderr]) {
+      stream.setEncoding('utf8').on('data', (text) => {
+        said += text
+        onSaid(text)
+      })
+    }
     child.stdin.on('error', () => {})
     child.stdin.end(input)
     child.once('error', (error) => reject(new StepFailure(`${program}: ${error.message}`)))
@@ -39,7 +49,7 @@ export function runProgram(
       running.delete(/** @type {number} */ (child.pid))
       if (code === 0) return resolve(stdout)
       const tail = said.trim().split('\n').slice(-keptLines).join('\n  ')
-      reject(new StepFailure(`${[program, ...args].join(' ')} failed:\n  ${tail}`))
+      reject(new StepFailure(`${[program, ...args].join(' ')} failed:\n  ${tail}`, { said }))
     })
   })
 }

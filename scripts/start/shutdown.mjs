@@ -1,6 +1,6 @@
 // @ts-check
 import { endRunning } from '#scripts/start/run-program.mjs'
-import { StepFailure } from '#scripts/start/steps.mjs'
+import { describeFailure } from '#scripts/start/steps.mjs'
 
 /** @type {(() => unknown)[]} */
 const closers = []
@@ -56,7 +56,7 @@ export async function runOrStop(work) {
   } catch (error) {
     // A program that was ended because we stop has nothing to complain about.
     if (stopping) return
-    console.error(error instanceof StepFailure ? `\n${error.message}` : error)
+    console.error(`\n${describeFailure(error)}`)
     await stopAll(1)
   }
 }

@@ -1,7 +1,17 @@
 // @ts-check
+import { causeOf } from '#scripts/start/causes.mjs'
 
 /** A step that cannot go on, in words for the person at the terminal: shown without a stack trace. */
-export class StepFailure extends Error {}
+export class StepFailure extends Error {
+  /**
+   * @param {string} message
+   * @param {{ said?: string }} [options] `said`: all that the failed program said, of which `message` shows the end
+   */
+  constructor(message, { said = message } = {}) {
+    super(message)
+    this.said = said
+  }
+}
 
 const NAME_WIDTH = 12
 
@@ -30,4 +40,15 @@ export async function step(name, work) {
     show()
     throw error
   }
+}
+
+/**
+ * @param {unknown} error
+ * @returns {string} for the terminal: what to do, where that is known, then what was said
+ */
+export function describeFailure(error) {
+  if (!(error instanceof Error)) return String(error)
+  const cause = causeOf(error instanceof StepFailure ? error.said : error.message)
+  if (cause !== undefined) return `${cause}\n\n${error.message}`
+  return error instanceof StepFailure ? error.message : (error.stack ?? error.message)
 }

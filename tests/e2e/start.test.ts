@@ -1,53 +1,44 @@
-import { type ChildProcess, spawn, spawnSync } from 'node:child_process'
-import { once } from 'node:events'
-import { cpSync, existsSync, mkdtempSync, readFileSync, rmSync, symlinkSync } from 'node:fs'
-import { tmpdir } from 'node:os'
-import { dirname, join } from 'node:path'
+import { existsSync, readFileSync } from 'node:fs'
+import { join } from 'node:path'
 import { setTimeout as delay } from 'node:timers/promises'
 import { createConnection } from 'mysql2/promise'
-import { afterAll, beforeAll, describe, expect, inject, test } from 'vitest'
-import { freePort } from '#scripts/start/free-port.mjs'
+import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { findProcesses, processIdentity } from '#scripts/start/processes.mjs'
 import { demoPeople } from '#scripts/start/seeding.mjs'
 import { createTestDatabase, type TestDatabase } from '#tests/support/database.ts'
+import {
+  copyProject,
+  exitOf,
+  type ProjectCopy,
+  READY,
+  type Start,
+  stop,
+  untilSaid,
+} from '#tests/support/project-copy.ts'
 
-const ROOT = process.cwd()
-const READY = 'Dyewright is ready:'
-
-/** A copy of the project, so that a service running in this folder is left alone. */
+let copy: ProjectCopy
 let folder: string
-let port: number
 let url: string
 let running: Start | undefined
 
-interface Start {
-  readonly child: ChildProcess
-  readonly output: () => string
-}
-
 beforeAll(async () => {
-  folder = mkdtempSync(join(tmpdir(), 'dyw-start-'))
-  for (const file of projectFiles()) {
-    cpSync(join(ROOT, file), join(folder, file), { recursive: true })
-  }
-  symlinkSync(join(ROOT, 'node_modules'), join(folder, 'node_modules'))
-  cpSync(inject('dist'), join(folder, 'dist'), { recursive: true })
-  port = await freePort()
-  url = `http://127.0.0.1:${port}`
+  copy = await copyProject()
+  folder = copy.folder
+  url = copy.url
 })
 
 afterAll(async () => {
   if (running !== undefined) await stop(running)
-  rmSync(folder, { recursive: true, force: true })
+  copy.remove()
 })
 
 describe('npm start', () => {
   test('answers 503 from readyz until the demo is loaded, then says what to do next', async () => {
-    running = start()
+    running = copy.start()
     const seen = await watchReadiness(running)
     await untilSaid(running, READY)
     expect(seen).toContain(503)
-    expect(await statusOf('/readyz')).toBe(200)
+    expect(await copy.statusOf('/readyz')).toBe(200)
     const said = running.output()
     expect(said).toContain(`${READY} ${url}`)
     expect(said).toMatch(new RegExp(`^password  ${demoPeople().password}$`, 'm'))
@@ -74,12 +65,12 @@ describe('npm start', () => {
     })
     expect(await theme.text()).toContain(':root')
     const gate = /^ {2}DYEWRIGHT_KEY=.*$/m.exec(said)?.[0] ?? ''
-    expect(shell(gate).status).toBe(1)
-    expect(shell(gate.replace('breaching-change', 'fix')).status).toBe(0)
+    expect(copy.shell(gate).status).toBe(1)
+    expect(copy.shell(gate.replace('breaching-change', 'fix')).status).toBe(0)
   })
 
   test('refuses a second start in the folder, naming the first', async () => {
-    const second = start()
+    const second = copy.start()
     expect(await exitOf(second.child)).toBe(1)
     expect(second.output()).toContain(
       `npm start already runs in this folder: process ${running?.child.pid}.`,
@@ -94,7 +85,7 @@ describe('npm start', () => {
     const seen: number[] = []
     const deadline = Date.now() + 20_000
     do {
-      seen.push(await statusOf('/readyz'))
+      seen.push(await copy.statusOf('/readyz'))
       await delay(20)
     } while ((seen.at(-1) !== 200 || !seen.includes(503)) && Date.now() < deadline)
     expect(seen.filter((status) => status !== 200 && status !== 503)).toEqual([])
@@ -109,7 +100,7 @@ describe('npm start', () => {
     expect(findProcesses(`--datadir=${join(folder, '.data/mariadb')}`)).toEqual([])
     expect(findProcesses(join(folder, 'dist/api/server.js'))).toEqual([])
     expect(existsSync(join(folder, '.data/database-url'))).toBe(false)
-    running = start()
+    running = copy.start()
     await untilSaid(running, READY)
     expect(running.output()).not.toMatch(/^Demo /m)
     expect(running.output()).toContain('unchanged')
@@ -123,7 +114,7 @@ describe('npm start', () => {
     running!.child.kill('SIGKILL')
     await exitOf(running!.child)
     expect(findProcesses(join(folder, 'dist/api/server.js'))).toHaveLength(1)
-    running = start()
+    running = copy.start()
     await untilSaid(running, READY)
     expect(running.output()).toMatch(/^Tidying .*left by a start that was killed$/m)
     expect(findProcesses(join(folder, 'dist/api/server.js'))).toHaveLength(1)
@@ -132,7 +123,9 @@ describe('npm start', () => {
   test('refuses the demo’s database in production, by name', async () => {
     await stop(running!)
     running = undefined
-    const production = start({ NODE_ENV: 'production', PUBLIC_URL: 'https://dyewright.example' })
+    const production = copy.start({
+      env: { NODE_ENV: 'production', PUBLIC_URL: 'https://dyewright.example' },
+    })
     expect(await exitOf(production.child)).toBe(1)
     expect(production.output()).toMatch(
       /refused to start: the database has \d+ accounts of the demo/,
@@ -158,11 +151,13 @@ describe('npm start in production on a database of one’s own', () => {
   }
 
   const startInProduction = () =>
-    start({
-      NODE_ENV: 'production',
-      PUBLIC_URL: 'https://dyewright.example',
-      DATABASE_URL: database.serveUrl,
-      MIGRATE_DATABASE_URL: database.migrateUrl,
+    copy.start({
+      env: {
+        NODE_ENV: 'production',
+        PUBLIC_URL: 'https://dyewright.example',
+        DATABASE_URL: database.serveUrl,
+        MIGRATE_DATABASE_URL: database.migrateUrl,
+      },
     })
 
   test('refuses one that does not flush at commit, by name', async () => {
@@ -178,78 +173,17 @@ describe('npm start in production on a database of one’s own', () => {
     expect(findProcesses(`--datadir=${join(folder, '.data/mariadb')}`)).toEqual([])
     expect(safe.output()).not.toMatch(/^(MariaDB|Database|Accounts|Demo) /m)
     expect(safe.output()).not.toContain(demoPeople().password)
-    expect(await statusOf('/readyz')).toBe(200)
+    expect(await copy.statusOf('/readyz')).toBe(200)
     expect(await stop(safe)).toBe(0)
   })
 })
-
-function projectFiles(): string[] {
-  const listed = spawnSync('git', ['ls-files', '--cached', '--others', '--exclude-standard'], {
-    encoding: 'utf8',
-  })
-  return listed.stdout.split('\n').filter((file) => file !== '' && existsSync(join(ROOT, file)))
-}
-
-function start(env: NodeJS.ProcessEnv = {}): Start {
-  // What the test run sets for itself must not reach the service.
-  const { NODE_ENV: _, VITEST: __, DATABASE_URL: ___, ...rest } = process.env
-  const child = spawn(process.execPath, ['scripts/start.mjs'], {
-    cwd: folder,
-    env: { ...rest, PORT: String(port), ...env },
-    stdio: ['ignore', 'pipe', 'pipe'],
-  })
-  let said = ''
-  for (const stream of [child.stdout, child.stderr]) {
-    stream?.setEncoding('utf8').on('data', (text) => {
-      said += text
-    })
-  }
-  return { child, output: () => said }
-}
-
-async function stop({ child }: Start): Promise<number | null> {
-  child.kill('SIGTERM')
-  return exitOf(child)
-}
-
-async function exitOf(child: ChildProcess): Promise<number | null> {
-  if (child.exitCode === null && child.signalCode === null) await once(child, 'exit')
-  return child.exitCode
-}
-
-async function untilSaid({ child, output }: Start, words: string): Promise<void> {
-  while (!output().includes(words)) {
-    if (child.exitCode !== null) throw new Error(`ended without saying "${words}":\n${output()}`)
-    await delay(50)
-  }
-}
 
 /** Asks all along, from before anybody listens until it is ready. */
 async function watchReadiness({ child }: Start): Promise<number[]> {
   const seen: number[] = []
   while (seen.at(-1) !== 200 && child.exitCode === null) {
-    seen.push(await statusOf('/readyz'))
+    seen.push(await copy.statusOf('/readyz'))
     await delay(50)
   }
   return seen
-}
-
-/** 0 where nobody listens. */
-async function statusOf(path: string): Promise<number> {
-  try {
-    const answer = await fetch(`${url}${path}`)
-    await answer.arrayBuffer()
-    return answer.status
-  } catch {
-    return 0
-  }
-}
-
-function shell(command: string) {
-  const node = dirname(process.execPath)
-  return spawnSync('bash', ['-c', command], {
-    cwd: folder,
-    encoding: 'utf8',
-    env: { ...process.env, PATH: `${node}:${process.env.PATH}` },
-  })
 }
