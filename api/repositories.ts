@@ -1,6 +1,7 @@
 import { createAccountsRepository } from './features/accounts/accounts.repository.ts'
 import { createBreachesRepository } from './features/breaches/breaches.repository.ts'
 import { createChecksRepository } from './features/checks/checks.repository.ts'
+import { createJobsRepository } from './features/jobs/jobs.repository.ts'
 import { createKeysRepository } from './features/keys/keys.repository.ts'
 import { createMembersRepository } from './features/members/members.repository.ts'
 import { createHeadsRepository } from './features/revisions/heads.repository.ts'
@@ -20,6 +21,7 @@ export const createRepositories = (db: Executor) => ({
   breaches: createBreachesRepository(db),
   checks: createChecksRepository(db),
   heads: createHeadsRepository(db),
+  jobs: createJobsRepository(db),
   keys: createKeysRepository(db),
   members: createMembersRepository(db),
   sessions: createSessionsRepository(db),

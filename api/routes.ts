@@ -1,6 +1,7 @@
 import { mountBreaches } from './features/breaches/breaches.routes.ts'
 import { mountChecks } from './features/checks/checks.routes.ts'
 import { mountHealth } from './features/health/health.routes.ts'
+import { mountJobs } from './features/jobs/jobs.routes.ts'
 import { mountKeys } from './features/keys/keys.routes.ts'
 import { mountMembers } from './features/members/members.routes.ts'
 import { mountPairs } from './features/pairs/pairs.routes.ts'
@@ -26,5 +27,6 @@ export function mountAll(router: ApiRouter, services: Services): void {
   mountChecks(router, services.checks)
   mountBreaches(router, services.breaches)
   mountRevisions(router, services.revisions)
+  mountJobs(router, services.jobs)
   mountHealth(router, services.health)
 }

@@ -55,6 +55,8 @@ export const PROBLEM_ADVICE: Readonly<Record<ProblemCode, string>> = {
   'requests-too-many': 'Wait as long as Retry-After says, then try again.',
   'server-unexpected':
     'A fault of ours. Nothing was half done. Tell whoever runs the service the requestId.',
+  'job-interrupted':
+    'The process that worked on it ended, or was held up for longer than its lease. Nothing was half done: ask for the work again.',
   'service-unavailable':
     'The database is away, or the service is starting or stopping. Nothing was half done: try again as Retry-After says.',
 }

@@ -6,7 +6,7 @@ interface Enclosing {
   readonly afterCommit: (() => void)[]
 }
 
-const enclosing = new AsyncLocalStorage<Enclosing>()
+const enclosing = new AsyncLocalStorage<Enclosing | undefined>()
 
 /**
  * Runs work inside one transaction that encloses every transaction and every read begun within it, so that
@@ -43,6 +43,10 @@ export const followEnclosing = (db: Executor): Executor =>
       return typeof member === 'function' ? member.bind(executor) : member
     },
   })
+
+/** Runs work outside whatever encloses it: what it writes shows at once, and stays where the rest is given up. */
+export const outsideEnclosing = <T>(work: () => Promise<T>): Promise<T> =>
+  enclosing.run(undefined, work)
 
 /** Runs the hook when what was written is committed: at once where nothing encloses it, never where it is given up. */
 export function afterCommit(hook: () => void): void {

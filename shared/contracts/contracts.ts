@@ -1,6 +1,7 @@
 import * as breaches from './breaches.contract.ts'
 import * as checks from './checks.contract.ts'
 import * as health from './health.contract.ts'
+import * as jobs from './jobs.contract.ts'
 import * as keys from './keys.contract.ts'
 import * as members from './members.contract.ts'
 import * as pairs from './pairs.contract.ts'
@@ -28,5 +29,6 @@ export const contracts: readonly Contract[] = [
   revisions,
   keys,
   members,
+  jobs,
   health,
 ].flatMap((feature) => Object.values(feature).filter(isContract))

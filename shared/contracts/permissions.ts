@@ -18,6 +18,7 @@ const READ = [
   'checks:write',
   'breaches:read',
   'revisions:read',
+  'jobs:read',
   'members:read',
   'keys:own',
 ] as const
@@ -42,8 +43,8 @@ export const ADMIN_PERMISSIONS = ['systems:create', 'members:write'] as const
 
 export const SCOPE_PERMISSIONS = {
   'themes:read': ['system:read', 'themes:read', 'tokens:read'],
-  'checks:write': ['checks:write', 'checks:read-own'],
-  'tokens:write': ['tokens:read', 'tokens:write'],
+  'checks:write': ['checks:write', 'checks:read-own', 'jobs:read-own'],
+  'tokens:write': ['tokens:read', 'tokens:write', 'jobs:read-own'],
 } as const satisfies Record<Scope, readonly string[]>
 
 export type Permission =

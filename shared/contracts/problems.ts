@@ -36,6 +36,7 @@ export const PROBLEMS = {
   'precondition-required': { status: 428, title: 'Say which version the edit is meant for' },
   'requests-too-many': { status: 429, title: 'Too many requests' },
   'server-unexpected': { status: 500, title: 'The service failed' },
+  'job-interrupted': { status: 503, title: 'The work broke off before its end' },
   'service-unavailable': { status: 503, title: 'The service cannot answer just now' },
 } as const satisfies Record<string, { status: number; title: string }>
 
