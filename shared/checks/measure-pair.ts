@@ -25,12 +25,12 @@ export function exemptionOf(pair: PairModel, combination: number): string | unde
 }
 
 /** Whether the foreground is measured as it lies on the background, or each side on the backdrop. */
-function isLaidOn(use: Use): boolean {
+export function isLaidOn(use: Use): boolean {
   return use !== 'link-in-text' && use !== 'focus-adjacent'
 }
 
 /** What a row must reach to keep its verdict; undefined where nothing can fail. */
-function thresholdOf(
+export function thresholdOf(
   exemption: string | undefined,
   required: number,
   settings: SystemSettings,
@@ -40,7 +40,8 @@ function thresholdOf(
   return isDisabled ? settings.disabledFloor : undefined
 }
 
-function requiredIn(resolved: ResolvedSystem, pair: PairModel, theme: number): number {
+/** What a pair asks for in a theme: the highest of its use's ratio, the levels that hold, and its minimum. */
+export function requiredIn(resolved: ResolvedSystem, pair: PairModel, theme: number): number {
   const { settings, themes } = resolved.model
   const level = effectiveLevel(settings.level, themes[theme]!.level, pair.level)
   return Math.max(requiredRatio(pair.use, level), pair.minimum ?? 0)
@@ -79,12 +80,13 @@ function createColumns(rows: number, settings: SystemSettings): Columns {
   }
 }
 
-function gatingRatio(srgb: number, p3: number, settings: SystemSettings): number {
+/** The ratio that decides: the lower of the two where P3 gates. */
+export function gatingRatio(srgb: number, p3: number, settings: SystemSettings): number {
   return settings.p3Gates && p3 < srgb ? p3 : srgb
 }
 
 /** Whether the pair shows a layer that leaves sRGB or is translucent. */
-function isWide(stack: MeasuredStack): boolean {
+export function isWide(stack: MeasuredStack): boolean {
   const under = wideOver(stack.background, stack.underlay.isWide)
   return under || wideOver(stack.foreground, stack.isLaidOn ? under : stack.underlay.isWide)
 }
