@@ -24,6 +24,8 @@ export interface SystemEdits {
   readonly states?: StateRules
   readonly settings?: SystemSettings
   readonly distinctSets?: ItemEdits<DistinctSet>
+  /** `null` leaves none. */
+  readonly remainder?: string | null
 }
 
 /** An item that is both removed and put is put. */
@@ -48,6 +50,7 @@ function applyItemEdits<Item extends { readonly id: string }>(
 /** The model as the edits leave it; the one given is untouched, and parts that did not change are shared. */
 export function applyEdits(model: SystemModel, edits: SystemEdits): SystemModel {
   const distinctSets = applyItemEdits(model.distinctSets ?? [], edits.distinctSets)
+  const remainder = edits.remainder === undefined ? model.remainder : (edits.remainder ?? undefined)
   return {
     settings: edits.settings ?? model.settings,
     states: edits.states ?? model.states,
@@ -56,5 +59,6 @@ export function applyEdits(model: SystemModel, edits: SystemEdits): SystemModel 
     tokens: applyItemEdits(model.tokens, edits.tokens),
     pairs: applyItemEdits(model.pairs, edits.pairs),
     ...(distinctSets.length > 0 ? { distinctSets } : {}),
+    ...(remainder === undefined ? {} : { remainder }),
   }
 }

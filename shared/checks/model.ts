@@ -173,6 +173,8 @@ export interface SystemModel {
   readonly pairs: readonly PairModel[]
   /** Absent: none. */
   readonly distinctSets?: readonly DistinctSet[]
+  /** JSON text of what files brought besides, kept verbatim; nothing is computed from it. */
+  readonly remainder?: string
 }
 
 /** What a finding is about, as far as its identity goes: a change from `text` to `large-text` keeps its history. */

@@ -1,4 +1,5 @@
 import { createHash } from 'node:crypto'
+import { sha256Hex } from '#api/sha256.ts'
 import type { GovernedSystem } from '#shared/checks/governed-model.ts'
 import { canonicalJson } from '#shared/formats/canonical-json.ts'
 
@@ -17,7 +18,7 @@ function itemDigest(item: object): string {
  * Names the whole state of a revision: SHA-256, hexadecimal, over one line an item, `<kind> <digest>\n`, where
  * the digest is the SHA-256 of the item's canonical JSON (RFC 8785) as the governed system holds it, other
  * items by id. Lines come in the order settings, states, prefix rules, themes (base first), tokens (ledger
- * order), pairs (order of declaration).
+ * order), pairs (order of declaration); last, where there is one, `other` with the SHA-256 of the text kept verbatim.
  */
 export function stateDigest(model: GovernedSystem): string {
   const lines: [kind: string, items: readonly object[]][] = [
@@ -32,5 +33,6 @@ export function stateDigest(model: GovernedSystem): string {
   for (const [kind, items] of lines) {
     for (const item of items) hash.update(`${kind} ${itemDigest(item)}\n`)
   }
+  if (model.remainder !== undefined) hash.update(`other ${sha256Hex(model.remainder)}\n`)
   return hash.digest('hex')
 }

@@ -21,6 +21,8 @@ export interface VersionChanges {
   readonly prefixes: ItemChanges<PrefixRules>
   readonly states?: StateRules
   readonly settings?: SystemSettings
+  /** `null`: nothing is left of it. */
+  readonly remainder?: string | null
 }
 
 /** Compares contents, so that an edit without net effect leaves no change. */
@@ -36,16 +38,17 @@ export function changesBetween(before: GovernedSystem, after: GovernedSystem): V
     }),
     ...(isSame(before.states, after.states) ? {} : { states: after.states }),
     ...(isSame(before.settings, after.settings) ? {} : { settings: after.settings }),
+    ...(before.remainder === after.remainder ? {} : { remainder: after.remainder ?? null }),
   }
 }
 
 /** Whether nothing changes. */
 export function isEmpty(changes: VersionChanges): boolean {
-  const { tokens, pairs, themes, prefixes, states, settings } = changes
+  const { tokens, pairs, themes, prefixes, states, settings, remainder } = changes
   const moved = [tokens, pairs, themes, prefixes].some(
     ({ closed, opened }) => closed.length > 0 || opened.length > 0,
   )
-  return !moved && states === undefined && settings === undefined
+  return !moved && states === undefined && settings === undefined && remainder === undefined
 }
 
 interface ItemKind<Item> {

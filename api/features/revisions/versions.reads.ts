@@ -3,6 +3,7 @@ import type { SystemEdits } from '#shared/checks/edits.ts'
 import type { PrefixRules, StateRules, SystemSettings } from '#shared/checks/model.ts'
 import type { GovernedEdits, GovernedSystem, GovernedTheme } from '#shared/checks/governed-model.ts'
 import type { Executor } from '#api/platform/database.ts'
+import { documentVersions } from '#drizzle/schema/documents.ts'
 import { pairs, pairVersions } from '#drizzle/schema/pairs.ts'
 import { ruleVersions } from '#drizzle/schema/rules.ts'
 import { settingVersions } from '#drizzle/schema/systems.ts'
@@ -16,6 +17,7 @@ type Versions =
   | typeof themeVersions
   | typeof ruleVersions
   | typeof settingVersions
+  | typeof documentVersions
 
 /** Revisions after `after` up to and with `upTo`. */
 export interface RevisionSpan {
@@ -32,6 +34,7 @@ export function createVersionsReads(db: Executor) {
     themes: await themesAt(db, systemId, revision),
     tokens: await tokensAt(db, systemId, revision),
     pairs: await pairsAt(db, systemId, revision),
+    ...(await remainderAt(db, systemId, revision)),
   })
   const editsIn = (span: RevisionSpan): Promise<GovernedEdits> => readEdits(db, span)
   return { systemAt, editsIn }
@@ -126,6 +129,18 @@ async function settingsAt(
   return row.definition
 }
 
+async function remainderAt(
+  db: Executor,
+  systemId: string,
+  revision: number,
+): Promise<{ remainder?: string }> {
+  const [row] = await db
+    .select({ content: documentVersions.content })
+    .from(documentVersions)
+    .where(inForce(documentVersions, systemId, revision))
+  return row === undefined ? {} : { remainder: row.content }
+}
+
 /** Only what the span touched is read, so that following a head costs what was edited. */
 async function readEdits(db: Executor, span: RevisionSpan): Promise<GovernedEdits> {
   const { systemId, upTo } = span
@@ -138,6 +153,9 @@ async function readEdits(db: Executor, span: RevisionSpan): Promise<GovernedEdit
     ...((await isTouched(db, ruleVersions, span)) ? await rulesAt(db, systemId, upTo) : {}),
     ...((await isTouched(db, settingVersions, span))
       ? { settings: await settingsAt(db, systemId, upTo) }
+      : {}),
+    ...((await isTouched(db, documentVersions, span))
+      ? { remainder: null, ...(await remainderAt(db, systemId, upTo)) }
       : {}),
   }
 }

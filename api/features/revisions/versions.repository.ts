@@ -4,6 +4,7 @@ import type { PairModel, SystemSettings } from '#shared/checks/model.ts'
 import { declarationOf } from '#shared/checks/pair-declaration.ts'
 import type { Executor } from '#api/platform/database.ts'
 import { STILL_LIVE } from '#drizzle/schema/columns.ts'
+import { documentVersions } from '#drizzle/schema/documents.ts'
 import { pairs, pairVersions } from '#drizzle/schema/pairs.ts'
 import { ruleVersions } from '#drizzle/schema/rules.ts'
 import { settingVersions } from '#drizzle/schema/systems.ts'
@@ -28,7 +29,20 @@ export function createVersionsRepository(db: Executor) {
       await openPairs(db, turn, changes.pairs)
       await openRules(db, turn, changes)
       if (changes.settings) await openSettings(db, turn, changes.settings)
+      if (changes.remainder !== undefined) await replaceRemainder(db, turn, changes.remainder)
     },
+  }
+}
+
+/** One statement has 16 MiB at most; an import brings tens of thousands of rows. */
+const ROWS_AT_ONCE = 1000
+
+async function inSlices<Row>(
+  rows: readonly Row[],
+  write: (slice: Row[]) => PromiseLike<unknown>,
+): Promise<void> {
+  for (let at = 0; at < rows.length; at += ROWS_AT_ONCE) {
+    await write(rows.slice(at, at + ROWS_AT_ONCE))
   }
 }
 
@@ -75,11 +89,14 @@ async function openTokens(db: Executor, turn: Turn, { opened, added }: VersionCh
       .select({ position: max(tokens.position) })
       .from(tokens)
       .where(eq(tokens.systemId, turn.systemId))
-    await db.insert(tokens).values(placed(turn, added, last?.position ?? -1))
+    await inSlices(placed(turn, added, last?.position ?? -1), (rows) =>
+      db.insert(tokens).values(rows),
+    )
   }
-  await db
-    .insert(tokenVersions)
-    .values(opened.map(({ item }) => ({ ...begin(turn), ...tokenToRow(item) })))
+  await inSlices(
+    opened.map(({ item }) => ({ ...begin(turn), ...tokenToRow(item) })),
+    (rows) => db.insert(tokenVersions).values(rows),
+  )
 }
 
 async function openPairs(db: Executor, turn: Turn, { opened, added }: VersionChanges['pairs']) {
@@ -89,14 +106,16 @@ async function openPairs(db: Executor, turn: Turn, { opened, added }: VersionCha
       .select({ position: max(pairs.position) })
       .from(pairs)
       .where(eq(pairs.systemId, turn.systemId))
-    await db.insert(pairs).values(placed(turn, added, last?.position ?? -1))
+    await inSlices(placed(turn, added, last?.position ?? -1), (rows) =>
+      db.insert(pairs).values(rows),
+    )
   }
   const rows = opened.map(({ item }) => ({
     ...begin(turn),
     ...pairToRow(item),
     declarationHash: declarationHash(item),
   }))
-  await db.insert(pairVersions).values(rows)
+  await inSlices(rows, (slice) => db.insert(pairVersions).values(slice))
 }
 
 async function openThemes(db: Executor, turn: Turn, { opened, added }: VersionChanges['themes']) {
@@ -129,6 +148,19 @@ async function openRules(db: Executor, turn: Turn, { prefixes, states }: Version
 
 const openSettings = (db: Executor, turn: Turn, definition: SystemSettings) =>
   db.insert(settingVersions).values({ ...begin(turn), definition })
+
+/** What files brought besides is one document: its pointer is that of the whole. */
+async function replaceRemainder(db: Executor, turn: Turn, content: string | null): Promise<void> {
+  const { systemId, revision } = turn
+  await db
+    .update(documentVersions)
+    .set({ toRevision: revision })
+    .where(
+      and(eq(documentVersions.systemId, systemId), eq(documentVersions.toRevision, STILL_LIVE)),
+    )
+  if (content === null) return
+  await db.insert(documentVersions).values({ ...begin(turn), pointer: '', content })
+}
 
 const placed = ({ systemId }: Turn, ids: readonly string[], last: number) =>
   ids.map((id, at) => ({ id, systemId, position: last + 1 + at }))
