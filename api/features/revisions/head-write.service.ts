@@ -47,6 +47,8 @@ export interface HeadWrite {
     ) => Promise<Tagged | undefined> | Tagged | undefined
   }
   readonly audit: { readonly action: string; readonly subject: string }
+  /** How the revision came about, default `direct`. */
+  readonly origin?: 'import'
   /** Handling that belongs to the same call: no part of a revision, and audited by itself. */
   readonly alongside?: (repositories: Writing) => Promise<void>
 }
@@ -90,6 +92,14 @@ export function createHeadWriteService(deps: HeadWriteDeps) {
       heads.keep(written.head)
       return written
     },
+
+    /** What a write would come to on the head as it stands: nothing is written, nor asked whether it may be. */
+    async preview(request: Pick<HeadWrite, 'system' | 'decide'>): Promise<Written> {
+      const before = await deps.heads.current(request.system.id)
+      const { head, next } = planEdits(before, request.decide(before))
+      if (next === undefined) return unmoved(head)
+      return { head: next.head, effect: effectOf({ before, after: next.head, moved: next.moved }) }
+    },
   }
 }
 export type HeadWriteService = ReturnType<typeof createHeadWriteService>
@@ -100,7 +110,10 @@ async function planOn(
   { head, reading }: { readonly head: Head; readonly reading: Writing },
 ): Promise<Plan> {
   if (expected) await compare(guards, expected, { head, reading })
-  const decision = decide(head)
+  return planEdits(head, decide(head))
+}
+
+function planEdits(head: Head, decision: Decision): Plan {
   if (!decision.ok) throw refusalError(decision.refusal)
   const { edits } = decision
   const changes = changesBetween(head.model, editedModel(head, edits))
@@ -172,7 +185,7 @@ interface Turn {
 
 async function writeRevision(
   { breaches }: HeadWriteDeps,
-  { system, message }: HeadWrite,
+  { system, message, origin = 'direct' }: HeadWrite,
   { plan, next, locked, repositories }: Turn,
 ): Promise<Written> {
   const mode = await repositories.heads.writeModeOf(system.id)
@@ -184,7 +197,7 @@ async function writeRevision(
   await repositories.heads.addRevision({
     systemId: system.id,
     number: revision,
-    origin: 'direct',
+    origin,
     authorUserId: system.caller.userId,
     message: message || null,
     verdict,
