@@ -10,5 +10,13 @@ export const paths = {
   breaches: (system: string, search = '') => `/systems/${segment(system)}/breaches${search}`,
   breach: (system: string, id: string, search = '') =>
     `/systems/${segment(system)}/breaches/${segment(id)}${search}`,
+  settings: (system: string) => `/systems/${segment(system)}/settings`,
+  themes: (system: string) => `/systems/${segment(system)}/themes`,
+  theme: (system: string, key: string) => `/systems/${segment(system)}/themes/${segment(key)}`,
+  newTheme: (system: string, from: string) =>
+    `/systems/${segment(system)}/new-theme?from=${segment(from)}`,
+  rules: (system: string, search = '') => `/systems/${segment(system)}/rules${search}`,
+  members: (system: string) => `/systems/${segment(system)}/members`,
+  keys: (system: string) => `/systems/${segment(system)}/keys`,
   apiReference: () => '/docs',
 } as const

@@ -8,6 +8,13 @@ import { Waiting } from '#console/ui/page-states.tsx'
 import { ErrorScreen, PageTrouble } from './error-screen.tsx'
 import { paths } from './paths.ts'
 
+/** Pages of a system's settings, under navigation of their own. */
+const settingsPages: RouteObject[] = [
+  { path: 'themes', lazy: () => import('#console/routes/themes-page.tsx') },
+  { path: 'themes/:theme', lazy: () => import('#console/routes/theme-page.tsx') },
+  { path: 'new-theme', lazy: () => import('#console/routes/new-theme-page.tsx') },
+]
+
 /** Pages of one system; what fails in one leaves the frame standing. */
 const systemPages: RouteObject[] = [
   {
@@ -29,6 +36,10 @@ const systemPages: RouteObject[] = [
     path: 'breaches/:id?',
     lazy: () => import('#console/routes/breaches-page.tsx'),
     ErrorBoundary: PageTrouble,
+  },
+  {
+    lazy: () => import('#console/routes/settings-frame.tsx'),
+    children: settingsPages.map((page) => ({ ...page, ErrorBoundary: PageTrouble })),
   },
 ]
 

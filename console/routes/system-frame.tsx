@@ -66,7 +66,10 @@ export function Component() {
     [bands, system],
   )
   const context = useMemo<FrameContext>(() => ({ lead, view: setView }), [])
-  const opened = useMatch('/systems/:system/tokens/:name') !== null
+  const isInSettings = useIsInSettings()
+  const token = useMatch('/systems/:system/tokens/:name')
+  const theme = useMatch('/systems/:system/themes/:theme')
+  const opened = token !== null || theme !== null
   return (
     <>
       {shown !== undefined && (
@@ -89,6 +92,7 @@ export function Component() {
           places={[
             { href: paths.tokens(system), text: 'Tokens', count: settings.counts.tokens },
             { href: paths.breaches(system), text: 'Breaches', count: settings.counts.openBreaches },
+            { href: paths.themes(system), text: 'Settings', holdsPage: isInSettings },
           ]}
         />
         <main id="content" tabIndex={-1} className="outline-none">
@@ -97,4 +101,11 @@ export function Component() {
       </div>
     </>
   )
+}
+
+const SETTINGS = new Set(['settings', 'themes', 'new-theme', 'rules', 'members', 'keys'])
+
+/** Whether the page stands under the place Settings, beside which it has a place of its own. */
+function useIsInSettings(): boolean {
+  return SETTINGS.has(useMatch('/systems/:system/:place/*')?.params.place ?? '')
 }

@@ -23,7 +23,7 @@ export function Choice<Value extends string>({
       aria-label={label}
       value={value}
       onChange={(key) => onChange(key as Value)}
-      className="inline-block"
+      className="inline-block max-w-full min-w-0"
     >
       <Button className="group inline-flex max-w-full items-baseline border-b border-woad font-medium text-woad data-[focus-visible]:outline-2">
         <SelectValue className="truncate" />

@@ -59,7 +59,7 @@ export function SaveLine({
 }
 
 /** What a save did, in one sentence, and its breaches by name. */
-export function SavedNote({ saved }: { saved: SavedToken }) {
+export function SavedNote({ saved }: { saved: Pick<SavedToken, 'effect'> }) {
   const { revision, opened, resolved } = saved.effect
   const parts = [
     opened.length > 0 ? `${countOf(opened.length, 'breach', 'breaches')} opened` : undefined,

@@ -1,0 +1,90 @@
+import { useId, useMemo, useState } from 'react'
+import { ComboBox, Input, Label, ListBox, ListBoxItem, Popover } from 'react-aria-components'
+
+/** Enough to see that there are more: typing narrows them. */
+const MOST_OFFERED = 60
+
+/** One name of many: written, or taken from the list that what is written narrows. */
+export function NameBox({
+  label,
+  value,
+  names,
+  fault,
+  isDisabled = false,
+  onChange,
+  className = '',
+}: {
+  label: string
+  value: string
+  names: readonly string[]
+  fault?: string | undefined
+  isDisabled?: boolean
+  onChange: (name: string) => void
+  className?: string
+}) {
+  const [written, setWritten] = useState<string>()
+  const text = written ?? value
+  const offered = useMemo(() => offeredNames(names, written), [names, written])
+  const faultId = useId()
+  const take = (name: string) => {
+    setWritten(undefined)
+    if (name !== value) onChange(name)
+  }
+  return (
+    <ComboBox
+      items={offered}
+      inputValue={text}
+      value={names.includes(value) ? value : null}
+      onInputChange={(next) => setWritten(next === value ? undefined : next)}
+      onChange={(key) => key !== null && take(String(key))}
+      isDisabled={isDisabled}
+      menuTrigger="focus"
+      allowsCustomValue
+      allowsEmptyCollection
+      className={`min-w-0 ${className}`}
+    >
+      <Label className="block text-12 text-ink-soft">{label}</Label>
+      <Input
+        autoComplete="off"
+        spellCheck={false}
+        aria-invalid={fault !== undefined}
+        aria-describedby={fault === undefined ? undefined : faultId}
+        onBlur={() => written !== undefined && take(written.trim())}
+        className="line-input mt-2 h-30 w-full font-medium"
+      />
+      {fault !== undefined && (
+        <p id={faultId} className="mt-4 text-13 font-semibold text-madder">
+          {fault}
+        </p>
+      )}
+      <Popover offset={4} className="w-(--trigger-width) min-w-240 border border-ink bg-ground">
+        <ListBox
+          className="max-h-320 overflow-y-auto py-4 outline-none"
+          renderEmptyState={() => (
+            <p className="px-14 py-6 text-ink-soft">No token has this name.</p>
+          )}
+        >
+          {({ id }: { id: string }) => (
+            <ListBoxItem
+              id={id}
+              textValue={id}
+              className="flex min-h-30 items-center border-l-4 border-transparent pr-16 pl-10 break-all data-[focused]:bg-woad-wash data-[selected]:border-ink data-[selected]:font-semibold forced-colors:border-[Canvas] forced-colors:data-[selected]:border-[CanvasText]"
+            >
+              {id}
+            </ListBoxItem>
+          )}
+        </ListBox>
+      </Popover>
+    </ComboBox>
+  )
+}
+
+/** Names that hold what is written, those that begin with it first; all of them while nobody writes. */
+function offeredNames(names: readonly string[], written: string | undefined) {
+  const typed = (written ?? '').trim().toLowerCase()
+  const begins = names.filter((name) => name.toLowerCase().startsWith(typed))
+  const holds = names.filter(
+    (name) => !name.toLowerCase().startsWith(typed) && name.toLowerCase().includes(typed),
+  )
+  return [...begins, ...holds].slice(0, MOST_OFFERED).map((id) => ({ id }))
+}
