@@ -1,11 +1,17 @@
 import * as z from 'zod'
-import { etagSchema, idSchema, systemParams } from './fields.ts'
+import { etagSchema, idSchema, instantSchema, systemParams } from './fields.ts'
 import { READ_PROBLEMS, WRITE_PROBLEMS } from './problems.ts'
 import { defineContract } from './route.ts'
 import { roleSchema } from './sessions.contract.ts'
 
 export const memberSchema = z
-  .strictObject({ id: idSchema, name: z.string(), email: z.string(), role: roleSchema })
+  .strictObject({
+    id: idSchema,
+    name: z.string(),
+    email: z.string(),
+    role: roleSchema,
+    since: instantSchema.meta({ description: 'Member of the system since' }),
+  })
   .meta({ id: 'Member' })
 
 export const putMembersBody = z
@@ -24,6 +30,7 @@ const example = {
       name: 'Ines Marrow',
       email: 'maintainer@larkhaven.example',
       role: 'maintainer',
+      since: '2026-09-01T08:00:00.000Z',
     },
   ],
   etag: '"4d2c"',

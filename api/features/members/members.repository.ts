@@ -1,50 +1,12 @@
-import { and, asc, eq, inArray, isNull, sql } from 'drizzle-orm'
+import { and, eq, inArray, sql } from 'drizzle-orm'
 import type { Executor } from '#api/platform/database.ts'
-import { memberships, systemHeads, systems } from '#drizzle/schema/systems.ts'
-import { users } from '#drizzle/schema/users.ts'
+import { memberships, systemHeads } from '#drizzle/schema/systems.ts'
+import { createMembersReads } from './members.reads.ts'
+import type { MembershipMove } from './members.rules.ts'
 
-export interface MemberRow {
-  readonly id: string
-  readonly name: string
-  readonly email: string
-  readonly role: 'engineer' | 'maintainer' | 'accessibility-lead'
-}
-
+/** Writes who works on a system, beside the reading of it. */
 export const createMembersRepository = (db: Executor) => ({
-  /** The system of this key and how the person stands in it; a stranger's role is null. */
-  findStanding: async (systemKey: string, userId: string) => {
-    const [row] = await db
-      .select({
-        id: systems.id,
-        key: systems.key,
-        name: systems.name,
-        role: memberships.role,
-        isAdmin: sql<number>`exists(select 1 from ${users} where ${users.id} = ${userId} and ${users.isAdmin} and ${users.deactivatedAt} is null)`,
-      })
-      .from(systems)
-      .leftJoin(
-        memberships,
-        and(eq(memberships.systemId, systems.id), eq(memberships.userId, userId)),
-      )
-      .where(eq(systems.key, systemKey))
-    return row
-  },
-
-  rolesOf: (userId: string) =>
-    db
-      .select({ key: systems.key, role: memberships.role })
-      .from(memberships)
-      .innerJoin(systems, eq(systems.id, memberships.systemId))
-      .where(eq(memberships.userId, userId))
-      .orderBy(asc(systems.key)),
-
-  list: (systemId: string): Promise<MemberRow[]> =>
-    db
-      .select({ id: users.id, name: users.name, email: users.email, role: memberships.role })
-      .from(memberships)
-      .innerJoin(users, eq(users.id, memberships.userId))
-      .where(eq(memberships.systemId, systemId))
-      .orderBy(asc(users.email)),
+  ...createMembersReads(db),
 
   /** Held until the transaction ends: two lists of one system cannot be replaced at once. */
   lock: async (systemId: string): Promise<void> => {
@@ -55,17 +17,23 @@ export const createMembersRepository = (db: Executor) => ({
       .for('update')
   },
 
-  findPeople: (emails: readonly string[]) =>
-    db
-      .select({ id: users.id, email: users.email, name: users.name })
-      .from(users)
-      .where(and(inArray(users.email, [...emails]), isNull(users.deactivatedAt))),
-
-  replace: async (systemId: string, members: readonly Pick<MemberRow, 'id' | 'role'>[]) => {
-    await db.delete(memberships).where(eq(memberships.systemId, systemId))
-    if (members.length === 0) return
+  /** Who stays keeps the day they came. */
+  apply: async (systemId: string, moves: readonly MembershipMove[]): Promise<void> => {
+    const gone = moves.flatMap(({ user, after }) => (after === null ? [user] : []))
+    const left = and(eq(memberships.systemId, systemId), inArray(memberships.userId, gone))
+    if (gone.length > 0) await db.delete(memberships).where(left)
+    const put = moves.flatMap(({ user, after: role }) =>
+      role === null ? [] : [{ systemId, userId: user, role }],
+    )
+    if (put.length === 0) return
     await db
       .insert(memberships)
-      .values(members.map(({ id, role }) => ({ systemId, userId: id, role })))
+      .values(put)
+      .onDuplicateKeyUpdate({
+        set: {
+          role: sql`values(${sql.identifier(memberships.role.name)})`,
+          version: sql`${sql.identifier(memberships.version.name)} + 1`,
+        },
+      })
   },
 })

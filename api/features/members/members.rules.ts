@@ -23,8 +23,18 @@ interface Membership {
   readonly role: Role
 }
 
+/** Someone who comes (from no role), goes (to none), or changes. */
+export interface MembershipMove {
+  readonly user: string
+  readonly before: Role | null
+  readonly after: Role | null
+}
+
 /** What the replacement does, for the audit: only who came, went or changed. */
-export function membershipMoves(before: readonly Membership[], after: readonly Membership[]) {
+export function membershipMoves(
+  before: readonly Membership[],
+  after: readonly Membership[],
+): MembershipMove[] {
   const roleBefore = new Map(before.map(({ id, role }) => [id, role]))
   const roleAfter = new Map(after.map(({ id, role }) => [id, role]))
   const people = [...new Set([...roleBefore.keys(), ...roleAfter.keys()])]

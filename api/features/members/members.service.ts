@@ -3,7 +3,7 @@ import { invalidRequest } from '#api/errors.ts'
 import { etagOf, type IfMatch, preconditionFailed } from '#api/precondition.ts'
 import type { Repositories, Transact } from '#api/repositories.ts'
 import { normalizeEmail } from '#shared/contracts/email-address.ts'
-import type { MemberRow } from './members.repository.ts'
+import type { MemberRow } from './members.reads.ts'
 import { memberFaults, membershipMoves, type WantedMember } from './members.rules.ts'
 
 export interface MembersDependencies {
@@ -13,7 +13,10 @@ export interface MembersDependencies {
 
 export type MembersService = ReturnType<typeof createMembersService>
 
-const present = (items: MemberRow[]) => ({ items, etag: etagOf(items) })
+function present(rows: readonly MemberRow[]) {
+  const items = rows.map((row) => ({ ...row, since: row.since.toISOString() }))
+  return { items, etag: etagOf(items) }
+}
 
 export const createMembersService = ({ transact, reads }: MembersDependencies) => ({
   /** What a caller may do in a system; nothing where they may not know of it. */
@@ -36,7 +39,7 @@ export const createMembersService = ({ transact, reads }: MembersDependencies) =
       const after = await membersOf(members, wanted)
       const moves = membershipMoves(before, after)
       if (moves.length === 0) return current
-      await members.replace(system.id, after)
+      await members.apply(system.id, moves)
       const answer = present(await members.list(system.id))
       await audit.append({
         chain: system.id,
