@@ -23,7 +23,7 @@ interface Reach {
 
 /** Wires what a revision governs, around the one head and the one write. */
 export function createGovernedServices(
-  { newId, clock, database, writeGuards }: Platform,
+  { newId, database, writeGuards }: Platform,
   { reads, transact, findAccess }: Reach,
 ) {
   const heads = createHeadsService({ heads: reads.heads, versions: reads.versions })
@@ -49,7 +49,6 @@ export function createGovernedServices(
       reads: createChecksReads(database.db),
       transact,
       newId,
-      clock,
     }),
     revisions: createRevisionsService({
       reads: createRevisionsReads(database.db),

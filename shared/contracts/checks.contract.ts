@@ -60,6 +60,27 @@ export const createCheckBody = z
   .meta({ id: 'CreateCheck' })
 export type CreateCheckBody = z.input<typeof createCheckBody>
 
+const callerSchema = z
+  .strictObject({ kind: z.enum(['user', 'key']), id: idSchema, name: z.string() })
+  .meta({ id: 'CheckCaller', description: 'Who asked: a person, or a key by its own name' })
+
+const loggedSchema = z
+  .strictObject({
+    protected: z.boolean().meta({
+      description: 'Whether the branch is protected, so that the breach log follows it',
+    }),
+    seen: z
+      .int()
+      .min(0)
+      .meta({ description: 'Findings that fall short, also those that newOnly calls known' }),
+    opened: z.int().min(0).meta({ description: 'Entries of the breach log opened or reopened' }),
+    resolved: z.int().min(0).meta({ description: 'Entries of the breach log resolved' }),
+  })
+  .meta({
+    id: 'Logged',
+    description: 'What the check left behind; only where its source names repository and branch',
+  })
+
 const summary = {
   id: idSchema,
   number: z.int().min(1).meta({ description: 'Counts up within the system' }),
@@ -68,6 +89,8 @@ const summary = {
   engine: engineSchema,
   against: z.strictObject({ revision: z.int().min(0) }),
   source: checkSourceSchema.optional(),
+  logged: loggedSchema.optional(),
+  caller: callerSchema,
   at: instantSchema,
 }
 
@@ -95,6 +118,9 @@ const summaryExample = {
     ruleSet: 'wcag-2.2',
   },
   against: { revision: 214 },
+  source: { repository: 'larkhaven/timetable', branch: 'main', commit: '4be1d02' },
+  logged: { protected: true, seen: 1, opened: 1, resolved: 0 },
+  caller: { kind: 'key', id: 'key_01jd5w7k2m', name: 'Timetable pipeline' },
   at: '2026-11-24T09:12:00.000Z',
 } as const
 const checkExample = { ...summaryExample, findings: [findingExample], advisories: [] } as const
@@ -154,6 +180,11 @@ export const listChecks = defineContract({
     verdict: verdictSchema.optional(),
     repository: z.string().max(255).optional(),
     branch: z.string().max(255).optional(),
+    caller: z
+      .string()
+      .max(64)
+      .optional()
+      .meta({ description: 'Id of a person or a key', example: 'key_01jd5w7k2m' }),
     limit: limitSchema(200, 50),
     cursor: cursorSchema,
   }),

@@ -29,6 +29,7 @@ export const everyOutcome: CheckWire = {
   engine: { version: '1.0.0', gamutMap: 'css-color-4', ruleSet: 'wcag-2.2' },
   against: { revision: 214 },
   source: { repository: 'larkhaven/timetable', branch: 'main' },
+  caller: { kind: 'key', id: 'key_1', name: 'Timetable pipeline' },
   at: '2026-11-24T09:12:00.000Z',
   findings: [
     breachingFinding(),

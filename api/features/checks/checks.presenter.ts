@@ -12,8 +12,16 @@ export function presentCheckSummary(row: CheckSummaryRow): CheckSummaryWire {
     engine: { version: row.engineVersion, gamutMap: row.gamutMap, ruleSet: row.ruleSet },
     against: { revision: row.againstRevision },
     ...(source === undefined ? {} : { source }),
+    ...(row.logged === null ? {} : { logged: row.logged }),
+    caller: presentCaller(row),
     at: row.at.toISOString(),
   }
+}
+
+function presentCaller({ user, key }: CheckSummaryRow): CheckSummaryWire['caller'] {
+  if (key !== null) return { kind: 'key', ...key }
+  if (user !== null) return { kind: 'user', ...user }
+  throw new TypeError('Every check was asked for by somebody')
 }
 
 type SourceColumns = Pick<CheckSummaryRow, 'repository' | 'branch' | 'commitSha' | 'pipelineUrl'>

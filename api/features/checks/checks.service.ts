@@ -3,7 +3,6 @@ import type { Caller, SystemAccess } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
 import type { Head, HeadsService } from '#api/features/revisions/heads.service.ts'
 import { decodeCursor, encodeCursor } from '#api/paging.ts'
-import type { Clock } from '#api/platform/clock.ts'
 import type { NewId } from '#api/platform/ids.ts'
 import type { Transact } from '#api/repositories.ts'
 import type { Evaluation } from '#shared/checks/evaluation.ts'
@@ -22,7 +21,6 @@ export interface ChecksDeps {
   readonly reads: ChecksReads
   readonly transact: Transact<'checks'>
   readonly newId: NewId
-  readonly clock: Clock
 }
 
 export type ChecksService = ReturnType<typeof createChecksService>
@@ -33,7 +31,17 @@ const placeSchema = z.strictObject({ number: z.int().min(1) })
 
 /** Measures candidates against the head, and keeps what came out. */
 export function createChecksService(deps: ChecksDeps) {
-  const { heads, reads, transact, newId, clock } = deps
+  const { heads, reads, transact, newId } = deps
+
+  async function found(system: SystemAccess, id: string) {
+    const row = await reads.find(system.id, id)
+    const own = ownKeyOf(system)
+    if (row === undefined || (own !== undefined && row.callerKeyId !== own)) {
+      throw new AppError('not-found', { detail: `No check ${id}` })
+    }
+    return row
+  }
+
   return {
     /** Answers a verdict: a candidate that fails is no refusal. */
     async create(system: SystemAccess, { body, query }: Asked): Promise<CheckWire> {
@@ -52,20 +60,18 @@ export function createChecksService(deps: ChecksDeps) {
       const row = {
         ...rowOf(system, { head, verdict, source: body.source }),
         id: newId('chk'),
-        at: clock.now(),
         findingsGzip: await packFindings(keptOf(findings)),
       }
-      const number = await transact(async ({ checks }) => {
-        const taken = await checks.takeNumber(system.id)
-        await checks.insert({ ...row, number: taken })
-        return taken
+      await transact(async ({ checks }) => {
+        const number = await checks.takeNumber(system.id)
+        await checks.insert({ ...row, number })
       })
-      return { ...presentCheckSummary({ ...row, number }), ...findings }
+      return { ...presentCheckSummary(await found(system, row.id)), ...findings }
     },
 
     async list(system: SystemAccess, query: ListQuery) {
-      const { verdict, repository, branch, limit, cursor } = query
-      const filter = { verdict, repository, branch, callerKeyId: ownKeyOf(system) }
+      const { limit, cursor, ...asked } = query
+      const filter = { ...asked, callerKeyId: ownKeyOf(system) }
       const before = decodeCursor(placeSchema, cursor)?.number
       const rows = await reads.list(system.id, filter, { before, limit: limit + 1 })
       const shown = rows.slice(0, limit)
@@ -75,12 +81,10 @@ export function createChecksService(deps: ChecksDeps) {
     },
 
     async get(system: SystemAccess, id: string): Promise<CheckWire> {
-      const row = await reads.find(system.id, id)
-      const own = ownKeyOf(system)
-      if (row === undefined || (own !== undefined && row.callerKeyId !== own)) {
-        throw new AppError('not-found', { detail: `No check ${id}` })
-      }
-      return { ...presentCheckSummary(row), ...(await unpackFindings(row.findingsGzip)) }
+      const row = await found(system, id)
+      const packed = await reads.findFindings(system.id, id)
+      if (packed === undefined) throw new TypeError('Every check keeps its findings')
+      return { ...presentCheckSummary(row), ...(await unpackFindings(packed)) }
     },
   }
 }

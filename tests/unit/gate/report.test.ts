@@ -28,6 +28,7 @@ const check = (findings: FindingWire[], over: Partial<CheckWire> = {}): CheckWir
   counts: { pass: 1480, breach: findings.length, waived: 0, exempt: 96, known: 0 },
   engine: { version: '1.0.0', gamutMap: 'css-color-4', ruleSet: 'wcag-2.2' },
   against: { revision: 214 },
+  caller: { kind: 'key', id: 'key_1', name: 'Timetable pipeline' },
   at: '2026-11-24T09:12:00.000Z',
   findings,
   advisories: [],
