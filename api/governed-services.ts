@@ -1,4 +1,4 @@
-import { createBreachesReads } from './features/breaches/breaches.reads.ts'
+import { createBreachHandlingService } from './features/breaches/breach-handling.service.ts'
 import { createBreachesService } from './features/breaches/breaches.service.ts'
 import { createChecksReads } from './features/checks/checks.reads.ts'
 import { createChecksService } from './features/checks/checks.service.ts'
@@ -27,7 +27,7 @@ export function createGovernedServices(
   { reads, transact, findAccess }: Reach,
 ) {
   const heads = createHeadsService({ heads: reads.heads, versions: reads.versions })
-  const breaches = createBreachesService({ reads: createBreachesReads(database.db), newId })
+  const breaches = createBreachesService({ reads: reads.breaches, newId })
   const writes = createHeadWriteService({
     heads,
     breaches,
@@ -39,6 +39,7 @@ export function createGovernedServices(
   return {
     heads,
     breaches,
+    breachHandling: createBreachHandlingService({ transact, newId }),
     systems: createSystemsService({ reads, transact, begins, writes, newId, findAccess }),
     tokens: createTokensService({ heads, writes, newId }),
     pairs: createPairsService({ heads, writes, newId }),

@@ -1,4 +1,5 @@
 import { createAccountsRepository } from './features/accounts/accounts.repository.ts'
+import { createBreachesReads } from './features/breaches/breaches.reads.ts'
 import { createBreachesRepository } from './features/breaches/breaches.repository.ts'
 import { createChecksRepository } from './features/checks/checks.repository.ts'
 import { createJobsRepository } from './features/jobs/jobs.repository.ts'
@@ -18,7 +19,7 @@ export const createRepositories = (db: Executor) => ({
   accounts: createAccountsRepository(db),
   attempts: createAttemptsRepository(db),
   audit: createAuditTrail(db),
-  breaches: createBreachesRepository(db),
+  breaches: { ...createBreachesReads(db), ...createBreachesRepository(db) },
   checks: createChecksRepository(db),
   heads: createHeadsRepository(db),
   jobs: createJobsRepository(db),

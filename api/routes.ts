@@ -25,7 +25,7 @@ export function mountAll(router: ApiRouter, services: Services): void {
   mountThemes(router, services.themes)
   mountRules(router, services.rules)
   mountChecks(router, services.checks)
-  mountBreaches(router, services.breaches)
+  mountBreaches(router, services)
   mountRevisions(router, services.revisions)
   mountJobs(router, services.jobs)
   mountHealth(router, services.health)

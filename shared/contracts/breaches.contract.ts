@@ -1,5 +1,5 @@
 import * as z from 'zod'
-import { CONTRAST_KINDS } from '#shared/checks/model.ts'
+import { breachFilter, breachStatusSchema, contrastKindSchema } from './breach-filter.ts'
 import {
   cursorSchema,
   etagSchema,
@@ -10,11 +10,10 @@ import {
   slugSchema,
   systemParams,
 } from './fields.ts'
-import { basisSchema, hexSchema, pairStateSchema, ratioSchema } from './findings.ts'
-import { READ_PROBLEMS } from './problems.ts'
+import { basisSchema, hexSchema, pairStateSchema, ratioSchema, useSchema } from './findings.ts'
+import { READ_PROBLEMS, WRITE_PROBLEMS } from './problems.ts'
 import { defineContract } from './route.ts'
 
-export const BREACH_STATUSES = ['open', 'waived', 'resolved'] as const
 export const CLOSING_REASONS = [
   'fixed',
   'requirement-changed',
@@ -23,11 +22,12 @@ export const CLOSING_REASONS = [
   'exempted',
   'engine-changed',
 ] as const
-export const BREACH_EVENTS = ['opened', 'worsened', 'eased', 'resolved', 'reopened'] as const
-export const BREACH_SORTS = ['first-seen', '-first-seen', 'shortfall', 'number'] as const
-
-export const breachStatusSchema = z.enum(BREACH_STATUSES).meta({ id: 'BreachStatus' })
-export const contrastKindSchema = z.enum(CONTRAST_KINDS).meta({ id: 'ContrastKind' })
+/** What checks make of a breach. */
+const MEASURED_EVENTS = ['opened', 'worsened', 'eased', 'resolved', 'reopened'] as const
+/** What people make of it: its measures stay as they are. */
+const HANDLING_EVENTS = ['assigned', 'unassigned', 'commented'] as const
+export const BREACH_EVENTS = [...MEASURED_EVENTS, ...HANDLING_EVENTS] as const
+export const MOST_COMMENT_CHARACTERS = 4000
 
 export const breachSchema = z
   .strictObject({
@@ -39,6 +39,7 @@ export const breachSchema = z
     foreground: z.string(),
     background: z.string(),
     kind: contrastKindSchema,
+    use: useSchema.meta({ description: 'As measured last; no part of the identity' }),
     theme: slugSchema,
     state: pairStateSchema,
     basis: basisSchema,
@@ -52,7 +53,7 @@ export const breachSchema = z
     firstSeenRevision: z.int().optional(),
     lastSeenAt: z
       .union([instantSchema, z.null()])
-      .meta({ description: 'null while a breach of the head lasts' }),
+      .meta({ description: 'null while a breach of the head lasts; in CI by the last check' }),
     resolvedAt: instantSchema.optional(),
     closingReason: z.enum(CLOSING_REASONS).optional(),
     assignee: z.union([personSchema, z.null()]),
@@ -66,11 +67,15 @@ export const breachEventSchema = z
     id: idSchema,
     kind: z.enum(BREACH_EVENTS),
     at: instantSchema,
-    ratio: ratioSchema,
+    ratio: ratioSchema.meta({ description: 'As it stood then' }),
     required: z.number(),
     revision: z.int().optional(),
     message: z.string().optional().meta({ description: 'Of the revision that caused it' }),
     check: idSchema.optional(),
+    assignee: personSchema
+      .optional()
+      .meta({ description: 'Whom an assignment names, or has taken off' }),
+    body: z.string().optional().meta({ description: 'Of a comment: plain text' }),
     actor: z.union([personSchema, z.null()]),
   })
   .meta({ id: 'BreachEvent' })
@@ -83,6 +88,7 @@ const breachExample = {
   foreground: 'action.board.text',
   background: 'action.board.fill',
   kind: 'text',
+  use: 'text',
   theme: 'light',
   state: 'rest/rest',
   basis: 'srgb',
@@ -99,6 +105,17 @@ const breachExample = {
   etag: '"1f9d"',
 } as const
 
+const eventExample = {
+  id: 'bev_01jd5w7k2m',
+  kind: 'opened',
+  at: '2026-11-27T10:02:11.481Z',
+  ratio: 3.8804,
+  required: 4.5,
+  revision: 212,
+  message: 'Lighter board button',
+  actor: { id: 'usr_01jd5w7k2m', name: 'Ines Marrow' },
+} as const
+
 export const listBreaches = defineContract({
   operationId: 'listBreaches',
   method: 'GET',
@@ -106,25 +123,7 @@ export const listBreaches = defineContract({
   feature: 'breaches',
   summary: 'The breach log: every breach ever, open and waived ones first asked for',
   params: systemParams,
-  query: z.strictObject({
-    status: z
-      .preprocess(
-        (value) => (value === undefined || Array.isArray(value) ? value : [value]),
-        z.array(breachStatusSchema).max(3).optional(),
-      )
-      .meta({
-        type: 'array',
-        items: { type: 'string', enum: [...BREACH_STATUSES] },
-        description: 'May be repeated; absent: open and waived',
-      }),
-    theme: slugSchema.optional(),
-    kind: contrastKindSchema.optional(),
-    token: z.string().max(255).optional().meta({ description: 'On either side' }),
-    origin: z.enum(['head', 'ci']).optional(),
-    sort: z.enum(BREACH_SORTS).default('first-seen'),
-    limit: limitSchema(200, 50),
-    cursor: cursorSchema,
-  }),
+  query: breachFilter.extend({ limit: limitSchema(200, 50), cursor: cursorSchema }),
   success: {
     status: 200,
     body: z.strictObject({
@@ -139,33 +138,115 @@ export const listBreaches = defineContract({
   conditional: true,
 })
 
+export const exportBreaches = defineContract({
+  operationId: 'exportBreaches',
+  method: 'GET',
+  path: '/v1/systems/{system}/breaches.csv',
+  feature: 'breaches',
+  summary: 'The breach log as a table for a spreadsheet',
+  description:
+    'The filters of the list, without pages. Text that a spreadsheet would take for a formula begins with an apostrophe; ratios are cut to four decimals.',
+  params: systemParams,
+  query: breachFilter,
+  success: {
+    status: 200,
+    media: ['text/csv; charset=utf-8; header=present'],
+    body: z.string(),
+    example:
+      'number,status,foreground,background,theme,state,ratio,required\r\n39,open,action.board.text,action.board.fill,light,rest/rest,3.8804,4.5\r\n',
+  },
+  problems: READ_PROBLEMS,
+  access: 'breaches:read',
+  conditional: true,
+})
+
+const breachWithEvents = breachSchema.extend({
+  events: z.array(breachEventSchema).meta({ description: 'Oldest first' }),
+})
+export type BreachWithEvents = z.infer<typeof breachWithEvents>
+
+const breachParams = systemParams.extend({ id: idSchema })
+
 export const getBreach = defineContract({
   operationId: 'getBreach',
   method: 'GET',
   path: '/v1/systems/{system}/breaches/{id}',
   feature: 'breaches',
-  summary: 'One breach with its history',
-  params: systemParams.extend({ id: idSchema }),
+  summary: 'One breach with its history and comments',
+  params: breachParams,
   success: {
     status: 200,
-    body: breachSchema.extend({ events: z.array(breachEventSchema) }),
-    example: {
-      ...breachExample,
-      events: [
-        {
-          id: 'bev_01jd5w7k2m',
-          kind: 'opened',
-          at: '2026-11-27T10:02:11.481Z',
-          ratio: 3.8804,
-          required: 4.5,
-          revision: 212,
-          message: 'Lighter board button',
-          actor: { id: 'usr_01jd5w7k2m', name: 'Ines Marrow' },
-        },
-      ],
-    },
+    body: breachWithEvents,
+    example: { ...breachExample, events: [eventExample] },
   },
   problems: READ_PROBLEMS,
   access: 'breaches:read',
   conditional: true,
+})
+
+export const patchBreachBody = z
+  .strictObject({
+    assignee: z
+      .union([idSchema, z.null()])
+      .meta({ description: 'A member of the system; null: nobody' }),
+  })
+  .meta({ id: 'PatchBreach' })
+
+export const patchBreach = defineContract({
+  operationId: 'patchBreach',
+  method: 'PATCH',
+  path: '/v1/systems/{system}/breaches/{id}',
+  feature: 'breaches',
+  summary: 'Says who is on a breach',
+  description: 'Its status is not for anybody to set: only a check resolves a breach.',
+  params: breachParams,
+  body: patchBreachBody,
+  bodyExample: { assignee: 'usr_01jd5w7k2m' },
+  success: {
+    status: 200,
+    body: breachWithEvents,
+    example: {
+      ...breachExample,
+      assignee: { id: 'usr_01jd5w7k2m', name: 'Ines Marrow' },
+      events: [eventExample],
+    },
+  },
+  problems: [...WRITE_PROBLEMS, 'precondition-required', 'precondition-failed'],
+  access: 'breaches:assign',
+  precondition: 'required',
+})
+
+export const createBreachCommentBody = z
+  .strictObject({
+    body: z
+      .string()
+      .trim()
+      .min(1)
+      .max(MOST_COMMENT_CHARACTERS)
+      .meta({ description: 'Plain text: nothing in it is interpreted' }),
+  })
+  .meta({ id: 'CreateBreachComment' })
+
+export const createBreachComment = defineContract({
+  operationId: 'createBreachComment',
+  method: 'POST',
+  path: '/v1/systems/{system}/breaches/{id}/comments',
+  feature: 'breaches',
+  summary: 'Adds a comment to the history of a breach',
+  params: breachParams,
+  body: createBreachCommentBody,
+  bodyExample: { body: 'The new lamp ships in 3.3.0.' },
+  success: {
+    status: 201,
+    body: breachEventSchema,
+    example: {
+      ...eventExample,
+      kind: 'commented',
+      revision: undefined,
+      message: undefined,
+      body: 'The new lamp ships in 3.3.0.',
+    },
+  },
+  problems: WRITE_PROBLEMS,
+  access: 'breaches:comment',
 })

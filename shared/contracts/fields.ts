@@ -44,6 +44,15 @@ export const idSchema = z.string().min(1).max(64).meta({ example: 'tok_01jd5w7k2
 export const instantSchema = z.iso
   .datetime({ offset: false, precision: 3 })
   .meta({ description: 'RFC 3339, UTC', example: '2026-11-24T09:12:00.000Z' })
+/** A moment in a query: a whole day stands for its beginning, UTC. */
+export const momentSchema = z
+  .union([z.iso.date(), z.iso.datetime({ offset: true })])
+  .transform((text) => new Date(text))
+  .meta({
+    type: 'string',
+    description: 'RFC 3339: a day, UTC, or an instant',
+    example: '2026-11-24',
+  })
 export const etagSchema = z
   .string()
   .meta({ description: 'Strong validator, as in the ETag field', example: '"9c3e1f20"' })

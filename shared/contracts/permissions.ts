@@ -17,6 +17,7 @@ const READ = [
   'checks:read',
   'checks:write',
   'breaches:read',
+  'breaches:comment',
   'revisions:read',
   'jobs:read',
   'members:read',
@@ -35,7 +36,13 @@ export const ROLE_PERMISSIONS = {
     'keys:ci',
   ],
   // Of edits only exemptions, levels, and which themes gate: the services refuse the other members.
-  'accessibility-lead': [...READ, 'pairs:write', 'themes:write', 'settings:write'],
+  'accessibility-lead': [
+    ...READ,
+    'pairs:write',
+    'themes:write',
+    'settings:write',
+    'breaches:assign',
+  ],
 } as const satisfies Record<Role, readonly string[]>
 
 /** What only an administrator of the instance may do. */

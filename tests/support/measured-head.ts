@@ -1,9 +1,6 @@
 import type { Call } from '#shared/client/client.ts'
-import {
-  type BreachWire,
-  BREACH_STATUSES,
-  listBreaches,
-} from '#shared/contracts/breaches.contract.ts'
+import { BREACH_STATUSES } from '#shared/contracts/breach-filter.ts'
+import { type BreachWire, listBreaches } from '#shared/contracts/breaches.contract.ts'
 import { createCheck } from '#shared/contracts/checks.contract.ts'
 import type { FindingWire } from '#shared/contracts/findings.ts'
 import { type LedgerTokenWire, listTokens } from '#shared/contracts/tokens.contract.ts'

@@ -19,6 +19,7 @@ export function presentBreach(
     foreground: names.get(foregroundTokenId) ?? breach.names.foreground,
     background: names.get(backgroundTokenId) ?? breach.names.background,
     kind: breach.kind,
+    use: breach.use,
     theme: breach.names.theme,
     state: `${breach.fgState}/${breach.bgState}`,
     basis: breach.basis,
@@ -39,7 +40,7 @@ export function presentBreach(
 
 /** The history of an entry, oldest first. */
 export function presentEvents(rows: readonly ListedBreachEvent[]): BreachEventWire[] {
-  return rows.flatMap(({ event, actor, message }) => {
+  return rows.flatMap(({ event, actor, assignee, message }) => {
     const kind = BREACH_EVENTS.find((known) => known === event.kind)
     if (kind === undefined) return []
     return {
@@ -51,6 +52,8 @@ export function presentEvents(rows: readonly ListedBreachEvent[]): BreachEventWi
       ...(event.revision === null ? {} : { revision: event.revision }),
       ...(message === null ? {} : { message }),
       ...(event.checkId === null ? {} : { check: event.checkId }),
+      ...(assignee === null ? {} : { assignee }),
+      ...(event.body === null ? {} : { body: event.body }),
       actor,
     }
   })

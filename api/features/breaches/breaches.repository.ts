@@ -38,6 +38,27 @@ export function createBreachesRepository(db: Executor) {
         )
     },
 
+    /** Held until the transaction ends: nobody handles one entry at the same time as another. */
+    async lock(systemId: string, id: string): Promise<void> {
+      await db
+        .select({ id: breaches.id })
+        .from(breaches)
+        .where(and(eq(breaches.systemId, systemId), eq(breaches.id, id)))
+        .for('update')
+    },
+
+    async assign(id: string, assigneeUserId: string | null): Promise<void> {
+      await db
+        .update(breaches)
+        .set({ assigneeUserId, version: NEXT_VERSION })
+        .where(eq(breaches.id, id))
+    },
+
+    /** Its history has grown, so its representation is another. */
+    async touch(id: string): Promise<void> {
+      await db.update(breaches).set({ version: NEXT_VERSION }).where(eq(breaches.id, id))
+    },
+
     /** Takes `count` consecutive numbers; answers the first. */
     async takeNumbers(systemId: string, count: number): Promise<number> {
       const ofSystem = eq(systemHeads.systemId, systemId)
@@ -66,6 +87,8 @@ export function createBreachesRepository(db: Executor) {
   }
 }
 
+const NEXT_VERSION = sql`${sql.identifier(breaches.version.name)} + 1`
+
 const incoming = (column: { readonly name: string }) => sql`values(${sql.identifier(column.name)})`
 
 const MOVING_COLUMNS = {
@@ -89,7 +112,7 @@ const MOVING_COLUMNS = {
       ] as const
     ).map((name) => [name, incoming(breaches[name])]),
   ),
-  version: sql`${sql.identifier(breaches.version.name)} + 1`,
+  version: NEXT_VERSION,
 }
 
 function chunksOf<Item>(items: readonly Item[]): Item[][] {

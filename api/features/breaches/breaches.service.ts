@@ -1,13 +1,16 @@
 import * as z from 'zod'
-import type { SystemAccess } from '#api/caller.ts'
+import type { Caller, SystemAccess } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
 import { decodeCursor, encodeCursor } from '#api/paging.ts'
 import type { NewId } from '#api/platform/ids.ts'
-import { etagOf } from '#api/precondition.ts'
+import { BREACH_SORTS, type BreachFilterQuery } from '#shared/contracts/breach-filter.ts'
 import type { BreachWire, getBreach, listBreaches } from '#shared/contracts/breaches.contract.ts'
 import type { AnswerOf, ParsedOf } from '#shared/contracts/route.ts'
-import { presentBreach, presentEvents } from './breaches.presenter.ts'
-import type { BreachesReads, BreachFilter, ListedBreach } from './breaches.reads.ts'
+import { breachAnswers, wholeBreach } from './breach-answers.ts'
+import type { BreachFilter } from './breach-matches.reads.ts'
+import type { BreachPlace } from './breach-order.reads.ts'
+import type { BreachesReads, ListedBreach } from './breaches.reads.ts'
+import { breachTable } from './breach-table.presenter.ts'
 import { type HeadMove, type LogWrites, recordMove } from './record-move.ts'
 
 export interface BreachesOptions {
@@ -18,48 +21,56 @@ export interface BreachesOptions {
 export type BreachesService = ReturnType<typeof createBreachesService>
 type ListQuery = ParsedOf<typeof listBreaches>['query']
 
-const placeSchema = z.strictObject({ reached: z.number(), number: z.int().min(0) })
+const placeSchema = z.strictObject({
+  order: z.enum(BREACH_SORTS),
+  value: z.number(),
+  number: z.int().min(0),
+})
 
-/** The breach log: read by everyone in a system, written by the one write of its head. */
+/** Rows a statement, where the whole log is read. */
+const EXPORT_ROWS = 2_000
+
+/** The breach log: read by everyone in a system, written by checks: those of its head, and those of pipelines. */
 export function createBreachesService({ reads, newId }: BreachesOptions) {
-  async function present(systemId: string, rows: readonly ListedBreach[]): Promise<BreachWire[]> {
-    const ids = rows.flatMap(({ breach }) => [breach.foregroundTokenId, breach.backgroundTokenId])
-    const names = await reads.tokenNames(systemId, [...new Set(ids)])
-    return rows.map((row) => {
-      const breach = presentBreach(row, names)
-      return { ...breach, etag: etagOf({ ...breach, version: row.breach.version }) }
-    })
-  }
-
   return {
     async list(system: SystemAccess, query: ListQuery) {
-      const { sort, limit, cursor } = query
-      const filter = filterOf(query)
-      const after = decodeCursor(placeSchema, cursor)
+      const { sort, limit } = query
+      const filter = filterOf(query, system.caller)
       const [rows, total, ever] = await Promise.all([
-        reads.list(system.id, filter, { order: sort, after, limit: limit + 1 }),
+        reads.list(system.id, filter, { order: sort, after: placeIn(query), limit: limit + 1 }),
         reads.count(system.id, filter),
         reads.countEver(system.id),
       ])
       const shown = rows.slice(0, limit)
       const body: AnswerOf<typeof listBreaches> = {
-        items: await present(system.id, shown),
+        items: await breachAnswers(reads, system.id, shown),
         total,
         ever,
       }
       const last = rows.length > limit ? shown.at(-1) : undefined
-      return last === undefined ? { body } : { body, next: encodeCursor(placeOf(last)) }
+      if (last === undefined) return { body }
+      return { body, next: encodeCursor({ order: sort, ...placeOf(last) }) }
+    },
+
+    /** The same entries as the list, all of them, as a table. */
+    async table(system: SystemAccess, query: BreachFilterQuery): Promise<string> {
+      const filter = filterOf(query, system.caller)
+      const entries: BreachWire[] = []
+      let after: BreachPlace | undefined
+      do {
+        const page = { order: query.sort, after, limit: EXPORT_ROWS }
+        const rows = await reads.list(system.id, filter, page)
+        entries.push(...(await breachAnswers(reads, system.id, rows)))
+        const last = rows.length === EXPORT_ROWS ? rows.at(-1) : undefined
+        after = last && placeOf(last)
+      } while (after !== undefined)
+      return breachTable(entries)
     },
 
     async get(system: SystemAccess, id: string): Promise<AnswerOf<typeof getBreach>> {
-      const row = await reads.find(system.id, id)
-      if (row === undefined) throw new AppError('not-found', { detail: `No breach ${id}` })
-      const [[breach], events] = await Promise.all([
-        present(system.id, [row]),
-        reads.listEvents(id),
-      ])
-      if (breach === undefined) throw new TypeError('One row presents as one breach')
-      return { ...breach, events: presentEvents(events) }
+      const breach = await wholeBreach(reads, system.id, id)
+      if (breach === undefined) throw new AppError('not-found', { detail: `No breach ${id}` })
+      return breach
     },
 
     /**
@@ -71,10 +82,24 @@ export function createBreachesService({ reads, newId }: BreachesOptions) {
   }
 }
 
-function filterOf(query: ListQuery): BreachFilter {
-  const { theme, token, kind, origin } = query
-  const statuses = query.status?.length ? query.status : (['open', 'waived'] as const)
-  return { statuses, theme, token, kind, origin }
+function filterOf(query: BreachFilterQuery, { userId }: Caller): BreachFilter {
+  const { status, assignee, ...filter } = query
+  return {
+    ...filter,
+    statuses: status?.length ? status : ['open', 'waived'],
+    assignee: assignee === 'none' ? null : assignee === 'me' ? userId : assignee,
+  }
 }
 
-const placeOf = ({ breach, reached }: ListedBreach) => ({ reached, number: breach.number })
+/** A cursor goes on with the order that it began with. */
+function placeIn({ cursor, sort }: ListQuery): BreachPlace | undefined {
+  const place = decodeCursor(placeSchema, cursor)
+  if (place === undefined || place.order === sort) return place
+  const detail = `It belongs to sort=${place.order}`
+  throw new AppError('parameter-invalid', { faults: [{ parameter: 'cursor', detail }] })
+}
+
+const placeOf = ({ breach, orderedBy }: ListedBreach): BreachPlace => ({
+  value: orderedBy,
+  number: breach.number,
+})

@@ -1,4 +1,4 @@
-import type { BREACH_SORTS, BREACH_STATUSES } from '#shared/contracts/breaches.contract.ts'
+import type { BREACH_SORTS, BREACH_STATUSES } from '#shared/contracts/breach-filter.ts'
 
 type Status = (typeof BREACH_STATUSES)[number]
 type Sort = (typeof BREACH_SORTS)[number]

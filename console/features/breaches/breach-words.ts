@@ -40,6 +40,9 @@ const EVENTS: { readonly [kind in BreachEventWire['kind']]: string } = {
   eased: 'Came nearer',
   resolved: 'Passed again',
   reopened: 'Fell short again',
+  assigned: 'Assigned',
+  unassigned: 'Taken off',
+  commented: 'Commented',
 }
 
 export function eventInWords(event: BreachEventWire, breach: BreachWire): string {
