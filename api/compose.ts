@@ -3,6 +3,7 @@ import { createApp, type Files } from './app.ts'
 import type { Config } from './config.ts'
 import { WRITE_GUARDS } from './features/revisions/write-guards.ts'
 import { sessionCookieFor } from './http/authenticate.ts'
+import { createRateLimits } from './http/rate-limit.ts'
 import { createApiRouter } from './http/route.ts'
 import { systemClock } from './platform/clock.ts'
 import { createDatabase } from './platform/database.ts'
@@ -12,6 +13,7 @@ import { IDEMPOTENCY_GUARDS } from './platform/idempotency/idempotency-guards.ts
 import { createIdempotencyStore } from './platform/idempotency/idempotency-store.ts'
 import { createLogger } from './platform/logger.ts'
 import { createPasswords } from './platform/passwords.ts'
+import { createRateCounter } from './platform/rate-limit/rate-counter.ts'
 import { mountAll } from './routes.ts'
 import { createServices, type Platform, type Services } from './services.ts'
 
@@ -43,6 +45,11 @@ export function compose(composition: Composition): Service {
     cookie: sessionCookieFor(config.publicUrl),
     publicUrl: config.publicUrl,
     idempotency: createIdempotencyStore(platform.database, platform.idempotencyGuards),
+    limits: createRateLimits({
+      counter: platform.rateCounter,
+      logger: platform.logger,
+      budgets: config.rateBudgets,
+    }),
     strictAnswers: config.mode !== 'production',
   })
   mountAll(router, services)
@@ -62,6 +69,7 @@ function createPlatform(config: Config, given: Partial<Platform>): Platform {
     passwords: given.passwords ?? createPasswords(config.passwordCost),
     writeGuards: WRITE_GUARDS,
     idempotencyGuards: IDEMPOTENCY_GUARDS,
+    rateCounter: createRateCounter(database),
     ...given,
     transact: joinEnclosing(transact),
     database: { ...database, db: followEnclosing(database.db) },

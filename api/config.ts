@@ -1,8 +1,11 @@
 import * as z from 'zod'
+import type { RateBudgets } from './http/rate-limit.ts'
 import { FULL_COST, type PasswordCost } from './platform/passwords.ts'
 
 const wholeNumber = (fallback: number, least: number, most: number) =>
   z.coerce.number().int().min(least).max(most).default(fallback)
+
+const MOST_REQUESTS = 100_000_000
 
 /** Every setting of the service, read from the environment. */
 const environmentSchema = z.object({
@@ -19,6 +22,14 @@ const environmentSchema = z.object({
   PUBLIC_URL: z.url({ protocol: /^https?$/ }).optional(),
   /** How many proxies of ours stand before the service and may name the caller's address. */
   TRUSTED_PROXIES: wholeNumber(0, 0, 8),
+  /** A window of the rate limits; its budgets are below, for calls and, `READS`, for theme lists and theme files. */
+  RATE_WINDOW_SECONDS: wholeNumber(60, 1, 3_600),
+  RATE_CALLS_PER_ADDRESS: wholeNumber(60_000, 1, MOST_REQUESTS),
+  RATE_CALLS_PER_KEY: wholeNumber(12_000, 1, MOST_REQUESTS),
+  RATE_CALLS_PER_SYSTEM: wholeNumber(120_000, 1, MOST_REQUESTS),
+  RATE_READS_PER_ADDRESS: wholeNumber(600_000, 1, MOST_REQUESTS),
+  RATE_READS_PER_KEY: wholeNumber(120_000, 1, MOST_REQUESTS),
+  RATE_READS_PER_SYSTEM: wholeNumber(1_200_000, 1, MOST_REQUESTS),
   LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'silent']).default('info'),
   /** While this file exists the service is not ready: the demo is being made. */
   SEED_PENDING_FILE: z.string().min(1).optional(),
@@ -41,6 +52,7 @@ export interface Config {
   readonly databaseConnections: number
   readonly publicUrl: URL
   readonly trustedProxies: number
+  readonly rateBudgets: RateBudgets
   readonly logLevel: Environment['LOG_LEVEL']
   readonly seedPendingFile: string | undefined
   readonly shutdownGraceMs: number
@@ -75,6 +87,19 @@ const configOf = (env: Environment): Config => ({
   databaseConnections: env.DATABASE_CONNECTIONS,
   publicUrl: new URL(env.PUBLIC_URL ?? `http://127.0.0.1:${env.PORT}`),
   trustedProxies: env.TRUSTED_PROXIES,
+  rateBudgets: {
+    windowMs: env.RATE_WINDOW_SECONDS * 1000,
+    calls: {
+      address: env.RATE_CALLS_PER_ADDRESS,
+      key: env.RATE_CALLS_PER_KEY,
+      system: env.RATE_CALLS_PER_SYSTEM,
+    },
+    themeReads: {
+      address: env.RATE_READS_PER_ADDRESS,
+      key: env.RATE_READS_PER_KEY,
+      system: env.RATE_READS_PER_SYSTEM,
+    },
+  },
   logLevel: env.LOG_LEVEL,
   seedPendingFile: env.SEED_PENDING_FILE,
   shutdownGraceMs: env.SHUTDOWN_GRACE_MS,

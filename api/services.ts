@@ -14,6 +14,7 @@ import { enclose } from './platform/enclosing-transaction.ts'
 import type { IdempotencyGuards } from './platform/idempotency/idempotency-guards.ts'
 import type { NewId } from './platform/ids.ts'
 import type { Logger } from './platform/logger.ts'
+import type { RateCounter } from './platform/rate-limit/rate-counter.ts'
 import type { Passwords } from './platform/passwords.ts'
 import { createRepositories, createTransactOver } from './repositories.ts'
 
@@ -30,6 +31,8 @@ export interface Platform {
   readonly writeGuards: WriteGuards
   /** The lock and the common transaction of an Idempotency-Key, unless a test leaves one out on purpose. */
   readonly idempotencyGuards: IdempotencyGuards
+  /** The database's own counter, unless a test counts otherwise on purpose. */
+  readonly rateCounter: RateCounter
 }
 
 /** Wires every use case to the world. */

@@ -13,6 +13,7 @@ import {
   createProblemResponses,
   headerRef,
   problemExample,
+  RATE_LIMIT,
   REQUEST_ID,
 } from './problem-responses.ts'
 
@@ -25,6 +26,15 @@ const HEADERS = {
   'WWW-Authenticate': { description: 'Bearer', schema: { type: 'string' } },
   Allow: { description: 'The methods it takes', schema: { type: 'string' } },
   'Retry-After': { description: 'Seconds', schema: { type: 'integer' } },
+  RateLimit: {
+    description:
+      'What is left: for each of "address", "key" and "system" that pays for the call, r requests within t seconds',
+    schema: { type: 'string' },
+  },
+  'RateLimit-Policy': {
+    description: 'The budgets: q requests in w seconds; pk tells whose, by a digest',
+    schema: { type: 'string' },
+  },
 } as const
 
 /** The document of the service, made from its contracts alone. */
@@ -110,7 +120,12 @@ function operationOf(contract: Contract, problems: RouteConfig['responses']): Ro
       ...(contract.precondition === 'create' ? { 201: madeOf(contract) } : {}),
       ...(contract.deferred === undefined ? {} : { 202: deferredOf(contract.deferred) }),
       ...(contract.conditional
-        ? { 304: { description: 'Not modified since', headers: { ...REQUEST_ID, ...ETAG } } }
+        ? {
+            304: {
+              description: 'Not modified since',
+              headers: { ...REQUEST_ID, ...RATE_LIMIT, ...ETAG },
+            },
+          }
         : {}),
       ...problems,
     },
@@ -200,6 +215,7 @@ function successOf(contract: Contract): ResponseConfig {
   const hasEtag = success.status !== 204 && (conditional || precondition !== undefined)
   const headers = {
     ...REQUEST_ID,
+    ...(contract.budget === 'none' ? {} : RATE_LIMIT),
     ...(hasEtag ? ETAG : {}),
     ...(isPaged ? headerRef('Link') : {}),
     ...(success.status === 201 ? LOCATION : {}),

@@ -27,10 +27,13 @@ export function problemExample(code: ProblemCode): Problem {
 export const headerRef = <N extends string>(name: N) =>
   ({ [name]: { $ref: `#/components/headers/${name}` } }) as Record<N, { $ref: string }>
 
+/** Of whatever is paid for. */
+export const RATE_LIMIT = { ...headerRef('RateLimit'), ...headerRef('RateLimit-Policy') }
+
 const HEADERS: Readonly<Record<number, Record<string, { $ref: string }>>> = {
   401: headerRef('WWW-Authenticate'),
   405: headerRef('Allow'),
-  429: headerRef('Retry-After'),
+  429: { ...headerRef('Retry-After'), ...RATE_LIMIT },
   503: headerRef('Retry-After'),
 }
 

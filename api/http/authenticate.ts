@@ -1,6 +1,7 @@
 import type { Request } from 'express'
 import type { Caller, KeyCaller, UserCaller } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
+import { isApiKeyShaped } from '#api/platform/secrets.ts'
 
 /** Who stands behind a credential; nothing where it is not, or no longer, good. */
 export interface Identify {
@@ -29,25 +30,42 @@ export function cookieOf(request: Request, name: string): string | undefined {
   return undefined
 }
 
+/** What a request says who it is with, not yet looked up. */
+export type Credential =
+  | { readonly kind: 'key'; readonly key: string }
+  | { readonly kind: 'session'; readonly token: string }
+
 /**
- * Answers who is calling. A key beats a cookie, and a bad key is refused even beside a good session: a pipeline
- * must never get by on rights it did not mean to use.
+ * Answers the credential of a request; what cannot be one is told without a query. A key beats a cookie, and a bad
+ * key is refused even beside a good session: a pipeline must never get by on rights it did not mean to use.
  * @throws {AppError} `key-refused`, `sign-in-required`
  */
-export async function authenticate(
-  request: Request,
-  identify: Identify,
-  cookie: SessionCookie,
-): Promise<Caller> {
+export function readCredential(request: Request, cookie: SessionCookie): Credential {
   const field = request.headers.authorization
   if (field !== undefined) {
     const key = /^Bearer +(\S+) *$/i.exec(field)?.[1]
-    const caller = key === undefined ? undefined : await identify.byKey(key)
-    if (caller !== undefined) return caller
-    throw new AppError('key-refused', { detail: 'The key is mistyped, expired or revoked' })
+    if (key !== undefined && isApiKeyShaped(key)) return { kind: 'key', key }
+    throw keyRefused()
   }
   const token = cookieOf(request, cookie.name)
-  const caller = token === undefined ? undefined : await identify.bySession(token)
+  if (token !== undefined) return { kind: 'session', token }
+  throw new AppError('sign-in-required')
+}
+
+/**
+ * Answers who is calling.
+ * @throws {AppError} `key-refused`, `sign-in-required`
+ */
+export async function authenticate(credential: Credential, identify: Identify): Promise<Caller> {
+  if (credential.kind === 'key') {
+    const caller = await identify.byKey(credential.key)
+    if (caller !== undefined) return caller
+    throw keyRefused()
+  }
+  const caller = await identify.bySession(credential.token)
   if (caller !== undefined) return caller
   throw new AppError('sign-in-required')
 }
+
+const keyRefused = (): AppError =>
+  new AppError('key-refused', { detail: 'The key is mistyped, expired or revoked' })

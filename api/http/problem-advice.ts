@@ -18,12 +18,16 @@ export const PROBLEM_ADVICE: Readonly<Record<ProblemCode, string>> = {
     'Your role in this system does not allow the call; detail names the roles that do. An administrator grants roles.',
   'scope-missing':
     'The key does not have the scope that the call takes; detail names it. Make a key with that scope.',
+  'weakening-needs-approval':
+    'The edit asks for less than before, or lets a breach vanish without mending a colour; each entry of errors names one way. An accessibility lead edits exemptions, levels and which themes gate; anything else that weakens goes into a change that an accessibility lead approves.',
   'origin-foreign':
     'A browser sent this from a page that is not part of this service, or a password would have travelled without https. Nothing was done.',
   'not-found': 'It does not exist, or you are not allowed to know of it.',
   'method-not-allowed': 'The address exists, but not for this method. Allow lists those it takes.',
   'not-acceptable':
     'Accept asks only for types that the call cannot give. Ask for application/json.',
+  'request-timed-out':
+    'The head of a request has 10 seconds, the whole of it 15. The connection was closed: send the request again, in one go.',
   'system-key-taken': 'Choose another key: keys of systems are unique.',
   'token-name-taken':
     'Names of tokens are unique, also after Unicode normalisation. Choose another name.',
@@ -52,7 +56,11 @@ export const PROBLEM_ADVICE: Readonly<Record<ProblemCode, string>> = {
     'With this edit a colour of the system could not be computed: a reference leads nowhere or in a circle, or a theme breaks a rule. Each entry of errors names one fault.',
   'precondition-required':
     'An edit says which version it is meant for: send If-Match with the ETag that you read, or If-None-Match: * to create.',
+  'rate-limited':
+    'The address, the key or the system has sent as many requests as it may in the present window; detail says which. RateLimit says what is left of each budget. Wait as long as Retry-After says.',
   'requests-too-many': 'Wait as long as Retry-After says, then try again.',
+  'request-head-too-large':
+    'Address and header fields together may have 16 KiB. Send fewer or shorter ones.',
   'server-unexpected':
     'A fault of ours. Nothing was half done. Tell whoever runs the service the requestId.',
   'job-interrupted':

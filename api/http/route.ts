@@ -1,9 +1,16 @@
 import { type IRouter, type Request, type RequestHandler, type Response, Router } from 'express'
-import { AppError } from '#api/errors.ts'
+import type { Caller } from '#api/caller.ts'
 import type { IdempotencyStore } from '#api/platform/idempotency/idempotency-store.ts'
 import { type Contract, problemsOf } from '#shared/contracts/route.ts'
+import { answerOtherMethod } from './allow.ts'
 import { type Answer, checkAnswer, sendAnswer } from './answer.ts'
-import { authenticate, cookieOf, type Identify, type SessionCookie } from './authenticate.ts'
+import {
+  authenticate,
+  cookieOf,
+  type Identify,
+  readCredential,
+  type SessionCookie,
+} from './authenticate.ts'
 import { authorize, type FindAccess } from './authorize.ts'
 import {
   type Exchange,
@@ -16,6 +23,7 @@ import { answerOnce } from './idempotency.ts'
 import { negotiate } from './negotiate.ts'
 import { refuseForeignOrigin } from './origin.ts'
 import { refusalOf } from './problem.ts'
+import type { RateLimits } from './rate-limit.ts'
 import { requestIdOf } from './request-id.ts'
 
 export type { Answer } from './answer.ts'
@@ -31,6 +39,7 @@ export interface RouteContext {
   readonly cookie: SessionCookie
   readonly publicUrl: URL
   readonly idempotency: IdempotencyStore
+  readonly limits: RateLimits
   /** Parse answers by their contract and refuse codes it does not list: always but in production. */
   readonly strictAnswers: boolean
 }
@@ -107,8 +116,7 @@ const refuseMethod =
   (request, response, next) => {
     const methods = siblings.filter((route) => takes(route, siblings, request)).flatMap(methodsOf)
     if (methods.includes(request.method)) return next()
-    response.set('Allow', methods.join(', '))
-    next(new AppError('method-not-allowed', { detail: `It takes ${methods.join(', ')}` }))
+    answerOtherMethod(request, response, methods)
   }
 
 interface Placed {
@@ -154,7 +162,7 @@ interface Arrived {
   readonly params: Readonly<Record<string, string>>
 }
 
-/** Who, then whether, then what: nobody unknown gets a body read. */
+/** Who, then whether, then what: nobody unknown gets a body read, and nobody over a budget a query. */
 async function readExchange(
   contract: Contract,
   context: RouteContext,
@@ -162,14 +170,15 @@ async function readExchange(
 ): Promise<Exchange<Contract>> {
   guardOrigin(contract, context, request)
   const { access } = contract
-  const caller =
-    access === 'anyone' ? undefined : await authenticate(request, context.identify, context.cookie)
-  response.locals.caller = caller
+  const caller = await readCaller(contract, context, { request, response })
   const params = readParams(contract, given)
   const system =
     caller === undefined || access === 'anyone'
       ? undefined
       : await authorize(caller, access, given.system, context.findAccess)
+  if (system !== undefined) {
+    await context.limits.of('system', system.id, { contract, request, response })
+  }
   const media = negotiate(contract, request)
   const query = readQuery(contract, request)
   const precondition = readPrecondition(contract, request)
@@ -185,6 +194,24 @@ async function readExchange(
     request,
     response,
   } as Exchange<Contract>
+}
+
+/** What is told apart without a query comes before the address pays, and the address before anybody is looked up. */
+async function readCaller(
+  contract: Contract,
+  context: RouteContext,
+  { request, response }: Omit<Arrived, 'params'>,
+): Promise<Caller | undefined> {
+  const isOpen = contract.access === 'anyone'
+  const credential = isOpen ? undefined : readCredential(request, context.cookie)
+  await context.limits.ofAddress({ contract, request, response })
+  if (credential === undefined) return undefined
+  const caller = await authenticate(credential, context.identify)
+  response.locals.caller = caller
+  if (caller.kind === 'key') {
+    await context.limits.of('key', caller.keyId, { contract, request, response })
+  }
+  return caller
 }
 
 /** What a browser sends with a cookie of ours, and any sign-in, must come from our own pages. */

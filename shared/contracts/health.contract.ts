@@ -14,6 +14,7 @@ export const getHealth = defineContract({
   },
   problems: [],
   access: 'anyone',
+  budget: 'none',
 })
 
 export const getReadiness = defineContract({
@@ -29,4 +30,5 @@ export const getReadiness = defineContract({
   },
   problems: [],
   access: 'anyone',
+  budget: 'none',
 })

@@ -14,10 +14,12 @@ export const PROBLEMS = {
   'key-refused': { status: 401, title: 'The key is not valid' },
   'role-missing': { status: 403, title: 'Your role does not allow this' },
   'scope-missing': { status: 403, title: 'The key lacks a scope' },
+  'weakening-needs-approval': { status: 403, title: 'The edit weakens, and needs approval' },
   'origin-foreign': { status: 403, title: 'The request comes from another site' },
   'not-found': { status: 404, title: 'There is nothing here' },
   'method-not-allowed': { status: 405, title: 'This address does not take that method' },
   'not-acceptable': { status: 406, title: 'None of the wanted types can be given' },
+  'request-timed-out': { status: 408, title: 'The request did not arrive in time' },
   'system-key-taken': { status: 409, title: 'Another system has this key' },
   'token-name-taken': { status: 409, title: 'Another token has this name' },
   'token-in-use': { status: 409, title: 'The token is used elsewhere' },
@@ -34,7 +36,9 @@ export const PROBLEMS = {
   'idempotency-key-reused': { status: 422, title: 'This key was sent with another request' },
   'system-unresolvable': { status: 422, title: 'The colours cannot be resolved with this edit' },
   'precondition-required': { status: 428, title: 'Say which version the edit is meant for' },
+  'rate-limited': { status: 429, title: 'The budget of requests is used up' },
   'requests-too-many': { status: 429, title: 'Too many requests' },
+  'request-head-too-large': { status: 431, title: 'The head of the request is too large' },
   'server-unexpected': { status: 500, title: 'The service failed' },
   'job-interrupted': { status: 503, title: 'The work broke off before its end' },
   'service-unavailable': { status: 503, title: 'The service cannot answer just now' },
@@ -114,6 +118,7 @@ export const REVISION_PROBLEMS = [
   ...WRITE_PROBLEMS,
   'system-unresolvable',
   'review-required',
+  'weakening-needs-approval',
 ] as const satisfies readonly ProblemCode[]
 
 /** What an edit of something that stands can be refused with besides. */

@@ -55,6 +55,8 @@ export interface Contract {
   readonly alternatives?: readonly Alternative[]
   readonly problems: readonly ProblemCode[]
   readonly access: Access
+  /** What pays for a request: theme reads have a budget of their own, leased in blocks; default is that of calls. */
+  readonly budget?: 'theme-reads' | 'none'
   /**
    * `required`: 428 without If-Match. `create`: PUT that makes with `If-None-Match: *` and answers 201, or
    * replaces with If-Match and answers its success. @see https://www.rfc-editor.org/rfc/rfc9110#section-9.3.4
@@ -78,6 +80,7 @@ export const problemsOf = (contract: Contract): ProblemCode[] => [
   ...new Set<ProblemCode>([
     ...contract.problems,
     ...GENERAL_PROBLEMS,
+    ...(contract.budget === 'none' ? [] : (['rate-limited'] as const)),
     ...(takesIdempotencyKey(contract) ? IDEMPOTENCY_PROBLEMS : []),
   ]),
 ]

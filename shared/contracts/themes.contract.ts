@@ -104,6 +104,7 @@ export const listThemes = defineContract({
   },
   problems: READ_PROBLEMS,
   access: 'themes:read',
+  budget: 'theme-reads',
   conditional: true,
 })
 
@@ -206,5 +207,6 @@ export const getThemeFile = defineContract({
   },
   problems: [...READ_PROBLEMS, 'css-name-collision'],
   access: 'themes:read',
+  budget: 'theme-reads',
   conditional: true,
 })
