@@ -2,19 +2,26 @@ import { createServer } from 'node:http'
 import type { AddressInfo } from 'node:net'
 import { setTimeout as pause } from 'node:timers/promises'
 import { sql } from 'drizzle-orm'
+import type { RowDataPacket } from 'mysql2/promise'
 import { compose } from '#api/compose.ts'
 import { readConfig } from '#api/config.ts'
 import { WRITE_GUARDS, type WriteGuards } from '#api/features/revisions/write-guards.ts'
-import { createDatabase, createTransact, type Executor } from '#api/platform/database.ts'
+import {
+  createDatabase,
+  createTransact,
+  type Database,
+  type Executor,
+} from '#api/platform/database.ts'
 import { enclose } from '#api/platform/enclosing-transaction.ts'
 import {
   IDEMPOTENCY_GUARDS,
   type IdempotencyGuards,
 } from '#api/platform/idempotency/idempotency-guards.ts'
+import { createRateCounter, type RateCounter } from '#api/platform/rate-limit/rate-counter.ts'
 
 /**
  * One API process for the races: the service as it is, and beside it, each at a port of its own, mutants of
- * its write. Every variant is held up a little while it takes the lock, so that races overlap.
+ * its write, of its keys and of its rate counter. Every variant is held up a little while it takes the lock, so that races overlap.
  */
 export const VARIANTS = [
   'sound',
@@ -23,6 +30,8 @@ export const VARIANTS = [
   'stale-snapshot',
   'no-key-lock',
   'record-apart',
+  'two-statements',
+  'own-memory',
 ] as const
 export type Variant = (typeof VARIANTS)[number]
 
@@ -104,6 +113,33 @@ const KEY_GUARDS: Partial<Record<Variant, IdempotencyGuards>> = {
   },
 }
 
+const RATE_COUNTERS: Partial<Record<Variant, (database: Database) => RateCounter>> = {
+  'two-statements': ({ pool }) => ({
+    add: async (bucket, hits, windowMs) => {
+      await pool.query(
+        `insert into rate_counters (bucket, hits, window_ends_at)
+           values (?, ?, utc_timestamp(3) + interval 1 hour) on duplicate key update hits = hits + ?`,
+        [bucket, hits, hits],
+      )
+      await pause(PAUSE_MS)
+      const [[row]] = await pool.query<(RowDataPacket & { hits: number })[]>(
+        'select hits from rate_counters where bucket = ?',
+        [bucket],
+      )
+      return { hits: row?.hits ?? 0, remainingMs: windowMs }
+    },
+  }),
+  'own-memory': () => {
+    const counts = new Map<string, number>()
+    return {
+      add: async (bucket, hits, windowMs) => {
+        counts.set(bucket, (counts.get(bucket) ?? 0) + hits)
+        return { hits: counts.get(bucket) ?? 0, remainingMs: windowMs }
+      },
+    }
+  },
+}
+
 /** A plain read before the lock, in the isolation level that keeps what it saw. */
 function staleTransact(db: Executor): ReturnType<typeof createTransact> {
   const transact = createTransact(db, 'repeatable read')
@@ -129,6 +165,7 @@ function serve(variant: Variant): Promise<number> {
       database,
       writeGuards: GUARDS[variant] ?? SOUND,
       idempotencyGuards: KEY_GUARDS[variant] ?? SOUND_KEYS,
+      rateCounter: RATE_COUNTERS[variant]?.(database) ?? createRateCounter(database),
       ...(variant === 'stale-snapshot' ? { transact: staleTransact(database.db) } : {}),
     },
   })

@@ -13,8 +13,12 @@ export interface RaceTrack {
   readonly database: TestDatabase
   /** The client of one process (0 or 1), at one variant of the service. */
   client(process: 0 | 1, variant: Variant): Call
+  /** Where one variant of one process listens. */
+  origin(process: 0 | 1, variant: Variant): string
   /** How often the sound variant found, under the lock, that the head had moved. */
   overlaps(): number
+  /** The process ids of the two. */
+  pids(): (number | undefined)[]
   /** Ends one process by SIGKILL, between its next effect and that one's record, and starts another in its place. */
   kill(process: 0 | 1): Promise<void>
   close(): Promise<void>
@@ -24,8 +28,15 @@ const PROCESSES = 2
 const MESSAGE_PATIENCE_MS = 10_000
 const ACCOUNT = { email: 'race@larkhaven.example', password: 'four horses, one furlong' }
 
-export async function createRaceTrack(): Promise<RaceTrack> {
-  const database = await createTestDatabase()
+/**
+ * @param settings of the service besides; without them no race runs into a rate limit
+ * @param own a database to race on, dropped at the end; without one a new one
+ */
+export async function createRaceTrack(
+  settings: Record<string, string> = {},
+  own?: TestDatabase,
+): Promise<RaceTrack> {
+  const database = own ?? (await createTestDatabase())
   const env = {
     NODE_ENV: 'test',
     DATABASE_URL: database.serveUrl,
@@ -33,6 +44,9 @@ export async function createRaceTrack(): Promise<RaceTrack> {
     PASSWORD_MEMORY_KIB: '64',
     PASSWORD_PASSES: '1',
     DATABASE_RELAXED_FLUSH: '1',
+    RATE_CALLS_PER_ADDRESS: '10000000',
+    RATE_CALLS_PER_SYSTEM: '10000000',
+    ...settings,
   }
   await addAdministrator(env)
   let overlaps = 0
@@ -48,7 +62,10 @@ export async function createRaceTrack(): Promise<RaceTrack> {
         send: sendOver(agent),
         headers: { cookie },
       }),
+    origin: (process, variant) => originOf(started[process], variant),
     overlaps: () => overlaps,
+    pids: () =>
+      started.filter(({ child }) => child.exitCode === null).map(({ child }) => child.pid),
     kill: async (process) => {
       const child = started[process]?.child
       if (child === undefined) throw new TypeError('No such process')
