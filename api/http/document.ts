@@ -1,6 +1,7 @@
 import { type IRouter, Router } from 'express'
 import swagger from 'swagger-ui-express'
 import { sha256Hex } from '#api/sha256.ts'
+import { onlyReads } from './allow.ts'
 import { isUnmodified } from './conditional.ts'
 import { setReferenceHeaders } from './headers.ts'
 import { REFERENCE_LOOK } from './reference-look.ts'
@@ -11,6 +12,7 @@ const DOCUMENT_PATH = '/v1/openapi.json'
 export function serveDocument(document: string, publicUrl: URL): IRouter {
   const router = Router({ caseSensitive: true, strict: true })
   const etag = `"${sha256Hex(document).slice(0, 32)}"`
+  router.all([DOCUMENT_PATH, '/docs', '/docs/{*any}'], onlyReads)
   router.get(DOCUMENT_PATH, (request, response) => {
     response.set({ ETag: etag, 'Cache-Control': 'no-cache' })
     if (isUnmodified(request.headers['if-none-match'], etag)) response.status(304).end()

@@ -1,6 +1,7 @@
 import { type IRouter, Router } from 'express'
 import { AppError } from '#api/errors.ts'
 import { PROBLEMS, type ProblemCode } from '#shared/contracts/problems.ts'
+import { onlyReads } from './allow.ts'
 import { PROBLEM_ADVICE } from './problem-advice.ts'
 
 const STYLE = `:root { color-scheme: light dark; --ground: #f4f3ed; --ink: #132136; --line: #c6d4dd }
@@ -54,11 +55,20 @@ ${codes.map((code) => `<li><a href="/problems/${code}">${code}</a> (${PROBLEMS[c
 </ul>`,
   )
 
+const absentPage = (): string =>
+  page(
+    'No such refusal',
+    `<h1>No refusal has this code</h1>
+<p>The type of a problem document is the address of its page: /problems/ and the code, in small letters.</p>
+<p><a href="/problems">All refusals</a></p>`,
+  )
+
 const isCode = (text: string): text is ProblemCode => Object.hasOwn(PROBLEMS, text)
 
 /** Serves, for each refusal, the page that a problem's `type` leads to. */
 export function serveProblemPages(): IRouter {
   const router = Router({ caseSensitive: true, strict: true })
+  router.all(['/problems', '/problems/:code'], onlyReads)
   router.get('/problems', (_request, response) => {
     response.type('html').send(listPage())
   })
@@ -67,8 +77,10 @@ export function serveProblemPages(): IRouter {
   })
   router.get('/problems/:code', (request, response) => {
     const { code } = request.params
-    if (!isCode(code)) throw new AppError('not-found')
-    response.type('html').send(problemPage(code))
+    if (isCode(code)) response.type('html').send(problemPage(code))
+    else if (request.accepts(['json', 'html']) === 'html') {
+      response.status(404).type('html').send(absentPage())
+    } else throw new AppError('not-found', { detail: 'No refusal has this code: see /problems' })
   })
   return router
 }

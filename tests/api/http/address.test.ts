@@ -96,15 +96,15 @@ describe('path', () => {
 describe('method', () => {
   it('refuses one that an address does not take with 405, and lists those it does', async () => {
     const { headers, body } = await test.people.maintainer.delete('/v1/systems').expect(405)
-    expect(headers.allow?.split(', ').sort()).toEqual(['GET', 'HEAD', 'POST'])
+    expect(headers.allow?.split(', ').sort()).toEqual(['GET', 'HEAD', 'OPTIONS', 'POST'])
     expect(body.type).toBe('/problems/method-not-allowed')
   })
 
   it.each([
-    ['post', 'themes/light', 'DELETE, GET, HEAD, PATCH, PUT'],
-    ['put', 'themes/light.css', 'GET, HEAD'],
-    ['delete', 'themes/light%2Ejson', 'GET, HEAD'],
-    ['post', 'tokens/a.b', 'DELETE, GET, HEAD, PATCH'],
+    ['post', 'themes/light', 'DELETE, GET, HEAD, OPTIONS, PATCH, PUT'],
+    ['put', 'themes/light.css', 'GET, HEAD, OPTIONS'],
+    ['delete', 'themes/light%2Ejson', 'GET, HEAD, OPTIONS'],
+    ['post', 'tokens/a.b', 'DELETE, GET, HEAD, OPTIONS, PATCH'],
   ] as const)(
     'lists for %s %s what a theme, its file and a token take',
     async (method, path, allow) => {
