@@ -1,23 +1,17 @@
 import { readFile } from 'node:fs/promises'
-import { createServer, type Server } from 'node:http'
+import type { Server } from 'node:http'
 import { setTimeout as sleep } from 'node:timers/promises'
 import { fileURLToPath } from 'node:url'
 import type { Files } from './app.ts'
 import { compose, type Service } from './compose.ts'
 import { type Config, readConfig } from './config.ts'
 import { AppError } from './errors.ts'
+import { createListener } from './http/listener.ts'
 import { failureOf } from './platform/database-error.ts'
 import { readDatabaseSettings, unsafeSettings } from './platform/database-settings.ts'
 
 const BOOT_PATIENCE_MS = 60_000
 const DRAIN_MS = 10_000
-
-/** Half-open requests are closed within 12 s; Node's own defaults leave them 90. */
-const TIMEOUTS = {
-  headersTimeout: 10_000,
-  requestTimeout: 15_000,
-  connectionsCheckingInterval: 2_000,
-}
 
 const read = readConfig(process.env)
 if (read.ok) await serve(read.config)
@@ -32,7 +26,7 @@ async function serve(config: Config): Promise<void> {
     await service.close()
     return
   }
-  const server = createServer(TIMEOUTS, service.app)
+  const server = createListener({ app: service.app, newId: service.platform.newId })
   server.on('error', (error: NodeJS.ErrnoException) => {
     refuse([`cannot listen on ${config.host}:${config.port}: ${error.code}`])
     void service.close()
