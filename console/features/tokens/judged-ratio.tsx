@@ -1,6 +1,6 @@
 import { OutcomeMark } from '#console/ui/outcome-mark.tsx'
 import { type Measured, RatioMove } from '#console/ui/ratio-text.tsx'
-import { passesByGroup } from './lowest-finding.ts'
+import { passesByGroup } from '#console/lib/lowest-finding.ts'
 
 /** A ratio, before and after where something is tried, with its mark; under it, that its group passes in its place. */
 export function JudgedRatio({ before, ...measured }: Measured & { before: number | undefined }) {

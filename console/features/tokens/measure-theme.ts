@@ -3,7 +3,7 @@ import type { Finding, SystemModel } from '#shared/checks/model.ts'
 import { verdictOf } from '#shared/checks/verdict.ts'
 import { modelFromWire, type WholeSystem } from '#shared/contracts/system-model.ts'
 import type { LedgerTokenWire, StandingWire } from '#shared/contracts/tokens.contract.ts'
-import { groupPasses } from './lowest-finding.ts'
+import { groupPasses } from '#console/lib/lowest-finding.ts'
 import { standingsInTheme } from './standings-in-theme.ts'
 
 /** How the tokens of a ledger do where the service's own standings do not say it. */

@@ -1,6 +1,6 @@
 import type { Consequence } from '#shared/checks/consequences.ts'
 import type { Finding } from '#shared/checks/model.ts'
-import { passesByGroup } from './lowest-finding.ts'
+import { passesByGroup } from '#console/lib/lowest-finding.ts'
 import { type Relation, relationTo } from './relation-words.ts'
 
 /** Findings that move alike, as one line. */

@@ -1,5 +1,5 @@
 import type { Finding, Use } from '#shared/checks/model.ts'
-import { lowestFinding, passesByGroup } from './lowest-finding.ts'
+import { lowestFinding, passesByGroup } from '#console/lib/lowest-finding.ts'
 import { type Relation, relationTo } from './relation-words.ts'
 
 /** A pair that depends on a token: its lowest finding now, and with what is tried. */

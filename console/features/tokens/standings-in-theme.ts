@@ -1,6 +1,6 @@
 import type { Finding, SystemModel } from '#shared/checks/model.ts'
 import type { LedgerTokenWire, StandingWire } from '#shared/contracts/tokens.contract.ts'
-import { passesByGroup } from './lowest-finding.ts'
+import { passesByGroup } from '#console/lib/lowest-finding.ts'
 
 /** How every token stands among its pairs in one theme alone, by token name. */
 export function standingsInTheme(

@@ -9,7 +9,7 @@ import type { StripThemes } from './strip-bands.ts'
 import { TokenLines } from './token-lines.tsx'
 import { TokenRow } from './token-row.tsx'
 import { SourceHeads } from './token-source.tsx'
-import { ROW_HEIGHT, useRowWindow } from './row-window.ts'
+import { ROW_HEIGHT, useRowWindow } from '#console/lib/row-window.ts'
 
 export interface TokenLedgerProps {
   readonly rows: readonly LedgerRow[]

@@ -4,7 +4,7 @@ import {
   groupPasses,
   lowestFinding,
   passesByGroup,
-} from '#console/features/tokens/lowest-finding.ts'
+} from '#console/lib/lowest-finding.ts'
 import { standingsInTheme } from '#console/features/tokens/standings-in-theme.ts'
 import { pairStandings } from '#console/features/tokens/pair-standings.ts'
 import type { Finding } from '#shared/checks/model.ts'
