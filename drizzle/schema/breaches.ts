@@ -54,14 +54,14 @@ export const breaches = mysqlTable(
     /** SHA-256 of the finding's identity and the origin. */
     subjectHash: digestColumn('subject_hash').notNull(),
     /** The finding's identity as the engine spells it. */
-    identity: varchar('identity', { length: 1024 }).notNull(),
+    identity: text('identity').notNull(),
     origin: mysqlEnum('origin', ['head', 'ci']).notNull(),
     /** Empty for the head. */
     repository: varchar('repository', { length: 255 }).notNull().default(''),
     branch: varchar('branch', { length: 255 }).notNull().default(''),
-    /** A candidate's token has no row: these reference nothing. */
-    foregroundTokenId: varchar('foreground_token_id', { length: 300 }).notNull(),
-    backgroundTokenId: varchar('background_token_id', { length: 300 }).notNull(),
+    /** A candidate's token has no row but a name, escaped: these reference nothing. */
+    foregroundTokenId: varchar('foreground_token_id', { length: 1024 }).notNull(),
+    backgroundTokenId: varchar('background_token_id', { length: 1024 }).notNull(),
     names: json('names').$type<BreachNames>().notNull(),
     kind: mysqlEnum('kind', CONTRAST_KINDS).notNull(),
     /** As measured last; no part of the identity. */
@@ -148,12 +148,12 @@ export const ciSightings = mysqlTable(
     branch: varchar('branch', { length: 255 }).notNull(),
     /** SHA-256 of the finding's identity. */
     subjectHash: digestColumn('subject_hash').notNull(),
-    identity: varchar('identity', { length: 1024 }).notNull(),
+    identity: text('identity').notNull(),
     /** Whether the branch was protected when it was seen last: else the row is kept for 30 days. */
     isProtected: boolean('is_protected').notNull(),
-    /** A candidate's token has no row: these reference nothing. */
-    foregroundTokenId: varchar('foreground_token_id', { length: 300 }).notNull(),
-    backgroundTokenId: varchar('background_token_id', { length: 300 }).notNull(),
+    /** A candidate's token has no row but a name, escaped: these reference nothing. */
+    foregroundTokenId: varchar('foreground_token_id', { length: 1024 }).notNull(),
+    backgroundTokenId: varchar('background_token_id', { length: 1024 }).notNull(),
     names: json('names').$type<BreachNames>().notNull(),
     kind: mysqlEnum('kind', CONTRAST_KINDS).notNull(),
     use: mysqlEnum('use', USES).notNull(),
