@@ -15,9 +15,12 @@ export interface TestDatabase {
   drop(): Promise<void>
 }
 
-/** Call once a test file, in `beforeAll`, and `drop()` in `afterAll`. */
-export async function createTestDatabase(): Promise<TestDatabase> {
-  const { database, drop } = await createEmptyDatabase()
+/**
+ * Call once a test file, in `beforeAll`, and `drop()` in `afterAll`.
+ * @param server of one's own; without one that of the run
+ */
+export async function createTestDatabase(server = inject('database')): Promise<TestDatabase> {
+  const { database, drop } = await createEmptyDatabase(server)
   try {
     await applyMigrations({ url: database.migrateUrl, grantTo: `${database.name}_s@127.0.0.1` })
   } catch (error) {
@@ -28,8 +31,7 @@ export async function createTestDatabase(): Promise<TestDatabase> {
 }
 
 /** The same, not yet migrated: for tests of the migrations themselves. */
-export async function createEmptyDatabase() {
-  const { adminUrl, port } = inject('database')
+export async function createEmptyDatabase({ adminUrl, port } = inject('database')) {
   const name = `t_${randomBytes(6).toString('hex')}`
   const password = randomBytes(12).toString('hex')
   const [migrateUser, serveUser] = [`${name}_m`, `${name}_s`]
