@@ -20,7 +20,7 @@ import {
 } from '#shared/contracts/wire-values.ts'
 import { type JsonObject, objectOf } from '#shared/formats/dtcg-fault.ts'
 import { type DtcgToken, readDtcgTokens } from '#shared/formats/dtcg-tokens.ts'
-import { withStandingTokens } from './standing-tokens.rules.ts'
+import { withStandingTokens } from '#shared/formats/dtcg-standing.ts'
 
 export type CheckRequest = ParsedOf<typeof createCheck>['body']
 

@@ -1,4 +1,5 @@
-import { type JsonObject, objectOf } from '#shared/formats/dtcg-fault.ts'
+import { isToken } from './dtcg-document.ts'
+import { type JsonObject, objectOf } from './dtcg-fault.ts'
 
 /** In place of a token that stands outside the document: only its name and type matter. */
 const STAND_IN: JsonObject = {
@@ -64,6 +65,3 @@ function putToken(document: Group, path: readonly string[], copied: Set<Group>):
   }
   return false
 }
-
-const isToken = (group: JsonObject) =>
-  Object.hasOwn(group, '$value') || Object.hasOwn(group, '$ref')
