@@ -13,6 +13,7 @@ const settingsPages: RouteObject[] = [
   { path: 'themes', lazy: () => import('#console/routes/themes-page.tsx') },
   { path: 'themes/:theme', lazy: () => import('#console/routes/theme-page.tsx') },
   { path: 'new-theme', lazy: () => import('#console/routes/new-theme-page.tsx') },
+  { path: 'rules', lazy: () => import('#console/routes/rules-page.tsx') },
 ]
 
 /** Pages of one system; what fails in one leaves the frame standing. */
@@ -30,6 +31,26 @@ const systemPages: RouteObject[] = [
   {
     path: 'tokens/:name',
     lazy: () => import('#console/routes/token-page.tsx'),
+    ErrorBoundary: PageTrouble,
+  },
+  {
+    path: 'pairs',
+    lazy: () => import('#console/routes/pairs-page.tsx'),
+    ErrorBoundary: PageTrouble,
+  },
+  {
+    path: 'pairs/:id',
+    lazy: () => import('#console/routes/pair-page.tsx'),
+    ErrorBoundary: PageTrouble,
+  },
+  {
+    path: 'new-pair',
+    lazy: () => import('#console/routes/new-pair-page.tsx'),
+    ErrorBoundary: PageTrouble,
+  },
+  {
+    path: 'pair-sheet',
+    lazy: () => import('#console/routes/pair-sheet-page.tsx'),
     ErrorBoundary: PageTrouble,
   },
   {

@@ -74,6 +74,7 @@ function NewTheme({ system, parent }: { system: string; parent: ThemeWire }) {
       <div className="grid gap-x-44 full:grid-cols-2">
         <EffectOnVerdicts
           tried={edit.tried}
+          unmoved="No verdict moves: every declared pair names the themes in which it occurs, and this is none of them yet."
           names={{
             token: names.token,
             theme: (id) => (id === NEW_THEME ? key || 'the new theme' : names.theme(id)),

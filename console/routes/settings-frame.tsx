@@ -15,6 +15,7 @@ export function Component() {
         label="Settings"
         places={[
           { href: paths.themes(system), text: 'Themes', count: settings.counts.themes },
+          { href: paths.rules(system), text: 'Rules' },
         ]}
       />
       <Outlet context={context} />

@@ -75,7 +75,9 @@ export function ThemeForm({
       {refusal?.kind === 'changed' && (
         <TwoVersions
           title="Somebody has saved this theme since you opened it. What you typed is kept, and is measured against what is there now."
-          rows={themeVersions(theme, edit.draft, themeRuleInWords)}
+          rows={themeVersions(theme, edit.draft, (rule) =>
+            themeRuleInWords({ kind: 'keep', ...rule }),
+          )}
           onKeepYours={save}
           onTakeTheirs={putBack}
         />
@@ -111,7 +113,7 @@ export function ThemeMembers({
       tokens={names}
       systemLevel={settings.level}
       faults={{
-        name: theme.name.trim() === '' ? 'A theme has a name.' : fault('/name'),
+        name: edit.draft.name?.trim() === '' ? 'A theme has a name.' : fault('/name'),
         from: fault('/from'),
         ground: fault('/ground'),
         ink: fault('/ink'),

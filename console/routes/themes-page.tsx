@@ -48,7 +48,9 @@ export function Component() {
         href={(key) => paths.theme(system, key)}
         spanOf={(theme) => themeSpan(theme, tokens)}
         ruleInWords={({ from, rule }) =>
-          from === undefined ? 'are what the tokens say' : themeRuleInWords(rule)
+          from === undefined
+            ? 'are what the tokens say'
+            : themeRuleInWords({ kind: 'keep', ...rule })
         }
         levelInWords={({ level }) => level ?? settings.level}
         breachesIn={({ id }) => breaches && (breaches.get(id) ?? 0)}

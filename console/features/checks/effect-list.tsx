@@ -16,18 +16,35 @@ export interface EffectNames {
 }
 
 /** What an edit would do to every verdict, before it is saved. */
-export function EffectOnVerdicts({ tried, names }: { tried: TriedEffect; names: EffectNames }) {
+export function EffectOnVerdicts({
+  tried,
+  names,
+  unmoved = 'No verdict moves: every ratio stays as it is.',
+}: {
+  tried: TriedEffect
+  names: EffectNames
+  /** What to say where nothing moves. */
+  unmoved?: string
+}) {
   return (
     <section aria-label="Effect on the verdicts" className="pt-22 pb-36">
       <h2 className="text-16 font-semibold">What this would move</h2>
       <div aria-live="polite">
-        <Body tried={tried} names={names} />
+        <Body tried={tried} names={names} unmoved={unmoved} />
       </div>
     </section>
   )
 }
 
-function Body({ tried, names }: { tried: TriedEffect; names: EffectNames }) {
+function Body({
+  tried,
+  names,
+  unmoved,
+}: {
+  tried: TriedEffect
+  names: EffectNames
+  unmoved: string
+}) {
   switch (tried.kind) {
     case 'none':
       return (
@@ -52,17 +69,25 @@ function Body({ tried, names }: { tried: TriedEffect; names: EffectNames }) {
         </div>
       )
     case 'measured':
-      return <EffectList effect={tried.effect} names={names} />
+      return <EffectList effect={tried.effect} names={names} unmoved={unmoved} />
   }
 }
 
 const MOST_FAULTS = 5
 
-function EffectList({ effect, names }: { effect: Effect; names: EffectNames }) {
+function EffectList({
+  effect,
+  names,
+  unmoved,
+}: {
+  effect: Effect
+  names: EffectNames
+  unmoved: string
+}) {
   const { parts, exempt } = effect
   const all = EFFECT_PARTS.reduce((sum, part) => sum + parts[part].count, exempt)
   if (all === 0) {
-    return <p className="mt-6 text-ink-soft">No verdict moves: every ratio stays as it is.</p>
+    return <p className="mt-6 max-w-560 text-ink-soft">{unmoved}</p>
   }
   return (
     <>

@@ -24,7 +24,7 @@ export function themeRuleInWords(rule: ThemeRuleWire): string {
     chroma === undefined ? undefined : `chroma × ${chroma}`,
     hue === undefined ? undefined : `hue ${signed(hue)}°`,
   ].filter((part) => part !== undefined)
-  return parts.length === 0 ? KIND_WORDS.keep : parts.join(', ')
+  return parts.length === 0 ? 'follow the wider rule' : parts.join(', ')
 }
 
 /** `0.05 away from ground, chroma × 0.9`; nothing where the rule says nothing. */

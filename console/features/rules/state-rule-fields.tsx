@@ -35,7 +35,7 @@ export function StateRuleFields({
     { value: 'towards', text: 'towards' },
   ] as const
   return (
-    <fieldset className="border-b border-feint py-12">
+    <fieldset className="min-w-0 border-b border-feint py-12">
       <legend className="float-left w-full font-medium wide:w-90 wide:pt-20">{state}</legend>
       <div className="flex flex-wrap items-end gap-x-20 gap-y-10">
         {STATE_FIELDS.map(({ field, label }) => (

@@ -65,6 +65,7 @@ function ValueRow({
 }) {
   const { token, state, now, drafted } = value
   const isEdited = now !== drafted
+  const action = isEdited && now !== undefined ? 'Put back' : 'Take away'
   const words = <ValueWords now={now} drafted={drafted} />
   return (
     <tr>
@@ -79,10 +80,10 @@ function ValueRow({
       <td className="figures py-6! pr-10! text-13 break-words @max-[460px]:hidden">{words}</td>
       <td className="text-end!">
         <WordButton
-          aria-label={`${isEdited ? 'Put back' : 'Take away'} ${token} ${state}`}
+          aria-label={`${action} ${token} ${state}`}
           onClick={() => (isEdited ? onPutBack : onTakeAway)(value)}
         >
-          {isEdited ? 'Put back' : 'Take away'}
+          {action}
         </WordButton>
       </td>
     </tr>
