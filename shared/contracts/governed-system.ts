@@ -5,6 +5,7 @@ import type {
   GovernedToken,
 } from '#shared/checks/governed-model.ts'
 import type { ModelFault, PairModel } from '#shared/checks/model.ts'
+import type { Weakening } from '#shared/checks/weakening-kinds.ts'
 import type { Fault, ProblemCode } from './problems.ts'
 import type { ModelNames, WireNames } from './wire-values.ts'
 
@@ -56,6 +57,8 @@ export type Decision =
       readonly edits: GovernedEdits
       /** Where in the body a fault of resolution lies, where that can be told. */
       readonly pointerOf?: (fault: ModelFault) => string | undefined
+      /** Where in the body something is weakened, where that can be told. */
+      readonly weakenedAt?: (weakening: Weakening) => string | undefined
     }
   | { readonly ok: false; readonly refusal: Refusal }
 
@@ -74,3 +77,16 @@ export function refuse(
 /** The refusal of a body that was read and has faults. */
 export const refuseFaults = (faults: readonly Fault[]) =>
   refuse('request-invalid', undefined, faults)
+
+/** Points at the member of the body that weakens the item it is about. */
+export const memberOf =
+  (item: Weakening['item']): NonNullable<Extract<Decision, { ok: true }>['weakenedAt']> =>
+  (weakening) => {
+    const isIt = isSameItem(weakening.item, item)
+    return isIt && weakening.member !== undefined ? `/${weakening.member}` : undefined
+  }
+
+const isSameItem = (one: Weakening['item'], other: Weakening['item']): boolean =>
+  one.kind === 'system' || other.kind === 'system'
+    ? one.kind === other.kind
+    : one.kind === other.kind && one.id === other.id

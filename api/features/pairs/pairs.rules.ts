@@ -2,6 +2,7 @@ import type * as z from 'zod'
 import { type ModelFault, type PairModel, STATES } from '#shared/checks/model.ts'
 import {
   type Decision,
+  memberOf,
   refuse,
   refuseFaults,
   type SystemIndex,
@@ -79,7 +80,12 @@ function decidePut(index: SystemIndex, wire: PairInput, id: string): Decision {
     const detail = `${wire.foreground} on ${wire.background} is declared so already (${twin.id})`
     return refuse('pair-already-declared', detail)
   }
-  return { ok: true, edits: { pairs: { put: [pair] } }, pointerOf: pointersOf(id) }
+  return {
+    ok: true,
+    edits: { pairs: { put: [pair] } },
+    pointerOf: pointersOf(id),
+    weakenedAt: memberOf({ kind: 'pair', id }),
+  }
 }
 
 /** Lists that are sets, in one order and without doubles. */

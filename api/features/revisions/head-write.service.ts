@@ -1,6 +1,8 @@
 import type { Consequence } from '#shared/checks/consequences.ts'
 import { applyEdits } from '#shared/checks/edits.ts'
 import type { GovernedEdits, GovernedSystem } from '#shared/checks/governed-model.ts'
+import { weakeningsBetween } from '#shared/checks/weakening.ts'
+import type { Weakening } from '#shared/checks/weakening-kinds.ts'
 import { ENGINE_STAMP } from '#shared/checks/engine.ts'
 import type { Decision, Refusal } from '#shared/contracts/governed-system.ts'
 import type { Fault } from '#shared/contracts/problems.ts'
@@ -15,6 +17,7 @@ import { verdictIn } from './head-tally.rules.ts'
 import { advanceHead, editedHead, type Head, type HeadsService } from './heads.service.ts'
 import { stateDigest } from './state-digest.ts'
 import { changesBetween, isEmpty, type VersionChanges } from './version-changes.rules.ts'
+import { REPLACING, unapproved, weakeningFaults } from './weakening.rules.ts'
 import { type Effect, effectOf } from './write-effect.ts'
 import type { WriteGuards } from './write-guards.ts'
 
@@ -34,6 +37,10 @@ export interface HeadWriteDeps {
 export interface HeadWrite {
   readonly system: SystemAccess
   readonly message: string | undefined
+  /** What the revision comes of. */
+  readonly origin?: 'direct' | 'import'
+  /** An import that replaces what stands. */
+  readonly replaces?: boolean
   /** Edits or a refusal, from the head alone: it may be asked again under the lock. */
   readonly decide: (head: Head) => Decision
   /** What the edit is meant for, and what stands there now. */
@@ -47,8 +54,6 @@ export interface HeadWrite {
     ) => Promise<Tagged | undefined> | Tagged | undefined
   }
   readonly audit: { readonly action: string; readonly subject: string }
-  /** How the revision came about, default `direct`. */
-  readonly origin?: 'import'
   /** Handling that belongs to the same call: no part of a revision, and audited by itself. */
   readonly alongside?: (repositories: Writing) => Promise<void>
 }
@@ -70,7 +75,14 @@ interface Plan {
     readonly head: Head
     readonly changes: VersionChanges
     readonly moved: readonly Consequence[]
+    readonly weakened: WeakenedEdits
   }
+}
+
+/** What the edits weaken, and where in the request. */
+interface WeakenedEdits {
+  readonly weakenings: readonly Weakening[]
+  readonly pointerOf: (weakening: Weakening) => string | undefined
 }
 
 /**
@@ -94,26 +106,32 @@ export function createHeadWriteService(deps: HeadWriteDeps) {
     },
 
     /** What a write would come to on the head as it stands: nothing is written, nor asked whether it may be. */
-    async preview(request: Pick<HeadWrite, 'system' | 'decide'>): Promise<Written> {
-      const before = await deps.heads.current(request.system.id)
-      const { head, next } = planEdits(before, request.decide(before))
+    async preview({ system, decide, replaces }: Previewed): Promise<Written> {
+      const before = await deps.heads.current(system.id)
+      const { head, next } = planEdits(before, { decision: decide(before), replaces })
       if (next === undefined) return unmoved(head)
       return { head: next.head, effect: effectOf({ before, after: next.head, moved: next.moved }) }
     },
   }
 }
+type Previewed = Pick<HeadWrite, 'system' | 'decide' | 'replaces'>
 export type HeadWriteService = ReturnType<typeof createHeadWriteService>
 
 async function planOn(
   { guards }: HeadWriteDeps,
-  { expected, decide }: HeadWrite,
+  { expected, decide, replaces }: HeadWrite,
   { head, reading }: { readonly head: Head; readonly reading: Writing },
 ): Promise<Plan> {
   if (expected) await compare(guards, expected, { head, reading })
-  return planEdits(head, decide(head))
+  return planEdits(head, { decision: decide(head), replaces })
 }
 
-function planEdits(head: Head, decision: Decision): Plan {
+interface Decided {
+  readonly decision: Decision
+  readonly replaces: boolean | undefined
+}
+
+function planEdits(head: Head, { decision, replaces }: Decided): Plan {
   if (!decision.ok) throw refusalError(decision.refusal)
   const { edits } = decision
   const changes = changesBetween(head.model, editedModel(head, edits))
@@ -130,7 +148,14 @@ function planEdits(head: Head, decision: Decision): Plan {
     })
     throw new AppError('system-unresolvable', { faults })
   }
-  return { head, next: { head: edited.head, changes, moved: edited.moved } }
+  const weakened = {
+    weakenings: [
+      ...(replaces && head.model.tokens.length > 0 ? [REPLACING] : []),
+      ...weakeningsBetween(head.evaluation.resolved, edited.head.evaluation.resolved),
+    ],
+    pointerOf: decision.weakenedAt ?? (() => undefined),
+  }
+  return { head, next: { head: edited.head, changes, moved: edited.moved, weakened } }
 }
 
 async function compare(
@@ -190,6 +215,7 @@ async function writeRevision(
 ): Promise<Written> {
   const mode = await repositories.heads.writeModeOf(system.id)
   if (mode === 'review') throw new AppError('review-required')
+  requireApproved(system, next.weakened)
   await followEngine(breaches, { systemId: system.id, head: plan.head, locked, repositories })
   const revision = await repositories.heads.advance(system.id)
   await repositories.versions.write({ systemId: system.id, revision }, next.changes)
@@ -219,6 +245,16 @@ async function writeRevision(
   })
   const head: Head = { ...next.head, revision, epoch: locked.epoch }
   return { head, effect: effectOf({ before: plan.head, after: head, moved: next.moved }) }
+}
+
+/** Under `direct` nobody is there to approve: who may not weaken alone is refused. */
+function requireApproved({ caller, role }: SystemAccess, weakened: WeakenedEdits): void {
+  const refused = unapproved(weakened.weakenings, { kind: caller.kind, role })
+  if (refused.length === 0) return
+  throw new AppError('weakening-needs-approval', {
+    detail: 'An accessibility-lead approves what weakens, in a change',
+    faults: weakeningFaults(refused, weakened.pointerOf),
+  })
 }
 
 interface Measured {

@@ -1,6 +1,11 @@
 import type * as z from 'zod'
 import type { SystemSettings } from '#shared/checks/model.ts'
-import { type Decision, refuse, type SystemIndex } from '#shared/contracts/governed-system.ts'
+import {
+  type Decision,
+  memberOf,
+  refuse,
+  type SystemIndex,
+} from '#shared/contracts/governed-system.ts'
 import type { createSystemBody, patchSystemBody } from '#shared/contracts/systems.contract.ts'
 
 export type CreateSystemBody = z.output<typeof createSystemBody>
@@ -34,6 +39,7 @@ export function decidePatch(
     ok: true,
     edits: { settings },
     pointerOf: ({ code }) => (code === 'level-lower' ? '/level' : undefined),
+    weakenedAt: memberOf({ kind: 'system' }),
   }
 }
 

@@ -3,6 +3,7 @@ import type { ModelFault, TokenModel } from '#shared/checks/model.ts'
 import type { GovernedTheme, GovernedToken } from '#shared/checks/governed-model.ts'
 import {
   type Decision,
+  memberOf,
   refuse,
   refuseFaults,
   type SystemIndex,
@@ -138,6 +139,7 @@ function decideTheme(index: SystemIndex, edit: ThemeEdit, input: ThemeInput): De
     ok: true,
     edits: { themes, tokens: { put: tokens } },
     pointerOf: pointersOf(index, theme),
+    weakenedAt: memberOf({ kind: 'theme', id: theme.id }),
   }
 }
 

@@ -61,7 +61,13 @@ export function decidePatch(
     const detail = `${before.name} is locked: send "locked": false with this edit, or before it`
     return refuse('token-locked', detail)
   }
-  return { ok: true, edits: { tokens: { put: [token] } }, pointerOf: pointersOf(index, token) }
+  return {
+    ok: true,
+    edits: { tokens: { put: [token] } },
+    pointerOf: pointersOf(index, token),
+    // A token without states of its own has its target's, so that a value may move them as well.
+    weakenedAt: () => (body.states === undefined ? '/value' : '/states'),
+  }
 }
 
 /** The removal of a token that nothing uses. */

@@ -57,8 +57,12 @@ const PRODUCT_AUTHORS: Readonly<Record<string, Person>> = {
   'crew-tablet': 'sanna',
 }
 
-const declare = (pair: DemoPair): Step => ({
-  by: PRODUCT_AUTHORS[pair.product ?? ''] ?? 'maintainer',
+/** A pair that joins a group lets another off: that is not for a maintainer alone. */
+const joinsGroup = ({ anyOf }: DemoPair, at: number): boolean =>
+  anyOf !== undefined && pairs.findIndex((other) => other.anyOf === anyOf) < at
+
+const declare = (pair: DemoPair, at: number): Step => ({
+  by: joinsGroup(pair, at) ? 'admin' : (PRODUCT_AUTHORS[pair.product ?? ''] ?? 'maintainer'),
   kind: 'create-pair',
   body: { ...pair, message: `Declared for the ${pair.product?.replace('-', ' ')}` },
 })

@@ -10,7 +10,7 @@ export type DemoTheme = { readonly key: string } & z.input<typeof putThemeBody>
 export type DemoRules = z.input<typeof putRulesBody>
 
 /** Who does it: the part of their e-mail address before the sign. */
-export type Person = 'maintainer' | 'pelle' | 'sanna' | 'a11y'
+export type Person = 'admin' | 'maintainer' | 'pelle' | 'sanna' | 'a11y'
 
 /** A pair is found again by what it declares. */
 export type PairName = Pick<DemoPair, 'foreground' | 'background' | 'use' | 'product'>

@@ -38,7 +38,7 @@ describe('the breach log', () => {
     const grey = () => `#${(16 + below(220)).toString(16).padStart(2, '0').repeat(3)}`
     const names = ['one', 'two', 'three', 'four']
     for (const name of names) await system.addToken(name, grey(), { states: ['hover'] })
-    await system.addToken('five', '{one}')
+    await system.addToken('five', '{one}', { states: ['hover'] })
     const pairs: string[] = []
     for (const foreground of [...names, 'five']) {
       pairs.push(await system.addPair({ foreground, background: 'paper', use: 'text' }))

@@ -56,7 +56,8 @@ describe('createPair', () => {
     }
     const { body } = await post(members).expect(201)
     expect(body).toMatchObject(members)
-    const unknown = await post({ ...members, backdrop: 'unknown' }).expect(201)
+    const alone = { ...members, anyOf: 'band', backdrop: 'unknown' }
+    const unknown = await post(alone).expect(201)
     expect(unknown.body.backdrop).toBe('unknown')
   })
 
@@ -71,7 +72,7 @@ describe('createPair', () => {
       { use: 'non-text' },
       { relation: 'together' },
       { product: 'tablet' },
-      { anyOf: 'band' },
+      { anyOf: 'strip' },
       { backdrop: ['grey'] },
     ]) {
       await post({ ...declared, ...another }).expect(201)

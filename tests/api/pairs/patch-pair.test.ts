@@ -23,14 +23,15 @@ const patch = async (body: object, agent = system.maintainer) =>
 describe('patchPair', () => {
   it('answers the breach that a use of another ratio resolves', async () => {
     // #8a8a8a on white is 3.452: short of 4.5 for text, enough for large text (WCAG 2.2, 1.4.3).
-    const { body } = await patch({ use: 'large-text' })
+    const { body } = await patch({ use: 'large-text' }, test.people.admin)
     expect(body.effect).toMatchObject({ verdict: 'pass', resolved: [{ foreground: 'grey' }] })
     await patch({ use: 'text' })
   })
 
   it('leaves what the body does not name, and removes what is null', async () => {
-    await patch({ product: 'kiosk', states: ['hover'], backdrop: ['ink'] })
-    const { body } = await patch({ states: null, backdrop: null })
+    const { admin } = test.people
+    await patch({ product: 'kiosk', states: ['hover'], backdrop: ['ink'] }, admin)
+    const { body } = await patch({ states: null, backdrop: null }, admin)
     expect(body).toMatchObject({ product: 'kiosk' })
     expect(body).not.toHaveProperty('states')
     expect(body).not.toHaveProperty('backdrop')

@@ -35,7 +35,7 @@ describe('deleteTheme', () => {
       themes: ['light', 'night'],
     })
     expect((await system.breaches()).map(({ theme }) => theme)).toEqual(['night'])
-    expect((await remove('night')).status).toBe(204)
+    expect((await remove('night', test.people.admin)).status).toBe(204)
     const { body: token } = await system.maintainer.get(`${system.url}/tokens/note`)
     expect(token.values).toEqual({})
     expect(token.rules).toEqual({ themes: {} })
