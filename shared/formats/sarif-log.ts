@@ -57,7 +57,7 @@ export interface SarifResult {
   readonly locations: readonly SarifLocation[]
   readonly relatedLocations?: readonly SarifLocation[]
   readonly partialFingerprints?: Readonly<Record<string, string>>
-  readonly suppressions?: readonly SarifSuppression[]
+  readonly suppressions: readonly SarifSuppression[]
   readonly properties: SarifProperties
 }
 

@@ -8,6 +8,7 @@ import type {
   SarifLog,
   SarifMessage,
   SarifResult,
+  SarifSuppression,
 } from './sarif-log.ts'
 import { CAUTION, type Ruled, ruleIdOf, SARIF_RULES } from './sarif-rules.ts'
 
@@ -94,11 +95,14 @@ const textOf = (finding: CheckedFinding): string => {
   return [measured, ...remarksOn(finding)].join(' ')
 }
 
-const suppressionsOf = ({ outcome, waiver }: CheckedFinding): Pick<SarifResult, 'suppressions'> => {
-  if (outcome !== 'waived') return {}
+/** Of a run all results say whether they are suppressed, or none does. @see SARIF 2.1.0, 3.27.23 */
+const NOT_SUPPRESSED: readonly SarifSuppression[] = []
+
+const suppressionsOf = ({ outcome, waiver }: CheckedFinding): readonly SarifSuppression[] => {
+  if (outcome !== 'waived') return NOT_SUPPRESSED
   const why =
     waiver === undefined ? {} : { justification: `Waiver ${waiver.id}, until ${waiver.endsAt}` }
-  return { suppressions: [{ kind: 'external', status: 'accepted', ...why }] }
+  return [{ kind: 'external', status: 'accepted', ...why }]
 }
 
 const resultOf = (finding: CheckedFinding): SarifResult => {
@@ -111,7 +115,7 @@ const resultOf = (finding: CheckedFinding): SarifResult => {
     locations: [locationOf(foreground)],
     relatedLocations: [locationOf(background, 'The background')],
     partialFingerprints: { 'findingIdentity/v1': fingerprint },
-    ...suppressionsOf(finding),
+    suppressions: suppressionsOf(finding),
     properties: measured,
   }
 }
@@ -126,6 +130,7 @@ const advisoryResult = (advisory: SarifCheck['advisories'][number]): SarifResult
     level: 'none',
     message: messageOf(`${token}${place === '' ? '' : ` in ${place}`}: ${text}`),
     locations: [locationOf(token)],
+    suppressions: NOT_SUPPRESSED,
     properties: { ...(theme === undefined ? {} : { theme }), ...(state ? { state } : {}) },
   }
 }
