@@ -2,7 +2,7 @@ import type { Caller } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
 import type { IdempotencyStore, KeptAnswer } from '#api/platform/idempotency/idempotency-store.ts'
 import { sha256Hex } from '#api/sha256.ts'
-import { type Contract, takesIdempotencyKey } from '#shared/contracts/route.ts'
+import { addressOf, type Contract, takesIdempotencyKey } from '#shared/contracts/route.ts'
 import { canonicalJson } from '#shared/formats/canonical-json.ts'
 import { type LooseAnswer, statusOf } from './answer.ts'
 import type { Exchange } from './exchange.ts'
@@ -43,13 +43,14 @@ export async function answerOnce(
   { contract, exchange }: { readonly contract: Contract; readonly exchange: Exchange<Contract> },
   run: () => Promise<LooseAnswer | undefined>,
 ): Promise<LooseAnswer | undefined> {
-  const { caller, request, query, body, media } = exchange
+  const { caller, request, params, query, body, media } = exchange
   if (!takesIdempotencyKey(contract) || caller === undefined) return run()
   const key = readIdempotencyKey(request.get('Idempotency-Key'))
   if (key === undefined) return run()
   const requestSha256 = sha256Hex(canonicalJson({ query, body, media }))
   const once = await store.once(
-    keyHashOf(caller, { contract, path: request.path, key }),
+    // One address, however its characters came encoded.
+    keyHashOf(caller, { contract, path: addressOf(contract, params ?? {}), key }),
     async () => {
       const value = await run()
       return { value, record: { requestSha256, ...keptOf(contract, value) } }

@@ -4,9 +4,16 @@ import type { Executor, RunTransaction } from './database.ts'
 interface Enclosing {
   readonly tx: Executor
   readonly afterCommit: (() => void)[]
+  isOver: boolean
 }
 
 const enclosing = new AsyncLocalStorage<Enclosing | undefined>()
+
+/** What outlives the transaction it was begun in is no part of it: the connection serves others by then. */
+const openOne = (): Enclosing | undefined => {
+  const outer = enclosing.getStore()
+  return outer?.isOver === false ? outer : undefined
+}
 
 /**
  * Runs work inside one transaction that encloses every transaction and every read begun within it, so that
@@ -18,9 +25,14 @@ export async function enclose<T>(
   work: (tx: Executor) => Promise<T>,
 ): Promise<T> {
   let hooks: (() => void)[] = []
-  const result = await run((tx) => {
+  const result = await run(async (tx) => {
     hooks = []
-    return enclosing.run({ tx, afterCommit: hooks }, () => work(tx))
+    const outer: Enclosing = { tx, afterCommit: hooks, isOver: false }
+    try {
+      return await enclosing.run(outer, () => work(tx))
+    } finally {
+      outer.isOver = true
+    }
   })
   for (const hook of hooks) hook()
   return result
@@ -30,7 +42,7 @@ export async function enclose<T>(
 export const joinEnclosing =
   (run: RunTransaction): RunTransaction =>
   (work) => {
-    const outer = enclosing.getStore()
+    const outer = openOne()
     return outer === undefined ? run(work) : work(outer.tx)
   }
 
@@ -38,7 +50,7 @@ export const joinEnclosing =
 export const followEnclosing = (db: Executor): Executor =>
   new Proxy(db, {
     get: (own, name) => {
-      const executor = enclosing.getStore()?.tx ?? own
+      const executor = openOne()?.tx ?? own
       const member: unknown = Reflect.get(executor, name)
       return typeof member === 'function' ? member.bind(executor) : member
     },
@@ -50,7 +62,7 @@ export const outsideEnclosing = <T>(work: () => Promise<T>): Promise<T> =>
 
 /** Runs the hook when what was written is committed: at once where nothing encloses it, never where it is given up. */
 export function afterCommit(hook: () => void): void {
-  const outer = enclosing.getStore()
+  const outer = openOne()
   if (outer === undefined) hook()
   else outer.afterCommit.push(hook)
 }

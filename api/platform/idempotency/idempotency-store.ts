@@ -4,6 +4,7 @@ import type { PoolConnection } from 'mysql2/promise'
 import { createTransact, type Database, type Executor } from '#api/platform/database.ts'
 import { isDuplicate, isRetryable } from '#api/platform/database-error.ts'
 import { idempotencyRecords } from '#drizzle/schema/limits.ts'
+import { packAnswer, unpackAnswer } from './answer-packing.ts'
 import { IDEMPOTENCY_GUARDS, type IdempotencyGuards } from './idempotency-guards.ts'
 
 /** An answer as it is kept for its repetitions. */
@@ -101,7 +102,8 @@ async function findLive(db: Executor, keyHash: string): Promise<IdempotencyRecor
     .from(idempotencyRecords)
     .where(and(eq(idempotencyRecords.keyHash, keyHash), gt(expiresAt, sql`utc_timestamp(3)`)))
   if (row === undefined || row.status === null) return undefined
-  return { ...row, status: row.status, headers: row.headers ?? {}, body: row.body ?? '' }
+  const kept = { status: row.status, headers: row.headers ?? {}, body: row.body ?? '' }
+  return { ...(await unpackAnswer(kept)), requestSha256: row.requestSha256 }
 }
 
 async function insert(tx: Executor, keyHash: string, record: IdempotencyRecord): Promise<void> {
@@ -110,7 +112,8 @@ async function insert(tx: Executor, keyHash: string, record: IdempotencyRecord):
   await tx.delete(idempotencyRecords).where(and(isSame, isOver))
   await tx.insert(idempotencyRecords).values({
     keyHash,
-    ...record,
+    requestSha256: record.requestSha256,
+    ...(await packAnswer(record)),
     expiresAt: sql`utc_timestamp(3) + interval ${KEPT_HOURS} hour`,
   })
 }
