@@ -13,6 +13,7 @@ export const memberSchema = z
     since: instantSchema.meta({ description: 'Member of the system since' }),
   })
   .meta({ id: 'Member' })
+export type MemberWire = z.infer<typeof memberSchema>
 
 export const putMembersBody = z
   .strictObject({
