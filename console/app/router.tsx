@@ -14,6 +14,8 @@ const settingsPages: RouteObject[] = [
   { path: 'themes/:theme', lazy: () => import('#console/routes/theme-page.tsx') },
   { path: 'new-theme', lazy: () => import('#console/routes/new-theme-page.tsx') },
   { path: 'rules', lazy: () => import('#console/routes/rules-page.tsx') },
+  { path: 'members', lazy: () => import('#console/routes/members-page.tsx') },
+  { path: 'keys', lazy: () => import('#console/routes/keys-page.tsx') },
 ]
 
 /** Pages of one system; what fails in one leaves the frame standing. */

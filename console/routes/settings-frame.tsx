@@ -16,6 +16,8 @@ export function Component() {
         places={[
           { href: paths.themes(system), text: 'Themes', count: settings.counts.themes },
           { href: paths.rules(system), text: 'Rules' },
+          { href: paths.members(system), text: 'Members' },
+          { href: paths.keys(system), text: 'Keys' },
         ]}
       />
       <Outlet context={context} />
