@@ -1,5 +1,6 @@
 import { createBreachHandlingService } from './features/breaches/breach-handling.service.ts'
 import { createBreachesService } from './features/breaches/breaches.service.ts'
+import { createSightingsService } from './features/breaches/sightings.service.ts'
 import { createChecksReads } from './features/checks/checks.reads.ts'
 import { createChecksService } from './features/checks/checks.service.ts'
 import { createPairsService } from './features/pairs/pairs.service.ts'
@@ -27,6 +28,7 @@ export function createGovernedServices(
   { reads, transact, findAccess }: Reach,
 ) {
   const heads = createHeadsService({ heads: reads.heads, versions: reads.versions })
+  const sightings = createSightingsService({ reads, newId })
   const breaches = createBreachesService({ reads: reads.breaches, newId })
   const writes = createHeadWriteService({
     heads,
@@ -40,6 +42,7 @@ export function createGovernedServices(
     heads,
     breaches,
     breachHandling: createBreachHandlingService({ transact, newId }),
+    sightings,
     systems: createSystemsService({ reads, transact, begins, writes, newId, findAccess }),
     tokens: createTokensService({ heads, writes, newId }),
     pairs: createPairsService({ heads, writes, newId }),
@@ -48,6 +51,7 @@ export function createGovernedServices(
     checks: createChecksService({
       heads,
       reads: createChecksReads(database.db),
+      sightings,
       transact,
       newId,
     }),

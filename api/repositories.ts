@@ -1,6 +1,7 @@
 import { createAccountsRepository } from './features/accounts/accounts.repository.ts'
 import { createBreachesReads } from './features/breaches/breaches.reads.ts'
 import { createBreachesRepository } from './features/breaches/breaches.repository.ts'
+import { createSightingsRepository } from './features/breaches/sightings.repository.ts'
 import { createChecksRepository } from './features/checks/checks.repository.ts'
 import { createJobsRepository } from './features/jobs/jobs.repository.ts'
 import { createKeysRepository } from './features/keys/keys.repository.ts'
@@ -26,6 +27,7 @@ export const createRepositories = (db: Executor) => ({
   keys: createKeysRepository(db),
   members: createMembersRepository(db),
   sessions: createSessionsRepository(db),
+  sightings: createSightingsRepository(db),
   systems: createSystemsRepository(db),
   versions: { ...createVersionsReads(db), ...createVersionsRepository(db) },
 })

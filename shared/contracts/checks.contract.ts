@@ -14,10 +14,18 @@ import { READ_PROBLEMS, WRITE_PROBLEMS } from './problems.ts'
 import { defineContract } from './route.ts'
 import { sarifLogSchema } from './sarif-log.ts'
 
+/** As code hosts name repositories and branches: in one line. @see https://git-scm.com/docs/git-check-ref-format */
+const sourceNameSchema = z
+  .string()
+  .trim()
+  .min(1)
+  .max(255)
+  .refine((name) => !/\p{Cc}/u.test(name), { message: 'Control characters are in no name' })
+
 export const checkSourceSchema = z
   .strictObject({
-    repository: z.string().trim().min(1).max(255).optional(),
-    branch: z.string().trim().min(1).max(255).optional(),
+    repository: sourceNameSchema.optional(),
+    branch: sourceNameSchema.optional(),
     commit: z.string().trim().min(1).max(64).optional(),
     pipelineUrl: z
       .url({ protocol: /^https?$/ })

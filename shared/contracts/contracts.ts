@@ -9,6 +9,7 @@ import * as revisions from './revisions.contract.ts'
 import type { Contract } from './route.ts'
 import * as rules from './rules.contract.ts'
 import * as sessions from './sessions.contract.ts'
+import * as sightings from './sightings.contract.ts'
 import * as systems from './systems.contract.ts'
 import * as themes from './themes.contract.ts'
 import * as tokens from './tokens.contract.ts'
@@ -26,6 +27,7 @@ export const contracts: readonly Contract[] = [
   rules,
   checks,
   breaches,
+  sightings,
   revisions,
   keys,
   members,

@@ -34,7 +34,7 @@ export const createBreachHandlingService = ({ transact, newId }: BreachHandlingD
           { pointer: '/assignee', detail: 'Nobody with this id is a member of the system' },
         ])
       }
-      await breaches.assign(id, assignee)
+      await breaches.touch(id, { assigneeUserId: assignee })
       await breaches.addEvents([
         {
           ...eventOn(current, system),

@@ -12,7 +12,7 @@ import {
   type SQL,
   sql,
 } from 'drizzle-orm'
-import { alias, QueryBuilder } from 'drizzle-orm/mysql-core'
+import { type AnyMySqlColumn, alias, QueryBuilder } from 'drizzle-orm/mysql-core'
 import { breaches } from '#drizzle/schema/breaches.ts'
 import { themeVersions } from '#drizzle/schema/themes.ts'
 import { tokenVersions } from '#drizzle/schema/tokens.ts'
@@ -41,10 +41,8 @@ export interface BreachFilter {
 }
 
 /** The columns by which a row says what it is about: an entry of the log, or a sighting. */
-export interface SubjectColumns {
-  readonly foregroundTokenId: (typeof breaches)['foregroundTokenId']
-  readonly backgroundTokenId: (typeof breaches)['backgroundTokenId']
-  readonly names: (typeof breaches)['names']
+export type SubjectColumns = {
+  readonly [column in 'foregroundTokenId' | 'backgroundTokenId' | 'names']: AnyMySqlColumn
 }
 
 type Side = 'foreground' | 'background'

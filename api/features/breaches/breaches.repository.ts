@@ -24,8 +24,11 @@ export function createBreachesRepository(db: Executor) {
       return rows
     },
 
-    /** What the log holds against the head and has not closed. */
-    listUnresolvedOfHead(systemId: string): Promise<BreachRow[]> {
+    /** What the log holds against one place and has not closed. */
+    listUnresolved(
+      systemId: string,
+      { origin, repository, branch }: Pick<BreachRow, 'origin' | 'repository' | 'branch'>,
+    ): Promise<BreachRow[]> {
       return db
         .select()
         .from(breaches)
@@ -33,7 +36,9 @@ export function createBreachesRepository(db: Executor) {
           and(
             eq(breaches.systemId, systemId),
             ne(breaches.status, 'resolved'),
-            eq(breaches.origin, 'head'),
+            eq(breaches.origin, origin),
+            eq(breaches.repository, repository),
+            eq(breaches.branch, branch),
           ),
         )
     },
@@ -47,16 +52,10 @@ export function createBreachesRepository(db: Executor) {
         .for('update')
     },
 
-    async assign(id: string, assigneeUserId: string | null): Promise<void> {
-      await db
-        .update(breaches)
-        .set({ assigneeUserId, version: NEXT_VERSION })
-        .where(eq(breaches.id, id))
-    },
-
-    /** Its history has grown, so its representation is another. */
-    async touch(id: string): Promise<void> {
-      await db.update(breaches).set({ version: NEXT_VERSION }).where(eq(breaches.id, id))
+    /** A new version: another assignee, or a history that has grown. */
+    async touch(id: string, handling: Partial<Pick<BreachRow, 'assigneeUserId'>> = {}) {
+      const moved = { ...handling, version: NEXT_VERSION }
+      await db.update(breaches).set(moved).where(eq(breaches.id, id))
     },
 
     /** Takes `count` consecutive numbers; answers the first. */

@@ -8,14 +8,18 @@ import {
 } from '#shared/contracts/breaches.contract.ts'
 import { addressOf } from '#shared/contracts/route.ts'
 import type { BreachHandlingService } from './breach-handling.service.ts'
+import { listSightings } from '#shared/contracts/sightings.contract.ts'
 import type { BreachesService } from './breaches.service.ts'
+import type { SightingsService } from './sightings.service.ts'
 
 interface BreachLog {
   readonly breaches: BreachesService
   readonly breachHandling: BreachHandlingService
+  readonly sightings: SightingsService
 }
 
-export function mountBreaches(router: ApiRouter, { breaches, breachHandling }: BreachLog): void {
+export function mountBreaches(router: ApiRouter, log: BreachLog): void {
+  const { breaches, breachHandling, sightings } = log
   mount(router, listBreaches, ({ system, query }) => breaches.list(system, query))
   mount(router, exportBreaches, async ({ system, query }) => ({
     text: await breaches.table(system, query),
@@ -32,4 +36,5 @@ export function mountBreaches(router: ApiRouter, { breaches, breachHandling }: B
     body: await breachHandling.comment(system, params.id, body.body),
     location: addressOf(getBreach, params),
   }))
+  mount(router, listSightings, ({ system, query }) => sightings.list(system, query))
 }

@@ -16,6 +16,8 @@ export interface HeadShift {
   readonly after: SystemModel
   readonly cause: HeadCause
   readonly at: Date
+  /** When a check of a pipeline saw what lasts; absent for the head, where every look would see it. */
+  readonly seenAt?: Date
 }
 
 export type ClosingReason =
@@ -65,12 +67,16 @@ export function stepOf(
   logged: BreachState | undefined,
   shift: HeadShift,
 ): BreachStep | null {
-  if (fallsShort(move.after)) return sightingOf(move.after, logged)
+  if (fallsShort(move.after)) return sightingOf(move.after, logged, shift.seenAt ?? null)
   if (logged === undefined || logged.status === 'resolved') return null
   return closingOf(move, logged, shift)
 }
 
-function sightingOf(finding: Finding, logged: BreachState | undefined): BreachStep | null {
+function sightingOf(
+  finding: Finding,
+  logged: BreachState | undefined,
+  lastSeenAt: Date | null,
+): BreachStep | null {
   const { ratio, required } = finding
   const state: BreachState = {
     status: finding.outcome === 'waived' ? 'waived' : 'open',
@@ -82,7 +88,7 @@ function sightingOf(finding: Finding, logged: BreachState | undefined): BreachSt
     foregroundHex: finding.rendered.foreground,
     backgroundHex: finding.rendered.background,
     waiverId: finding.waiver?.id ?? null,
-    lastSeenAt: null,
+    lastSeenAt,
     resolvedAt: null,
     closingReason: null,
   }
@@ -167,7 +173,8 @@ function joinedGroup({ pairs }: Finding, { before, after }: HeadShift): boolean 
   )
 }
 
+/** Where the log alone tells of before, it gated: that is how the entry came by its basis. */
 function p3SwitchedOff({ before, after }: HeadShift): boolean {
   const gates = ({ settings }: SystemModel) => settings.p3 && settings.p3Gates
-  return before !== null && gates(before) && !gates(after)
+  return (before === null || gates(before)) && !gates(after)
 }

@@ -1,4 +1,4 @@
-import { sql } from 'drizzle-orm'
+import { eq, sql } from 'drizzle-orm'
 import type { Executor, RawResult } from '#api/platform/database.ts'
 import { checks } from '#drizzle/schema/checks.ts'
 import { systemCounters } from '#drizzle/schema/systems.ts'
@@ -19,6 +19,11 @@ export function createChecksRepository(db: Executor) {
 
     async insert(row: NewCheckRow): Promise<void> {
       await db.insert(checks).values(row)
+    },
+
+    /** In the transaction of its making: what it logged names the check, so it comes after it. */
+    async setLogged(id: string, logged: CheckRow['logged']): Promise<void> {
+      await db.update(checks).set({ logged }).where(eq(checks.id, id))
     },
   }
 }

@@ -1,6 +1,7 @@
 import * as z from 'zod'
 import type { Caller, SystemAccess } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
+import type { Seen, SightingsService } from '#api/features/breaches/sightings.service.ts'
 import type { Head, HeadsService } from '#api/features/revisions/heads.service.ts'
 import { decodeCursor, encodeCursor } from '#api/paging.ts'
 import type { NewId } from '#api/platform/ids.ts'
@@ -19,7 +20,8 @@ import { judgeCandidate, measureCandidate } from './measure-candidate.rules.ts'
 export interface ChecksDeps {
   readonly heads: Pick<HeadsService, 'current'>
   readonly reads: ChecksReads
-  readonly transact: Transact<'checks'>
+  readonly sightings: Pick<SightingsService, 'watch' | 'record'>
+  readonly transact: Transact<'checks' | 'heads' | 'breaches' | 'sightings'>
   readonly newId: NewId
 }
 
@@ -31,7 +33,7 @@ const placeSchema = z.strictObject({ number: z.int().min(1) })
 
 /** Measures candidates against the head, and keeps what came out. */
 export function createChecksService(deps: ChecksDeps) {
-  const { heads, reads, transact, newId } = deps
+  const { heads, reads, sightings, transact, newId } = deps
 
   async function found(system: SystemAccess, id: string) {
     const row = await reads.find(system.id, id)
@@ -62,9 +64,14 @@ export function createChecksService(deps: ChecksDeps) {
         id: newId('chk'),
         findingsGzip: await packFindings(keptOf(findings)),
       }
-      await transact(async ({ checks }) => {
+      await transact(async (repositories) => {
+        const { checks } = repositories
+        const watch = await sightings.watch(repositories, system.id, body.source)
         const number = await checks.takeNumber(system.id)
         await checks.insert({ ...row, number })
+        if (watch === undefined) return
+        const seen = seenBy(row, { verdict, evaluation: measured.evaluation })
+        await checks.setLogged(row.id, await sightings.record(repositories, watch, seen))
       })
       return { ...presentCheckSummary(await found(system, row.id)), ...findings }
     },
@@ -135,6 +142,21 @@ function rowOf({ id, caller }: SystemAccess, { head, verdict, source }: Outcome)
     ruleSet: engine.ruleSet,
   } satisfies Partial<NewCheckRow>
 }
+
+type Kept = Pick<CheckRow, 'id' | 'commitSha' | 'callerUserId' | 'verdict'>
+
+/** What the check leaves of its branch. */
+const seenBy = (
+  { id, commitSha, callerUserId, verdict: outcome }: Kept,
+  { verdict, evaluation }: { readonly verdict: Verdict; readonly evaluation: Evaluation },
+): Seen => ({
+  checkId: id,
+  commit: commitSha,
+  actor: callerUserId,
+  findings: verdict.findings,
+  evaluation,
+  passes: outcome === 'pass',
+})
 
 function callerColumns(caller: Caller): Pick<CheckRow, 'callerUserId' | 'callerKeyId'> {
   return caller.kind === 'key'
