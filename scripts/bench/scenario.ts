@@ -17,18 +17,20 @@ export interface Size {
 
 /**
  * A system of a size, the same one at every call: three themes, tokens with all states, three in ten aliases,
- * one in ten translucent, one in twenty overridden in dark, three in ten pairs `inside`. Its last token is plain
+ * one in ten translucent, one in twenty overridden in a theme, three in ten pairs `inside`. Its last token is plain
  * and has exactly 60 findings, whatever the size.
  */
 export function systemOf({ tokens: count, pairs: pairCount }: Size): SystemModel {
   const random = seeded(7)
   const tokens = [...roles(), ...Array.from({ length: count - 3 }, (_, at) => plain(at, random))]
+  const under = tokens.filter((_, at) => at % 2 === 0)
+  const over = tokens.filter((_, at) => at % 2 === 1)
   const focus = { ...plain(1, random), id: 'tok_focus', name: 'focus' }
   const pairs = Array.from({ length: pairCount - FOCUS_PAIRS }, (_, at) =>
-    pairOf({ at, random, foreground: pick(tokens, random), background: pick(tokens, random) }),
+    pairOf({ at, random, foreground: pick(over, random), background: pick(under, random) }),
   )
   const own = Array.from({ length: FOCUS_PAIRS }, (_, at) =>
-    ownPair({ at: pairCount + at, random, foreground: focus, background: tokens[2 + at]! }),
+    ownPair({ at: pairCount + at, random, foreground: focus, background: under[at]! }),
   )
   return {
     settings: { level: 'AA', p3: true, p3Gates: false },
@@ -71,17 +73,20 @@ function inDark(dark: Triple, kiosk: Triple): TokenModel['values'] {
   }
 }
 
+/** Even ones are made to lie under others, odd ones to lie on them: most pairs of a governed system pass. */
 function plain(at: number, random: () => number): TokenModel {
   const [id, name] = [`tok_${at}`, `group${at % 40}.token${at}`]
   if (at > 100 && random() < 0.3) {
-    const target = `tok_${Math.floor(random() * 50)}`
+    const target = `tok_${Math.floor(random() * 25) * 2 + (at % 2)}`
     return { id, name, value: { kind: 'alias', token: target }, states: STATES, values: {} }
   }
-  const token = colored(id, name, [random(), random() * 0.22, random() * 360])
-  const alpha = random() < 0.1 ? 0.7 : 1
-  const values: TokenModel['values'] = random() < 0.05 ? { thm_dark: { rest: token.value } } : {}
-  const { l, c, h } = token.color
-  return { id, name, value: { kind: 'color', color: { l, c, h, alpha } }, states: STATES, values }
+  const isUnder = at % 2 === 0
+  const l = isUnder ? 0.92 + random() * 0.08 : 0.15 + random() * 0.3
+  const c = random() * (isUnder ? 0.05 : 0.18)
+  const alpha = random() < 0.1 ? 0.9 : 1
+  const value = { kind: 'color', color: { l, c, h: random() * 360, alpha } } as const
+  const values: TokenModel['values'] = random() < 0.05 ? { thm_kiosk: { rest: value } } : {}
+  return { id, name, value, states: STATES, values }
 }
 
 type Triple = readonly [number, number, number]
