@@ -10,6 +10,7 @@ import { paths } from './paths.ts'
 
 /** Pages of a system's settings, under navigation of their own. */
 const settingsPages: RouteObject[] = [
+  { path: 'settings', lazy: () => import('#console/routes/settings-page.tsx') },
   { path: 'themes', lazy: () => import('#console/routes/themes-page.tsx') },
   { path: 'themes/:theme', lazy: () => import('#console/routes/theme-page.tsx') },
   { path: 'new-theme', lazy: () => import('#console/routes/new-theme-page.tsx') },

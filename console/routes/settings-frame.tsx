@@ -14,6 +14,7 @@ export function Component() {
       <SubNavigation
         label="Settings"
         places={[
+          { href: paths.settings(system), text: 'System' },
           { href: paths.themes(system), text: 'Themes', count: settings.counts.themes },
           { href: paths.rules(system), text: 'Rules' },
           { href: paths.members(system), text: 'Members' },

@@ -66,10 +66,12 @@ export function Component() {
     [bands, system],
   )
   const context = useMemo<FrameContext>(() => ({ lead, view: setView }), [])
-  const isInSettings = useIsInSettings()
+  const isInSettings = useIsIn(SETTINGS)
+  const isAmongPairs = useIsIn(PAIRS)
   const token = useMatch('/systems/:system/tokens/:name')
   const theme = useMatch('/systems/:system/themes/:theme')
-  const opened = token !== null || theme !== null
+  const pair = useMatch('/systems/:system/pairs/:id')
+  const opened = token !== null || theme !== null || pair !== null
   return (
     <>
       {shown !== undefined && (
@@ -91,8 +93,14 @@ export function Component() {
           label={settings.key}
           places={[
             { href: paths.tokens(system), text: 'Tokens', count: settings.counts.tokens },
+            {
+              href: paths.pairs(system),
+              text: 'Pairs',
+              count: settings.counts.pairs,
+              holdsPage: isAmongPairs,
+            },
             { href: paths.breaches(system), text: 'Breaches', count: settings.counts.openBreaches },
-            { href: paths.themes(system), text: 'Settings', holdsPage: isInSettings },
+            { href: paths.settings(system), text: 'Settings', holdsPage: isInSettings },
           ]}
         />
         <main id="content" tabIndex={-1} className="outline-none">
@@ -104,8 +112,9 @@ export function Component() {
 }
 
 const SETTINGS = new Set(['settings', 'themes', 'new-theme', 'rules', 'members', 'keys'])
+const PAIRS = new Set(['pairs', 'pair-sheet', 'new-pair'])
 
-/** Whether the page stands under the place Settings, beside which it has a place of its own. */
-function useIsInSettings(): boolean {
-  return SETTINGS.has(useMatch('/systems/:system/:place/*')?.params.place ?? '')
+/** Whether the page stands under a place of the navigation, beside which it has a place of its own. */
+function useIsIn(places: ReadonlySet<string>): boolean {
+  return places.has(useMatch('/systems/:system/:place/*')?.params.place ?? '')
 }
