@@ -1,4 +1,4 @@
-import type * as z from 'zod'
+import * as z from 'zod'
 import { AppError } from './errors.ts'
 
 /** A place in a list as callers get it: not meant to be read, and checked when it comes back. */
@@ -23,4 +23,40 @@ function readJson(text: string): unknown {
   } catch {
     return undefined
   }
+}
+
+const REMEMBERED = 5
+
+/** Where a page ended, in a list whose order is that of making. */
+export interface PlaceInList {
+  readonly id: string
+  /** Ids before it, the nearest first: one of them still stands where the last itself was deleted. */
+  readonly behind?: readonly string[] | undefined
+}
+
+export const placeInListSchema = z.strictObject({
+  id: z.string(),
+  behind: z.array(z.string()).max(REMEMBERED).optional(),
+})
+
+/** The place of the item at a position. */
+export const placeAt = (
+  items: readonly { readonly id: string }[],
+  at: number,
+): { id: string; behind: string[] } => ({
+  id: items[at]?.id ?? '',
+  behind: items
+    .slice(Math.max(0, at - REMEMBERED), at)
+    .map(({ id }) => id)
+    .reverse(),
+})
+
+/** Position of the first item after a place; without a trace of it, of the first that was made later. */
+export function startBehind(items: readonly { readonly id: string }[], place: PlaceInList): number {
+  for (const known of [place.id, ...(place.behind ?? [])]) {
+    const at = items.findIndex(({ id }) => id === known)
+    if (at >= 0) return at + 1
+  }
+  const next = items.findIndex(({ id }) => id > place.id)
+  return next < 0 ? items.length : next
 }

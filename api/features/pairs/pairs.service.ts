@@ -1,9 +1,8 @@
-import * as z from 'zod'
 import type { SystemAccess } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
 import type { HeadWriteService } from '#api/features/revisions/head-write.service.ts'
 import type { Head, HeadsService } from '#api/features/revisions/heads.service.ts'
-import { decodeCursor, encodeCursor } from '#api/paging.ts'
+import { decodeCursor, encodeCursor, placeAt, placeInListSchema, startBehind } from '#api/paging.ts'
 import type { NewId } from '#api/platform/ids.ts'
 import { etagOf, type IfMatch } from '#api/precondition.ts'
 import type { PairModel } from '#shared/checks/model.ts'
@@ -33,20 +32,18 @@ export interface PairEdit {
 
 type ListQuery = ParsedOf<typeof listPairs>['query']
 
-const placeSchema = z.strictObject({ id: z.string() })
-
 /** Reads declared pairs off the head and writes them to it. */
 export function createPairsService({ heads, writes, newId }: PairsDeps) {
   return {
     async list(system: SystemAccess, query: ListQuery) {
       const head = await heads.current(system.id)
       const pairs = head.model.pairs.filter((pair) => isWanted(head, pair, query))
-      const place = decodeCursor(placeSchema, query.cursor)
-      const start = place ? startAfter(pairs, place.id) : 0
+      const place = decodeCursor(placeInListSchema, query.cursor)
+      const start = place ? startBehind(pairs, place) : 0
       const shown = pairs.slice(start, start + query.limit)
-      const last = pairs.length > start + query.limit ? shown.at(-1) : undefined
+      const end = start + query.limit
       const body = { items: shown.map((pair) => taggedPair(head, pair)) }
-      return { body, next: last && encodeCursor({ id: last.id }) }
+      return { body, next: pairs.length > end ? encodeCursor(placeAt(pairs, end - 1)) : undefined }
     },
 
     async get(system: SystemAccess, id: string): Promise<PairWire> {
@@ -106,14 +103,6 @@ function isWanted({ index }: Head, pair: PairModel, { token, use, product }: Lis
   return (
     (use === undefined || pair.use === use) && (product === undefined || pair.product === product)
   )
-}
-
-/** Ids sort by the time of their making, so a place holds although its pair was removed meanwhile. */
-function startAfter(pairs: readonly PairModel[], last: string): number {
-  const at = pairs.findIndex(({ id }) => id === last)
-  if (at >= 0) return at + 1
-  const next = pairs.findIndex(({ id }) => id > last)
-  return next < 0 ? pairs.length : next
 }
 
 function pairOf({ index }: Head, id: string): PairModel {

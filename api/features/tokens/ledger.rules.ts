@@ -38,37 +38,6 @@ export function selectEntries<Entry extends LedgerEntry>(
 }
 
 /** Furthest short first; what requires nothing, or is in no pair, last. */
-function shortfall({ standing: { lowest } }: LedgerEntry): number {
+export function shortfall({ standing: { lowest } }: LedgerEntry): number {
   return lowest && lowest.required > 0 ? lowest.ratio / lowest.required : Number.POSITIVE_INFINITY
-}
-
-/** Where a page of the list ended; it holds although that token is deleted or renamed meanwhile. */
-export interface LedgerPlace {
-  readonly id: string
-  readonly name: string
-  /** `null` where nothing is required of it. */
-  readonly shortfall: number | null
-}
-
-export function placeOf(entry: LedgerEntry): LedgerPlace {
-  const short = shortfall(entry)
-  return { id: entry.id, name: entry.name, shortfall: Number.isFinite(short) ? short : null }
-}
-
-/** Position of the first entry after a place; ids sort by the time of their making. */
-export function startAfter(
-  entries: readonly LedgerEntry[],
-  place: LedgerPlace,
-  sort: LedgerSort,
-): number {
-  const at = entries.findIndex(({ id }) => id === place.id)
-  if (at >= 0) return at + 1
-  const short = place.shortfall ?? Number.POSITIVE_INFINITY
-  const isAfter = {
-    ledger: ({ id }: LedgerEntry) => id > place.id,
-    name: ({ name }: LedgerEntry) => name > place.name,
-    lowest: (entry: LedgerEntry) => shortfall(entry) > short,
-  }[sort]
-  const next = entries.findIndex(isAfter)
-  return next < 0 ? entries.length : next
 }

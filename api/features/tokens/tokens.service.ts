@@ -3,14 +3,15 @@ import type { SystemAccess } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
 import type { HeadWriteService } from '#api/features/revisions/head-write.service.ts'
 import type { Head, HeadsService } from '#api/features/revisions/heads.service.ts'
-import { decodeCursor, encodeCursor } from '#api/paging.ts'
+import { decodeCursor, encodeCursor, placeInListSchema } from '#api/paging.ts'
 import type { NewId } from '#api/platform/ids.ts'
 import { etagOf, type IfMatch } from '#api/precondition.ts'
 import type { GovernedToken } from '#shared/checks/governed-model.ts'
 import type { ParsedOf } from '#shared/contracts/route.ts'
 import type { listTokens, TokenWire } from '#shared/contracts/tokens.contract.ts'
 import { type Ledger, presentLedger } from './ledger.presenter.ts'
-import { placeOf, selectEntries, startAfter } from './ledger.rules.ts'
+import { placeOf, startAfter } from './ledger-pages.ts'
+import { selectEntries } from './ledger.rules.ts'
 import { presentResolvedToken } from './tokens.presenter.ts'
 import {
   type CreateTokenBody,
@@ -35,8 +36,7 @@ export interface NamedEdit {
 type ListQuery = ParsedOf<typeof listTokens>['query']
 const PAGE = 100
 
-const placeSchema = z.strictObject({
-  id: z.string(),
+const placeSchema = placeInListSchema.extend({
   name: z.string(),
   shortfall: z.number().nullable(),
 })
@@ -58,8 +58,8 @@ export function createTokensService({ heads, writes, newId }: TokensDeps) {
       const start = place ? startAfter(entries, place, query.sort) : 0
       const limit = query.limit ?? (query.view === 'ledger' ? entries.length : PAGE)
       const shown = entries.slice(start, start + limit)
-      const last = entries.length > start + limit ? shown.at(-1) : undefined
-      const next = last && encodeCursor(placeOf(last))
+      const last = entries.length > start + limit ? placeOf(entries, start + limit - 1) : undefined
+      const next = last && encodeCursor(last)
       if (query.view === 'ledger') {
         return { body: { items: shown.map(({ id }) => reading.ledger().strip(id)) }, next }
       }
