@@ -15,6 +15,23 @@ import { defineContract } from './route.ts'
 
 export const writeModeSchema = z.enum(['direct', 'review']).meta({ id: 'WriteMode' })
 
+const branchPattern = (description: string, example: string) =>
+  z
+    .string()
+    .trim()
+    .min(1)
+    .max(255)
+    .regex(/^\P{Cc}*$/u, 'No control characters')
+    .meta({ description, example, pattern: '^\\P{Cc}*$' })
+
+export const protectedBranchSchema = z
+  .strictObject({
+    repository: branchPattern('* stands for any characters', 'larkhaven/timetable'),
+    branch: branchPattern('* stands for any characters', 'release-*'),
+  })
+  .meta({ id: 'ProtectedBranch', description: 'Its breaches in CI stand in the breach log' })
+export type ProtectedBranchWire = z.infer<typeof protectedBranchSchema>
+
 const settings = {
   level: levelSchema,
   p3: z.boolean().meta({ description: 'Display P3 values ship, and are measured' }),
@@ -33,6 +50,7 @@ export const systemSchema = z
     key: slugSchema,
     name: z.string(),
     writeMode: writeModeSchema,
+    protectedBranches: z.array(protectedBranchSchema),
     ...settings,
     counts: z.strictObject({
       tokens: z.int(),
@@ -70,6 +88,11 @@ export const patchSystemBody = z
   .strictObject({
     name: z.string().trim().min(1).max(120).optional(),
     writeMode: writeModeSchema.optional(),
+    protectedBranches: z
+      .array(protectedBranchSchema)
+      .max(100)
+      .optional()
+      .meta({ description: 'The whole list' }),
     level: levelSchema.optional(),
     p3: settings.p3.optional(),
     p3Gates: settings.p3Gates.optional(),
@@ -83,6 +106,7 @@ export const systemExample = {
   key: 'larkhaven',
   name: 'Larkhaven Ferries',
   writeMode: 'direct',
+  protectedBranches: [{ repository: 'larkhaven/timetable', branch: 'main' }],
   level: 'AA',
   p3: true,
   p3Gates: true,
@@ -145,9 +169,9 @@ export const patchSystem = defineContract({
   method: 'PATCH',
   path: '/v1/systems/{system}',
   feature: 'systems',
-  summary: 'Changes name, write mode or settings',
+  summary: 'Changes name, write mode, protected branches or settings',
   description:
-    'Level, P3 and the disabled floor make a revision; name and write mode are audited only. An accessibility lead may change level and write mode.',
+    'Level, P3 and the disabled floor make a revision; name, write mode and protected branches are audited only. An accessibility lead may change level, write mode and protected branches, and alone may set direct again or take a protected branch away.',
   params: systemParams,
   body: patchSystemBody,
   bodyExample: { level: 'AAA', message: 'Read in glare' },

@@ -1,6 +1,6 @@
 import type { SystemSettings } from '#shared/checks/model.ts'
 import { presentSettings } from '#shared/contracts/present-items.ts'
-import type { SystemWire } from '#shared/contracts/systems.contract.ts'
+import type { ProtectedBranchWire, SystemWire } from '#shared/contracts/systems.contract.ts'
 
 /** A system as it is read, with its counts and head. */
 export interface SystemFound {
@@ -8,6 +8,7 @@ export interface SystemFound {
   readonly key: string
   readonly name: string
   readonly writeMode: SystemWire['writeMode']
+  readonly protectedBranches: readonly ProtectedBranchWire[]
   readonly settings: SystemSettings
   readonly tokens: number
   readonly pairs: number
@@ -28,6 +29,7 @@ export function presentSystem(found: SystemFound): Omit<SystemWire, 'etag'> {
     key: found.key,
     name: found.name,
     writeMode: found.writeMode,
+    protectedBranches: [...found.protectedBranches],
     ...presentSettings(found.settings),
     counts: { tokens, pairs, themes, openBreaches },
     head: {

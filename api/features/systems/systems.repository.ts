@@ -5,7 +5,13 @@ import { breaches } from '#drizzle/schema/breaches.ts'
 import { STILL_LIVE } from '#drizzle/schema/columns.ts'
 import { pairVersions } from '#drizzle/schema/pairs.ts'
 import { revisions } from '#drizzle/schema/revisions.ts'
-import { memberships, settingVersions, systemHeads, systems } from '#drizzle/schema/systems.ts'
+import {
+  memberships,
+  type ProtectedBranch,
+  settingVersions,
+  systemHeads,
+  systems,
+} from '#drizzle/schema/systems.ts'
 import { themeVersions } from '#drizzle/schema/themes.ts'
 import { tokenVersions } from '#drizzle/schema/tokens.ts'
 import { users } from '#drizzle/schema/users.ts'
@@ -14,6 +20,7 @@ import { users } from '#drizzle/schema/users.ts'
 export interface SystemHandling {
   readonly name: string
   readonly writeMode: 'direct' | 'review'
+  readonly protectedBranches: readonly ProtectedBranch[]
 }
 
 const live = (versions: typeof tokenVersions | typeof pairVersions | typeof themeVersions) =>
@@ -24,6 +31,7 @@ const columns = {
   key: systems.key,
   name: systems.name,
   writeMode: systems.writeMode,
+  protectedBranches: systems.protectedBranches,
   settings: settingVersions.definition,
   tokens: live(tokenVersions),
   pairs: live(pairVersions),

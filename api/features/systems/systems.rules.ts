@@ -6,7 +6,11 @@ import {
   refuse,
   type SystemIndex,
 } from '#shared/contracts/governed-system.ts'
-import type { createSystemBody, patchSystemBody } from '#shared/contracts/systems.contract.ts'
+import type {
+  createSystemBody,
+  patchSystemBody,
+  ProtectedBranchWire,
+} from '#shared/contracts/systems.contract.ts'
 
 export type CreateSystemBody = z.output<typeof createSystemBody>
 export type PatchSystemBody = z.output<typeof patchSystemBody>
@@ -17,7 +21,11 @@ export interface SettingsAuthority {
   readonly leads: boolean
 }
 
-type WriteMode = NonNullable<PatchSystemBody['writeMode']>
+/** What is no part of a revision, as it stands. */
+export interface Handling {
+  readonly writeMode: 'direct' | 'review'
+  readonly protectedBranches: readonly ProtectedBranchWire[]
+}
 
 export const settingsOf = (body: CreateSystemBody): SystemSettings =>
   withFloor({ level: body.level, p3: body.p3, p3Gates: body.p3Gates }, body.disabledFloor)
@@ -26,7 +34,7 @@ export const settingsOf = (body: CreateSystemBody): SystemSettings =>
 export function decidePatch(
   { model }: SystemIndex,
   body: PatchSystemBody,
-  caller: { readonly authority: SettingsAuthority; readonly writeMode: WriteMode },
+  caller: Patching,
 ): Decision {
   const refusal = roleRefusal(body, caller)
   if (refusal) return refusal
@@ -43,19 +51,46 @@ export function decidePatch(
   }
 }
 
-function roleRefusal(
-  body: PatchSystemBody,
-  { authority, writeMode }: { authority: SettingsAuthority; writeMode: WriteMode },
-) {
+interface Patching {
+  readonly authority: SettingsAuthority
+  readonly handling: Handling
+}
+
+/** What takes the log's eye off something is the lead's to decide: the end of review, and a branch left alone. */
+function roleRefusal(body: PatchSystemBody, { authority, handling }: Patching) {
   const others = [body.name, body.p3, body.p3Gates, body.disabledFloor]
   if (!authority.maintains && others.some((member) => member !== undefined)) {
-    const detail = 'A maintainer edits these settings; an accessibility-lead level and write mode'
+    const detail =
+      'A maintainer edits these settings; an accessibility-lead level, write mode and protected branches'
     return refuse('role-missing', detail)
   }
-  if (!authority.leads && writeMode === 'review' && body.writeMode === 'direct') {
+  if (authority.leads) return undefined
+  if (handling.writeMode === 'review' && body.writeMode === 'direct') {
     return refuse('role-missing', 'Only an accessibility-lead may set direct again')
   }
+  const after = body.protectedBranches && distinctBranches(body.protectedBranches)
+  const left = after && handling.protectedBranches.filter((branch) => !includes(after, branch))
+  if (left !== undefined && left.length > 0) {
+    const named = left.map(({ repository, branch }) => `${branch} of ${repository}`).join(', ')
+    const detail = `Only an accessibility-lead may take a protected branch away: ${named}`
+    return refuse('role-missing', detail)
+  }
   return undefined
+}
+
+const includes = (
+  branches: readonly ProtectedBranchWire[],
+  { repository, branch }: ProtectedBranchWire,
+): boolean => branches.some((one) => one.repository === repository && one.branch === branch)
+
+/** Each once, named as a pipeline names it: without the part of a ref that says that it is a branch. */
+export function distinctBranches(given: readonly ProtectedBranchWire[]): ProtectedBranchWire[] {
+  const branches: ProtectedBranchWire[] = []
+  for (const { repository, branch } of given) {
+    const named = { repository, branch: branch.replace(/^refs\/heads\//, '') }
+    if (!includes(branches, named)) branches.push(named)
+  }
+  return branches
 }
 
 const withFloor = (

@@ -6,11 +6,13 @@ import type { NewId } from '#api/platform/ids.ts'
 import { etagOf, type IfMatch } from '#api/precondition.ts'
 import type { Repositories, Transact } from '#api/repositories.ts'
 import type { SystemWire } from '#shared/contracts/systems.contract.ts'
+import { canonicalJson } from '#shared/formats/canonical-json.ts'
 import { presentSystem, type SystemFound } from './systems.presenter.ts'
 import type { SystemHandling } from './systems.repository.ts'
 import {
   type CreateSystemBody,
   decidePatch,
+  distinctBranches,
   type PatchSystemBody,
   type SettingsAuthority,
   settingsOf,
@@ -78,13 +80,12 @@ export function createSystemsService(deps: SystemsDeps) {
             return tagged(standing)
           },
         },
-        // Asked after `current`, each time: the mode that counts is the one read under the lock.
-        decide: ({ index }) =>
-          decidePatch(index, body, { authority, writeMode: standing.writeMode }),
+        // Asked after `current`, each time: the handling that counts is the one read under the lock.
+        decide: ({ index }) => decidePatch(index, body, { authority, handling: standing }),
         audit: { action: 'settings.edited', subject: system.id },
-        ...(body.name === undefined && body.writeMode === undefined
-          ? {}
-          : { alongside: (repositories) => handle(repositories, system, body) }),
+        ...(isHandled(body)
+          ? { alongside: (repositories) => handle(repositories, system, body) }
+          : {}),
       })
       return { ...tagged(await found(reads, system.id)), effect }
     },
@@ -114,16 +115,20 @@ function tagged(row: SystemFound): SystemWire {
   return { ...wire, etag: etagOf(wire) }
 }
 
-/** Name and write mode: no revision, an entry in the audit log. */
+const isHandled = ({ name, writeMode, protectedBranches }: PatchSystemBody): boolean =>
+  [name, writeMode, protectedBranches].some((member) => member !== undefined)
+
+/** Name, write mode and protected branches: no revision, an entry in the audit log. */
 async function handle(
   { systems, audit }: Writing,
   system: SystemAccess,
-  { name, writeMode }: PatchSystemBody,
+  { name, writeMode, protectedBranches }: PatchSystemBody,
 ): Promise<void> {
   const before = await found({ systems }, system.id)
   const moved: Partial<SystemHandling> = {
     ...(name === undefined || name === before.name ? {} : { name }),
     ...(writeMode === undefined || writeMode === before.writeMode ? {} : { writeMode }),
+    ...movedBranches(before, protectedBranches),
   }
   if (Object.keys(moved).length === 0) return
   await systems.setHandling(system.id, moved)
@@ -134,4 +139,15 @@ async function handle(
     subject: system.id,
     details: moved,
   })
+}
+
+function movedBranches(
+  before: SystemFound,
+  given: PatchSystemBody['protectedBranches'],
+): Partial<SystemHandling> {
+  const protectedBranches = given && distinctBranches(given)
+  return protectedBranches === undefined ||
+    canonicalJson(protectedBranches) === canonicalJson(before.protectedBranches)
+    ? {}
+    : { protectedBranches }
 }

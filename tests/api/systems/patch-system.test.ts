@@ -1,3 +1,4 @@
+import type { RowDataPacket } from 'mysql2/promise'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { WRITE_GUARDS } from '#api/features/revisions/write-guards.ts'
 import { createTestApp, type TestApp } from '#tests/support/app.ts'
@@ -30,6 +31,15 @@ const patch = async (body: object, agent = system.maintainer) =>
     .patch(system.url)
     .set('If-Match', (await read()).etag)
     .send(body)
+
+/** The newest first. */
+async function auditEntries() {
+  const [rows] = await test.service.platform.database.pool.query<RowDataPacket[]>(
+    'select action, details from audit_entries where chain_id = ? order by seq desc',
+    [(await read()).id],
+  )
+  return rows.map(({ action, details }) => ({ action, details: JSON.parse(details) }))
+}
 
 describe('patchSystem', () => {
   it('answers the breaches that a higher level opens, as one revision', async () => {
@@ -89,7 +99,62 @@ describe('patchSystem', () => {
     expect((await read()).writeMode).toBe('review')
   })
 
-  it('refuses the lead what is not level and write mode', async () => {
+  it('leaves the revision where only protected branches change, and says so in the audit log', async () => {
+    const before = await read()
+    expect(before.protectedBranches).toEqual([])
+    const main = { repository: 'quay/timetable', branch: 'main' }
+    const release = { repository: 'quay/*', branch: 'release-*' }
+    const { body } = await patch({
+      protectedBranches: [main, { ...main, branch: 'refs/heads/main' }, release],
+    })
+    expect(body).toMatchObject({ protectedBranches: [main, release], head: before.head })
+    expect((await read()).protectedBranches).toEqual([main, release])
+    const [entry] = await auditEntries()
+    expect(entry).toMatchObject({
+      action: 'system.edited',
+      details: { protectedBranches: [main, release] },
+    })
+  })
+
+  it('leaves it to the lead to take a protected branch away', async () => {
+    const main = { repository: 'quay/timetable', branch: 'main' }
+    const wide = { repository: 'quay/timetable', branch: '*' }
+    await patch({ protectedBranches: [main] })
+    expect((await patch({ protectedBranches: [wide, main] })).status).toBe(200)
+    const refused = await patch({ protectedBranches: [wide], name: 'Half' })
+    expect([refused.status, refused.body.type]).toEqual([403, '/problems/role-missing'])
+    expect(refused.body.detail).toContain('main of quay/timetable')
+    expect(await read()).toMatchObject({ protectedBranches: [wide, main] })
+    expect((await read()).name).not.toBe('Half')
+    const byLead = await patch({ protectedBranches: [] }, test.people.lead)
+    expect(byLead.body.protectedBranches).toEqual([])
+  })
+
+  it('refuses patterns that name nothing', async () => {
+    const { status, body } = await patch({
+      protectedBranches: [
+        { repository: ' ', branch: 'main' },
+        { repository: 'a', branch: 'b\u0000' },
+        { repository: 'a' },
+      ],
+    })
+    expect([status, body.errors.map(({ pointer }: { pointer: string }) => pointer)]).toEqual([
+      422,
+      [
+        '/protectedBranches/0/repository',
+        '/protectedBranches/1/branch',
+        '/protectedBranches/2/branch',
+      ],
+    ])
+  })
+
+  it('leaves names and protected branches open under review', async () => {
+    await patch({ writeMode: 'review' })
+    const protectedBranches = [{ repository: 'quay/timetable', branch: 'main' }]
+    expect((await patch({ name: 'Ferries', protectedBranches })).status).toBe(200)
+  })
+
+  it('refuses the lead what is not level, write mode and protected branches', async () => {
     expect((await patch({ level: 'AAA' }, test.people.lead)).status).toBe(200)
     for (const body of [{ name: 'X' }, { p3Gates: true }, { disabledFloor: 2 }]) {
       expect((await patch(body, test.people.lead)).status).toBe(403)
