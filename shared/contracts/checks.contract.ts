@@ -75,12 +75,12 @@ const callerSchema = z
 const loggedSchema = z
   .strictObject({
     protected: z.boolean().meta({
-      description: 'Whether the branch is protected, so that the breach log follows it',
+      description: 'Whether the branch is protected: what it has and the head has not is logged',
     }),
     seen: z
       .int()
       .min(0)
-      .meta({ description: 'Findings that fall short, also those that newOnly calls known' }),
+      .meta({ description: 'Findings that fall short, also those that the head has' }),
     opened: z.int().min(0).meta({ description: 'Entries of the breach log opened or reopened' }),
     resolved: z.int().min(0).meta({ description: 'Entries of the breach log resolved' }),
   })

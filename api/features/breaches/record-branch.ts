@@ -40,6 +40,8 @@ export interface Seen {
   readonly findings: readonly Finding[]
   readonly evaluation: Evaluation
   readonly passes: boolean
+  /** What the head itself falls short in, by identity, with its ratios; asked for where the log follows. */
+  readonly onHead: () => ReadonlyMap<string, number>
 }
 
 /** A branch that was protected once is followed until its last entry is closed. */
@@ -95,9 +97,10 @@ async function stepsOf(breaches: BreachesRepository, { watch, seen, sighted, at 
   const identities = moves.map(({ identity }) => identity)
   const logged = await loggedAt(breaches, { systemId, place }, identities)
   const after = evaluation.resolved.model
+  const onHead = isProtected ? seen.onHead() : new Map<string, number>()
   return moves.flatMap((finding) => {
     const row = logged.get(finding.identity)
-    if (!isProtected && !lasts(row)) return []
+    if (!lasts(row) && !(isProtected && isOwn(finding.after, onHead))) return []
     const shift = { before: null, after, cause: 'edit' as const, at, seenAt: at }
     const step = stepOf(finding, row && stateIn(row), shift)
     return step === null ? [] : [{ finding, logged: row, step }]
@@ -105,6 +108,11 @@ async function stepsOf(breaches: BreachesRepository, { watch, seen, sighted, at 
 }
 
 const lasts = (row: BreachRow | undefined) => row !== undefined && row.status !== 'resolved'
+
+/** Whether it is the branch's own: what the head has as well, and no lower, is in the log as the head's. */
+const isOwn = (finding: Finding | undefined, onHead: ReadonlyMap<string, number>) =>
+  finding !== undefined &&
+  finding.ratio < (onHead.get(finding.identity) ?? Number.POSITIVE_INFINITY)
 
 const writingOf = ({ watch, seen, at }: Following): LogWriting => ({
   systemId: watch.systemId,

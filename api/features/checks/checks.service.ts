@@ -8,6 +8,7 @@ import type { NewId } from '#api/platform/ids.ts'
 import type { Transact } from '#api/repositories.ts'
 import type { Evaluation } from '#shared/checks/evaluation.ts'
 import type { Verdict } from '#shared/checks/model.ts'
+import { breachRatios, verdictOf } from '#shared/checks/verdict.ts'
 import type { CheckWire, createCheck, listChecks } from '#shared/contracts/checks.contract.ts'
 import { namesIn, presentAdvisory, presentFinding } from '#shared/contracts/present-finding.ts'
 import type { AnswerOf, ParsedOf } from '#shared/contracts/route.ts'
@@ -70,7 +71,7 @@ export function createChecksService(deps: ChecksDeps) {
         const number = await checks.takeNumber(system.id)
         await checks.insert({ ...row, number })
         if (watch === undefined) return
-        const seen = seenBy(row, { verdict, evaluation: measured.evaluation })
+        const seen = seenBy(row, { head, verdict, evaluation: measured.evaluation })
         await checks.setLogged(row.id, await sightings.record(repositories, watch, seen))
       })
       return { ...presentCheckSummary(await found(system, row.id)), ...findings }
@@ -148,7 +149,7 @@ type Kept = Pick<CheckRow, 'id' | 'commitSha' | 'callerUserId' | 'verdict'>
 /** What the check leaves of its branch. */
 const seenBy = (
   { id, commitSha, callerUserId, verdict: outcome }: Kept,
-  { verdict, evaluation }: { readonly verdict: Verdict; readonly evaluation: Evaluation },
+  { head, verdict, evaluation }: Pick<Outcome, 'head' | 'verdict'> & Pick<Seen, 'evaluation'>,
 ): Seen => ({
   checkId: id,
   commit: commitSha,
@@ -156,6 +157,7 @@ const seenBy = (
   findings: verdict.findings,
   evaluation,
   passes: outcome === 'pass',
+  onHead: () => breachRatios(verdictOf(head.evaluation, { include: 'not-pass' })),
 })
 
 function callerColumns(caller: Caller): Pick<CheckRow, 'callerUserId' | 'callerKeyId'> {

@@ -98,13 +98,28 @@ describe('a check of a protected branch', () => {
     expect(await logged()).toMatchObject([MAIN])
   })
 
-  it('logs what newOnly lets pass as known, and does not close it', async () => {
+  it('leaves what the head has as well, and no lower, to the entry of the head', async () => {
+    await system.editToken('soft', { value: '#aaaaaa' })
+    const answer = await check({})
+    expect(answer).toMatchObject({ verdict: 'fail', counts: { breach: 1 } })
+    expect(answer.logged).toEqual({ protected: true, seen: 1, opened: 0, resolved: 0 })
+    expect((await check({ newOnly: true })).logged).toEqual(answer.logged)
+    expect((await check({ tokens: { soft: dtcgHex('999999') } })).logged).toEqual(answer.logged)
+    expect(await logged()).toEqual([])
+    const lower = await check({ tokens: { soft: dtcgHex('bbbbbb') } })
+    expect(lower.logged).toMatchObject({ opened: 1 })
+    expect(await logged()).toMatchObject([{ status: 'open', rendered: { foreground: '#bbbbbb' } }])
+  })
+
+  it('leaves an entry open where newOnly lets it pass as known', async () => {
+    await check({ tokens: PALE })
     await system.editToken('soft', { value: '#aaaaaa' })
     const answer = await check({ newOnly: true })
     expect(answer).toMatchObject({ verdict: 'pass', counts: { known: 1 } })
-    expect(answer.logged).toEqual({ protected: true, seen: 1, opened: 1, resolved: 0 })
-    expect((await check({ newOnly: true })).logged).toMatchObject({ seen: 1, resolved: 0 })
+    expect(answer.logged).toMatchObject({ seen: 1, resolved: 0 })
     expect(await logged()).toMatchObject([{ status: 'open' }])
+    await system.editToken('soft', { value: '#666666' })
+    expect((await check({ newOnly: true })).logged).toMatchObject({ seen: 0, resolved: 1 })
   })
 
   it('logs a breach of a theme that only reports with gating false', async () => {
@@ -169,9 +184,8 @@ describe('a later check of the same branch', () => {
   it('closes what is open also where the branch is protected no longer, and opens nothing', async () => {
     await check({ tokens: PALE })
     await protect([])
-    await system.addToken('faint', '#cccccc')
-    await system.addPair({ foreground: 'faint', background: 'paper', use: 'text' })
-    const answer = await check({})
+    const own = { foreground: 'faint', background: 'paper', use: 'text' }
+    const answer = await check({ tokens: { faint: dtcgHex('cccccc') }, pairs: [own] })
     expect(answer.logged).toEqual({ protected: false, seen: 1, opened: 0, resolved: 1 })
     expect(await logged()).toMatchObject([{ foreground: 'soft', status: 'resolved' }])
     expect((await check({ tokens: PALE })).logged).toMatchObject({ opened: 0 })
