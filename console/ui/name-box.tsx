@@ -11,6 +11,9 @@ export function NameBox({
   names,
   fault,
   isDisabled = false,
+  isLabelHidden = false,
+  placeholder,
+  nothing = 'No token has this name.',
   onChange,
   className = '',
 }: {
@@ -19,6 +22,12 @@ export function NameBox({
   names: readonly string[]
   fault?: string | undefined
   isDisabled?: boolean
+  /** In a sentence, where the words around it say what it is. */
+  isLabelHidden?: boolean
+  /** What an empty field stands for. */
+  placeholder?: string
+  /** What to say where no name holds what is written. */
+  nothing?: string
   onChange: (name: string) => void
   className?: string
 }) {
@@ -43,10 +52,11 @@ export function NameBox({
       allowsEmptyCollection
       className={`min-w-0 ${className}`}
     >
-      <Label className="block text-12 text-ink-soft">{label}</Label>
+      <Label className={isLabelHidden ? 'sr-only' : 'block text-12 text-ink-soft'}>{label}</Label>
       <Input
         autoComplete="off"
         spellCheck={false}
+        placeholder={placeholder}
         aria-invalid={fault !== undefined}
         aria-describedby={fault === undefined ? undefined : faultId}
         onBlur={() => written !== undefined && take(written.trim())}
@@ -60,9 +70,7 @@ export function NameBox({
       <Popover offset={4} className="w-(--trigger-width) min-w-240 border border-ink bg-ground">
         <ListBox
           className="max-h-320 overflow-y-auto py-4 outline-none"
-          renderEmptyState={() => (
-            <p className="px-14 py-6 text-ink-soft">No token has this name.</p>
-          )}
+          renderEmptyState={() => <p className="px-14 py-6 text-ink-soft">{nothing}</p>}
         >
           {({ id }: { id: string }) => (
             <ListBoxItem
