@@ -9,13 +9,8 @@ import { contracts } from '#shared/contracts/contracts.ts'
 import { rolesWith, scopesWith } from '#shared/contracts/permissions.ts'
 import { PROBLEMS, type ProblemCode, problemSchema } from '#shared/contracts/problems.ts'
 import { type Contract, takesIdempotencyKey } from '#shared/contracts/route.ts'
-import {
-  createProblemResponses,
-  headerRef,
-  problemExample,
-  RATE_LIMIT,
-  REQUEST_ID,
-} from './problem-responses.ts'
+import { problemExample } from './problem-examples.ts'
+import { createProblemResponses, headerRef, RATE_LIMIT, REQUEST_ID } from './problem-responses.ts'
 
 const HEADERS = {
   'X-Request-Id': { description: 'Finds the line in the log', schema: { type: 'string' } },

@@ -1,28 +1,8 @@
 import type { OpenAPIRegistry } from '@asteasolutions/zod-to-openapi'
-import { type Problem, PROBLEMS, type ProblemCode } from '#shared/contracts/problems.ts'
+import { PROBLEMS, type ProblemCode } from '#shared/contracts/problems.ts'
 import { type Contract, problemsOf } from '#shared/contracts/route.ts'
 
 const MEDIA = 'application/problem+json'
-
-const WITH_POINTER: readonly ProblemCode[] = ['request-invalid', 'system-unresolvable']
-const WITH_PARAMETER: readonly ProblemCode[] = ['parameter-invalid', 'idempotency-key-reused']
-
-/** What a refusal looks like on the wire. */
-export function problemExample(code: ProblemCode): Problem {
-  const { status, title } = PROBLEMS[code]
-  const errors = WITH_POINTER.includes(code)
-    ? [{ pointer: '/values/dark/rest', detail: 'Expected a CSS colour' }]
-    : WITH_PARAMETER.includes(code)
-      ? [{ parameter: 'limit', detail: 'Expected a whole number' }]
-      : undefined
-  return {
-    type: `/problems/${code}`,
-    title,
-    status,
-    ...(errors === undefined ? {} : { errors }),
-    requestId: 'req_01kb2rz7y8e6k0s9d4m1p3q5t7',
-  }
-}
 
 export const headerRef = <N extends string>(name: N) =>
   ({ [name]: { $ref: `#/components/headers/${name}` } }) as Record<N, { $ref: string }>

@@ -4,7 +4,7 @@ import { describe, expect, it } from 'vitest'
 import * as z from 'zod'
 import { createDocument } from '#openapi/document.ts'
 import { contracts } from '#shared/contracts/contracts.ts'
-import { PROBLEMS } from '#shared/contracts/problems.ts'
+import { type Problem, PROBLEMS } from '#shared/contracts/problems.ts'
 import { type Contract, problemsOf } from '#shared/contracts/route.ts'
 
 /** @see https://spec.openapis.org/oas/v3.1.1 */
@@ -106,14 +106,11 @@ describe.each(cases)('%s', (_, contract) => {
 })
 
 it('answers 201 with the address of what was made, and both of a PUT that can make it', () => {
-  const made = contracts.map(operationOf).filter(({ responses }) => responses[201] !== undefined)
-  expect(made.map(({ operationId }) => operationId).sort()).toEqual([
-    'createKey',
-    'createPair',
-    'createSystem',
-    'createToken',
-    'putTheme',
-  ])
+  const makes = contracts.filter(
+    ({ success, precondition }) => success.status === 201 || precondition === 'create',
+  )
+  expect(makes.length).toBeGreaterThan(4)
+  const made = makes.map(operationOf)
   for (const { responses } of made) expect(responses[201]?.headers?.Location).toBeDefined()
   const put = made.find(({ operationId }) => operationId === 'putTheme')?.responses
   expect(put?.[200]?.content).toEqual(put?.[201]?.content)
@@ -134,6 +131,30 @@ it('answers examples of problems that keep to the schema', () => {
     expect(value).toMatchObject({ type: `/problems/${code}` })
     expect(faultsOf(schema, value)).toBe('')
   }
+})
+
+it('answers an example of every refusal of every operation, with what tells it from others', () => {
+  const refused = contracts.flatMap((contract) =>
+    Object.entries(operationOf(contract).responses)
+      .filter(([status]) => Number(status) >= 400)
+      .flatMap(([status, response]) => {
+        const media = resolve(response).content?.['application/problem+json']
+        return Object.keys(media?.examples ?? {}).map((code) => ({ status: Number(status), code }))
+      }),
+  )
+  expect(refused.length).toBeGreaterThan(contracts.length * 5)
+  for (const { status, code } of refused) {
+    expect(document.components.examples[code]?.value).toMatchObject({ status })
+  }
+  const said = (code: string) => document.components.examples[code]?.value as Problem
+  expect(said('precondition-failed')).toHaveProperty('current')
+  expect(said('role-missing')).toHaveProperty('roles')
+  expect(said('scope-missing')).toHaveProperty('scopes')
+  expect(said('request-too-large')).toHaveProperty('limitBytes')
+  for (const code of ['request-invalid', 'system-unresolvable'])
+    expect(said(code).errors?.[0]).toHaveProperty('pointer')
+  for (const code of ['parameter-invalid', 'precondition-required', 'media-type-unsupported'])
+    expect(said(code).errors?.[0]).toHaveProperty('parameter')
 })
 
 /** Two schemas under one name: the generator keeps the first without a word. */
