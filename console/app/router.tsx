@@ -62,6 +62,11 @@ const systemPages: RouteObject[] = [
     ErrorBoundary: PageTrouble,
   },
   {
+    path: 'sightings',
+    lazy: () => import('#console/routes/sightings-page.tsx'),
+    ErrorBoundary: PageTrouble,
+  },
+  {
     lazy: () => import('#console/routes/settings-frame.tsx'),
     children: settingsPages.map((page) => ({ ...page, ErrorBoundary: PageTrouble })),
   },

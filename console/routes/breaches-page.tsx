@@ -1,5 +1,5 @@
 import { useSuspenseInfiniteQuery, useSuspenseQuery } from '@tanstack/react-query'
-import { Suspense, useEffect, useMemo, useRef } from 'react'
+import { Suspense, useCallback, useEffect, useMemo, useRef } from 'react'
 import { type LoaderFunctionArgs, useParams, useSearchParams } from 'react-router-dom'
 import { paths } from '#console/app/paths.ts'
 import {
@@ -7,15 +7,17 @@ import {
   readBreachFilter,
   writeBreachFilter,
 } from '#console/features/breaches/breach-filter.ts'
-import { BreachHistory } from '#console/features/breaches/breach-history.tsx'
 import { BreachSentence } from '#console/features/breaches/breach-sentence.tsx'
 import { BreachTable } from '#console/features/breaches/breach-table.tsx'
 import { breachQueries } from '#console/features/breaches/breaches.queries.ts'
+import { memberQueries } from '#console/features/members/members.queries.ts'
 import { themeQueries } from '#console/features/themes/themes.queries.ts'
 import { queryClient } from '#console/lib/query-client.ts'
 import { WordButton } from '#console/ui/button.tsx'
 import { NothingHere, Waiting } from '#console/ui/page-states.tsx'
 import type { BreachWire } from '#shared/contracts/breaches.contract.ts'
+import { BreachPlaces } from './breach-places.tsx'
+import { OpenedBreach } from './opened-breach.tsx'
 import { useFrame } from './system-frame.tsx'
 
 export async function loader({ params, request }: LoaderFunctionArgs) {
@@ -23,6 +25,7 @@ export async function loader({ params, request }: LoaderFunctionArgs) {
   const filter = readBreachFilter(new URL(request.url).searchParams)
   await Promise.all([
     queryClient.ensureInfiniteQueryData(breachQueries.list(system, filter)),
+    queryClient.ensureQueryData(memberQueries.list(system)),
     id === undefined ? undefined : queryClient.ensureQueryData(breachQueries.one(system, id)),
   ])
   return null
@@ -33,15 +36,24 @@ export function Component() {
   const [search, setSearch] = useSearchParams()
   const filter = useMemo(() => readBreachFilter(search), [search])
   const { data: themes } = useSuspenseQuery(themeQueries.all(system))
+  const { data: members } = useSuspenseQuery(memberQueries.all(system))
   const log = useSuspenseInfiniteQuery(breachQueries.list(system, filter))
   const breaches = log.data.pages.flatMap((page) => page.body.items)
   const { total = 0, ever = 0 } = log.data.pages[0]?.body ?? {}
-  const setFilter = (next: BreachFilter) =>
-    setSearch(writeBreachFilter(next), { preventScrollReset: true })
+  const setFilter = useCallback(
+    (next: BreachFilter) => setSearch(writeBreachFilter(next), { preventScrollReset: true }),
+    [setSearch],
+  )
   return (
     <>
       <title>{`Breaches of ${system} · Dyewright`}</title>
-      <BreachSentence filter={filter} themes={themes.map(({ key }) => key)} onChange={setFilter}>
+      <BreachPlaces system={system} />
+      <BreachSentence
+        filter={filter}
+        themes={themes.map(({ key }) => key)}
+        people={members}
+        onChange={setFilter}
+      >
         {total} of {ever} ever entered
       </BreachSentence>
       {breaches.length === 0 && id === undefined ? (
@@ -106,11 +118,7 @@ function FramedLog({
         under={
           opened !== undefined && (
             <Suspense fallback={<Waiting>Reading its history</Waiting>}>
-              <BreachHistory
-                system={system}
-                id={opened}
-                tokenHref={(name) => paths.token(system, name)}
-              />
+              <OpenedBreach key={opened} system={system} id={opened} />
             </Suspense>
           )
         }

@@ -68,6 +68,7 @@ export function Component() {
   const context = useMemo<FrameContext>(() => ({ lead, view: setView }), [])
   const isInSettings = useIsIn(SETTINGS)
   const isAmongPairs = useIsIn(PAIRS)
+  const isAmongBreaches = useIsIn(BREACHES)
   const token = useMatch('/systems/:system/tokens/:name')
   const theme = useMatch('/systems/:system/themes/:theme')
   const pair = useMatch('/systems/:system/pairs/:id')
@@ -99,7 +100,12 @@ export function Component() {
               count: settings.counts.pairs,
               holdsPage: isAmongPairs,
             },
-            { href: paths.breaches(system), text: 'Breaches', count: settings.counts.openBreaches },
+            {
+              href: paths.breaches(system),
+              text: 'Breaches',
+              count: settings.counts.openBreaches,
+              holdsPage: isAmongBreaches,
+            },
             { href: paths.settings(system), text: 'Settings', holdsPage: isInSettings },
           ]}
         />
@@ -112,6 +118,7 @@ export function Component() {
 }
 
 const SETTINGS = new Set(['settings', 'themes', 'new-theme', 'rules', 'members', 'keys'])
+const BREACHES = new Set(['breaches', 'sightings'])
 const PAIRS = new Set(['pairs', 'pair-sheet', 'new-pair'])
 
 /** Whether the page stands under a place of the navigation, beside which it has a place of its own. */

@@ -2,7 +2,7 @@ import { stateInWords } from '#shared/checks/finding-words.ts'
 import type { ReactNode } from 'react'
 import { PairSample } from '#console/ui/pair-sample.tsx'
 import { RatioColumns } from '#console/ui/ratio-text.tsx'
-import { BreachLink, type BreachRowProps } from './breach-row.tsx'
+import { BreachAside, BreachLink, type BreachRowProps } from './breach-row.tsx'
 import { outcomeOf } from './breach-words.ts'
 import { BreachStatus } from './breach-status.tsx'
 
@@ -15,6 +15,7 @@ export function BreachLine({ under, ...row }: BreachRowProps & { under: ReactNod
         <div className="flex items-baseline justify-between gap-12 pt-4">
           <span className="min-w-0">
             <BreachLink {...row} />
+            <BreachAside breach={breach} />
           </span>
           <span className="shrink-0">
             <BreachStatus breach={breach} />

@@ -6,7 +6,7 @@ import type { RowLinkProps } from '#console/ui/row-walk.ts'
 import type { BreachWire } from '#shared/contracts/breaches.contract.ts'
 import type { BreachColumns } from './breach-columns.ts'
 import { BreachStatus } from './breach-status.tsx'
-import { firstSeenInWords, outcomeOf } from './breach-words.ts'
+import { asideInWords, firstSeenInWords, outcomeOf } from './breach-words.ts'
 
 export interface BreachRowProps {
   readonly breach: BreachWire
@@ -37,6 +37,7 @@ export function BreachRow({ columns, ...row }: BreachRowProps & { columns: Breac
       </td>
       <td>
         <BreachLink {...row} />
+        <BreachAside breach={breach} />
       </td>
       {columns.where && (
         <td className="truncate font-normal! text-ink-soft">
@@ -64,6 +65,18 @@ export function BreachRow({ columns, ...row }: BreachRowProps & { columns: Breac
         <td className="truncate font-normal! text-ink-soft">{breach.assignee?.name}</td>
       )}
     </tr>
+  )
+}
+
+/** Where it was seen beside the head, and that it is short in Display P3. */
+export function BreachAside({ breach }: { breach: BreachWire }) {
+  const words = asideInWords(breach)
+  return (
+    words !== undefined && (
+      <span className="block pr-10 pb-4 text-12 font-normal break-words text-ink-soft">
+        {words}
+      </span>
+    )
   )
 }
 

@@ -3,6 +3,7 @@ import { formatDay } from '#console/lib/format.ts'
 import { ratioPosition } from '#console/ui/ratio-scale.ts'
 import type { BreachEventWire, BreachWire } from '#shared/contracts/breaches.contract.ts'
 import { stepsOf } from './breach-time.ts'
+import { isMeasured } from './breach-words.ts'
 
 const LEFT = 50
 const WIDTH = 554
@@ -20,9 +21,10 @@ export function BreachSteps({
   events: readonly BreachEventWire[]
 }) {
   const now = breach.resolvedAt ?? new Date().toISOString()
-  const steps = stepsOf(events, now)
-  const highest = Math.max(breach.required, ...events.map(({ ratio }) => ratio)) * MARGIN
-  const lowest = Math.min(breach.required, ...events.map(({ ratio }) => ratio)) / MARGIN
+  const measured = events.filter(isMeasured)
+  const steps = stepsOf(measured, now)
+  const highest = Math.max(breach.required, ...measured.map(({ ratio }) => ratio)) * MARGIN
+  const lowest = Math.min(breach.required, ...measured.map(({ ratio }) => ratio)) / MARGIN
   const y = (ratio: number) => {
     const [low, high] = [ratioPosition(lowest, 1), ratioPosition(highest, 1)]
     return Math.round(TOP + ((high - ratioPosition(ratio, 1)) / (high - low)) * HIGH)
@@ -77,6 +79,8 @@ export function BreachSteps({
 }
 
 function summaryOf(breach: BreachWire, events: readonly BreachEventWire[]): string {
-  const moves = events.map((event) => `${truncateRatio(event.ratio, 2)} on ${formatDay(event.at)}`)
+  const moves = events
+    .filter(isMeasured)
+    .map((event) => `${truncateRatio(event.ratio, 2)} on ${formatDay(event.at)}`)
   return `Ratio over time against ${breach.required}: ${moves.join(', ')}`
 }

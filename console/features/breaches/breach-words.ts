@@ -29,6 +29,15 @@ export function originInWords(breach: BreachWire): string {
   return [breach.repository, breach.branch].filter((part) => part !== undefined).join(', ')
 }
 
+/** What is out of the ordinary about where or how it was measured; nothing for sRGB on the head. */
+export function asideInWords(breach: BreachWire): string | undefined {
+  const parts = [
+    breach.origin === 'ci' ? `seen in ${originInWords(breach)}` : undefined,
+    breach.basis === 'p3' ? 'short in Display P3, outside WCAG’s definition' : undefined,
+  ].filter((part) => part !== undefined)
+  return parts.length === 0 ? undefined : parts.join('; ')
+}
+
 /** How the last measured ratio is to be read. */
 export function outcomeOf({ status }: BreachWire) {
   return status === 'open' ? 'breach' : status === 'waived' ? 'waived' : 'pass'
@@ -45,7 +54,15 @@ const EVENTS: { readonly [kind in BreachEventWire['kind']]: string } = {
   commented: 'Commented',
 }
 
+/** Whether a check made it: what people make of a breach leaves its measures as they are. */
+export function isMeasured({ kind }: BreachEventWire): boolean {
+  return kind !== 'assigned' && kind !== 'unassigned' && kind !== 'commented'
+}
+
 export function eventInWords(event: BreachEventWire, breach: BreachWire): string {
+  const person = event.assignee?.name ?? 'somebody'
+  if (event.kind === 'assigned') return `Assigned to ${person}`
+  if (event.kind === 'unassigned') return `Taken off ${person}`
   const closed = event.kind === 'resolved' && breach.closingReason
   return closed && closed !== 'fixed' ? `Closed, ${CLOSED[closed]}` : EVENTS[event.kind]
 }
