@@ -3,6 +3,8 @@ import { createBreachesService } from './features/breaches/breaches.service.ts'
 import { createSightingsService } from './features/breaches/sightings.service.ts'
 import { createChecksReads } from './features/checks/checks.reads.ts'
 import { createChecksService } from './features/checks/checks.service.ts'
+import { createImportsService } from './features/imports/imports.service.ts'
+import type { JobsService } from './features/jobs/jobs.service.ts'
 import { createPairsService } from './features/pairs/pairs.service.ts'
 import { createHeadBeginService } from './features/revisions/head-begin.service.ts'
 import { createHeadWriteService } from './features/revisions/head-write.service.ts'
@@ -20,12 +22,13 @@ interface Reach {
   readonly reads: Repositories
   readonly transact: Transact<keyof Repositories>
   readonly findAccess: SystemsDeps['findAccess']
+  readonly jobs: Pick<JobsService, 'start'>
 }
 
 /** Wires what a revision governs, around the one head and the one write. */
 export function createGovernedServices(
   { newId, database, writeGuards }: Platform,
-  { reads, transact, findAccess }: Reach,
+  { reads, transact, findAccess, jobs }: Reach,
 ) {
   const heads = createHeadsService({ heads: reads.heads, versions: reads.versions })
   const sightings = createSightingsService({ reads, newId })
@@ -48,6 +51,7 @@ export function createGovernedServices(
     pairs: createPairsService({ heads, writes, newId }),
     themes: createThemesService({ heads, writes, newId }),
     rules: createRulesService({ heads, writes }),
+    imports: createImportsService({ heads, writes, jobs, newId }),
     checks: createChecksService({
       heads,
       reads: createChecksReads(database.db),

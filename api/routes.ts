@@ -1,6 +1,7 @@
 import { mountBreaches } from './features/breaches/breaches.routes.ts'
 import { mountChecks } from './features/checks/checks.routes.ts'
 import { mountHealth } from './features/health/health.routes.ts'
+import { mountImports } from './features/imports/imports.routes.ts'
 import { mountJobs } from './features/jobs/jobs.routes.ts'
 import { mountKeys } from './features/keys/keys.routes.ts'
 import { mountMembers } from './features/members/members.routes.ts'
@@ -24,6 +25,7 @@ export function mountAll(router: ApiRouter, services: Services): void {
   mountPairs(router, services.pairs)
   mountThemes(router, services.themes)
   mountRules(router, services.rules)
+  mountImports(router, services.imports)
   mountChecks(router, services.checks)
   mountBreaches(router, services)
   mountRevisions(router, services.revisions)

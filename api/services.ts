@@ -51,7 +51,7 @@ export function createServices(platform: Platform, config: Config, expectedMigra
     problemOf,
   })
   return {
-    ...createGovernedServices(platform, { reads, transact, findAccess }),
+    ...createGovernedServices(platform, { reads, transact, findAccess, jobs }),
     accounts: createAccountsService({ transact, reads, newId, passwords }),
     sessions: createSessionsService({ transact, reads, newId, passwords }),
     keys: createKeysService({ transact, reads, newId }),

@@ -1,6 +1,7 @@
 import * as breaches from './breaches.contract.ts'
 import * as checks from './checks.contract.ts'
 import * as health from './health.contract.ts'
+import * as imports from './imports.contract.ts'
 import * as jobs from './jobs.contract.ts'
 import * as keys from './keys.contract.ts'
 import * as members from './members.contract.ts'
@@ -25,6 +26,7 @@ export const contracts: readonly Contract[] = [
   pairs,
   themes,
   rules,
+  imports,
   checks,
   breaches,
   sightings,

@@ -82,6 +82,13 @@ export const importSchema = z
     }),
     changes: z.array(importChangeSchema).max(MOST_LISTED),
     notes: z.array(importNoteSchema).max(MOST_LISTED),
+    weakens: z
+      .array(z.strictObject({ code: z.string(), detail: z.string() }))
+      .max(MOST_LISTED)
+      .meta({
+        description:
+          'What asks for less afterwards: a maintainer is refused for it. A dry run is not, it tells.',
+      }),
     effect: effectSchema.meta({
       description:
         'The revision that it made or, on a dry run, was merged over, and how the verdict moves',
@@ -100,10 +107,9 @@ export const importSchema = z
       .strictObject({
         changes: z.int().min(1).optional(),
         notes: z.int().min(1).optional(),
+        weakens: z.int().min(1).optional(),
         findings: z.int().min(1).optional(),
         advisories: z.int().min(1).optional(),
-        opened: z.int().min(1).optional(),
-        resolved: z.int().min(1).optional(),
       })
       .optional()
       .meta({ description: `Entries besides the ${MOST_LISTED} that a list has at most` }),
@@ -133,6 +139,7 @@ export const importExample = {
     },
   ],
   notes: [],
+  weakens: [],
   effect: { ...effectExample, verdict: 'fail', opened: [findingExample] },
   check: {
     verdict: 'fail',

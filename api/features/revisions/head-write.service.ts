@@ -106,13 +106,19 @@ export function createHeadWriteService(deps: HeadWriteDeps) {
     },
 
     /** What a write would come to on the head as it stands: nothing is written, nor asked whether it may be. */
-    async preview({ system, decide, replaces }: Previewed): Promise<Written> {
+    async preview({ system, decide, replaces }: Previewed): Promise<Preview> {
       const before = await deps.heads.current(system.id)
       const { head, next } = planEdits(before, { decision: decide(before), replaces })
-      if (next === undefined) return unmoved(head)
-      return { head: next.head, effect: effectOf({ before, after: next.head, moved: next.moved }) }
+      if (next === undefined) return { ...unmoved(head), weakenings: [] }
+      const effect = effectOf({ before, after: next.head, moved: next.moved })
+      return { head: next.head, effect, weakenings: next.weakened.weakenings }
     },
   }
+}
+
+/** What a write would come to, and what of it asks for approval. */
+export interface Preview extends Written {
+  readonly weakenings: readonly Weakening[]
 }
 type Previewed = Pick<HeadWrite, 'system' | 'decide' | 'replaces'>
 export type HeadWriteService = ReturnType<typeof createHeadWriteService>
