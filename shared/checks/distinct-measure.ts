@@ -8,7 +8,7 @@ import {
 } from '#shared/color/simulate.ts'
 import { createPixel, paintLayer } from './layers.ts'
 import type { DistinctSet } from './model.ts'
-import { type ResolvedSystem, STATE_COUNT } from './resolved.ts'
+import { type ResolvedCell, type ResolvedSystem, STATE_COUNT } from './resolved.ts'
 
 /** How members are seen: as they are, or under a deficiency. */
 export const DISTINCT_VIEWS = ['plain', ...DEFICIENCIES] as const
@@ -84,19 +84,23 @@ export interface MeasuredDistinctSet {
   readonly couples: DistinctMeasure
 }
 
+/** A set in one theme, and where its colours are read. */
+export interface SetInTheme {
+  readonly set: DistinctSet
+  /** Theme position. */
+  readonly theme: number
+  /** The theme's ground, by token id. */
+  readonly ground: string
+  readonly cellsOf: (token: string) => readonly ResolvedCell[]
+}
+
 /** Measures a set in one theme: its tokens at rest, composited on the theme's ground. */
-export function measureSetInTheme(
-  resolved: ResolvedSystem,
-  set: DistinctSet,
-  theme: number,
-): DistinctMeasure {
-  const at = theme * STATE_COUNT
-  const renderedOf = (id: string) => resolved.tokens.get(id)!.cells[at]!.color.rendered
-  const ground = renderedOf(resolved.model.themes[theme]!.ground)
+export function measureSetInTheme({ set, theme, ground, cellsOf }: SetInTheme): DistinctMeasure {
+  const renderedOf = (id: string) => cellsOf(id)[theme * STATE_COUNT]!.color.rendered
   return measureDistinctSet(
     set.tokens.map((id) => {
       const color = createPixel()
-      paintLayer(color, ground, 'srgb')
+      paintLayer(color, renderedOf(ground), 'srgb')
       paintLayer(color, renderedOf(id), 'srgb')
       return { name: id, color }
     }),
@@ -106,11 +110,12 @@ export function measureSetInTheme(
 /** Measures every distinct set in every theme. Reported beside a verdict, never part of it. */
 export function measureDistinctSets(resolved: ResolvedSystem): MeasuredDistinctSet[] {
   const { distinctSets = [], themes } = resolved.model
+  const cellsOf = (id: string) => resolved.tokens.get(id)!.cells
   return distinctSets.flatMap((set) =>
-    themes.map(({ id }, theme) => ({
+    themes.map(({ id, ground }, theme) => ({
       set,
       theme: id,
-      couples: measureSetInTheme(resolved, set, theme),
+      couples: measureSetInTheme({ set, theme, ground, cellsOf }),
     })),
   )
 }

@@ -4,7 +4,7 @@ import { isRoleUnset, type ModelGraph } from './model-graph.ts'
 import type { ModelFault, ThemeModel } from './model.ts'
 
 /** What a theme's ink must have to its ground. */
-const SPAN_RATIO = 4.5
+export const SPAN_RATIO = 4.5
 
 /** Parents that are missing or lead back to themselves, and a base that has one. */
 function parentFaults(graph: ModelGraph): ModelFault[] {
@@ -68,6 +68,14 @@ export function themeFaults(graph: ModelGraph): ModelFault[] {
   return [...parentFaults(graph), ...roles, ...lower]
 }
 
+/** The ratio of ink on ground as they render. */
+export function spanRatio(ground: RenderedColor, ink: RenderedColor): number {
+  return contrastRatio(
+    relativeLuminance(ground.r, ground.g, ground.b),
+    relativeLuminance(ink.r, ink.g, ink.b),
+  )
+}
+
 /** What is wrong with a theme's ground and ink as they render: both opaque, and 4.5:1 apart. */
 export function spanFaults(
   theme: ThemeModel,
@@ -80,10 +88,7 @@ export function spanFaults(
     const detail = `The ${role} of theme ${theme.key} is translucent`
     faults.push({ code: 'theme-span', detail, theme: theme.id, token: theme[role] })
   }
-  const ratio = contrastRatio(
-    relativeLuminance(ground.r, ground.g, ground.b),
-    relativeLuminance(ink.r, ink.g, ink.b),
-  )
+  const ratio = spanRatio(ground, ink)
   if (ratio < SPAN_RATIO) {
     const shown = (Math.floor(ratio * 100) / 100).toFixed(2)
     const detail = `Ink on the ground of theme ${theme.key} is ${shown}:1, less than ${SPAN_RATIO}:1`

@@ -5,7 +5,7 @@ import { createModelGraph, type ModelGraph, stateAt } from './model-graph.ts'
 import type { DerivedState, ModelFault } from './model.ts'
 import { type ResolvedCell, type ResolvedSystem, STATE_COUNT } from './resolved.ts'
 import { largestStep } from './state-rule.ts'
-import { spanFaults } from './theme-faults.ts'
+import { SPAN_RATIO, spanFaults, spanRatio } from './theme-faults.ts'
 import { computeValue, type ValuePass } from './value-computation.ts'
 import { edgesOf, type ValuePlace } from './value-edges.ts'
 import { nodeAt, planValue, type ValuePlan } from './value-plan.ts'
@@ -29,6 +29,8 @@ export interface ValueProbe {
   readonly tokens: readonly string[]
   /** Sets the colour, computes what hangs on it, and answers the faults that it makes. */
   set(color: Oklch): readonly ModelFault[]
+  /** How far ground and ink of a theme that can move lie too near: required over measured, at least 0. */
+  spanShortage(): number
 }
 
 function graphOf(resolved: ResolvedSystem): ModelGraph {
@@ -132,7 +134,11 @@ export function createValueProbe(
     const at = graph.tokenAt.get(id)!
     return rows[at] ?? knownRow(at)
   }
-  const renderedOf = (id: string, at: number) => cellsOf(id)[at * STATE_COUNT]!.color.rendered
+  const spanOf = (at: number) => {
+    const { ground, ink } = model.themes[at]!
+    const renderedOf = (id: string) => cellsOf(id)[at * STATE_COUNT]!.color.rendered
+    return { ground: renderedOf(ground), ink: renderedOf(ink) }
+  }
   return {
     cellsOf,
     reaches: (id, offset) =>
@@ -150,9 +156,17 @@ export function createValueProbe(
         rows[at.token]![offsetOf(at)] = computeValue(pass, plan, at)!
       }
       return spans.flatMap((at) => {
-        const { ground, ink } = model.themes[at]!
-        return spanFaults(model.themes[at]!, renderedOf(ground, at), renderedOf(ink, at))
+        const { ground, ink } = spanOf(at)
+        return spanFaults(model.themes[at]!, ground, ink)
       })
     },
+    spanShortage: () =>
+      Math.max(
+        0,
+        ...spans.map((at) => {
+          const { ground, ink } = spanOf(at)
+          return SPAN_RATIO / spanRatio(ground, ink)
+        }),
+      ),
   }
 }
