@@ -1,5 +1,14 @@
 import { execFile } from 'node:child_process'
-import { mkdir, mkdtemp, rm, symlink, writeFile, copyFile } from 'node:fs/promises'
+import {
+  copyFile,
+  mkdir,
+  mkdtemp,
+  readdir,
+  readFile,
+  rm,
+  symlink,
+  writeFile,
+} from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { dirname, join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
@@ -29,11 +38,25 @@ const PLANTS: readonly Plant[] = [
   imports('shared/checks/a.ts', '#shared/contracts/fields.ts'),
   imports('shared/formats/a.ts', '#shared/client/client.ts'),
   imports('shared/contracts/a.ts', '#shared/client/client.ts'),
+  imports('shared/checks/b.ts', '#shared/formats/sarif.ts'),
+  ...['client', 'color', 'checks', 'formats', 'contracts'].flatMap((folder) =>
+    ['mysql2/promise', 'pino', '@tanstack/react-query', 'drizzle-orm'].map((from, at) =>
+      imports(`shared/${folder}/io-${at}.ts`, from),
+    ),
+  ),
+  // tables and document: on shared alone
+  imports('drizzle/schema/a.ts', '#api/errors.ts'),
+  imports('openapi/a.ts', '#api/http/route.ts'),
+  imports('openapi/b.ts', '#console/app/paths.ts'),
   // api: routes → service → rules; SQL in repositories only
   imports('api/a.ts', '#console/lib/api.ts'),
   imports('api/b.ts', '#openapi/document.ts'),
   imports('api/http/a.ts', 'drizzle-orm'),
   imports('api/http/b.ts', '#drizzle/schema/tokens.ts'),
+  imports('api/http/c.ts', '#api/features/tokens/tokens.service.ts'),
+  imports('api/platform/a.ts', '#api/features/tokens/tokens.service.ts'),
+  imports('api/platform/b.ts', '#api/http/route.ts'),
+  imports('api/platform/c.ts', '#console/lib/format.ts'),
   imports('api/features/tokens/tokens.routes.ts', '#drizzle/schema/tokens.ts'),
   imports('api/features/tokens/more.routes.ts', '#api/features/pairs/pairs.repository.ts'),
   imports('api/features/tokens/reading.routes.ts', './tokens.reads.ts'),
@@ -57,6 +80,10 @@ const PLANTS: readonly Plant[] = [
   imports('console/app/b.tsx', 'node:path'),
   imports('console/features/tokens/a.tsx', '#console/features/pairs/pair-row.tsx'),
   imports('console/features/tokens/b.tsx', '#console/routes/tokens-page.tsx'),
+  ...['features/tokens/a.ts', 'routes/a.tsx', 'app/a.ts'].map((from, at) =>
+    imports(`console/lib/of-console-${at}.ts`, `#console/${from}`),
+  ),
+  imports('console/lib/a.ts', '#api/errors.ts'),
   imports('console/ui/a.tsx', '@tanstack/react-query'),
   imports('console/ui/b.tsx', '#shared/client/client.ts'),
   ...['api', 'drizzle', 'openapi', 'scripts', 'tests'].map((folder) =>
@@ -130,6 +157,9 @@ const lint = (folder: string) =>
     })
   })
 
+const SOURCES = ['api', 'console', 'drizzle', 'openapi', 'scripts', 'shared', 'tests']
+const MOST_LINES = 300
+
 const CYCLE = ['shared/color/cycle-a.ts', 'shared/color/cycle-b.ts'] as const
 
 const plant = async (file: string, source: string) => {
@@ -166,6 +196,25 @@ describe('the lint of the layout', () => {
 
   it('refuses a cycle of imports', () => {
     expect([...(flagged.get(CYCLE[0]) ?? [])]).toContain('lint/suspicious/noImportCycles')
+  })
+
+  it('leaves no source more than 300 lines, counted where the lint does not', async () => {
+    // The lint counts no line within a template or a block comment.
+    const root = join(import.meta.dirname, '../..')
+    const lists = await Promise.all(
+      SOURCES.map(async (folder) =>
+        (await readdir(join(root, folder), { recursive: true })).map((name) => join(folder, name)),
+      ),
+    )
+    const files = lists.flat().filter((name) => /\.(tsx?|mjs|css)$/.test(name))
+    expect(files.length).toBeGreaterThan(300)
+    const long = await Promise.all(
+      files.map(async (name) => {
+        const text = await readFile(join(root, name), 'utf8')
+        return text.split('\n').length - 1 > MOST_LINES ? [name] : []
+      }),
+    )
+    expect(long.flat()).toEqual([])
   })
 
   it('leaves a clean file alone', () => {
