@@ -57,8 +57,7 @@ function runUpload(request: Request, response: Response, limitBytes: number): Pr
   const upload = multer({
     storage: multer.memoryStorage(),
     limits: {
-      // The parser calls a file too large that has exactly as many bytes as its limit.
-      fileSize: limitBytes + 1,
+      fileSize: limitBytes,
       files: 1,
       fields: 0,
       parts: 1,
