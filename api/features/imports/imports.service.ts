@@ -144,7 +144,8 @@ function requireFor(system: SystemAccess, edits: GovernedEdits): void {
   const isEdited = (items: { put?: readonly unknown[]; remove?: readonly unknown[] } = {}) =>
     [items.put, items.remove].some((list) => list !== undefined && list.length > 0)
   const needed: [boolean, Permission][] = [
-    [isEdited(pairs) || isEdited(distinctSets), 'pairs:write'],
+    [isEdited(pairs), 'pairs:write'],
+    [isEdited(distinctSets), 'distinct-sets:write'],
     [themes !== undefined, 'themes:write'],
     [states !== undefined || prefixes !== undefined, 'rules:write'],
     [settings !== undefined, 'settings:write'],
