@@ -5,6 +5,7 @@ import { createChecksReads } from './features/checks/checks.reads.ts'
 import { createChecksService } from './features/checks/checks.service.ts'
 import { createImportsService } from './features/imports/imports.service.ts'
 import type { JobsService } from './features/jobs/jobs.service.ts'
+import { createDistinctSetsService } from './features/distinct-sets/distinct-sets.service.ts'
 import { createPairsService } from './features/pairs/pairs.service.ts'
 import { createHeadBeginService } from './features/revisions/head-begin.service.ts'
 import { createHeadWriteService } from './features/revisions/head-write.service.ts'
@@ -49,6 +50,7 @@ export function createGovernedServices(
     systems: createSystemsService({ reads, transact, begins, writes, newId, findAccess }),
     tokens: createTokensService({ heads, writes, newId }),
     pairs: createPairsService({ heads, writes, newId }),
+    distinctSets: createDistinctSetsService({ heads, writes, newId }),
     themes: createThemesService({ heads, writes, newId }),
     rules: createRulesService({ heads, writes }),
     imports: createImportsService({ heads, writes, jobs, newId }),

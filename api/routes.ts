@@ -1,5 +1,6 @@
 import { mountBreaches } from './features/breaches/breaches.routes.ts'
 import { mountChecks } from './features/checks/checks.routes.ts'
+import { mountDistinctSets } from './features/distinct-sets/distinct-sets.routes.ts'
 import { mountHealth } from './features/health/health.routes.ts'
 import { mountImports } from './features/imports/imports.routes.ts'
 import { mountJobs } from './features/jobs/jobs.routes.ts'
@@ -25,6 +26,7 @@ export function mountAll(router: ApiRouter, services: Services): void {
   mountPairs(router, services.pairs)
   mountThemes(router, services.themes)
   mountRules(router, services.rules)
+  mountDistinctSets(router, services.distinctSets)
   mountImports(router, services.imports)
   mountChecks(router, services.checks)
   mountBreaches(router, services)

@@ -32,10 +32,11 @@ export const PROBLEM_ADVICE: Readonly<Record<ProblemCode, string>> = {
   'token-name-taken':
     'Names of tokens are unique, also after Unicode normalisation. Choose another name.',
   'token-in-use':
-    'A pair, an alias, a derivation, a rule or a theme uses the token; detail names them. Change those first.',
+    'A pair, an alias, a derivation, a rule, a theme or a distinct set uses the token; detail names them. Change those first.',
   'token-locked': 'The token is locked. Unlock it in an edit of its own, then change it.',
   'pair-already-declared':
     'A pair with the same colours, use, relation, backdrop, group and product is declared already. Edit that one.',
+  'distinct-set-name-taken': 'Names of distinct sets are unique. Choose another name.',
   'theme-in-use': 'Another theme derives from it, or it is the base. Change that first.',
   'css-name-collision':
     'Two token names come to the same CSS custom property; detail names both. Rename one.',

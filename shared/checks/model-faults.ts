@@ -100,6 +100,14 @@ function pairFaults(graph: ModelGraph, pair: PairModel): ModelFault[] {
   return faults
 }
 
+function setFaults({ model, tokenAt }: ModelGraph): ModelFault[] {
+  return (model.distinctSets ?? []).flatMap(({ id, name, tokens }) =>
+    tokens
+      .filter((token) => !tokenAt.has(token))
+      .map((token) => missing(token, `The distinct set ${name}`, { distinctSet: id })),
+  )
+}
+
 /** Everything wrong with a model that can be seen before a colour is computed, in the model's order. */
 export function modelFaults(graph: ModelGraph): ModelFault[] {
   return [
@@ -107,10 +115,11 @@ export function modelFaults(graph: ModelGraph): ModelFault[] {
     ...scopeFaults(graph),
     ...graph.model.tokens.flatMap((token) => tokenFaults(graph, token)),
     ...graph.model.pairs.flatMap((pair) => pairFaults(graph, pair)),
+    ...setFaults(graph),
   ]
 }
 
-/** Faults that an edit can bring: of rules that name no token of their own, and of some tokens and pairs. */
+/** Faults that an edit can bring: of rules and sets that name tokens, and of some tokens and pairs. */
 export function editFaults(
   graph: ModelGraph,
   edited: { readonly tokens: readonly TokenModel[]; readonly pairs: readonly PairModel[] },
@@ -119,5 +128,6 @@ export function editFaults(
     ...scopeFaults(graph),
     ...edited.tokens.flatMap((token) => tokenFaults(graph, token)),
     ...edited.pairs.flatMap((pair) => pairFaults(graph, pair)),
+    ...setFaults(graph),
   ]
 }

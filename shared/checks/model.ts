@@ -279,5 +279,6 @@ export interface ModelFault {
   readonly token?: string
   readonly theme?: string
   readonly pair?: string
+  readonly distinctSet?: string
   readonly state?: State
 }

@@ -1,5 +1,6 @@
 import * as breaches from './breaches.contract.ts'
 import * as checks from './checks.contract.ts'
+import * as distinctSets from './distinct-sets.contract.ts'
 import * as health from './health.contract.ts'
 import * as imports from './imports.contract.ts'
 import * as jobs from './jobs.contract.ts'
@@ -26,6 +27,7 @@ export const contracts: readonly Contract[] = [
   pairs,
   themes,
   rules,
+  distinctSets,
   imports,
   checks,
   breaches,

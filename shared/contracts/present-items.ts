@@ -1,4 +1,5 @@
-import type { PairModel, SystemSettings } from '#shared/checks/model.ts'
+import type { DistinctSet, PairModel, SystemSettings } from '#shared/checks/model.ts'
+import type { DistinctSetWire } from './distinct-sets.contract.ts'
 import type { PairWire } from './pairs.contract.ts'
 import type { GovernedSystem, GovernedTheme, GovernedToken } from '#shared/checks/governed-model.ts'
 import type { SystemWire } from './systems.contract.ts'
@@ -104,3 +105,13 @@ export function presentSettings(
   const { level, p3, p3Gates, disabledFloor } = settings
   return { level, p3, p3Gates, disabledFloor: disabledFloor ?? null }
 }
+
+/** A distinct set as an answer gives it. */
+export const presentDistinctSet = (
+  { id, name, tokens }: DistinctSet,
+  names: ModelNames,
+): Omit<DistinctSetWire, 'etag'> => ({
+  id,
+  name,
+  tokens: tokens.map((token) => names.tokenName(token)),
+})

@@ -25,6 +25,7 @@ export const PROBLEMS = {
   'token-in-use': { status: 409, title: 'The token is used elsewhere' },
   'token-locked': { status: 409, title: 'The token is locked' },
   'pair-already-declared': { status: 409, title: 'This pair is declared already' },
+  'distinct-set-name-taken': { status: 409, title: 'Another distinct set has this name' },
   'theme-in-use': { status: 409, title: 'The theme is used elsewhere' },
   'css-name-collision': { status: 409, title: 'Two tokens come to one CSS name' },
   'idempotency-key-running': { status: 409, title: 'The first request with this key still runs' },

@@ -14,6 +14,7 @@ import {
   wholeNumberSchema,
 } from './fields.ts'
 import { countsSchema, engineSchema, verdictSchema } from './findings.ts'
+import { distinctSetSchema } from './distinct-sets.contract.ts'
 import { pairSchema } from './pairs.contract.ts'
 import { READ_PROBLEMS } from './problems.ts'
 import { defineContract } from './route.ts'
@@ -40,7 +41,7 @@ export const revisionSchema = z
     ...summary,
     edits: z.array(
       z.strictObject({
-        item: z.enum(['token', 'pair', 'theme', 'rules', 'settings']),
+        item: z.enum(['token', 'pair', 'theme', 'rules', 'settings', 'distinct-set']),
         operation: z.enum(['added', 'edited', 'removed']),
         id: idSchema,
         name: z.string(),
@@ -72,6 +73,7 @@ export const revisionSchema = z
       }),
     ),
     pairs: z.array(pairSchema.omit({ etag: true })),
+    distinctSets: z.array(distinctSetSchema.omit({ etag: true })),
   })
   .meta({ id: 'Revision', description: 'A system as it stood, whole' })
 
@@ -132,6 +134,7 @@ export const getRevision = defineContract({
       themes: [],
       tokens: [],
       pairs: [],
+      distinctSets: [],
     },
   },
   problems: READ_PROBLEMS,

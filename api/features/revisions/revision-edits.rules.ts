@@ -26,6 +26,7 @@ export interface Touched {
   readonly themes: readonly (Span & { readonly id: string; readonly name: string })[]
   readonly rules: readonly (Span & { readonly prefix: string })[]
   readonly settings: readonly Span[]
+  readonly distinctSets: readonly (Span & { readonly id: string; readonly name: string })[]
 }
 
 /**
@@ -65,6 +66,7 @@ function versionsOf(touched: Touched, names: ModelNames): TouchedVersion[] {
       name: `${nameOf(foreground)} on ${nameOf(background)}`,
     })),
     ...touched.themes.map((version) => ({ item: 'theme' as const, ...version })),
+    ...touched.distinctSets.map((version) => ({ item: 'distinct-set' as const, ...version })),
     ...touched.rules.map(({ prefix, fromRevision }) => ({
       item: 'rules' as const,
       id: 'rules',

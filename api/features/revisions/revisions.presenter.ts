@@ -1,6 +1,7 @@
 import type * as z from 'zod'
 import type { SystemIndex } from '#shared/contracts/governed-system.ts'
 import {
+  presentDistinctSet,
   presentPair,
   presentSettings,
   presentTheme,
@@ -48,5 +49,6 @@ export function presentRevision(
     themes: model.themes.map((theme) => presentTheme(theme, { model, names })),
     tokens: model.tokens.map((token) => presentToken(token, names)),
     pairs: model.pairs.map((pair) => presentPair(pair, names)),
+    distinctSets: (model.distinctSets ?? []).map((set) => presentDistinctSet(set, names)),
   }
 }

@@ -1,5 +1,6 @@
 import { and, desc, eq, lt, or } from 'drizzle-orm'
 import type { Executor } from '#api/platform/database.ts'
+import { distinctSetVersions } from '#drizzle/schema/distinct-sets.ts'
 import { pairVersions } from '#drizzle/schema/pairs.ts'
 import { revisions } from '#drizzle/schema/revisions.ts'
 import { ruleVersions } from '#drizzle/schema/rules.ts'
@@ -37,7 +38,7 @@ export function createRevisionsReads(db: Executor) {
 
     /** Costs what the revision touched: both ends of a version are indexed. */
     async versionsTouched(systemId: string, number: number) {
-      const [tokens, pairs, themes, rules, settings] = await Promise.all([
+      const [tokens, pairs, themes, rules, settings, distinctSets] = await Promise.all([
         db
           .select({ id: tokenVersions.tokenId, name: tokenVersions.name, ...spanOf(tokenVersions) })
           .from(tokenVersions)
@@ -63,8 +64,16 @@ export function createRevisionsReads(db: Executor) {
           .select(spanOf(settingVersions))
           .from(settingVersions)
           .where(touchedBy(settingVersions, systemId, number)),
+        db
+          .select({
+            id: distinctSetVersions.setId,
+            name: distinctSetVersions.name,
+            ...spanOf(distinctSetVersions),
+          })
+          .from(distinctSetVersions)
+          .where(touchedBy(distinctSetVersions, systemId, number)),
       ])
-      return { tokens, pairs, themes, rules, settings }
+      return { tokens, pairs, themes, rules, settings, distinctSets }
     },
   }
 }
@@ -83,6 +92,7 @@ type Versions =
   | typeof themeVersions
   | typeof ruleVersions
   | typeof settingVersions
+  | typeof distinctSetVersions
 
 const spanOf = <Table extends Versions>({ fromRevision, toRevision }: Table) => ({
   fromRevision,

@@ -18,7 +18,7 @@ function itemDigest(item: object): string {
  * Names the whole state of a revision: SHA-256, hexadecimal, over one line an item, `<kind> <digest>\n`, where
  * the digest is the SHA-256 of the item's canonical JSON (RFC 8785) as the governed system holds it, other
  * items by id. Lines come in the order settings, states, prefix rules, themes (base first), tokens (ledger
- * order), pairs (order of declaration); last, where there is one, `other` with the SHA-256 of the text kept verbatim.
+ * order), pairs (order of declaration), distinct sets (in the order they were made); last, where there is one, `other` with the SHA-256 of the text kept verbatim.
  */
 export function stateDigest(model: GovernedSystem): string {
   const lines: [kind: string, items: readonly object[]][] = [
@@ -28,6 +28,7 @@ export function stateDigest(model: GovernedSystem): string {
     ['theme', model.themes],
     ['token', model.tokens],
     ['pair', model.pairs],
+    ['distinct-set', model.distinctSets ?? []],
   ]
   const hash = createHash('sha256')
   for (const [kind, items] of lines) {

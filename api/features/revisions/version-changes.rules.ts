@@ -1,4 +1,10 @@
-import type { PairModel, PrefixRules, StateRules, SystemSettings } from '#shared/checks/model.ts'
+import type {
+  DistinctSet,
+  PairModel,
+  PrefixRules,
+  StateRules,
+  SystemSettings,
+} from '#shared/checks/model.ts'
 import type { GovernedSystem, GovernedTheme, GovernedToken } from '#shared/checks/governed-model.ts'
 import { canonicalJson } from '#shared/formats/canonical-json.ts'
 
@@ -19,6 +25,7 @@ export interface VersionChanges {
   readonly themes: ItemChanges<GovernedTheme>
   /** By prefix. */
   readonly prefixes: ItemChanges<PrefixRules>
+  readonly distinctSets: ItemChanges<DistinctSet>
   readonly states?: StateRules
   readonly settings?: SystemSettings
   /** `null`: nothing is left of it. */
@@ -36,6 +43,10 @@ export function changesBetween(before: GovernedSystem, after: GovernedSystem): V
       keyOf: ({ prefix }) => prefix,
       placed: true,
     }),
+    distinctSets: itemChanges(before.distinctSets ?? [], after.distinctSets ?? [], {
+      keyOf: byId,
+      placed: false,
+    }),
     ...(isSame(before.states, after.states) ? {} : { states: after.states }),
     ...(isSame(before.settings, after.settings) ? {} : { settings: after.settings }),
     ...(before.remainder === after.remainder ? {} : { remainder: after.remainder ?? null }),
@@ -44,8 +55,8 @@ export function changesBetween(before: GovernedSystem, after: GovernedSystem): V
 
 /** Whether nothing changes. */
 export function isEmpty(changes: VersionChanges): boolean {
-  const { tokens, pairs, themes, prefixes, states, settings, remainder } = changes
-  const moved = [tokens, pairs, themes, prefixes].some(
+  const { tokens, pairs, themes, prefixes, distinctSets, states, settings, remainder } = changes
+  const moved = [tokens, pairs, themes, prefixes, distinctSets].some(
     ({ closed, opened }) => closed.length > 0 || opened.length > 0,
   )
   return !moved && states === undefined && settings === undefined && remainder === undefined

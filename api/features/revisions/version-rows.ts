@@ -1,5 +1,6 @@
-import type { PairModel, PrefixRules } from '#shared/checks/model.ts'
+import type { DistinctSet, PairModel, PrefixRules } from '#shared/checks/model.ts'
 import type { GovernedTheme, GovernedToken } from '#shared/checks/governed-model.ts'
+import type { DistinctSetDefinition } from '#drizzle/schema/distinct-sets.ts'
 import type { PairDefinition } from '#drizzle/schema/pairs.ts'
 import type { ThemeDefinition } from '#drizzle/schema/themes.ts'
 import type { TokenDefinition } from '#drizzle/schema/tokens.ts'
@@ -64,6 +65,25 @@ export function themeFromRow({ themeId, key, gating, definition }: ThemeRow): Go
 export function themeToRow({ id, key, gating, ...definition }: GovernedTheme): ThemeRow {
   return { themeId: id, key, gating, definition }
 }
+
+/** The versions' own columns of a distinct set. */
+export interface SetRow {
+  readonly setId: string
+  readonly name: string
+  readonly definition: DistinctSetDefinition
+}
+
+export const setFromRow = ({ setId, name, definition }: SetRow): DistinctSet => ({
+  id: setId,
+  name,
+  tokens: definition.tokens,
+})
+
+export const setToRow = ({ id, name, tokens }: DistinctSet): SetRow => ({
+  setId: id,
+  name,
+  definition: { tokens },
+})
 
 export function prefixToRow({ prefix, ...definition }: PrefixRules) {
   return { prefix, definition }

@@ -1,15 +1,28 @@
-import { and, asc, between, eq, getTableColumns, gt, lte, or } from 'drizzle-orm'
-import type { SystemEdits } from '#shared/checks/edits.ts'
-import type { PrefixRules, StateRules, SystemSettings } from '#shared/checks/model.ts'
-import type { GovernedEdits, GovernedSystem, GovernedTheme } from '#shared/checks/governed-model.ts'
+import { and, asc, between, eq, getTableColumns, gt, lte, or, type SQL, sql } from 'drizzle-orm'
+import { alias, type MySqlColumn } from 'drizzle-orm/mysql-core'
+import type { ItemEdits } from '#shared/checks/edits.ts'
+import type {
+  DistinctSet,
+  PairModel,
+  PrefixRules,
+  StateRules,
+  SystemSettings,
+} from '#shared/checks/model.ts'
+import type {
+  GovernedEdits,
+  GovernedSystem,
+  GovernedTheme,
+  GovernedToken,
+} from '#shared/checks/governed-model.ts'
 import type { Executor } from '#api/platform/database.ts'
+import { distinctSetVersions } from '#drizzle/schema/distinct-sets.ts'
 import { documentVersions } from '#drizzle/schema/documents.ts'
 import { pairs, pairVersions } from '#drizzle/schema/pairs.ts'
 import { ruleVersions } from '#drizzle/schema/rules.ts'
 import { settingVersions } from '#drizzle/schema/systems.ts'
 import { themeVersions } from '#drizzle/schema/themes.ts'
 import { tokens, tokenVersions } from '#drizzle/schema/tokens.ts'
-import { pairFromRow, themeFromRow, tokenFromRow } from './version-rows.ts'
+import { pairFromRow, setFromRow, themeFromRow, tokenFromRow } from './version-rows.ts'
 
 type Versions =
   | typeof tokenVersions
@@ -18,6 +31,7 @@ type Versions =
   | typeof ruleVersions
   | typeof settingVersions
   | typeof documentVersions
+  | typeof distinctSetVersions
 
 /** Revisions after `after` up to and with `upTo`. */
 export interface RevisionSpan {
@@ -32,8 +46,9 @@ export function createVersionsReads(db: Executor) {
     settings: await settingsAt(db, systemId, revision),
     ...(await rulesAt(db, systemId, revision)),
     themes: await themesAt(db, systemId, revision),
-    tokens: await tokensAt(db, systemId, revision),
-    pairs: await pairsAt(db, systemId, revision),
+    tokens: await readTokens(db, inForce(tokenVersions, systemId, revision)),
+    pairs: await readPairs(db, inForce(pairVersions, systemId, revision)),
+    ...(await distinctSetsAt(db, systemId, revision)),
     ...(await remainderAt(db, systemId, revision)),
   })
   const editsIn = (span: RevisionSpan): Promise<GovernedEdits> => readEdits(db, span)
@@ -64,24 +79,42 @@ const ended = (table: Versions, { systemId, after, upTo }: RevisionSpan) =>
     lte(table.fromRevision, after),
   )
 
-async function tokensAt(db: Executor, systemId: string, revision: number) {
+/** Reads the versions that a condition finds, in the order of their items. */
+type ReadItems<Item> = (db: Executor, found: SQL | undefined) => Promise<Item[]>
+
+const readTokens: ReadItems<GovernedToken> = async (db, found) => {
   const rows = await db
     .select(tokenColumns)
     .from(tokenVersions)
     .innerJoin(tokens, eq(tokens.id, tokenVersions.tokenId))
-    .where(inForce(tokenVersions, systemId, revision))
+    .where(found)
     .orderBy(asc(tokens.position))
   return rows.map(tokenFromRow)
 }
 
-async function pairsAt(db: Executor, systemId: string, revision: number) {
+const readPairs: ReadItems<PairModel> = async (db, found) => {
   const rows = await db
     .select(pairColumns)
     .from(pairVersions)
     .innerJoin(pairs, eq(pairs.id, pairVersions.pairId))
-    .where(inForce(pairVersions, systemId, revision))
+    .where(found)
     .orderBy(asc(pairs.position))
   return rows.map(pairFromRow)
+}
+
+const readDistinctSets: ReadItems<DistinctSet> = async (db, found) => {
+  const rows = await db
+    .select(setColumns)
+    .from(distinctSetVersions)
+    .where(found)
+    .orderBy(setMadeAt, asc(distinctSetVersions.setId))
+  return rows.map(setFromRow)
+}
+
+/** A system without any has no such member. */
+async function distinctSetsAt(db: Executor, systemId: string, revision: number) {
+  const distinctSets = await readDistinctSets(db, inForce(distinctSetVersions, systemId, revision))
+  return distinctSets.length > 0 ? { distinctSets } : {}
 }
 
 async function themesAt(
@@ -145,8 +178,9 @@ async function remainderAt(
 async function readEdits(db: Executor, span: RevisionSpan): Promise<GovernedEdits> {
   const { systemId, upTo } = span
   return {
-    tokens: await tokenEdits(db, span),
-    pairs: await pairEdits(db, span),
+    tokens: await itemEdits(db, span, TOKENS),
+    pairs: await itemEdits(db, span, PAIRS),
+    distinctSets: await itemEdits(db, span, DISTINCT_SETS),
     ...((await isTouched(db, themeVersions, span))
       ? { themes: await themesAt(db, systemId, upTo) }
       : {}),
@@ -160,32 +194,21 @@ async function readEdits(db: Executor, span: RevisionSpan): Promise<GovernedEdit
   }
 }
 
-async function tokenEdits(db: Executor, span: RevisionSpan): Promise<GovernedEdits['tokens']> {
-  const put = await db
-    .select(tokenColumns)
-    .from(tokenVersions)
-    .innerJoin(tokens, eq(tokens.id, tokenVersions.tokenId))
-    .where(begun(tokenVersions, span))
-    .orderBy(asc(tokens.position))
-  const gone = await db
-    .select({ id: tokenVersions.tokenId })
-    .from(tokenVersions)
-    .where(ended(tokenVersions, span))
-  return { put: put.map(tokenFromRow), remove: gone.map(({ id }) => id) }
+interface ItemKind<Item> {
+  readonly versions: typeof tokenVersions | typeof pairVersions | typeof distinctSetVersions
+  /** The item's id in its versions. */
+  readonly id: MySqlColumn & { readonly _: { readonly data: string } }
+  readonly read: ReadItems<Item>
 }
 
-async function pairEdits(db: Executor, span: RevisionSpan): Promise<SystemEdits['pairs']> {
-  const put = await db
-    .select(pairColumns)
-    .from(pairVersions)
-    .innerJoin(pairs, eq(pairs.id, pairVersions.pairId))
-    .where(begun(pairVersions, span))
-    .orderBy(asc(pairs.position))
-  const gone = await db
-    .select({ id: pairVersions.pairId })
-    .from(pairVersions)
-    .where(ended(pairVersions, span))
-  return { put: put.map(pairFromRow), remove: gone.map(({ id }) => id) }
+async function itemEdits<Item>(
+  db: Executor,
+  span: RevisionSpan,
+  { versions, id, read }: ItemKind<Item>,
+): Promise<ItemEdits<Item>> {
+  const put = await read(db, begun(versions, span))
+  const gone = await db.select({ id }).from(versions).where(ended(versions, span))
+  return { put, remove: gone.map((row) => row.id) }
 }
 
 async function isTouched(db: Executor, table: Versions, span: RevisionSpan): Promise<boolean> {
@@ -207,4 +230,21 @@ const pairColumns = {
   backgroundTokenId,
   use,
   definition: pairVersions.definition,
+}
+
+const { setId } = getTableColumns(distinctSetVersions)
+const setColumns = {
+  setId,
+  name: distinctSetVersions.name,
+  definition: distinctSetVersions.definition,
+}
+const earlier = alias(distinctSetVersions, 'earlier')
+const setMadeAt = sql`(select min(${earlier.fromRevision}) from ${distinctSetVersions} earlier where ${earlier.systemId} = ${distinctSetVersions.systemId} and ${earlier.setId} = ${distinctSetVersions.setId})`
+
+const TOKENS: ItemKind<GovernedToken> = { versions: tokenVersions, id: tokenId, read: readTokens }
+const PAIRS: ItemKind<PairModel> = { versions: pairVersions, id: pairId, read: readPairs }
+const DISTINCT_SETS: ItemKind<DistinctSet> = {
+  versions: distinctSetVersions,
+  id: setId,
+  read: readDistinctSets,
 }

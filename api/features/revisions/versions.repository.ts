@@ -4,6 +4,7 @@ import type { PairModel, SystemSettings } from '#shared/checks/model.ts'
 import { declarationOf } from '#shared/checks/pair-declaration.ts'
 import type { Executor } from '#api/platform/database.ts'
 import { STILL_LIVE } from '#drizzle/schema/columns.ts'
+import { distinctSets, distinctSetVersions } from '#drizzle/schema/distinct-sets.ts'
 import { documentVersions } from '#drizzle/schema/documents.ts'
 import { pairs, pairVersions } from '#drizzle/schema/pairs.ts'
 import { ruleVersions } from '#drizzle/schema/rules.ts'
@@ -11,7 +12,7 @@ import { settingVersions } from '#drizzle/schema/systems.ts'
 import { themes, themeVersions } from '#drizzle/schema/themes.ts'
 import { tokens, tokenVersions } from '#drizzle/schema/tokens.ts'
 import type { VersionChanges } from './version-changes.rules.ts'
-import { pairToRow, prefixToRow, themeToRow, tokenToRow } from './version-rows.ts'
+import { pairToRow, prefixToRow, setToRow, themeToRow, tokenToRow } from './version-rows.ts'
 
 /** The revision that versions begin and end with. */
 export interface Turn {
@@ -28,6 +29,7 @@ export function createVersionsRepository(db: Executor) {
       await openThemes(db, turn, changes.themes)
       await openPairs(db, turn, changes.pairs)
       await openRules(db, turn, changes)
+      await openDistinctSets(db, turn, changes.distinctSets)
       if (changes.settings) await openSettings(db, turn, changes.settings)
       if (changes.remainder !== undefined) await replaceRemainder(db, turn, changes.remainder)
     },
@@ -64,6 +66,10 @@ async function closeVersions(db: Executor, { systemId, revision }: Turn, changes
   if (theme.closed.length > 0) {
     const which = inArray(themeVersions.themeId, [...theme.closed])
     await db.update(themeVersions).set(end).where(live(themeVersions, which))
+  }
+  if (changes.distinctSets.closed.length > 0) {
+    const which = inArray(distinctSetVersions.setId, [...changes.distinctSets.closed])
+    await db.update(distinctSetVersions).set(end).where(live(distinctSetVersions, which))
   }
   const prefixes =
     prefix.closed.length > 0 ? inArray(ruleVersions.prefix, [...prefix.closed]) : null
@@ -144,6 +150,20 @@ async function openRules(db: Executor, turn: Turn, { prefixes, states }: Version
       .insert(ruleVersions)
       .values({ ...begin(turn), scope: 'system', definition: { states } })
   }
+}
+
+async function openDistinctSets(
+  db: Executor,
+  turn: Turn,
+  { opened, added }: VersionChanges['distinctSets'],
+) {
+  if (opened.length === 0) return
+  if (added.length > 0) {
+    await db.insert(distinctSets).values(added.map((id) => ({ id, systemId: turn.systemId })))
+  }
+  await db
+    .insert(distinctSetVersions)
+    .values(opened.map(({ item }) => ({ ...begin(turn), ...setToRow(item) })))
 }
 
 const openSettings = (db: Executor, turn: Turn, definition: SystemSettings) =>

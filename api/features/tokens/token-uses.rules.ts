@@ -3,7 +3,15 @@ import type { GovernedSystem, GovernedToken } from '#shared/checks/governed-mode
 
 /** Something that would be left without a token that it names. */
 export interface TokenUse {
-  readonly as: 'pair' | 'alias' | 'derivation' | 'rule' | 'ground' | 'ink' | 'replacement'
+  readonly as:
+    | 'pair'
+    | 'alias'
+    | 'derivation'
+    | 'rule'
+    | 'ground'
+    | 'ink'
+    | 'replacement'
+    | 'distinct-set'
   /** The names of what uses it. */
   readonly by: string
 }
@@ -18,6 +26,9 @@ export function usesOf(model: GovernedSystem, id: string): readonly TokenUse[] {
       ...(theme.ground === id ? [{ as: 'ground' as const, by: `theme ${theme.key}` }] : []),
       ...(theme.ink === id ? [{ as: 'ink' as const, by: `theme ${theme.key}` }] : []),
     ]),
+    ...(model.distinctSets ?? []).flatMap((set): TokenUse[] =>
+      set.tokens.includes(id) ? [{ as: 'distinct-set', by: set.name }] : [],
+    ),
   ]
 }
 
@@ -43,6 +54,7 @@ const LABELS: Record<TokenUse['as'], string> = {
   ground: 'as ground of',
   ink: 'as ink of',
   replacement: 'as replacement of',
+  'distinct-set': 'in distinct sets:',
 }
 
 function pairUses(model: GovernedSystem, id: string): TokenUse[] {

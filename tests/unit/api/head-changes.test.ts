@@ -101,6 +101,26 @@ describe('changesBetween', () => {
   })
 })
 
+describe('changesBetween, of distinct sets', () => {
+  it('answers those that come, change and go', () => {
+    const set = { id: 's', name: 'Series', tokens: ['x', 'y'] }
+    const withSet: GovernedSystem = { ...SYSTEM, distinctSets: [set] }
+    const made = changesBetween(SYSTEM, withSet)
+    expect(made.distinctSets).toMatchObject({ added: ['s'], closed: [] })
+    expect(isEmpty(made)).toBe(false)
+    const renamed = { ...withSet, distinctSets: [{ ...set, name: 'Lines' }] }
+    expect(changesBetween(withSet, renamed).distinctSets).toMatchObject({
+      added: [],
+      closed: ['s'],
+    })
+    expect(changesBetween(withSet, SYSTEM).distinctSets).toEqual({
+      opened: [],
+      added: [],
+      closed: ['s'],
+    })
+  })
+})
+
 describe('stateDigest', () => {
   it('answers the same name for the same state, however its members are ordered', () => {
     const reordered = {
@@ -123,6 +143,8 @@ describe('stateDigest', () => {
       { ...SYSTEM, tokens: [{ ...first, description: 'told' }, ...others] },
       { ...SYSTEM, tokens: [{ ...first, locked: true }, ...others] },
       { ...SYSTEM, pairs: [] },
+      { ...SYSTEM, distinctSets: [{ id: 's', name: 'Series', tokens: ['x', 'y'] }] },
+      { ...SYSTEM, distinctSets: [{ id: 's', name: 'Series', tokens: ['y', 'x'] }] },
     ]
     expect(new Set(states.map(stateDigest)).size).toBe(states.length)
   })

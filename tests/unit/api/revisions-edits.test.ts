@@ -1,7 +1,14 @@
 import { describe, expect, it } from 'vitest'
 import { editsOf, type Touched } from '#api/features/revisions/revision-edits.rules.ts'
 
-const NOTHING: Touched = { tokens: [], pairs: [], themes: [], rules: [], settings: [] }
+const NOTHING: Touched = {
+  tokens: [],
+  pairs: [],
+  themes: [],
+  rules: [],
+  settings: [],
+  distinctSets: [],
+}
 const names = {
   tokenName: (id: string) => (id === 'tok_a' ? 'ink' : id),
   themeKey: (id: string) => id,

@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest'
 import type { SourceValue, SystemModel } from '#shared/checks/model.ts'
+import { recheck } from '#shared/checks/recheck.ts'
 import { resolveSystem } from '#shared/checks/resolve-system.ts'
 import { pair, system, theme, token, value } from './model-builder.ts'
-import { faultsOf, hexAt } from './reading.ts'
+import { evaluate, faultsOf, hexAt } from './reading.ts'
 
 const codes = (model: SystemModel) => faultsOf(model).map(({ code }) => code)
 
@@ -174,5 +175,20 @@ describe('faults', () => {
       'reference-missing p',
       'reference-missing p',
     ])
+  })
+
+  it('refuses a distinct set whose token is missing, also where an edit takes it away', () => {
+    const set = { id: 's', name: 'Series', tokens: ['ink', 'gone'] }
+    const missing = [{ code: 'reference-missing', distinctSet: 's' }]
+    expect(faultsOf({ ...system(), distinctSets: [set] })).toMatchObject(missing)
+    const gone = token('gone', '#777')
+    const whole = evaluate({ ...system({ tokens: [gone] }), distinctSets: [set] })
+    const edits = [
+      { tokens: { remove: ['gone'] } },
+      { distinctSets: { put: [{ ...set, tokens: ['ink', 'lost'] }] } },
+    ]
+    for (const edit of edits) {
+      expect(recheck(whole, edit)).toMatchObject({ ok: false, faults: missing })
+    }
   })
 })
