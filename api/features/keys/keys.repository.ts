@@ -22,6 +22,22 @@ export type KeyRow = Awaited<ReturnType<KeysRepository['list']>>[number]
 /** In force by the database's clock. */
 const inForce = and(isNull(apiKeys.revokedAt), sql`${apiKeys.expiresAt} > utc_timestamp(3)`)
 
+/** What a list shows of a key: never its hash. */
+const shownColumns = {
+  id: apiKeys.id,
+  name: apiKeys.name,
+  kind: apiKeys.kind,
+  scopes: apiKeys.scopes,
+  hint: apiKeys.hint,
+  owner: { id: users.id, name: users.name },
+  createdAt: apiKeys.createdAt,
+  expiresAt: apiKeys.expiresAt,
+  lastUsedAt: apiKeys.lastUsedAt,
+}
+
+/** When a use is noted: at most once a minute. */
+const IS_STALE = sql`coalesce(${apiKeys.lastUsedAt} < utc_timestamp(3) - interval 1 minute, true)`
+
 export const createKeysRepository = (db: Executor) => ({
   insert: async ({ days, ...key }: NewKey): Promise<void> => {
     await db
@@ -31,17 +47,7 @@ export const createKeysRepository = (db: Executor) => ({
 
   list: (systemId: string, only: { id?: string; ownerUserId?: string } = {}) =>
     db
-      .select({
-        id: apiKeys.id,
-        name: apiKeys.name,
-        kind: apiKeys.kind,
-        scopes: apiKeys.scopes,
-        hint: apiKeys.hint,
-        owner: { id: users.id, name: users.name },
-        createdAt: apiKeys.createdAt,
-        expiresAt: apiKeys.expiresAt,
-        lastUsedAt: apiKeys.lastUsedAt,
-      })
+      .select(shownColumns)
       .from(apiKeys)
       .innerJoin(users, eq(users.id, apiKeys.ownerUserId))
       .where(
@@ -63,7 +69,7 @@ export const createKeysRepository = (db: Executor) => ({
         scopes: apiKeys.scopes,
         userId: users.id,
         name: users.name,
-        isStale: sql<number>`coalesce(${apiKeys.lastUsedAt} < utc_timestamp(3) - interval 1 minute, 1)`,
+        isStale: sql<number>`${IS_STALE}`,
       })
       .from(apiKeys)
       .innerJoin(users, eq(users.id, apiKeys.ownerUserId))
@@ -82,11 +88,20 @@ export const createKeysRepository = (db: Executor) => ({
     return row
   },
 
+  /** Asked again by the statement: of requests that come at once one writes. */
   touch: async (id: string): Promise<void> => {
-    await db.update(apiKeys).set({ lastUsedAt: sql`utc_timestamp(3)` }).where(eq(apiKeys.id, id))
+    await db
+      .update(apiKeys)
+      .set({ lastUsedAt: sql`utc_timestamp(3)` })
+      .where(and(eq(apiKeys.id, id), IS_STALE))
   },
 
-  revoke: async (id: string): Promise<void> => {
-    await db.update(apiKeys).set({ revokedAt: sql`utc_timestamp(3)` }).where(eq(apiKeys.id, id))
+  /** @returns false where somebody has revoked it already */
+  revoke: async (id: string): Promise<boolean> => {
+    const [{ affectedRows }] = await db
+      .update(apiKeys)
+      .set({ revokedAt: sql`utc_timestamp(3)` })
+      .where(and(eq(apiKeys.id, id), isNull(apiKeys.revokedAt)))
+    return affectedRows === 1
   },
 })

@@ -82,8 +82,7 @@ export const createKeysService = ({ transact, reads, newId }: KeysDependencies) 
   revoke: (system: SystemAccess, id: string): Promise<void> =>
     transact(async ({ keys, audit }) => {
       const [row] = await keys.list(system.id, { id, ...ownOnlyOf(system) })
-      if (row === undefined) throw new AppError('not-found')
-      await keys.revoke(id)
+      if (row === undefined || !(await keys.revoke(id))) throw new AppError('not-found')
       await audit.append({
         chain: system.id,
         actor: actorOf(system.caller),
