@@ -103,21 +103,3 @@ it.each([
 ])('refuses the cookie %s', async (cookie) => {
   await supertest(test.app).get('/v1/me').set('Cookie', cookie).expect(401)
 })
-
-it('ends at sign-out, for that session alone', async () => {
-  const [first, second] = [await freshSession(), await freshSession()]
-  const { headers } = await first.agent.post('/v1/sign-out').expect(204)
-  expect(String(headers['set-cookie'])).toMatch(/dyewright=;.*Expires=Thu, 01 Jan 1970/)
-  await first.agent.get('/v1/me').expect(401)
-  await second.agent.get('/v1/me').expect(200)
-})
-
-it('refuses the cookie that was good before the sign-out', async () => {
-  const answer = await supertest(test.app)
-    .post('/v1/sign-in')
-    .send({ email: emailOf('engineer'), password: TEST_PASSWORD })
-  const cookie = String(answer.headers['set-cookie']?.[0]).split(';')[0] ?? ''
-  await supertest(test.app).get('/v1/me').set('Cookie', cookie).expect(200)
-  await supertest(test.app).post('/v1/sign-out').set('Cookie', cookie).expect(204)
-  await supertest(test.app).get('/v1/me').set('Cookie', cookie).expect(401)
-})
