@@ -1,6 +1,7 @@
 import { afterAll, beforeAll, expect, it } from 'vitest'
 import { createTestApp, type TestApp } from '#tests/support/app.ts'
 import { emailOf } from '#tests/support/people.ts'
+import { createSampleSystem } from '#tests/support/sample-system.ts'
 
 let test: TestApp
 beforeAll(async () => {
@@ -26,6 +27,56 @@ it('takes effect at once, for who comes and for who goes', async () => {
   await test.people.stranger.get(PATH).expect(200)
   await put(body.etag, before).expect(200)
   await test.people.stranger.get(PATH).expect(404)
+})
+
+it('leaves who stays a member since the day they came, also in another role', async () => {
+  const { pool } = test.service.platform.database
+  await pool.query('update memberships set created_at = created_at - interval 100 day')
+  const before = await read()
+  const items = (await wanted()).map(({ email }: { email: string }) => ({
+    email,
+    role: email === emailOf('engineer') ? 'maintainer' : 'engineer',
+  }))
+  const stranger = { email: emailOf('stranger'), role: 'engineer' }
+  const { body } = await put(before.etag, [...items, stranger]).expect(200)
+  const since = ({ items: all }: { items: { email: string; since: string }[] }) =>
+    new Map(all.map((member) => [member.email, member.since]))
+  const [was, is] = [since(before), since(body)]
+  for (const [email, at] of was) expect(is.get(email)).toBe(at)
+  expect(Date.parse(is.get(stranger.email) ?? '')).toBeGreaterThan(
+    Math.max(...[...was.values()].map(Date.parse)),
+  )
+  const restored = before.items.map(({ email, role }: Record<string, string>) => ({ email, role }))
+  await put(body.etag, restored).expect(200)
+})
+
+it('leaves the history of who goes: an assignment and comments keep their name', async () => {
+  const { admin, lead, otherMaintainer } = test.people
+  const system = await createSampleSystem(test)
+  await system.addToken('soft', '#aaaaaa')
+  await system.addPair({ foreground: 'soft', background: 'paper', use: 'text' })
+  const [breach] = await system.breaches()
+  const url = `${system.url}/breaches/${breach?.id}`
+  const { body: members } = await admin.get(`${system.url}/members`).expect(200)
+  const isLeaving = ({ email }: { email: string }) => email === emailOf('otherMaintainer')
+  const { id } = members.items.find(isLeaving)
+  const assign = () => lead.patch(url).set('If-Match', '*').send({ assignee: id })
+  await assign().expect(200)
+  await otherMaintainer.post(`${url}/comments`).send({ body: 'On it' }).expect(201)
+  const before = (await lead.get(url).expect(200)).body
+  const stay = members.items.flatMap(({ email, role }: { email: string; role: string }) =>
+    isLeaving({ email }) ? [] : [{ email, role }],
+  )
+  await admin
+    .put(`${system.url}/members`)
+    .set('If-Match', members.etag)
+    .send({ items: stay })
+    .expect(200)
+  await otherMaintainer.get(url).expect(404)
+  expect((await lead.get(url).expect(200)).body).toEqual(before)
+  expect(before).toMatchObject({ assignee: { name: 'Pelle Strand' } })
+  await lead.patch(url).set('If-Match', '*').send({ assignee: null }).expect(200)
+  await assign().expect(422)
 })
 
 it('refuses an edit that names no version with 428, and a stale one with 412 and what is now', async () => {
