@@ -28,10 +28,7 @@ beforeAll(async () => {
   await system.editToken('text.late', { value: '#cccccc' })
   await system.editToken('text.late', { value: '#777777' })
   const { pool } = test.service.platform.database
-  await pool.query('update systems set protected_branches = ? where `key` = ?', [
-    JSON.stringify([SOURCE]),
-    system.url.split('/').at(-1),
-  ])
+  await system.patchSettings({ protectedBranches: [SOURCE] })
   await system.check({
     tokens: { 'new ink': dtcgHex('dddddd') },
     pairs: [{ foreground: 'new ink', background: 'paper', use: 'text' }],

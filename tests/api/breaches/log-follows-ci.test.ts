@@ -23,13 +23,8 @@ beforeEach(async () => {
   await protect([{ repository: '*', branch: 'main' }])
 })
 
-async function protect(branches: readonly object[]): Promise<void> {
-  await test.service.platform.database.pool.query(
-    'update systems set protected_branches = ? where `key` = ?',
-    [JSON.stringify(branches), system.url.split('/').at(-1)],
-  )
-}
-
+const protect = (protectedBranches: readonly object[]) =>
+  system.patchSettings({ protectedBranches })
 const logged = () => system.breaches(ALL)
 const check = (body: object, source: object = MAIN): Promise<CheckWire> =>
   system.check({ source, ...body })

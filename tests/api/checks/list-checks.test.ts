@@ -43,9 +43,37 @@ describe('listChecks', () => {
     expect((await list('?branch=main')).numbers).toEqual([3, 1])
   })
 
+  it('answers who asked, and what one person or key asked for', async () => {
+    const made = await system.maintainer
+      .post(`${system.url}/keys`)
+      .send({ name: 'Timetable pipeline', scopes: ['checks:write'] })
+      .expect(201)
+    const pipeline = test.withKey(made.body.key)
+    const { body } = await pipeline.post(`${system.url}/checks`).send({}).expect(200)
+    expect(body.caller).toEqual({ kind: 'key', id: made.body.id, name: 'Timetable pipeline' })
+    const byKey = await list(`?caller=${made.body.id}`)
+    expect(byKey.items).toMatchObject([{ id: body.id, caller: body.caller }])
+    const { caller } = (await list('?branch=glare')).items[0] as CheckSummaryWire
+    expect(caller).toMatchObject({ kind: 'user', name: 'Ines Marrow' })
+    expect((await list(`?caller=${caller.id}`)).numbers).toEqual([3, 2, 1])
+    expect((await list('?caller=usr_nobody')).numbers).toEqual([])
+    const own = await pipeline.get(`${system.url}/checks?caller=${caller.id}`).expect(200)
+    expect(own.body.items).toEqual([])
+  })
+
+  it('answers what each check left in the log', async () => {
+    const { items } = await list('?repository=larkhaven/crew')
+    expect(items).toMatchObject([{ logged: { protected: false, seen: 1, opened: 0, resolved: 0 } }])
+    const { body } = await test.people.engineer
+      .get(`${system.url}/checks/${items[0]?.id}`)
+      .expect(200)
+    expect(body.logged).toEqual(items[0]?.logged)
+  })
+
   it('leads on to the next page, also while checks are added', async () => {
-    const first = await list('?limit=2')
-    expect(first.numbers).toEqual([3, 2])
+    const all = (await list()).numbers
+    const first = await list(`?limit=${all.length - 1}`)
+    expect(first.numbers).toEqual(all.slice(0, -1))
     const next = /<([^>]+)>; rel="next"/.exec(String(first.link))?.[1] ?? ''
     await system.check()
     const { body, headers } = await test.people.engineer.get(next).expect(200)

@@ -193,10 +193,7 @@ describe('a branch that is not protected', () => {
 
 describe('a protected branch', () => {
   it('is kept, and its sighting leads to the breach', async () => {
-    await run('update systems set protected_branches = ? where `key` = ?', [
-      JSON.stringify([TOPIC]),
-      system.url.split('/').at(-1),
-    ])
+    await system.patchSettings({ protectedBranches: [TOPIC] })
     await see()
     await age(400)
     const { items } = await list('?protected=true')
