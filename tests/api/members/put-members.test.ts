@@ -129,7 +129,8 @@ it('refuses people that are not there and people twice, each with its pointer', 
 it('leaves an audit entry for what moved, and none for an edit without effect', async () => {
   const count = async () => {
     const [rows] = await test.service.platform.database.pool.query<never[]>(
-      `select details from audit_entries where action = 'members.replaced' order by seq`,
+      `select details from audit_entries where action = 'members.replaced'
+        and chain_id = (select id from systems where \`key\` = 'larkhaven') order by seq`,
     )
     return (rows as { details: string }[]).map(({ details }) => JSON.parse(details))
   }
