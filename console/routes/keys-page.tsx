@@ -85,7 +85,8 @@ function ShownOnce({ system, made }: { system: string; made: KeyWire & { key?: s
       </p>
       <CopySheet label="the key" text={made.key ?? ''} />
       <p className="mt-14 mb-10">
-        Put it where the build keeps its secrets, as <code>DYEWRIGHT_KEY</code>, then run:
+        Put it where the build keeps its secrets, as{' '}
+        <span className="font-medium">DYEWRIGHT_KEY</span>, then run:
       </p>
       <CopySheet label="the command" text={command} />
     </section>
