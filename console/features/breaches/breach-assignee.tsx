@@ -29,7 +29,7 @@ export function BreachAssignee({
   const assigning = useAssigning(system, breach.id)
   const [fault, setFault] = useState<string>()
   const assign = (assignee: string | null) =>
-    assigning.mutate({ system, id: breach.id, etag: breach.etag, assignee })
+    assigning.mutate({ system, id: breach.id, seen: breach, assignee })
   const { assignee } = breach
   if (obstacle !== undefined) {
     return (

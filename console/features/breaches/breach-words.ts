@@ -12,9 +12,15 @@ const CLOSED: { readonly [reason in NonNullable<BreachWire['closingReason']>]: s
 
 /** `resolved, fixed` */
 export function closingInWords(breach: BreachWire): string {
+  if (isMetByGroup(breach)) return 'resolved, its group passes'
   return breach.closingReason === undefined
     ? 'resolved'
     : `resolved, ${CLOSED[breach.closingReason]}`
+}
+
+/** Resolved though still under its line: another member of its group meets the one it has. */
+function isMetByGroup({ closingReason, ratio, required }: BreachWire): boolean {
+  return closingReason === 'fixed' && ratio < required
 }
 
 /** `27 Nov, r212` */
@@ -63,6 +69,9 @@ export function eventInWords(event: BreachEventWire, breach: BreachWire): string
   const person = event.assignee?.name ?? 'somebody'
   if (event.kind === 'assigned') return `Assigned to ${person}`
   if (event.kind === 'unassigned') return `Taken off ${person}`
+  if (event.kind === 'resolved' && event.ratio < event.required && isMetByGroup(breach)) {
+    return 'Its group passes'
+  }
   const closed = event.kind === 'resolved' && breach.closingReason
   return closed && closed !== 'fixed' ? `Closed, ${CLOSED[closed]}` : EVENTS[event.kind]
 }

@@ -1,6 +1,7 @@
 import { infiniteQueryOptions, queryOptions } from '@tanstack/react-query'
-import { call } from '#console/lib/api.ts'
+import { call, isRefusal } from '#console/lib/api.ts'
 import {
+  type BreachWire,
   createBreachComment,
   getBreach,
   listBreaches,
@@ -30,15 +31,27 @@ export const breachQueries = {
 export interface Assignment {
   readonly system: string
   readonly id: string
-  readonly etag: string
+  /** The breach as it was seen. */
+  readonly seen: BreachWire
   /** A member's id; `null`: nobody. */
   readonly assignee: string | null
 }
 
-/** Says who is on a breach; answers it as it is then. */
-export async function assignBreach({ system, id, etag, assignee }: Assignment) {
-  const body = { assignee }
-  return (await call(patchBreach, { params: { system, id }, ifMatch: etag, body })).body
+/**
+ * Says who is on a breach; answers it as it is then. What came to its history meanwhile, such as a comment, is no
+ * reason to ask again; somebody else's assignment is.
+ */
+export async function assignBreach({ system, id, seen, assignee }: Assignment) {
+  const write = async (etag: string) =>
+    (await call(patchBreach, { params: { system, id }, ifMatch: etag, body: { assignee } })).body
+  try {
+    return await write(seen.etag)
+  } catch (error) {
+    if (!isRefusal(error, 412)) throw error
+    const now = (await call(getBreach, { params: { system, id } })).body
+    if (now.assignee?.id !== seen.assignee?.id) throw error
+    return await write(now.etag)
+  }
 }
 
 export interface NewComment {
