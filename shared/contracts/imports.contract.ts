@@ -60,6 +60,15 @@ export const createImport = defineContract({
   access: 'tokens:write',
 })
 
+const resolverFileSchema = z
+  .looseObject({
+    version: z.enum(['2025.10']),
+    sets: z.record(z.string(), z.unknown()),
+    modifiers: z.record(z.string(), z.unknown()).optional(),
+    resolutionOrder: z.array(z.unknown()),
+  })
+  .meta({ id: 'ResolverFile', description: 'Design Tokens Resolver Module 2025.10' })
+
 export const getResolverFile = defineContract({
   operationId: 'getResolverFile',
   method: 'GET',
@@ -72,8 +81,12 @@ export const getResolverFile = defineContract({
   success: {
     status: 200,
     media: ['application/json'],
-    body: z.string(),
-    example: '{\n  "version": "2025.10"\n}\n',
+    body: resolverFileSchema,
+    example: {
+      version: '2025.10',
+      sets: { core: { sources: [{}] } },
+      resolutionOrder: [{ $ref: '#/sets/core' }],
+    },
   },
   problems: READ_PROBLEMS,
   access: 'themes:read',

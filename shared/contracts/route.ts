@@ -13,8 +13,9 @@ export type Success =
   | {
       readonly status: 200
       readonly media: readonly string[]
-      readonly body: z.ZodString
-      readonly example: string
+      /** What the text says, where it is JSON; else any text. */
+      readonly body: z.ZodType
+      readonly example: unknown
     }
   | { readonly status: 204; readonly body?: undefined }
 
@@ -131,7 +132,11 @@ export interface ParsedOf<C extends Contract> {
 
 /** What a caller gets back; `undefined` for 204. Where work may be deferred the status tells which it is. */
 export type OutputOf<C extends Contract> =
-  | (C['success'] extends { body: infer S extends z.ZodType } ? z.output<S> : undefined)
+  | (C['success'] extends { media: readonly string[] }
+      ? string
+      : C['success'] extends { body: infer S extends z.ZodType }
+        ? z.output<S>
+        : undefined)
   | (C extends { deferred: { body: infer D extends z.ZodType } } ? z.output<D> : never)
 
 /** The media types a caller of the operation can be answered in. */
