@@ -99,7 +99,9 @@ function remainderAfter(
 ): string | undefined {
   const byId = Object.entries(tokens).map(([name, rest]) => [names.tokenId(name) ?? name, rest])
   const own = { document, tokens: Object.fromEntries(byId) }
-  return joinedRemainder(readRemainder(keeps ? standing : undefined), own)
+  const next = joinedRemainder(readRemainder(keeps ? standing : undefined), own)
+  const isNew = canonicalJson(readRemainder(next)) !== canonicalJson(readRemainder(standing))
+  return isNew ? next : standing
 }
 
 function exemptRefusal(index: SystemIndex, after: GovernedSystem, { exempts }: ImportOptions) {

@@ -36,8 +36,9 @@ export function readOwnResolver(file: JsonObject, { said, stands }: OwnFile): Im
     ...(said.themes ?? []).slice(1).flatMap(({ key }) => themeLiterals(file, key)),
   ]
   const names = new Set(read.tokens.map(({ name }) => name))
-  const changed = changedLiterals(literals, names)
-  const faults = [...read.faults, ...(read.faults.length > 0 ? [] : changed.faults)]
+  // Where a source cannot be read, which tokens there are is not known.
+  const changed = changedLiterals(literals, (name) => read.faults.length > 0 || names.has(name))
+  const faults = [...read.faults, ...changed.faults]
   if (faults.length > 0) return { ok: false, faults }
   return {
     ok: true,
@@ -116,7 +117,10 @@ interface Changed {
   derivedAgain: number
 }
 
-function changedLiterals(literals: readonly Literal[], names: ReadonlySet<string>): Changed {
+function changedLiterals(
+  literals: readonly Literal[],
+  hasSource: (name: string) => boolean,
+): Changed {
   const changed: Changed = { overrides: new Map(), notes: [], faults: [], derivedAgain: 0 }
   for (const literal of literals) {
     const { name, theme, state, token, pointer } = literal
@@ -125,7 +129,7 @@ function changedLiterals(literals: readonly Literal[], names: ReadonlySet<string
       changed.derivedAgain += said.rule === undefined ? 0 : 1
       continue
     }
-    if (!names.has(name)) {
+    if (!hasSource(name)) {
       changed.faults.push({ pointer, detail: `${name} has no source in the set ${CORE}` })
       continue
     }
