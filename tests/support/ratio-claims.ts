@@ -204,9 +204,10 @@ function ofBreach(shown: ScreenRatio, { head }: Answers): Figures {
   return figuresOf(breach)
 }
 
-/** The history runs from the newest event to the oldest. */
+/** The history runs from the newest event to the oldest; what people did to the breach has no ratio of its own. */
 function ofEvent(shown: ScreenRatio, { events = [] }: Answers): Figures {
-  const event = events.at(-1 - shown.index)
+  const measured = events.filter(({ kind }) => !/^(un)?assigned$|^commented$/.test(kind))
+  const event = measured.at(-1 - shown.index)
   if (event === undefined) fail(shown, 'the API has no such event')
   const revision = event.revision === undefined ? '' : ` in revision ${event.revision}`
   if (!shown.parts.join(' ').includes(revision)) fail(shown, `the event does not say${revision}`)

@@ -75,7 +75,9 @@ export function readRatios(page: Page): Promise<ScreenRatios> {
       return strays
     }
 
-    const shown = [...document.querySelectorAll('[data-ratio]:not([data-ratio=before])')]
+    const shown = [
+      ...document.querySelectorAll('[data-ratio]:not([data-ratio=before], [data-ratio=lowest])'),
+    ]
     return {
       ratios: shown.filter((figure) => figure.checkVisibility()).map(read),
       strays: strayTexts(),
