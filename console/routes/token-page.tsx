@@ -1,8 +1,9 @@
 import { useSuspenseQuery } from '@tanstack/react-query'
 import { useEffect, useRef } from 'react'
-import { type LoaderFunctionArgs, useParams } from 'react-router-dom'
+import { type LoaderFunctionArgs, useLocation, useParams } from 'react-router-dom'
 import { systemQueries } from '#console/features/systems/systems.queries.ts'
 import { tokenQueries } from '#console/features/tokens/tokens.queries.ts'
+import { lastSegment } from '#console/lib/last-segment.ts'
 import { queryClient } from '#console/lib/query-client.ts'
 import { Trouble, Waiting } from '#console/ui/page-states.tsx'
 import { ApiError } from '#shared/client/client.ts'
@@ -10,7 +11,8 @@ import { useEvaluation } from './evaluation.ts'
 import { OpenedToken } from './opened-token.tsx'
 import { useFrame } from './system-frame.tsx'
 
-export async function loader({ params: { system = '', name = '' } }: LoaderFunctionArgs) {
+export async function loader({ params: { system = '' }, request }: LoaderFunctionArgs) {
+  const name = lastSegment(new URL(request.url).pathname)
   const [tokens] = await Promise.all([
     queryClient.ensureQueryData(tokenQueries.ledger(system)),
     queryClient.ensureQueryData(tokenQueries.one(system, name)),
@@ -24,7 +26,8 @@ export async function loader({ params: { system = '', name = '' } }: LoaderFunct
 }
 
 export function Component() {
-  const { system = '', name = '' } = useParams()
+  const { system = '' } = useParams()
+  const name = lastSegment(useLocation().pathname)
   const { data: settings } = useSuspenseQuery(systemQueries.one(system))
   const { data: token } = useSuspenseQuery(tokenQueries.one(system, name))
   const evaluation = useEvaluation(system, settings.head.revision)
