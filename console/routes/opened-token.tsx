@@ -1,20 +1,18 @@
-import { countOf } from '#shared/checks/finding-words.ts'
 import { useSuspenseQuery } from '@tanstack/react-query'
 import { type ReactNode, type Ref, useMemo, useState } from 'react'
 import { useLocation, useNavigate } from 'react-router-dom'
 import { themeQueries } from '#console/features/themes/themes.queries.ts'
-import { ConsequenceList, type ModelNames } from '#console/features/tokens/consequence-list.tsx'
+import type { ModelNames } from '#console/features/tokens/consequence-list.tsx'
 import { keptTrial } from '#console/features/tokens/kept-trial.ts'
 import { presentColor, presentText } from '#console/features/tokens/present-value.ts'
 import { ShipsTable } from '#console/features/tokens/ships-table.tsx'
-import { TokenPairs } from '#console/features/tokens/token-pairs.tsx'
-import { useTokenFindings, useTried } from '#console/features/tokens/token-trial.ts'
+import { useTried } from '#console/features/tokens/token-trial.ts'
 import { tokenQueries } from '#console/features/tokens/tokens.queries.ts'
 import { readTrial } from '#console/features/tokens/trial.ts'
-import { startSentence } from '#console/lib/format.ts'
-import { Trouble } from '#console/ui/page-states.tsx'
 import type { Evaluation } from '#shared/checks/evaluation.ts'
+import { findingsOf } from '#shared/checks/token-standing.ts'
 import type { TokenWire } from '#shared/contracts/tokens.contract.ts'
+import { TokenMoves } from './token-moves.tsx'
 import { SaveForm } from './save-form.tsx'
 import { TitleWithCells } from './title-with-cells.tsx'
 
@@ -47,7 +45,10 @@ export function OpenedToken({
   }, [text, tokens])
   const value = isTried && reading.kind !== 'unread' ? reading.value : undefined
   const tried = useTried(evaluation, token.id, value)
-  const known = useTokenFindings(evaluation, tried, token.id)
+  const findings = useMemo(
+    () => evaluation && findingsOf(evaluation, token.id).map(({ finding }) => finding),
+    [evaluation, token.id],
+  )
   const names = useMemo<ModelNames>(() => {
     const tokenNames = new Map(tokens.map(({ id, name }) => [id, name]))
     const themeKeys = new Map(themes.map(({ id, key }) => [id, key]))
@@ -85,41 +86,23 @@ export function OpenedToken({
         }}
       />
       {children}
-      {known !== undefined && (
-        <div className="grid gap-x-44 gap-y-28 pt-22 full:grid-cols-2">
-          <section>
-            <h2 className="text-16 font-semibold">Its pairs</h2>
-            <p className="text-13 text-ink-soft">{dependInWords(known.findings.length)}</p>
-            <TokenPairs pairs={known.pairs} names={names} />
-          </section>
-          <section aria-live="polite">
-            <h2 className="text-16 font-semibold">What the tried colour would move</h2>
-            {tried?.ok === false ? (
-              <Trouble title="This cannot be resolved.">
-                {tried.faults.map((fault) => (
-                  <p key={fault.detail}>{fault.detail}</p>
-                ))}
-              </Trouble>
-            ) : known.moved === undefined ? (
-              <p className="mt-8 max-w-460 text-ink-soft">
-                {reading.kind === 'unread'
-                  ? 'What is written is not a colour.'
-                  : 'Nothing is tried.'}{' '}
-                Write another colour, or step a component with the arrow keys: every ratio it moves
-                is listed here before anything is saved.
-              </p>
-            ) : (
-              <ConsequenceList moved={known.moved} names={names} />
-            )}
-          </section>
-        </div>
+      {evaluation !== undefined && (
+        <TokenMoves
+          evaluation={evaluation}
+          token={token.id}
+          names={names}
+          tried={tried}
+          text={isTried ? text.trim() : undefined}
+          isUnread={reading.kind === 'unread'}
+          onText={setDraft}
+        />
       )}
       <section className="pt-36 pb-44">
         <h2 className="pb-8 text-16 font-semibold">As it ships</h2>
         {isTried && (
           <p className="-mt-6 pb-8 text-13 text-ink-soft">The present colour, not the tried one.</p>
         )}
-        <ShipsTable token={token} themes={ships} findings={known?.findings ?? []} names={names} />
+        <ShipsTable token={token} themes={ships} findings={findings ?? []} names={names} />
       </section>
     </>
   )
@@ -136,9 +119,4 @@ function useKept(token: string) {
     }
   }
   return { kept, drop }
-}
-
-function dependInWords(count: number): string {
-  const depend = count === 1 ? 'depends' : 'depend'
-  return `${startSentence(countOf(count, 'finding'))} ${depend} on this token, by itself and through what follows it.`
 }
