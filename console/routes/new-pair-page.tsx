@@ -48,8 +48,10 @@ export function Component() {
       <title>{`New pair of ${system} · Dyewright`}</title>
       <h2 className="pt-18 pb-12 text-28 font-semibold">A new pair</h2>
       <DeclareForm system={system} edit={edit} />
-      <WouldMeasure id={NEW_PAIR} tried={edit.tried} names={names} />
-      <EffectOnVerdicts tried={edit.tried} names={names} />
+      <div className="grid gap-x-44 full:grid-cols-2">
+        <EffectOnVerdicts tried={edit.tried} names={names} />
+        <WouldMeasure id={NEW_PAIR} tried={edit.tried} names={names} />
+      </div>
     </>
   )
 }

@@ -7,7 +7,10 @@ import {
   pairEdits,
   readPair,
 } from '#console/features/pairs/pair-draft.ts'
+import { startSentence } from '#console/lib/format.ts'
 import type { Evaluation } from '#shared/checks/evaluation.ts'
+import type { ModelFault } from '#shared/checks/model.ts'
+import type { Fault } from '#shared/contracts/problems.ts'
 import { weakeningsBetween } from '#shared/checks/weakening.ts'
 
 /** A pair being edited or declared: what is written, what that comes to, and what it would move. */
@@ -37,6 +40,7 @@ export function usePairEdit(
     [evaluation, tried],
   )
   const missing = read?.ok === false ? read.faults : []
+  const refused = tried.kind === 'unresolvable' ? tried.faults.flatMap(demandFault(id)) : []
   return {
     id,
     draft,
@@ -44,7 +48,7 @@ export function usePairEdit(
     isEdited,
     /** As a write gives it; none while a field cannot be read. */
     input: reading.ok ? reading.input : undefined,
-    faults: reading.ok ? missing : reading.faults,
+    faults: reading.ok ? [...missing, ...refused] : reading.faults,
     tried,
     /** What the edit asks less of, each as a sentence. */
     weakenings: weakenings.map(({ detail }) => `${detail}.`),
@@ -52,5 +56,20 @@ export function usePairEdit(
     putBack: () => setWritten(start),
   }
 }
+
+const DEMANDS: { readonly [code in ModelFault['code']]?: string } = {
+  'level-lower': '/level',
+  'minimum-lower': '/minimum',
+}
+
+/** What the engine refuses of the pair's own demands, beside the field that it is about. */
+const demandFault =
+  (id: string) =>
+  ({ pair, code, detail }: ModelFault): Fault[] => {
+    const pointer = DEMANDS[code]
+    return pair === id && pointer !== undefined
+      ? [{ pointer, detail: `${startSentence(detail)}.` }]
+      : []
+  }
 
 export type PairEdit = ReturnType<typeof usePairEdit>

@@ -119,7 +119,7 @@ function sumInWords({ parts }: Effect, all: number): string {
 }
 
 function titleOf({ parts, goneBreaches }: Effect, part: keyof Effect['parts']): string {
-  const { count } = parts[part]
+  const { count, lines } = parts[part]
   const number = startSentence(countInWords(count))
   switch (part) {
     case 'breaching':
@@ -129,7 +129,9 @@ function titleOf({ parts, goneBreaches }: Effect, part: keyof Effect['parts']): 
     case 'stillBreaching':
       return `${number} breaching as before`
     case 'stillPassing':
-      return `${number} still passing, nearest to their line first`
+      return lines.every(({ before }) => before === undefined)
+        ? `${number} measured for the first time, passing`
+        : `${number} still passing, nearest to their line first`
     case 'gone':
       return `${number} measured no longer${goneBreaches > 0 ? `, ${countInWords(goneBreaches)} of them breaching now` : ''}`
   }

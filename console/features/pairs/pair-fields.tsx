@@ -159,8 +159,8 @@ function Demands(props: PairFieldsProps) {
 
 function Exemption({ fields, faultAt, onChange }: PairFieldsProps) {
   return (
-    <div className="mt-14 flex flex-wrap items-start gap-x-20 gap-y-10">
-      <div className="flex min-h-50 flex-wrap items-end gap-x-8 pb-5">
+    <div className="mt-8 flex flex-wrap items-start gap-x-20 gap-y-10">
+      <div className="flex min-h-30 flex-wrap items-end gap-x-8 pb-5">
         With
         <Choice
           label="Exemption"
