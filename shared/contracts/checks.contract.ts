@@ -4,6 +4,8 @@ import { cursorSchema, idSchema, instantSchema, limitSchema, systemParams } from
 import {
   advisorySchema,
   countsSchema,
+  distinctMeasureExample,
+  distinctMeasureSchema,
   engineSchema,
   findingExample,
   findingSchema,
@@ -111,6 +113,9 @@ export const checkSchema = z
     ...summary,
     findings: z.array(findingSchema),
     advisories: z.array(advisorySchema),
+    distinctSets: z
+      .array(distinctMeasureSchema)
+      .meta({ description: 'Every distinct set in every theme; no part of the verdict' }),
   })
   .meta({ id: 'Check', description: 'One evaluation. A failing check is an answer, not an error.' })
 export type CheckWire = z.infer<typeof checkSchema>
@@ -131,7 +136,12 @@ const summaryExample = {
   caller: { kind: 'key', id: 'key_01jd5w7k2m', name: 'Timetable pipeline' },
   at: '2026-11-24T09:12:00.000Z',
 } as const
-const checkExample = { ...summaryExample, findings: [findingExample], advisories: [] } as const
+const checkExample = {
+  ...summaryExample,
+  findings: [findingExample],
+  advisories: [],
+  distinctSets: [distinctMeasureExample],
+} as const
 
 const alternatives = [
   {

@@ -101,6 +101,38 @@ export const advisorySchema = z
   .meta({ id: 'Advisory', description: 'Worth a look; never a breach' })
 export type AdvisoryWire = z.infer<typeof advisorySchema>
 
+const coupleSchema = z
+  .strictObject({ first: z.string(), second: z.string(), deltaE2000: z.number().min(0) })
+  .meta({ id: 'ClosestCouple', description: 'The two members hardest to tell apart' })
+
+export const distinctMeasureSchema = z
+  .strictObject({
+    id: idSchema,
+    name: z.string(),
+    theme: slugSchema,
+    plain: coupleSchema,
+    protan: coupleSchema,
+    deutan: coupleSchema,
+    tritan: coupleSchema,
+  })
+  .meta({
+    id: 'DistinctMeasure',
+    description:
+      'A distinct set in one theme, at rest on its ground: CIEDE2000 of its closest couple, as it is and as simulated by Machado 2009 at severity 1. It never gates.',
+  })
+export type DistinctMeasureWire = z.infer<typeof distinctMeasureSchema>
+
+const couple = { first: 'chart.route.2', second: 'chart.route.5' } as const
+export const distinctMeasureExample = {
+  id: 'dst_01jd5w7k2m',
+  name: 'Routes of the chart',
+  theme: 'light',
+  plain: { ...couple, deltaE2000: 21.0482 },
+  protan: { ...couple, deltaE2000: 9.6613 },
+  deutan: { ...couple, deltaE2000: 7.1106 },
+  tritan: { ...couple, deltaE2000: 15.3027 },
+} as const
+
 /** What a direct write did to the head. */
 export const effectSchema = z
   .strictObject({

@@ -1,6 +1,7 @@
 import type { Advisory, Finding } from '#shared/checks/model.ts'
 import type { ResolvedSystem } from '#shared/checks/resolved.ts'
-import type { AdvisoryWire, FindingWire } from './findings.ts'
+import type { ClosestCouple, MeasuredDistinctSet } from '#shared/checks/distinct-measure.ts'
+import type { AdvisoryWire, DistinctMeasureWire, FindingWire } from './findings.ts'
 import type { ModelNames } from './wire-values.ts'
 
 /**
@@ -36,6 +37,27 @@ export function presentAdvisory(advisory: Advisory, names: ModelNames): Advisory
     token: names.tokenName(token),
     ...(theme === undefined ? {} : { theme: names.themeKey(theme) }),
     ...(state === undefined ? {} : { state }),
+  }
+}
+
+/** A distinct set measured in one theme, with tokens and theme by name. */
+export function presentDistinctMeasure(
+  { set, theme, couples }: MeasuredDistinctSet,
+  names: ModelNames,
+): DistinctMeasureWire {
+  const named = ({ first, second, deltaE2000 }: ClosestCouple) => ({
+    first: names.tokenName(first),
+    second: names.tokenName(second),
+    deltaE2000,
+  })
+  return {
+    id: set.id,
+    name: set.name,
+    theme: names.themeKey(theme),
+    plain: named(couples.plain),
+    protan: named(couples.protan),
+    deutan: named(couples.deutan),
+    tritan: named(couples.tritan),
   }
 }
 

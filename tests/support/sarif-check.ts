@@ -39,6 +39,7 @@ export const everyOutcome: CheckWire = {
     breachingFinding({ outcome: 'exempt', reason: 'logotype', fingerprint: 'exempt' }),
     breachingFinding({ outcome: 'pass', ratio: 7.2, fingerprint: 'pass' }),
   ],
+  distinctSets: [],
   advisories: [
     { code: 'double-flip', token: 'text.link', theme: 'dark' },
     { code: 'state-invisible', token: 'text.link', theme: 'light', state: 'hover' },

@@ -45,11 +45,13 @@ export function candidateEdits(head: SystemIndex, candidate: Candidate): Candida
     ...(replaced ? [] : clashingNames(head, tokens)),
   ]
   if (faults.length > 0) return { ok: false, faults }
+  const distinctSets = setsWithout(head, new Set(removed.map(({ id }) => id)))
   const edits: SystemEdits = {
     ...(put.length + removed.length > 0
       ? { tokens: { put, remove: removed.map(({ id }) => id) } }
       : {}),
     ...(pairs.length > 0 ? { pairs: { put: pairs } } : {}),
+    ...(distinctSets ? { distinctSets } : {}),
   }
   return { ok: true, edits, pointerOf: pointersOf(head, candidate) }
 }
@@ -113,6 +115,20 @@ function lackedByPairs(head: SystemIndex, removed: ReadonlySet<string>): Fault[]
         detail: `${names.tokenName(id)} is missing, which the declared pair ${declared} needs`,
       }))
   })
+}
+
+/** A distinct set gates nothing: of one whose tokens a document lacks, what is left is measured. */
+function setsWithout({ model }: SystemIndex, removed: ReadonlySet<string>) {
+  const sets = (model.distinctSets ?? []).filter(({ tokens }) =>
+    tokens.some((id) => removed.has(id)),
+  )
+  if (sets.length === 0) return undefined
+  const left = sets.map((set) => ({
+    ...set,
+    tokens: set.tokens.filter((id) => !removed.has(id)),
+  }))
+  const isMeasured = ({ tokens }: { readonly tokens: readonly string[] }) => tokens.length > 1
+  return { put: left.filter(isMeasured), remove: sets.map(({ id }) => id) }
 }
 
 /** A new name must not be an old one composed differently, nor make a name a group and a token at once. */

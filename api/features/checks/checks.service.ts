@@ -6,11 +6,17 @@ import type { Head, HeadsService } from '#api/features/revisions/heads.service.t
 import { decodeCursor, encodeCursor } from '#api/paging.ts'
 import type { NewId } from '#api/platform/ids.ts'
 import type { Transact } from '#api/repositories.ts'
+import { measureDistinctSets } from '#shared/checks/distinct-measure.ts'
 import type { Evaluation } from '#shared/checks/evaluation.ts'
 import type { Verdict } from '#shared/checks/model.ts'
 import { breachRatios, verdictOf } from '#shared/checks/verdict.ts'
 import type { CheckWire, createCheck, listChecks } from '#shared/contracts/checks.contract.ts'
-import { namesIn, presentAdvisory, presentFinding } from '#shared/contracts/present-finding.ts'
+import {
+  namesIn,
+  presentAdvisory,
+  presentDistinctMeasure,
+  presentFinding,
+} from '#shared/contracts/present-finding.ts'
 import type { AnswerOf, ParsedOf } from '#shared/contracts/route.ts'
 import { presentCheckSummary } from './checks.presenter.ts'
 import type { ChecksReads } from './checks.reads.ts'
@@ -110,12 +116,13 @@ function presentFindings(verdict: Verdict, { resolved }: Evaluation): KeptFindin
   return {
     findings: verdict.findings.map((finding) => presentFinding(finding, names)),
     advisories: verdict.advisories.map((advisory) => presentAdvisory(advisory, names)),
+    distinctSets: measureDistinctSets(resolved).map((one) => presentDistinctMeasure(one, names)),
   }
 }
 
-const keptOf = ({ findings, advisories }: KeptFindings): KeptFindings => ({
+const keptOf = ({ findings, ...rest }: KeptFindings): KeptFindings => ({
+  ...rest,
   findings: findings.filter(({ outcome }) => outcome !== 'pass'),
-  advisories,
 })
 
 interface Outcome {

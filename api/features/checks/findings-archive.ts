@@ -3,7 +3,7 @@ import { gunzip, gzip } from 'node:zlib'
 import type { CheckWire } from '#shared/contracts/checks.contract.ts'
 
 /** What is kept of a check besides its counts: as it was answered, in the names of its day. */
-export type KeptFindings = Pick<CheckWire, 'findings' | 'advisories'>
+export type KeptFindings = Pick<CheckWire, 'findings' | 'advisories' | 'distinctSets'>
 
 const compress = promisify(gzip)
 const expand = promisify(gunzip)
@@ -14,5 +14,6 @@ export const packFindings = (kept: KeptFindings): Promise<Buffer> => compress(JS
 /** Unpacks what `packFindings` packed. */
 export async function unpackFindings(packed: Buffer): Promise<KeptFindings> {
   const text = (await expand(packed)).toString('utf8')
-  return JSON.parse(text) as KeptFindings
+  // A check that was kept before distinct sets were measured has none.
+  return { distinctSets: [], ...(JSON.parse(text) as Omit<KeptFindings, 'distinctSets'>) }
 }

@@ -32,6 +32,7 @@ const check = (findings: FindingWire[], over: Partial<CheckWire> = {}): CheckWir
   at: '2026-11-24T09:12:00.000Z',
   findings,
   advisories: [],
+  distinctSets: [],
   ...over,
 })
 const monochrome = { hasColor: false, columns: 80 }
