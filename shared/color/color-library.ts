@@ -44,3 +44,23 @@ export const parseWithLibrary = parse
 export const toLibraryOklch = converter('oklch')
 /** Converts a library colour to CIE Lab with white D65, unrounded. */
 export const toLibraryLab65 = converter('lab65')
+/** Converts a library colour to gamma-coded sRGB, unclamped. */
+export const toLibraryRgb = converter('rgb')
+/** Converts a library colour to linear-light sRGB, unclamped. */
+export const toLibraryLinearRgb = converter('lrgb')
+/** Converts a library colour to Display P3, unclamped. */
+export const toLibraryP3 = converter('p3')
+/** Converts a library colour to CIE XYZ with white D65; Y of white is 1. */
+export const toLibraryXyz65 = converter('xyz65')
+/** Converts a library colour to CIE XYZ with white D50; Y of white is 1. */
+export const toLibraryXyz50 = converter('xyz50')
+/** Converts a library colour to CIE Lab with white D50, as CSS has it. */
+export const toLibraryLab = converter('lab')
+/** Converts a library colour to CIE LCH with white D50, as CSS has it. */
+export const toLibraryLch = converter('lch')
+/** Converts a library colour to OKLab. */
+export const toLibraryOklab = converter('oklab')
+/** Converts a library colour to HSL; saturation and lightness 0 to 1. */
+export const toLibraryHsl = converter('hsl')
+/** Converts a library colour to HWB; whiteness and blackness 0 to 1. */
+export const toLibraryHwb = converter('hwb')

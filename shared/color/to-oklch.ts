@@ -93,7 +93,8 @@ function isPowerlessLch(space: ColorSpace, chroma: number | null): boolean {
   return space === 'lch' && (chroma ?? 0) <= POWERLESS_LCH_CHROMA
 }
 
-function libraryColor(
+/** A colour of any space as the library takes it; what the library decodes otherwise is brought to XYZ. */
+export function libraryColor(
   space: Exclude<ColorSpace, 'oklch'>,
   [x, y, z]: readonly [number, number, number],
 ): Color {
