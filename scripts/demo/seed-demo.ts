@@ -10,6 +10,7 @@ import { larkhaven } from './larkhaven/larkhaven.ts'
 import type { Step } from './larkhaven/step.ts'
 import { pairKey } from './larkhaven/whole-system.ts'
 import { createPeople, members, type Service } from './people.ts'
+import { seedHandling } from './seed-handling.ts'
 
 const SYSTEM = 'larkhaven'
 const inSystem = { system: SYSTEM }
@@ -79,6 +80,7 @@ export async function seedDemo(service: Service): Promise<number> {
   await found(admin)
   const pairIds = new Map<string, string>()
   for (const step of larkhaven) await take(step, await as(step.by), pairIds)
+  await seedHandling({ service, as, inSystem })
   return larkhaven.length
 }
 
