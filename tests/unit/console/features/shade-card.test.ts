@@ -16,7 +16,7 @@ import { pair, system, token } from '#tests/unit/checks/model-builder.ts'
 
 const model = system({
   tokens: [
-    token('fill', 'oklch(0.58512345678 0.1281234567 243.123456)', { states: ['hover', 'focus'] }),
+    token('fill', 'oklch(0.58512345678 0.1281234567 243.123456)', { states: ['focus'] }),
     token('label', '#ffffff'),
     token('night', '#10202e'),
     token('edge', '{fill}'),
