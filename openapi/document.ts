@@ -181,7 +181,8 @@ function bodyOf({ body, bodyExample, takesFile }: Contract) {
     schema: body as z.ZodType,
     ...(bodyExample === undefined ? {} : { example: bodyExample }),
   }
-  const form = takesFile ? { 'multipart/form-data': { schema: FORM } } : {}
+  const asFile = { schema: FORM, example: { file: JSON.stringify(bodyExample) } }
+  const form = takesFile ? { 'multipart/form-data': asFile } : {}
   return { required: true, content: { 'application/json': media, ...form } }
 }
 
