@@ -211,6 +211,24 @@ it('answers one entry and one opening to parallel checks of one branch', async (
   expect(new Set(answers.map(({ number }) => number)).size).toBe(12)
 })
 
+it('answers numbers without gap or repetition while the head opens breaches of its own', async () => {
+  const names = Array.from({ length: 8 }, (_, at) => `faint-${at}`)
+  for (const name of names) {
+    await system.addToken(name, '#666666')
+    await system.addPair({ foreground: name, background: 'paper', use: 'text' })
+  }
+  await Promise.all(
+    names.flatMap((name, at) => [
+      system.editToken(name, { value: '#aaaaaa' }),
+      check({ tokens: { [name]: dtcgHex('bbbbbb') } }, { ...MAIN, repository: `r${at}` }),
+    ]),
+  )
+  const all = await system.breaches('?status=open&status=resolved&sort=number')
+  expect(all.map(({ number }) => number)).toEqual(all.map((_, at) => at + 1))
+  expect(all.filter(({ origin }) => origin === 'head')).toHaveLength(names.length)
+  expect(new Set(all.map(({ repository }) => repository)).size).toBe(names.length + 1)
+})
+
 it('takes a candidate’s token of the longest name', async () => {
   const name = `${'%/+'.repeat(84)}abc`
   const body = {
