@@ -39,6 +39,8 @@ export interface StandIn {
   /** Token ids. */
   readonly foreground: string
   readonly background: string
+  /** What they were called then. */
+  readonly names: Pick<BreachNames, 'foreground' | 'background'>
 }
 
 /** The breach log: one row an identity and origin, for ever. */

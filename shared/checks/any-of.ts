@@ -1,5 +1,7 @@
-import type { PairMeasure } from './evaluation.ts'
+import type { Evaluation, PairMeasure } from './evaluation.ts'
 import { placeOfRow } from './measured-row.ts'
+import type { Finding, PairModel } from './model.ts'
+import { combinationOf } from './pair-states.ts'
 import { STATE_COUNT } from './resolved.ts'
 
 /** Marks where a member meets its own requirement by its ratio; one that requires nothing meets nothing. */
@@ -33,4 +35,28 @@ export function meetAnyOf(
     markMet(met, measure)
   }
   return groups
+}
+
+/**
+ * The pair that meets its own requirement in the place of a finding that passes by its group: of several the one that
+ * has the most to spare.
+ * @returns undefined where none does, as for a finding that no group lets pass
+ */
+export function standInFor(evaluation: Evaluation, finding: Finding): PairModel | undefined {
+  const theme = evaluation.resolved.themes.get(finding.theme)
+  const declared = new Set(finding.pairs)
+  const groups = new Set(
+    evaluation.measures.flatMap(({ pair }) => (declared.has(pair.id) ? [pair.anyOf] : [])),
+  )
+  const combination = combinationOf(finding.foregroundState, finding.backgroundState)
+  let best: { readonly pair: PairModel; readonly reach: number } | undefined
+  for (const { pair, themes, combinations, required, ratio } of evaluation.measures) {
+    if (pair.anyOf === undefined || !groups.has(pair.anyOf)) continue
+    const at = themes.indexOf(theme ?? -1)
+    const place = combinations.indexOf(combination)
+    if (at < 0 || place < 0 || required[at] === 0) continue
+    const reach = ratio[at * combinations.length + place]! / required[at]!
+    if (reach >= 1 && reach > (best?.reach ?? 0)) best = { pair, reach }
+  }
+  return best?.pair
 }

@@ -56,6 +56,10 @@ export const breachSchema = z
       .meta({ description: 'null while a breach of the head lasts; in CI by the last check' }),
     resolvedAt: instantSchema.optional(),
     closingReason: z.enum(CLOSING_REASONS).optional(),
+    metBy: z
+      .strictObject({ foreground: z.string(), background: z.string() })
+      .optional()
+      .meta({ description: 'The pair of its anyOf group that met the requirement in its place' }),
     assignee: z.union([personSchema, z.null()]),
     etag: etagSchema,
   })

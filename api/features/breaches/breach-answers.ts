@@ -11,7 +11,11 @@ export async function breachAnswers(
   systemId: string,
   rows: readonly ListedBreach[],
 ): Promise<BreachWire[]> {
-  const ids = rows.flatMap(({ breach }) => [breach.foregroundTokenId, breach.backgroundTokenId])
+  const ids = rows.flatMap(({ breach: { foregroundTokenId, backgroundTokenId, metBy } }) => [
+    foregroundTokenId,
+    backgroundTokenId,
+    ...(metBy === null ? [] : [metBy.foreground, metBy.background]),
+  ])
   const names = await reads.tokenNames(systemId, [...new Set(ids)])
   return rows.map((row) => {
     const breach = presentBreach(row, names)

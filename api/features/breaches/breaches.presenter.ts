@@ -34,9 +34,18 @@ export function presentBreach(
     lastSeenAt: breach.lastSeenAt?.toISOString() ?? null,
     ...(resolvedAt === null ? {} : { resolvedAt: resolvedAt.toISOString() }),
     ...(closingReason === null ? {} : { closingReason }),
+    ...(breach.metBy === null ? {} : { metBy: standInOf(breach.metBy, names) }),
     assignee,
   }
 }
+
+const standInOf = (
+  { foreground, background, names: then }: NonNullable<ListedBreach['breach']['metBy']>,
+  names: TokenNames,
+) => ({
+  foreground: names.get(foreground) ?? then.foreground,
+  background: names.get(background) ?? then.background,
+})
 
 /** The history of an entry, oldest first. */
 export function presentEvents(rows: readonly ListedBreachEvent[]): BreachEventWire[] {

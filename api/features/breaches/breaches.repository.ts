@@ -108,6 +108,7 @@ const MOVING_COLUMNS = {
         'lastSeenAt',
         'resolvedAt',
         'closingReason',
+        'metBy',
       ] as const
     ).map((name) => [name, incoming(breaches[name])]),
   ),

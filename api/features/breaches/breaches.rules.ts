@@ -16,8 +16,17 @@ export interface HeadShift {
   readonly after: SystemModel
   readonly cause: HeadCause
   readonly at: Date
+  /** Of a finding that its group lets pass, the pair that meets the requirement in its place. */
+  readonly standInFor?: (finding: Finding) => StandIn | null
   /** When a check of a pipeline saw what lasts; absent for the head, where every look would see it. */
   readonly seenAt?: Date
+}
+
+/** A pair that stands in for another, by ids, and as its tokens were called then. */
+export interface StandIn {
+  readonly foreground: string
+  readonly background: string
+  readonly names: { readonly foreground: string; readonly background: string }
 }
 
 export type ClosingReason =
@@ -42,6 +51,7 @@ export interface BreachState {
   readonly lastSeenAt: Date | null
   readonly resolvedAt: Date | null
   readonly closingReason: ClosingReason | null
+  readonly metBy: StandIn | null
 }
 
 export interface BreachEvent {
@@ -91,6 +101,7 @@ function sightingOf(
     lastSeenAt,
     resolvedAt: null,
     closingReason: null,
+    metBy: null,
   }
   if (logged !== undefined && sameState(state, logged)) return null
   const kind = sightingKind(state, logged)
@@ -127,10 +138,14 @@ function closingOf(move: FindingMove, logged: BreachState, shift: HeadShift): Br
       lastSeenAt: shift.at,
       resolvedAt: shift.at,
       closingReason: closingReason(move, logged, shift),
+      metBy: standInOf(move.after, shift),
     },
     event: { kind: 'resolved', ratio, required },
   }
 }
+
+const standInOf = (after: Finding | undefined, { standInFor }: HeadShift): StandIn | null =>
+  after?.reason === 'any-of' ? (standInFor?.(after) ?? null) : null
 
 /** Why a breach is none any more, judged by what changed. */
 export function closingReason(

@@ -1,6 +1,9 @@
 import type { NewId } from '#api/platform/ids.ts'
 import { sha256Hex } from '#api/sha256.ts'
+import { standInFor } from '#shared/checks/any-of.ts'
+import type { Evaluation } from '#shared/checks/evaluation.ts'
 import type { Finding } from '#shared/checks/model.ts'
+import { namesIn } from '#shared/contracts/present-finding.ts'
 import type { ModelNames } from '#shared/contracts/wire-values.ts'
 import type {
   BreachesRepository,
@@ -8,7 +11,7 @@ import type {
   NewBreachEventRow,
   NewBreachRow,
 } from './breaches.repository.ts'
-import type { BreachState, BreachStep, FindingMove } from './breaches.rules.ts'
+import type { BreachState, BreachStep, FindingMove, HeadShift } from './breaches.rules.ts'
 
 /** Where a breach was seen: part of what makes it the same one. */
 export type BreachOrigin = Pick<BreachRow, 'origin' | 'repository' | 'branch'>
@@ -90,9 +93,9 @@ export async function writeSteps(
 
 export function stateIn(row: BreachRow): BreachState {
   const { status, gating, basis, ratio, required, lowestRatio, foregroundHex, backgroundHex } = row
-  const { waiverId, lastSeenAt, resolvedAt, closingReason } = row
+  const { waiverId, lastSeenAt, resolvedAt, closingReason, metBy } = row
   const measured = { gating, basis, ratio, required, lowestRatio, foregroundHex, backgroundHex }
-  return { status, ...measured, waiverId, lastSeenAt, resolvedAt, closingReason }
+  return { status, ...measured, waiverId, lastSeenAt, resolvedAt, closingReason, metBy }
 }
 
 function rowOf(
@@ -143,3 +146,18 @@ const eventOf = (
   { revision, checkId, actor, at }: LogWriting,
   event: NewBreachEventRow,
 ): NewBreachEventRow => ({ ...event, revision, checkId, actorUserId: actor, at })
+
+/** Tells the pair that stands in for one which its group lets pass, as the evaluation has it. */
+export function standInsIn(evaluation: Evaluation): NonNullable<HeadShift['standInFor']> {
+  const names = namesIn(evaluation.resolved)
+  return (finding) => {
+    const pair = standInFor(evaluation, finding)
+    if (pair === undefined) return null
+    const { foreground, background } = pair
+    const called = {
+      foreground: names.tokenName(foreground),
+      background: names.tokenName(background),
+    }
+    return { foreground, background, names: called }
+  }
+}

@@ -5,7 +5,15 @@ import type { Finding } from '#shared/checks/model.ts'
 import { namesIn } from '#shared/contracts/present-finding.ts'
 import type { BreachesRepository, BreachRow } from './breaches.repository.ts'
 import { stepOf } from './breaches.rules.ts'
-import { inCi, loggedAt, type LogWriting, stateIn, subjectOf, writeSteps } from './log-steps.ts'
+import {
+  inCi,
+  loggedAt,
+  type LogWriting,
+  standInsIn,
+  stateIn,
+  subjectOf,
+  writeSteps,
+} from './log-steps.ts'
 import type { SightingsRepository } from './sightings.repository.ts'
 import {
   branchIn,
@@ -97,11 +105,12 @@ async function stepsOf(breaches: BreachesRepository, { watch, seen, sighted, at 
   const identities = moves.map(({ identity }) => identity)
   const logged = await loggedAt(breaches, { systemId, place }, identities)
   const after = evaluation.resolved.model
+  const standInFor = standInsIn(evaluation)
   const onHead = isProtected ? seen.onHead() : new Map<string, number>()
   return moves.flatMap((finding) => {
     const row = logged.get(finding.identity)
     if (!lasts(row) && !(isProtected && isOwn(finding.after, onHead))) return []
-    const shift = { before: null, after, cause: 'edit' as const, at, seenAt: at }
+    const shift = { before: null, after, cause: 'edit' as const, at, seenAt: at, standInFor }
     const step = stepOf(finding, row && stateIn(row), shift)
     return step === null ? [] : [{ finding, logged: row, step }]
   })

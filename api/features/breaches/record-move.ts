@@ -10,6 +10,7 @@ import {
   type LoggedStep,
   loggedAt,
   ON_HEAD,
+  standInsIn,
   stateIn,
   writeSteps,
 } from './log-steps.ts'
@@ -64,6 +65,7 @@ async function stepsOf(breaches: BreachesRepository, move: HeadMove): Promise<Lo
     after: after.resolved.model,
     cause,
     at,
+    standInFor: standInsIn(after),
   }
   return moves.flatMap((finding) => {
     const row = logged.get(finding.identity)

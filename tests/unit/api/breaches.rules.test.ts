@@ -44,6 +44,7 @@ const open = (changes: Partial<BreachState> = {}): BreachState => ({
   lastSeenAt: null,
   resolvedAt: null,
   closingReason: null,
+  metBy: null,
   ...changes,
 })
 const resolved = open({
@@ -221,6 +222,32 @@ describe('closingReason', () => {
     const grouped = model({ pairs: [pair({ anyOf: 'rings' })] })
     expect(reasonFor(finding(), after, { after: grouped })).toBe('requirement-changed')
     expect(reasonFor(finding(), after, { before: grouped, after: grouped })).toBe('fixed')
+  })
+
+  it('answers what stands in for an entry that its group closes, and for no other', () => {
+    const standIn = {
+      foreground: 'tok_c',
+      background: 'tok_b',
+      names: { foreground: 'inner', background: 'deck' },
+    }
+    const grouped = model({ pairs: [pair({ anyOf: 'rings' })] })
+    const shift: HeadShift = {
+      before: grouped,
+      after: grouped,
+      cause: 'edit',
+      at: AT,
+      standInFor: () => standIn,
+    }
+    const step = (after: Finding) =>
+      stepOf({ identity: IDENTITY, before: finding(), after }, open(), shift)?.state.metBy
+    expect(step(passing({ reason: 'any-of' }))).toEqual(standIn)
+    expect(step(passing({ ratio: 4.6 }))).toBeNull()
+    const again = stepOf(
+      { identity: IDENTITY, after: finding() },
+      open({ ...resolved, metBy: standIn }),
+      shift,
+    )
+    expect(again?.state.metBy).toBeNull()
   })
 
   it('answers requirement-changed where the P3 ratio stopped gating', () => {
