@@ -51,6 +51,11 @@ export const importNoteSchema = z
   .strictObject({
     kind: z.enum(['converted', 'overridden', 'left-out']),
     pointer: z.string().meta({ description: 'RFC 6901 pointer into the file' }),
+    line: z
+      .int()
+      .min(1)
+      .optional()
+      .meta({ description: 'Of a style sheet, which has no pointers' }),
     detail: z.string(),
     token: z.string().optional(),
     theme: z.string().optional(),

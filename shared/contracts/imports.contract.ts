@@ -15,9 +15,10 @@ const flagSchema = (description: string) =>
     .transform((text) => text === 'true')
     .meta({ description, type: 'string', enum: ['true', 'false'], default: 'false' })
 
-export const importBody = z.record(z.string(), z.unknown()).meta({
+export const importBody = z.union([z.record(z.string(), z.unknown()), z.string()]).meta({
   id: 'ImportFile',
-  description: 'A token file or a resolver file of the Design Tokens modules 2025.10',
+  description:
+    'A token file or a resolver file of the Design Tokens modules 2025.10; or, as text, a style sheet',
 })
 
 export const createImport = defineContract({
@@ -25,14 +26,16 @@ export const createImport = defineContract({
   method: 'POST',
   path: '/v1/systems/{system}/imports',
   feature: 'imports',
-  summary: 'Reads a token file or a resolver file into the system; makes one revision, or none',
+  summary:
+    'Reads a token file, a resolver file or a style sheet into the system; makes one revision, or none',
   description:
-    'One fault and nothing changes: every fault of the file is told, with a pointer into it. Tokens are told by the id that a file of this service gives them, else by name. Of a resolver file the contexts of the modifier theme (else of the first) become themes, their first or default one the base. What is no colour is kept and comes back verbatim. An import that merges tokens alone takes tokens:write; what else it changes takes the permission for that. Long work is answered with 202 and a job.',
+    'One fault and nothing changes: every fault of the file is told, with a pointer into it. Tokens are told by the id that a file of this service gives them, else by name. Of a resolver file the contexts of the modifier theme (else of the first) become themes, their first or default one the base. What is no colour is kept and comes back verbatim; of a style sheet it is left out and listed. An import that merges tokens alone takes tokens:write; what else it changes takes the permission for that. Long work is answered with 202 and a job.',
   params: systemParams,
   query: z.strictObject({
     dryRun: flagSchema('true: nothing is written, the answer tells what would change'),
     mode: importModeSchema.default('merge'),
     legacyHex: flagSchema('true: colours written as text of hexadecimal digits are read too'),
+    hyphensAsDots: flagSchema('true: of a style sheet --action-board becomes action.board'),
     ground: tokenNameSchema
       .optional()
       .meta({ description: 'Page background of themes whose file does not tell it' }),

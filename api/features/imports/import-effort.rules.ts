@@ -1,6 +1,7 @@
 import type { GovernedSystem } from '#shared/checks/governed-model.ts'
 import { isToken } from '#shared/formats/dtcg-document.ts'
 import { type JsonObject, objectOf } from '#shared/formats/dtcg-fault.ts'
+import { propertiesIn } from './read-style-sheet.rules.ts'
 
 /**
  * Work is told by counts, before any of it is done: a token costs as much to read, compare and store as some ten
@@ -13,14 +14,14 @@ const MOST_AT_ONCE = 200_000
 export const MOST_TOKENS = 20_000
 
 /** Whether an import would keep its caller waiting; what is refused anyway does not. */
-export function isLong(file: JsonObject, model: GovernedSystem): boolean {
+export function isLong(file: JsonObject | string, model: GovernedSystem): boolean {
   const given = tokensIn(file)
   return !hasTooMany(file, given) && importEffort(given, model) > MOST_AT_ONCE
 }
 
 /** A resolver file holds one document a choice, so its tokens are counted in each. */
-export const hasTooMany = (file: JsonObject, given = tokensIn(file)): boolean =>
-  given > MOST_TOKENS && !isResolver(file)
+export const hasTooMany = (file: JsonObject | string, given = tokensIn(file)): boolean =>
+  given > MOST_TOKENS && (typeof file === 'string' || !isResolver(file))
 
 export const isResolver = (file: JsonObject): boolean => Object.hasOwn(file, 'resolutionOrder')
 
@@ -36,7 +37,8 @@ export function importEffort(given: number, { tokens, themes, pairs }: GovernedS
 }
 
 /** How many tokens a document has, or the documents of a resolver file together; nothing is checked. */
-export function tokensIn(file: JsonObject): number {
+export function tokensIn(file: JsonObject | string): number {
+  if (typeof file === 'string') return propertiesIn(file)
   let count = 0
   const waiting: unknown[] = [file]
   for (let value = waiting.pop(); value !== undefined; value = waiting.pop()) {

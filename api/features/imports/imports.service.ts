@@ -91,9 +91,12 @@ async function runImport(deps: ImportsDeps, { system, asked, report }: Import) {
   return outcomeOf(decided.before(), { written, file, asked })
 }
 
-function readFile({ index }: Head, { body, query: { mode, legacyHex } }: Asked): ImportFile {
+function readFile(
+  { index }: Head,
+  { body, query: { mode, legacyHex, hyphensAsDots } }: Asked,
+): ImportFile {
   const stands = (name: string) => mode === 'merge' && index.tokensByName.has(name)
-  const read = readImport(body, { stands, legacyHex })
+  const read = readImport(body, { stands, legacyHex, hyphensAsDots })
   if (!read.ok) throw invalidRequest(read.faults)
   return read.file
 }

@@ -10,6 +10,7 @@ import { originsOf } from './import-origins.rules.ts'
 import { remainderOf } from './import-remainder.rules.ts'
 import { withColorObjects } from './legacy-hex.rules.ts'
 import { readOwnResolver } from './read-own-resolver.rules.ts'
+import { readStyleSheet } from './read-style-sheet.rules.ts'
 import { readTokens, TOO_MANY, type TokensRead } from './read-tokens.rules.ts'
 
 export type ImportReading =
@@ -21,19 +22,34 @@ export interface ReadOptions {
   readonly stands: (name: string) => boolean
   /** Colours of older files, text of hexadecimal digits, are read too. */
   readonly legacyHex: boolean
+  /** Hyphens of custom properties part groups. */
+  readonly hyphensAsDots?: boolean
 }
 
-/** Reads a token file or a resolver file, or tells every fault of it with a pointer into it. */
-export function readImport(given: JsonObject, options: ReadOptions): ImportReading {
+/** Reads a token file, a resolver file or a style sheet, or tells every fault of it with its place. */
+export function readImport(given: JsonObject | string, options: ReadOptions): ImportReading {
   if (hasTooMany(given)) return { ok: false, faults: [TOO_MANY] }
+  if (typeof given !== 'string') return readDocument(given, options)
+  const { stands, hyphensAsDots = false } = options
+  const sheet = readStyleSheet(given, { stands, hyphensAsDots })
+  if (!sheet.ok) return sheet
+  const read = readDocument(sheet.document, options)
+  return read.ok ? withNotes(read.file, sheet.notes) : read
+}
+
+const withNotes = (file: ImportFile, notes: readonly ImportNoteWire[]): ImportReading => ({
+  ok: true,
+  file: notes.length === 0 ? file : { ...file, notes: [...notes, ...file.notes] },
+})
+
+function readDocument(given: JsonObject, options: ReadOptions): ImportReading {
   const { document, notes } = options.legacyHex
     ? withColorObjects(given)
     : { document: given, notes: [] }
   const read = isResolver(document)
     ? readResolver(document, options)
     : readTokenFile(document, options)
-  if (!read.ok || notes.length === 0) return read
-  return { ok: true, file: { ...read.file, notes: [...notes, ...read.file.notes] } }
+  return read.ok ? withNotes(read.file, notes) : read
 }
 
 function readTokenFile(document: JsonObject, { stands }: ReadOptions): ImportReading {
