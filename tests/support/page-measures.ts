@@ -91,7 +91,7 @@ function readFocus(page: Page): Promise<Focused | undefined> {
     )
     // A field is a line: with the focus it is 2 px.
     const { borderBottomWidth } = getComputedStyle(element)
-    const isLined = element.matches('input') && Number.parseFloat(borderBottomWidth) >= 2
+    const isLined = element.matches('input, textarea') && Number.parseFloat(borderBottomWidth) >= 2
     const { left, top, right, bottom } = element.getBoundingClientRect()
     const middle = [(left + right) / 2, (top + bottom) / 2] as const
     const over = document.elementFromPoint(...middle)

@@ -26,8 +26,8 @@ export function BreachComment({
   const adding = useMutation({
     mutationFn: addComment,
     onSuccess: async () => {
-      await client.invalidateQueries({ queryKey: breachQueries.one(system, breach).queryKey })
       drop()
+      await client.invalidateQueries({ queryKey: breachQueries.one(system, breach).queryKey })
     },
   })
   const isEmpty = comment.text.trim() === ''

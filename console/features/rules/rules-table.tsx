@@ -1,10 +1,14 @@
 import { Fragment, type ReactNode } from 'react'
 import { Link } from 'react-router-dom'
 import { type RowLinkProps, useRowWalk } from '#console/ui/row-walk.ts'
+import { useWindowWidth } from '#console/ui/window-size.ts'
 import { countInWords } from '#shared/checks/finding-words.ts'
 import { DERIVED_STATES } from '#shared/checks/model.ts'
 import { type ScopedRules, scopeInWords, scopeText } from './rule-scopes.ts'
 import { stateRuleInWords, themeRuleInWords } from './rule-words.ts'
+
+/** From this many px on, what the rules say has columns of its own. */
+const WIDE = 880
 
 /** Every scope that has rules, from wide to narrow; one may be opened. */
 export function RulesTable({
@@ -20,16 +24,17 @@ export function RulesTable({
   under: ReactNode
 }) {
   const walk = useRowWalk(scopes.length)
+  const isWide = useWindowWidth() >= WIDE
   return (
     // biome-ignore lint/a11y/noStaticElementInteractions: the arrows walk the row links inside, which are operable
     <div ref={walk.container} onKeyDown={walk.onKeyDown} className="ledger mt-14">
       <table aria-label="Rules">
         <thead>
           <tr>
-            <th className="w-[26%] @max-[700px]:w-auto">For</th>
-            <th className="@max-[700px]:hidden">A state is</th>
-            <th className="@max-[700px]:hidden">In a theme its colours</th>
-            <th className="number w-96">Tokens</th>
+            <th className={isWide ? 'w-[26%]' : ''}>For</th>
+            {isWide && <th>A state is</th>}
+            {isWide && <th>In a theme its colours</th>}
+            <th className="number w-70">Tokens</th>
           </tr>
         </thead>
         <tbody>
@@ -40,12 +45,13 @@ export function RulesTable({
                 <ScopeRow
                   scoped={scoped}
                   isOpened={text === opened}
+                  isWide={isWide}
                   href={href(text)}
                   link={walk.rowLink(index)}
                 />
                 {text === opened && (
                   <tr data-under>
-                    <td colSpan={4}>{under}</td>
+                    <td colSpan={isWide ? 4 : 2}>{under}</td>
                   </tr>
                 )}
               </Fragment>
@@ -60,11 +66,13 @@ export function RulesTable({
 function ScopeRow({
   scoped: { scope, rules, governs },
   isOpened,
+  isWide,
   href,
   link,
 }: {
   scoped: ScopedRules
   isOpened: boolean
+  isWide: boolean
   href: string
   link: RowLinkProps
 }) {
@@ -88,15 +96,15 @@ function ScopeRow({
           {scopeInWords(scope)}
         </Link>
         <span className="block text-13 font-normal text-ink-soft">{kindInWords(scope.kind)}</span>
-        <span className="hidden text-13 font-normal text-ink-soft @max-[700px]:block">
-          {states}
-          {themes}
-        </span>
+        {!isWide && (
+          <span className="mt-4 block text-13 font-normal">
+            {states}
+            <span className="block text-ink-soft">{themes}</span>
+          </span>
+        )}
       </td>
-      <td className="py-6! pr-12! align-top! font-normal! @max-[700px]:hidden">{states}</td>
-      <td className="py-6! pr-12! align-top! font-normal! text-ink-soft @max-[700px]:hidden">
-        {themes}
-      </td>
+      {isWide && <td className="py-6! pr-12! align-top! font-normal!">{states}</td>}
+      {isWide && <td className="py-6! pr-12! align-top! font-normal! text-ink-soft">{themes}</td>}
       <td className="number figures py-6! align-top! font-normal!">{governs.length}</td>
     </tr>
   )
@@ -150,8 +158,8 @@ export function Governed({
       )}
       <ul className="mt-8 max-h-240 overflow-y-auto columns-[200px] gap-x-28 text-13">
         {governs.map((name) => (
-          <li key={name} className="break-words">
-            <Link to={href(name)} className="hover:underline">
+          <li key={name} className="flex min-h-24 items-center break-words">
+            <Link to={href(name)} className="min-w-0 py-3 hover:underline">
               {name}
             </Link>
           </li>

@@ -36,8 +36,11 @@ export function StateRuleFields({
   ] as const
   return (
     <fieldset className="min-w-0 border-b border-feint py-12">
-      <legend className="float-left w-full font-medium wide:w-90 wide:pt-20">{state}</legend>
+      <legend className="sr-only">{state}</legend>
       <div className="flex flex-wrap items-end gap-x-20 gap-y-10">
+        <span aria-hidden="true" className="w-full font-medium wide:w-70 wide:pb-5">
+          {state}
+        </span>
         {STATE_FIELDS.map(({ field, label }) => (
           <LineField
             key={field}
