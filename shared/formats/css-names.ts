@@ -25,8 +25,9 @@ export function createCssNames(hyphensAsDots: boolean): CssNames {
     const name = nameOf(property)
     const above = groupsOf(name)
     if (name === '' || !name.split('.').every(isSegment)) {
-      return 'A name is segments that are not empty, without braces, not starting with $.'
+      return 'A name has segments without braces and control characters, none empty or starting with $.'
     }
+    if (name.length > LONGEST) return `A name has ${LONGEST} characters at most.`
     const twin = tokens.get(name)
     const holder = above.map((group) => tokens.get(group)).find((one) => one !== undefined)
     const member = groups.get(name)
@@ -39,7 +40,9 @@ export function createCssNames(hyphensAsDots: boolean): CssNames {
   return { nameOf, faultOf, treeOf: (list) => treeOf(list, nameOf) }
 }
 
-const isSegment = (segment: string) => segment !== '' && !/^\$|[{}]/.test(segment)
+const LONGEST = 255
+const isSegment = (segment: string) =>
+  segment !== '' && segment !== '__proto__' && !/^\$|[{}\p{Cc}]/u.test(segment)
 
 function groupsOf(name: string): string[] {
   const groups: string[] = []

@@ -8,11 +8,15 @@ export type CssValue =
   | { readonly kind: 'alias'; readonly property: string; readonly fallback?: string }
   | { readonly kind: 'other'; readonly why: string }
 
+/** Patterns run over a value once for each fallback in it, so it has an end. */
+const LONGEST = 1024
+
 /**
  * Reads a value: a fixed colour, or a reference to another property. Anything else may still be good CSS.
  * @see https://www.w3.org/TR/css-variables-1/#using-variables
  */
 export function readCssValue(text: string): CssValue {
+  if (text.length > LONGEST) return { kind: 'other', why: 'It is longer than any colour' }
   const reference = /^var\(\s*(--(?:\\[\s\S]|[^\s,()\\])+)\s*(?:,([\s\S]*))?\)$/i.exec(text)
   if (reference) {
     const [, property = '', fallback] = reference
@@ -34,6 +38,7 @@ export function readCssValue(text: string): CssValue {
  * @see https://www.w3.org/TR/css-color-5/#light-dark
  */
 export function readLightDark(text: string): readonly [light: string, dark: string] | undefined {
+  if (text.length > 2 * LONGEST) return undefined
   const inner = /^light-dark\(([\s\S]*)\)$/i.exec(text)?.[1]
   if (inner === undefined) return undefined
   const parts = ['']

@@ -81,6 +81,12 @@ describe('one block', () => {
     expect(leftOut.find(({ line }) => line === 9)?.detail).toContain('@media print')
   })
 
+  it('leaves out a value that is longer than any colour, however many fallbacks lie in it', () => {
+    const nested = `${'var(--no,'.repeat(200_000)}red${')'.repeat(200_000)}`
+    const { leftOut } = read(`:root { --a: ${nested}; --b: light-dark(${nested}, red) }`)
+    expect(leftOut.map(({ property }) => property)).toEqual(['--a', '--b'])
+  })
+
   it('answers the later declaration, unless the earlier one is important', () => {
     const css = ':root { --a: #111; --b: #111 !important } html { --a: #222; --b: #222 }'
     expect(colors(read(css).document)).toEqual({ a: '222222ff', b: '111111ff' })
@@ -208,6 +214,11 @@ describe('a style sheet that cannot be taken', () => {
     expect(faults).toHaveLength(5)
   })
 
+  it.each([String.raw`--\1 x`, '--__proto__', '--', String.raw`--\$x`, `--${'x'.repeat(256)}`])(
+    'refuses the name of %s',
+    (property) => expect(faultsOf(`:root { ${property}: red }`)).toHaveLength(1),
+  )
+
   it('refuses two properties that come to one name', () => {
     const [fault] = faultsOf(':root { --a-b: red; --a--b: blue }', { hyphensAsDots: true })
     expect(fault?.detail).toContain('--a-b')
@@ -223,6 +234,7 @@ describe('a style sheet that cannot be taken', () => {
     expect(faultsOf(deep)[0]?.detail).toContain('depth')
     const wide = `${'a,b,c,d{'.repeat(8)}--a:red${'}'.repeat(8)}`
     expect(faultsOf(wide)[0]?.detail).toContain('selectors')
+    expect(faultsOf(';'.repeat(400_001))[0]?.detail).toContain('400000')
   })
 })
 
