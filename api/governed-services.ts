@@ -7,6 +7,7 @@ import { createImportsService } from './features/imports/imports.service.ts'
 import type { JobsService } from './features/jobs/jobs.service.ts'
 import { createDistinctSetsService } from './features/distinct-sets/distinct-sets.service.ts'
 import { createPairsService } from './features/pairs/pairs.service.ts'
+import { createRepairService } from './features/repair/repair.service.ts'
 import { createHeadBeginService } from './features/revisions/head-begin.service.ts'
 import { createHeadWriteService } from './features/revisions/head-write.service.ts'
 import { createHeadsService } from './features/revisions/heads.service.ts'
@@ -53,6 +54,7 @@ export function createGovernedServices(
     distinctSets: createDistinctSetsService({ heads, writes, newId }),
     themes: createThemesService({ heads, writes, newId }),
     rules: createRulesService({ heads, writes }),
+    repair: createRepairService({ heads }),
     imports: createImportsService({ heads, writes, jobs, newId }),
     checks: createChecksService({
       heads,

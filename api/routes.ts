@@ -1,5 +1,6 @@
 import { mountBreaches } from './features/breaches/breaches.routes.ts'
 import { mountChecks } from './features/checks/checks.routes.ts'
+import { mountColors } from './features/colors/colors.routes.ts'
 import { mountDistinctSets } from './features/distinct-sets/distinct-sets.routes.ts'
 import { mountHealth } from './features/health/health.routes.ts'
 import { mountImports } from './features/imports/imports.routes.ts'
@@ -7,6 +8,7 @@ import { mountJobs } from './features/jobs/jobs.routes.ts'
 import { mountKeys } from './features/keys/keys.routes.ts'
 import { mountMembers } from './features/members/members.routes.ts'
 import { mountPairs } from './features/pairs/pairs.routes.ts'
+import { mountRepair } from './features/repair/repair.routes.ts'
 import { mountRevisions } from './features/revisions/revisions.routes.ts'
 import { mountRules } from './features/rules/rules.routes.ts'
 import { mountSessions } from './features/sessions/sessions.routes.ts'
@@ -31,6 +33,8 @@ export function mountAll(router: ApiRouter, services: Services): void {
   mountChecks(router, services.checks)
   mountBreaches(router, services)
   mountRevisions(router, services.revisions)
+  mountRepair(router, services.repair)
+  mountColors(router)
   mountJobs(router, services.jobs)
   mountHealth(router, services.health)
 }

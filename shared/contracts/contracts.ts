@@ -1,5 +1,6 @@
 import * as breaches from './breaches.contract.ts'
 import * as checks from './checks.contract.ts'
+import * as colors from './colors.contract.ts'
 import * as distinctSets from './distinct-sets.contract.ts'
 import * as health from './health.contract.ts'
 import * as imports from './imports.contract.ts'
@@ -7,6 +8,7 @@ import * as jobs from './jobs.contract.ts'
 import * as keys from './keys.contract.ts'
 import * as members from './members.contract.ts'
 import * as pairs from './pairs.contract.ts'
+import * as repair from './repair.contract.ts'
 import * as revisions from './revisions.contract.ts'
 import type { Contract } from './route.ts'
 import * as rules from './rules.contract.ts'
@@ -33,6 +35,8 @@ export const contracts: readonly Contract[] = [
   breaches,
   sightings,
   revisions,
+  repair,
+  colors,
   keys,
   members,
   jobs,

@@ -135,6 +135,27 @@ const colorInputSchema = dtcgColorSchema
   )
   .meta({ id: 'ColorInput', description: 'Each component lies in the range of its space' })
 
+/** A colour by itself, that names no token: any CSS Color 4 string, or a colour object. */
+export const colorValueSchema = z
+  .union([
+    z
+      .string()
+      .trim()
+      .min(1, { abort: true })
+      .max(255, { abort: true })
+      .superRefine((text, context) => {
+        const read = parseColor(text)
+        if (!read.ok) context.addIssue({ code: 'custom', message: read.reason })
+      }),
+    colorInputSchema,
+  ])
+  .meta({
+    id: 'ColorValue',
+    description: 'A CSS Color 4 string or a colour object',
+    example: 'oklch(0.585 0.128 243)',
+  })
+export type ColorValue = z.infer<typeof colorValueSchema>
+
 const isBraced = (text: string): boolean => text.startsWith('{') && text.endsWith('}')
 
 /** A CSS colour, or a name in braces: whether there is a token of that name is not for a contract to say. */
