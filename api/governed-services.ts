@@ -5,6 +5,7 @@ import { createChecksReads } from './features/checks/checks.reads.ts'
 import { createChecksService } from './features/checks/checks.service.ts'
 import { createImportsService } from './features/imports/imports.service.ts'
 import type { JobsService } from './features/jobs/jobs.service.ts'
+import { createCoverageService } from './features/coverage/coverage.service.ts'
 import { createDistinctSetsService } from './features/distinct-sets/distinct-sets.service.ts'
 import { createPairsService } from './features/pairs/pairs.service.ts'
 import { createRepairService } from './features/repair/repair.service.ts'
@@ -43,6 +44,7 @@ export function createGovernedServices(
     guards: writeGuards,
   })
   const begins = createHeadBeginService()
+  const coverage = createCoverageService({ heads, reads })
   return {
     heads,
     breaches,
@@ -51,6 +53,7 @@ export function createGovernedServices(
     systems: createSystemsService({ reads, transact, begins, writes, newId, findAccess }),
     tokens: createTokensService({ heads, writes, newId }),
     pairs: createPairsService({ heads, writes, newId }),
+    coverage,
     distinctSets: createDistinctSetsService({ heads, writes, newId }),
     themes: createThemesService({ heads, writes, newId }),
     rules: createRulesService({ heads, writes }),
@@ -60,6 +63,7 @@ export function createGovernedServices(
       heads,
       reads: createChecksReads(database.db),
       sightings,
+      coverage,
       transact,
       newId,
     }),

@@ -3,6 +3,7 @@ import { createBreachesReads } from './features/breaches/breaches.reads.ts'
 import { createBreachesRepository } from './features/breaches/breaches.repository.ts'
 import { createSightingsRepository } from './features/breaches/sightings.repository.ts'
 import { createChecksRepository } from './features/checks/checks.repository.ts'
+import { createCoverageRepository } from './features/coverage/coverage.repository.ts'
 import { createJobsRepository } from './features/jobs/jobs.repository.ts'
 import { createKeysRepository } from './features/keys/keys.repository.ts'
 import { createMembersRepository } from './features/members/members.repository.ts'
@@ -22,6 +23,7 @@ export const createRepositories = (db: Executor) => ({
   audit: createAuditTrail(db),
   breaches: { ...createBreachesReads(db), ...createBreachesRepository(db) },
   checks: createChecksRepository(db),
+  coverage: createCoverageRepository(db),
   heads: createHeadsRepository(db),
   jobs: createJobsRepository(db),
   keys: createKeysRepository(db),

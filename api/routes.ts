@@ -1,6 +1,7 @@
 import { mountBreaches } from './features/breaches/breaches.routes.ts'
 import { mountChecks } from './features/checks/checks.routes.ts'
 import { mountColors } from './features/colors/colors.routes.ts'
+import { mountCoverage } from './features/coverage/coverage.routes.ts'
 import { mountDistinctSets } from './features/distinct-sets/distinct-sets.routes.ts'
 import { mountHealth } from './features/health/health.routes.ts'
 import { mountImports } from './features/imports/imports.routes.ts'
@@ -29,6 +30,7 @@ export function mountAll(router: ApiRouter, services: Services): void {
   mountThemes(router, services.themes)
   mountRules(router, services.rules)
   mountDistinctSets(router, services.distinctSets)
+  mountCoverage(router, services.coverage)
   mountImports(router, services.imports)
   mountChecks(router, services.checks)
   mountBreaches(router, services)

@@ -1,6 +1,7 @@
 import * as breaches from './breaches.contract.ts'
 import * as checks from './checks.contract.ts'
 import * as colors from './colors.contract.ts'
+import * as coverage from './coverage.contract.ts'
 import * as distinctSets from './distinct-sets.contract.ts'
 import * as health from './health.contract.ts'
 import * as imports from './imports.contract.ts'
@@ -30,6 +31,7 @@ export const contracts: readonly Contract[] = [
   themes,
   rules,
   distinctSets,
+  coverage,
   imports,
   checks,
   breaches,

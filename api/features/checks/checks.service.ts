@@ -2,6 +2,7 @@ import * as z from 'zod'
 import type { Caller, SystemAccess } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
 import type { Seen, SightingsService } from '#api/features/breaches/sightings.service.ts'
+import type { CoverageService } from '#api/features/coverage/coverage.service.ts'
 import type { Head, HeadsService } from '#api/features/revisions/heads.service.ts'
 import { decodeCursor, encodeCursor } from '#api/paging.ts'
 import type { NewId } from '#api/platform/ids.ts'
@@ -28,7 +29,8 @@ export interface ChecksDeps {
   readonly heads: Pick<HeadsService, 'current'>
   readonly reads: ChecksReads
   readonly sightings: Pick<SightingsService, 'watch' | 'record'>
-  readonly transact: Transact<'checks' | 'heads' | 'breaches' | 'sightings'>
+  readonly coverage: Pick<CoverageService, 'observe'>
+  readonly transact: Transact<'checks' | 'heads' | 'breaches' | 'sightings' | 'coverage'>
   readonly newId: NewId
 }
 
@@ -40,7 +42,7 @@ const placeSchema = z.strictObject({ number: z.int().min(1) })
 
 /** Measures candidates against the head, and keeps what came out. */
 export function createChecksService(deps: ChecksDeps) {
-  const { heads, reads, sightings, transact, newId } = deps
+  const { heads, reads, sightings, coverage, transact, newId } = deps
 
   async function found(system: SystemAccess, id: string) {
     const row = await reads.find(system.id, id)
@@ -76,6 +78,7 @@ export function createChecksService(deps: ChecksDeps) {
         const watch = await sightings.watch(repositories, system.id, body.source)
         const number = await checks.takeNumber(system.id)
         await checks.insert({ ...row, number })
+        await coverage.observe(repositories, { system, head, ...observedIn(body) })
         if (watch === undefined) return
         const seen = seenBy(row, { head, verdict, evaluation: measured.evaluation })
         await checks.setLogged(row.id, await sightings.record(repositories, watch, seen))
@@ -102,6 +105,8 @@ export function createChecksService(deps: ChecksDeps) {
     },
   }
 }
+
+const observedIn = ({ pairs = [], source }: Asked['body']) => ({ pairs, source })
 
 /** Exemptions are the accessibility lead's own: a key is nobody, whoever owns it. */
 const mayExempt = ({ role, caller }: SystemAccess): boolean =>
