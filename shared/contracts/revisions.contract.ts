@@ -41,7 +41,7 @@ export const revisionSchema = z
     ...summary,
     edits: z.array(
       z.strictObject({
-        item: z.enum(['token', 'pair', 'theme', 'rules', 'settings', 'distinct-set']),
+        item: z.enum(['token', 'pair', 'theme', 'rules', 'settings', 'distinct-set', 'other']),
         operation: z.enum(['added', 'edited', 'removed']),
         id: idSchema,
         name: z.string(),
@@ -74,6 +74,10 @@ export const revisionSchema = z
     ),
     pairs: z.array(pairSchema.omit({ etag: true })),
     distinctSets: z.array(distinctSetSchema.omit({ etag: true })),
+    other: z
+      .record(z.string(), z.unknown())
+      .optional()
+      .meta({ description: 'What files brought that is not governed, verbatim; absent: nothing' }),
   })
   .meta({ id: 'Revision', description: 'A system as it stood, whole' })
 

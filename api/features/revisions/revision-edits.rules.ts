@@ -27,6 +27,8 @@ export interface Touched {
   readonly rules: readonly (Span & { readonly prefix: string })[]
   readonly settings: readonly Span[]
   readonly distinctSets: readonly (Span & { readonly id: string; readonly name: string })[]
+  /** What files brought besides. */
+  readonly others: readonly Span[]
 }
 
 /**
@@ -77,6 +79,12 @@ function versionsOf(touched: Touched, names: ModelNames): TouchedVersion[] {
       item: 'settings' as const,
       id: 'settings',
       name: 'settings',
+      fromRevision,
+    })),
+    ...touched.others.map(({ fromRevision }) => ({
+      item: 'other' as const,
+      id: 'other',
+      name: 'other',
       fromRevision,
     })),
   ]

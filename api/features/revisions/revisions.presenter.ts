@@ -50,5 +50,6 @@ export function presentRevision(
     tokens: model.tokens.map((token) => presentToken(token, names)),
     pairs: model.pairs.map((pair) => presentPair(pair, names)),
     distinctSets: (model.distinctSets ?? []).map((set) => presentDistinctSet(set, names)),
+    ...(model.remainder === undefined ? {} : { other: JSON.parse(model.remainder) }),
   }
 }

@@ -1,6 +1,7 @@
 import { and, desc, eq, lt, or } from 'drizzle-orm'
 import type { Executor } from '#api/platform/database.ts'
 import { distinctSetVersions } from '#drizzle/schema/distinct-sets.ts'
+import { documentVersions } from '#drizzle/schema/documents.ts'
 import { pairVersions } from '#drizzle/schema/pairs.ts'
 import { revisions } from '#drizzle/schema/revisions.ts'
 import { ruleVersions } from '#drizzle/schema/rules.ts'
@@ -38,7 +39,7 @@ export function createRevisionsReads(db: Executor) {
 
     /** Costs what the revision touched: both ends of a version are indexed. */
     async versionsTouched(systemId: string, number: number) {
-      const [tokens, pairs, themes, rules, settings, distinctSets] = await Promise.all([
+      const [tokens, pairs, themes, rules, settings, distinctSets, others] = await Promise.all([
         db
           .select({ id: tokenVersions.tokenId, name: tokenVersions.name, ...spanOf(tokenVersions) })
           .from(tokenVersions)
@@ -72,8 +73,12 @@ export function createRevisionsReads(db: Executor) {
           })
           .from(distinctSetVersions)
           .where(touchedBy(distinctSetVersions, systemId, number)),
+        db
+          .select(spanOf(documentVersions))
+          .from(documentVersions)
+          .where(touchedBy(documentVersions, systemId, number)),
       ])
-      return { tokens, pairs, themes, rules, settings, distinctSets }
+      return { tokens, pairs, themes, rules, settings, distinctSets, others }
     },
   }
 }
@@ -93,6 +98,7 @@ type Versions =
   | typeof ruleVersions
   | typeof settingVersions
   | typeof distinctSetVersions
+  | typeof documentVersions
 
 const spanOf = <Table extends Versions>({ fromRevision, toRevision }: Table) => ({
   fromRevision,

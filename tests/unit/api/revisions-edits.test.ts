@@ -7,6 +7,7 @@ const NOTHING: Touched = {
   themes: [],
   rules: [],
   settings: [],
+  others: [],
   distinctSets: [],
 }
 const names = {
