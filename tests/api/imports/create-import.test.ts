@@ -47,6 +47,7 @@ describe('merge', () => {
     expect(await sourceOf(system, 'action.label')).toBe('{paper}')
     const { body } = await system.maintainer.get(`${system.url}/revisions/${before + 1}`)
     expect(body.origin).toBe('import')
+    expect(body).not.toHaveProperty('other')
   })
 
   it('answers before and after of an edited token, and nothing that stayed', async () => {
@@ -89,6 +90,22 @@ describe('merge', () => {
     expect(answer.counts.tokens).toMatchObject({ added: 0, removed: 0 })
     expect(await namesIn(system)).toEqual(['paper', 'text', 'note'])
     expect(await sourceOf(system, 'note')).toBe('{text}')
+  })
+
+  it('answers a revision of its own where only what is no colour changes, under its message', async () => {
+    const system = await createSampleSystem(test)
+    const before = await revisionOf(system)
+    const space = { space: { $type: 'dimension', $value: { value: 4, unit: 'px' } } }
+    const answer = await imported(system, space, '?message=Spaces%20too')
+    expect(answer).toMatchObject({ written: true, effect: { revision: before + 1 } })
+    expect(answer.changes).toMatchObject([{ item: 'other', operation: 'edited' }])
+    const { body } = await system.maintainer.get(`${system.url}/revisions/${before + 1}`)
+    expect(body).toMatchObject({
+      message: 'Spaces too',
+      edits: [{ item: 'other', operation: 'added' }],
+      other: { document: space },
+    })
+    expect(await imported(system, space)).toMatchObject({ written: false, changes: [] })
   })
 
   it('answers breaches that it opens, as any direct write', async () => {
