@@ -31,7 +31,10 @@ export interface ColorProbe {
   readonly ratios: Float64Array
   /** By position in `rows`, PROBED_…. */
   readonly outcomes: Uint8Array
-  /** Tries a colour. The faults, if there are any, make the system unreadable: then the columns say nothing. */
+  /**
+   * Tries a colour. The faults, if there are any, make the system unreadable: then the columns say nothing.
+   * @throws TypeError for what is no colour: lightness or alpha outside 0 to 1, chroma below 0, or no finite number
+   */
   set(color: Oklch): readonly ModelFault[]
 }
 
@@ -67,6 +70,13 @@ function withColorSet(evaluation: Evaluation, place: ColorPlace, present: Oklch)
     throw new TypeError(`The present color cannot be set in its own place: ${detail}`)
   }
   return checked.evaluation
+}
+
+function assertColor({ l, c, h, alpha }: Oklch): void {
+  const isUnit = (part: number | null) => part === null || (part >= 0 && part <= 1)
+  const isChroma = c === null || (c >= 0 && Number.isFinite(c))
+  if (isUnit(l) && isUnit(alpha) && isChroma && (h === null || Number.isFinite(h))) return
+  throw new TypeError(`oklch(${l} ${c} ${h} / ${alpha}) is no color`)
 }
 
 type Sides = NonNullable<ProbeRow['sides']>
@@ -133,6 +143,7 @@ export function createColorProbe(
     ratios,
     outcomes,
     set(color) {
+      assertColor(color)
       const faults = values.set(color)
       if (faults.length > 0) return faults
       for (const underlay of underlays) {
