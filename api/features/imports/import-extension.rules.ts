@@ -36,6 +36,7 @@ const settingsSchema = z.strictObject({
 /** What a file may say of the whole system beyond the format. */
 const rootSchema = z.looseObject({
   engine: z.unknown().optional(),
+  ledger: z.array(z.string()).optional(),
   themes: z.array(themeSchema).max(8).optional(),
   pairs: z
     .array(pairInputSchema.extend({ id: idSchema.optional() }))
@@ -48,7 +49,7 @@ const rootSchema = z.looseObject({
 
 export type RootSaid = Pick<
   ImportFile,
-  'themes' | 'pairs' | 'rules' | 'settings' | 'distinctSets' | 'isWhole'
+  'ledger' | 'themes' | 'pairs' | 'rules' | 'settings' | 'distinctSets' | 'isWhole'
 >
 
 export type ExtensionReading =
@@ -68,11 +69,12 @@ export function readRootExtension(file: JsonObject): ExtensionReading {
     }))
     return { ok: false, faults }
   }
-  const { engine, themes, pairs, rules, settings, distinctSets } = read.data
+  const { engine, ledger, themes, pairs, rules, settings, distinctSets } = read.data
   return {
     ok: true,
     said: {
       isWhole: engine !== undefined,
+      ...(ledger ? { ledger } : {}),
       ...(rules ? { rules } : {}),
       ...(themes
         ? { themes: themes.map((theme, at) => ({ ...theme, ...under('themes', at) })) }

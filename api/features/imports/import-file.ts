@@ -12,6 +12,8 @@ import type { Remainder } from './import-remainder.rules.ts'
  */
 export interface ImportFile {
   readonly tokens: readonly FileToken[]
+  /** Names in the order of the ledger: in the groups of a file they lie otherwise. */
+  readonly ledger?: readonly string[]
   /** The base first. */
   readonly themes?: readonly FileTheme[]
   readonly pairs?: readonly FilePair[]

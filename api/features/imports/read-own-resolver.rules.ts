@@ -44,7 +44,7 @@ export function readOwnResolver(file: JsonObject, { said, stands }: OwnFile): Im
     ok: true,
     file: {
       ...said,
-      tokens: withOverrides(read.tokens, changed.overrides),
+      tokens: withOverrides(inLedgerOrder(read.tokens, said.ledger), changed.overrides),
       remainder: remainderOf(sources, (name) => names.has(name)),
       notes: [...read.notes, ...changed.notes, ...otherStates(file)],
       derivedAgain: read.derivedAgain + changed.derivedAgain,
@@ -152,6 +152,16 @@ function fileValueOf(given: unknown, pointer: string, faults: Fault[]): FileValu
     faults.push({ pointer: `${pointer}${fault.pointer}`, detail, code })
   }
   return undefined
+}
+
+/** What the ledger does not name comes last, as what is new does. */
+function inLedgerOrder(
+  tokens: readonly FileToken[],
+  ledger: readonly string[] = [],
+): readonly FileToken[] {
+  const places = new Map(ledger.map((name, at) => [name, at]))
+  const placeOf = ({ name }: FileToken) => places.get(name) ?? ledger.length
+  return tokens.toSorted((a, b) => placeOf(a) - placeOf(b))
 }
 
 function withOverrides(

@@ -49,6 +49,7 @@ function rootExtension({ model, names }: SystemIndex): JsonObject {
   const { distinctSets = [] } = model
   return {
     engine: ENGINE_STAMP,
+    ledger: model.tokens.map(({ name }) => name),
     settings: presentSettings(model.settings),
     rules: {
       states: writeStateRules(model.states, names),

@@ -62,6 +62,9 @@ it('leaves a system as it is that takes its own file back', () => {
       if (text === undefined) return
       const made = imported(EMPTY, text, idsIn(model))
       expect(made.file.notes).toEqual([])
+      expect(made.model.tokens.map(({ name }) => name)).toEqual(
+        model.tokens.map(({ name }) => name),
+      )
       expect(JSON.parse(fileOf(made.model)!)).toEqual(JSON.parse(text))
       const again = imported(made.model, text, () => 'never')
       expect(again.edits).toEqual({
@@ -71,9 +74,9 @@ it('leaves a system as it is that takes its own file back', () => {
       })
       systems += 1
     }),
-    { numRuns: 80 },
+    { numRuns: 50 },
   )
-  expect(systems).toBeGreaterThan(20)
+  expect(systems).toBeGreaterThan(12)
 }, 60_000)
 
 function bytesOf(document: DtcgDocument, name: string): string {
