@@ -98,8 +98,20 @@ describe('problems', () => {
     expect(text).not.toMatch(/<style|style=|<script/)
   })
 
-  it('refuses a code that there is not', async () => {
-    await get('/problems/constructor').expect(404)
+  it.each(['constructor', 'Not-Found', 'not-found-at-all'])(
+    'refuses the code %s, that there is not, with the way to those there are',
+    async (code) => {
+      const { text, headers } = await get(`/problems/${code}`).expect(404)
+      expect(headers['content-type']).toContain('text/html')
+      expect(text).toContain('<a href="/problems">')
+      const { body } = await get(`/problems/${code}`, 'application/json').expect(404)
+      expect(body.type).toBe('/problems/not-found')
+    },
+  )
+
+  it('answers the list of all, each with its page', async () => {
+    const { text } = await get('/problems').expect(200)
+    for (const code of Object.keys(PROBLEMS)) expect(text).toContain(`href="/problems/${code}"`)
   })
 })
 
