@@ -1,6 +1,7 @@
 import type { GovernedSystem } from '#shared/checks/governed-model.ts'
 import { isToken } from '#shared/formats/dtcg-document.ts'
 import { type JsonObject, objectOf } from '#shared/formats/dtcg-fault.ts'
+import { EXTENSION } from '#shared/formats/system-resolver.ts'
 import { propertiesIn } from './read-style-sheet.rules.ts'
 
 /**
@@ -16,7 +17,18 @@ export const MOST_TOKENS = 20_000
 /** Whether an import would keep its caller waiting; what is refused anyway does not. */
 export function isLong(file: JsonObject | string, model: GovernedSystem): boolean {
   const given = tokensIn(file)
-  return !hasTooMany(file, given) && importEffort(given, model) > MOST_AT_ONCE
+  return !hasTooMany(file, given) && importEffort(given * readings(file), model) > MOST_AT_ONCE
+}
+
+/** The contexts of a resolver file of another making are read one by one, each with all that they share. */
+function readings(file: JsonObject | string): number {
+  if (typeof file === 'string' || !isResolver(file)) return 1
+  if (objectOf(objectOf(file.$extensions)?.[EXTENSION])?.engine !== undefined) return 1
+  const modifiers = Object.values(objectOf(file.modifiers) ?? {})
+  const contexts = modifiers.map(
+    (modifier) => Object.keys(objectOf(objectOf(modifier)?.contexts) ?? {}).length,
+  )
+  return Math.max(1, ...contexts)
 }
 
 /** A resolver file holds one document a choice, so its tokens are counted in each. */

@@ -1,6 +1,7 @@
 import type { GovernedTheme, GovernedToken } from '#shared/checks/governed-model.ts'
 import type { PairModel, RuleScope } from '#shared/checks/model.ts'
 import type { SystemIndex } from '#shared/contracts/governed-system.ts'
+import type { Fault } from '#shared/contracts/problems.ts'
 import {
   type Reading,
   readThemeKey,
@@ -10,7 +11,12 @@ import {
 import type { FileTheme, ImportFile } from './import-file.ts'
 import type { Identities } from './import-names.rules.ts'
 
-const MOST_THEMES = 8
+export const MOST_THEMES = 8
+
+export const tooManyThemes = (pointer: string): Fault => ({
+  pointer,
+  detail: `A system has at most ${MOST_THEMES} themes`,
+})
 
 /** Ground and ink for themes whose file does not tell them, by name. */
 export interface Span {
@@ -48,8 +54,7 @@ export function themesOf(given: ThemesOf): readonly GovernedTheme[] {
   const placed = new Set(merged.map(({ id }) => id))
   const themes = [...merged, ...[...put.values()].filter(({ id }) => !placed.has(id))]
   if (themes.length > MOST_THEMES) {
-    const pointer = file.themes[MOST_THEMES]?.pointer ?? ''
-    reading.faults.push({ pointer, detail: `A system has at most ${MOST_THEMES} themes` })
+    reading.faults.push(tooManyThemes(file.themes[MOST_THEMES]?.pointer ?? ''))
   }
   return themes
 }

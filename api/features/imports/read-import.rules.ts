@@ -5,6 +5,7 @@ import { type JsonObject, pointerTo } from '#shared/formats/dtcg-fault.ts'
 import { type DtcgResolver, readDtcgResolver } from '#shared/formats/dtcg-resolver.ts'
 import { readRootExtension } from './import-extension.rules.ts'
 import { hasTooMany, isResolver } from './import-effort.rules.ts'
+import { MOST_THEMES, tooManyThemes } from './import-themes.rules.ts'
 import type { FileTheme, FileToken, FileValues, ImportFile } from './import-file.ts'
 import { originsOf } from './import-origins.rules.ts'
 import { remainderOf } from './import-remainder.rules.ts'
@@ -101,6 +102,10 @@ function readForeignResolver(
     return { ok: false, faults }
   }
   const contexts = modifier === undefined ? [undefined] : contextsOf(modifier)
+  // Each is a whole document: what is refused anyway is not read many times over.
+  if (modifier !== undefined && contexts.length > MOST_THEMES) {
+    return { ok: false, faults: [tooManyThemes(pointerTo('/modifiers', modifier.name))] }
+  }
   const readings = contexts.map((context) => {
     const choice = resolver.documentFor(
       modifier === undefined || context === undefined ? {} : { [modifier.name]: context },

@@ -142,7 +142,7 @@ describe('resolver files', () => {
     }).expect(422)
     const { body } = await resolver({
       sets: { core: { sources: [SPAN] } },
-      modifiers: { theme: { contexts: { light: [], ...contexts(8) } } },
+      modifiers: { theme: { contexts: contexts(9) } },
       resolutionOrder: [{ $ref: '#/sets/core' }, { $ref: '#/modifiers/theme' }],
     }).expect(422)
     const details = body.errors.map((fault: { detail: string }) => fault.detail)
