@@ -54,7 +54,9 @@ describe('the pair sheet', () => {
       .getByRole('link', { name: 'hover' })
       .click()
     await page.waitForURL(/theme=kiosk&state=hover$/)
-    expect((await sheetWords(page)).every(({ label }) => label.includes('hover'))).toBe(true)
+    await expect
+      .poll(async () => (await sheetWords(page)).every(({ label }) => label.includes('hover')))
+      .toBe(true)
   })
 
   it('answers the arrows with the next word, its name seen, Enter with its pair', async () => {
@@ -98,7 +100,16 @@ describe('the pair sheet', () => {
     await page.emulateMedia({ media: 'print' })
     const names = page.locator('.sheet-name')
     expect(await names.evaluateAll((all) => all.every((name) => name.checkVisibility()))).toBe(true)
-    expect(await page.getByRole('navigation').count()).toBe(0)
+    for (const role of ['navigation', 'banner', 'search', 'button'] as const) {
+      expect([role, await page.getByRole(role).count()]).toEqual([role, 0])
+    }
+    const edges = await page.evaluate(() =>
+      [...document.querySelectorAll('.sheet-ruler > :last-child, .sheet-cloth')].map((part) => {
+        const { left, right } = part.getBoundingClientRect()
+        return `${Math.round(left)} to ${Math.round(right)}`
+      }),
+    )
+    expect(new Set(edges).size).toBe(1)
     const foot = page.locator('.sheet-foot')
     await expect
       .poll(() => foot.textContent())

@@ -87,7 +87,7 @@ function readFocus(page: Page): Promise<Focused | undefined> {
       ({ outlineStyle, outlineWidth, outlineColor }) =>
         outlineStyle === 'solid' &&
         Number.parseFloat(outlineWidth) >= 2 &&
-        !/ 0\)$/.test(outlineColor),
+        !/^rgba.* 0\)$/.test(outlineColor),
     )
     // A field is a line: with the focus it is 2 px.
     const { borderBottomWidth } = getComputedStyle(element)

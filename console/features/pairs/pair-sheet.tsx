@@ -11,7 +11,7 @@ import { SheetRuler } from './sheet-ruler.tsx'
 /** Before it is laid out. */
 const USUAL_WIDTH = 1060
 /** What a printed page leaves for the ruler beside the labels. */
-const PRINTED_WIDTH = 540
+const PRINTED_WIDTH = 480
 
 /** The specimen sheet: each background a band, each declared foreground at the place of its ratio. */
 export function PairSheet({

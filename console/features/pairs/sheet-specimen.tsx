@@ -71,9 +71,15 @@ function Word({ word, href, link }: { word: SheetWord; href: string; link: RowLi
   return (
     <Link to={href} {...link} aria-label={labelOf(word)} className="sheet-word">
       {shape === 'bar' ? (
-        <span className="block h-12 w-26" style={{ backgroundColor: word.color }} />
-      ) : (
         <span
+          aria-hidden="true"
+          className="block h-12 w-26"
+          style={{ backgroundColor: word.color }}
+        />
+      ) : (
+        // A specimen of somebody's colours, seen as they are: what is to be read stands in the name of the link.
+        <span
+          aria-hidden="true"
           className={shape === 'link-in-text' ? 'underline' : ''}
           style={{ color: word.color, fontSize: size, fontWeight: weight }}
         >
