@@ -34,7 +34,7 @@ describe('handling a breach', () => {
     await assigned(page).fill('Pelle')
     await page.getByRole('option', { name: 'Pelle Strand' }).click()
     await history(page).getByText('Assigned to Pelle Strand').waitFor()
-    await page.getByRole('row').filter({ hasText: 'Pelle Strand' }).first().waitFor()
+    await page.waitForLoadState('networkidle')
     await page.goto(BREACHES)
     await page.getByRole('button', { name: 'Assignee' }).click()
     await page.getByRole('option', { name: 'Pelle Strand' }).click()

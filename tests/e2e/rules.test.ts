@@ -38,7 +38,7 @@ describe('the rules of a system', () => {
     await page.keyboard.press('Escape')
     await page.getByRole('button', { name: 'Open its rules' }).click()
     await page.waitForURL((url) => url.searchParams.get('of') === 'prefix:text')
-    await page.getByRole('link', { name: 'text.primary', exact: true }).waitFor()
+    await page.getByRole('main').getByRole('link', { name: 'text.primary', exact: true }).waitFor()
     await page.getByRole('button', { name: 'In dark colours: rule' }).click()
     await page.getByRole('option', { name: 'keep the parent’s' }).click()
     await effect(page)

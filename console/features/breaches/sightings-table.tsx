@@ -24,7 +24,7 @@ export function SightingsTable({
             <th className="w-122">
               <span className="block w-64 text-end">Ratio</span>
             </th>
-            <th className="w-170 @max-[1060px]:hidden">Seen</th>
+            <th className="w-200 @max-[1060px]:hidden">Seen</th>
             <th className="w-110 @max-[560px]:hidden">In the log</th>
           </tr>
         </thead>
@@ -84,7 +84,9 @@ function SightingRow({
       <td>
         <RatioColumns ratio={sighting.ratio} required={sighting.required} outcome="breach" />
       </td>
-      <td className="py-6! text-13 text-ink-soft @max-[1060px]:hidden">{seenInWords(sighting)}</td>
+      <td className="py-6! pr-20! text-13 text-ink-soft @max-[1060px]:hidden">
+        {seenInWords(sighting)}
+      </td>
       <td className="@max-[560px]:hidden">{log}</td>
     </tr>
   )

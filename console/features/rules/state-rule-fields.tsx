@@ -4,7 +4,7 @@ import { NameBox } from '#console/ui/name-box.tsx'
 import type { DerivedState } from '#shared/checks/model.ts'
 import type { StateRuleWire } from '#shared/contracts/rules.contract.ts'
 import { STATE_FIELDS, readStateRuleText, type StateRuleText } from './state-rule-text.ts'
-import { unbraced } from './theme-rule-text.ts'
+import { referenceNames, unbraced } from './theme-rule-text.ts'
 
 /** One state's rule as a row of fields; what is left empty is written in faintly, from the wider rule. */
 export function StateRuleFields({
@@ -67,7 +67,7 @@ export function StateRuleFields({
           <NameBox
             label="Reference"
             value={text.reference}
-            names={['ground', 'ink', ...tokens]}
+            names={referenceNames(tokens)}
             fault={faults.reference ?? referenceFault}
             onChange={(reference) => onChange({ ...text, reference })}
             className="w-full wide:w-200"

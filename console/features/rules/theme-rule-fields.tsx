@@ -6,6 +6,7 @@ import {
   FIELDS_OF_KIND,
   readsAgainst,
   readThemeRuleText,
+  referenceNames,
   type ThemeRuleText,
 } from './theme-rule-text.ts'
 
@@ -49,7 +50,7 @@ export function ThemeRuleFields({
         <NameBox
           label="Measured against"
           value={text.against || (text.kind === 'inherited' ? '' : 'ground')}
-          names={['ground', 'ink', ...tokens]}
+          names={referenceNames(tokens)}
           fault={referenceFault}
           onChange={(against) => onChange({ ...text, against })}
           className="w-full wide:w-200"

@@ -67,12 +67,21 @@ export function readThemeRuleText(text: ThemeRuleText): RuleReading<ThemeRuleWir
   return Object.keys(faults).length > 0 ? { ok: false, faults } : { ok: true, rule }
 }
 
+const isRole = (name: string): boolean => name === 'ground' || name === 'ink'
+
+/** What a rule may refer to, as it is written: the roles, then tokens; one that is named like a role stands in braces. */
+export function referenceNames(tokens: readonly string[]): string[] {
+  return ['ground', 'ink', ...tokens.map((name) => (isRole(name) ? `{${name}}` : name))]
+}
+
 /** A role as it is, a token's name in braces. */
 export function braced(reference: string): string {
   const name = reference.trim()
-  return name === 'ground' || name === 'ink' ? name : `{${name}}`
+  return isRole(name) || /^\{.*\}$/.test(name) ? name : `{${name}}`
 }
 
+/** The same as it is written. */
 export function unbraced(reference: string | undefined): string {
-  return reference?.replace(/^\{(.*)\}$/, '$1') ?? ''
+  const name = /^\{(.*)\}$/.exec(reference ?? '')?.[1]
+  return name === undefined || isRole(name) ? (reference ?? '') : name
 }
