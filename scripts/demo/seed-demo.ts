@@ -1,4 +1,5 @@
 import { ApiError, type Call } from '#shared/client/client.ts'
+import { createDistinctSet } from '#shared/contracts/distinct-sets.contract.ts'
 import { createKey } from '#shared/contracts/keys.contract.ts'
 import { listMembers, putMembers } from '#shared/contracts/members.contract.ts'
 import { createPair, getPair, patchPair } from '#shared/contracts/pairs.contract.ts'
@@ -53,6 +54,9 @@ const take = async (step: Step, call: Call, pairIds: Map<string, string>): Promi
       await call(putRules, { params: inSystem, body: step.body, ifMatch: body.etag })
       return
     }
+    case 'create-distinct-set':
+      await call(createDistinctSet, { params: inSystem, body: step.body })
+      return
     case 'create-pair': {
       const { body } = await call(createPair, { params: inSystem, body: step.body })
       pairIds.set(pairKey(step.body), body.id)

@@ -67,7 +67,29 @@ const declare = (pair: DemoPair, at: number): Step => ({
   body: { ...pair, message: `Declared for the ${pair.product?.replace('-', ' ')}` },
 })
 
-/** How the ledger came to be: meanings, palette, themes, rules, then what stands on what. */
+/** What must stay tellable apart on the charts, the board and the seat plan. */
+const distinctSets: readonly Step[] = [
+  {
+    by: 'pelle',
+    kind: 'create-distinct-set',
+    body: {
+      name: 'Routes on the chart',
+      tokens: [1, 2, 3, 4, 5, 6].map((route) => `chart.route.${route}`),
+      message: 'Six lines that cross',
+    },
+  },
+  {
+    by: 'maintainer',
+    kind: 'create-distinct-set',
+    body: {
+      name: 'Status of a sailing',
+      tokens: ['ontime', 'delayed', 'cancelled', 'boarding'].map((status) => `status.${status}`),
+      message: 'Told apart at a glance, also by those who see no red',
+    },
+  },
+]
+
+/** How the ledger came to be: meanings, palette, themes, rules, what stands on what, and what is kept apart. */
 export const opening: readonly Step[] = [
   ...asColors,
   ...palette.map((body): Step => ({ by: 'maintainer', kind: 'create-token', body })),
@@ -75,4 +97,5 @@ export const opening: readonly Step[] = [
   { by: 'maintainer', kind: 'put-rules', body: rules },
   ...followPalette,
   ...pairs.map(declare),
+  ...distinctSets,
 ]

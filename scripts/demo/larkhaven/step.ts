@@ -1,4 +1,5 @@
 import type * as z from 'zod'
+import type { createDistinctSetBody } from '#shared/contracts/distinct-sets.contract.ts'
 import type { pairInputSchema, patchPairBody } from '#shared/contracts/pairs.contract.ts'
 import type { putRulesBody } from '#shared/contracts/rules.contract.ts'
 import type { putThemeBody } from '#shared/contracts/themes.contract.ts'
@@ -24,6 +25,10 @@ type Doing =
     }
   | { readonly kind: 'put-theme'; readonly theme: DemoTheme }
   | { readonly kind: 'put-rules'; readonly body: DemoRules }
+  | {
+      readonly kind: 'create-distinct-set'
+      readonly body: z.input<typeof createDistinctSetBody>
+    }
   | { readonly kind: 'create-pair'; readonly body: DemoPair & { readonly message: string } }
   | {
       readonly kind: 'patch-pair'

@@ -67,6 +67,8 @@ export function wholeAfter(steps: readonly Step[]): WholeSystem {
     'create-pair': ({ body }: Extract<Step, { kind: 'create-pair' }>) => {
       pairs.set(pairKey(body), newPair(body))
     },
+    // A distinct set gates nothing: no part of what the demo is measured by.
+    'create-distinct-set': () => {},
     'patch-pair': ({ pair, body }: Extract<Step, { kind: 'patch-pair' }>) => {
       const declared = pairs.get(pairKey(pair))
       if (!declared) throw new TypeError(`The demo declares no pair ${pairKey(pair)}`)
