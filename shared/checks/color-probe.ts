@@ -8,6 +8,8 @@ import { recheck } from './recheck.ts'
 import { type MeasuredStack, stackRatio, toUnderlay } from './stack-ratio.ts'
 import { createValueProbe, type ValueProbe } from './value-probe.ts'
 
+const VALUES_AN_EVALUATION = 100
+
 const UNMOVED = { foreground: 0, background: 0 }
 
 /** What a row comes to while a colour is tried: nothing to say, a breach, or one that a waiver covers. */
@@ -27,6 +29,8 @@ export interface ColorProbe {
   readonly evaluation: Evaluation
   readonly rows: readonly ProbeRow[]
   readonly values: ValueProbe
+  /** Evaluations that one colour counts as: one, or one for each hundred values and findings that hang on it. */
+  readonly weight: number
   /** By position in `rows`, the deciding ratio of the last colour. */
   readonly ratios: Float64Array
   /** By position in `rows`, PROBED_…. */
@@ -140,6 +144,7 @@ export function createColorProbe(
     evaluation: placed,
     rows,
     values,
+    weight: Math.ceil((values.count + rows.length) / VALUES_AN_EVALUATION),
     ratios,
     outcomes,
     set(color) {

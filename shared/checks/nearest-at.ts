@@ -7,7 +7,7 @@ import type { WaiverModel } from './model.ts'
 import type { ProbeRow } from './probe-rows.ts'
 import { createProbeTrial } from './probe-trial.ts'
 
-/** Evaluations that a search for one token may take, unless told otherwise. */
+/** Evaluations that a search for one token may take, unless told otherwise; see `ColorProbe.weight`. */
 export const NEAREST_BUDGET = 8000
 
 /** A waived finding is made to pass too where that costs no more than this, in ΔE OK. */
@@ -24,7 +24,7 @@ export interface PlacedColor {
 /** What a search in one place is allowed and asked. */
 export interface NearestAtOptions {
   readonly waivers?: readonly WaiverModel[]
-  /** Colours tried, at most. */
+  /** Evaluations, at most. */
   readonly budget?: number
   /** Which rows have to pass; default: every one that gates. */
   readonly isAsked?: (row: ProbeRow) => boolean
@@ -71,16 +71,16 @@ export function nearestAt(
       start: probe.present,
       gamut,
       trial: createProbeTrial(evaluation, probe, { isAsked, acceptsWaivers }),
-      budget: left,
+      budget: Math.floor(left / probe.weight),
     })
   const accepting = search(true, budget)
   const hasWaived = probe.rows.some(({ waivedFrom }) => Number.isFinite(waivedFrom))
-  const left = budget - accepting.evaluations
+  const left = budget - accepting.evaluations * probe.weight
   const strict = hasWaived && accepting.found && left > 0 ? search(false, left) : undefined
   const { found, evaluations, isStopped } = freest(accepting, strict)
   return {
     ...(found ? { found: { place, color: found.color, deltaEOk: found.cost } } : {}),
-    evaluations,
+    evaluations: evaluations * probe.weight,
     isStopped,
     probe,
   }

@@ -91,7 +91,8 @@ function tryPlaces(
     }
     const { found, evaluations, isStopped } = nearestAt(evaluation, place, {
       waivers: run.waivers,
-      budget: run.left,
+      // Half of what is left, so that ways further down the list get their turn.
+      budget: Math.ceil(run.left / 2),
     })
     run.left -= evaluations
     run.spent += evaluations
@@ -153,29 +154,45 @@ function conflictOf(
 ): RequirementConflict | undefined {
   for (const [place] of ways) {
     const probe = createColorProbe(run.evaluation, place!, { waivers: run.waivers })
-    const { conflict, evaluations } = requirementConflict(run.evaluation, probe, isGatingRow)
+    const { conflict, evaluations } = requirementConflict(run.evaluation, probe, {
+      isAsked: isGatingRow,
+      budget: run.left,
+    })
+    run.left -= evaluations
     run.spent += evaluations
     if (conflict !== undefined) return conflict
   }
   return undefined
 }
 
+/** The first of some ways that mends everything. */
+function firstOf(
+  run: Run,
+  ways: readonly (readonly ColorPlace[])[],
+  breaches: readonly Finding[],
+): PlacedColor[] | undefined {
+  for (const way of ways) {
+    const edits = tryPlaces(run, way, breaches)
+    if (edits !== undefined) return edits
+  }
+  return undefined
+}
+
+/** The token's own colour has half of the budget, the other sides the rest, and why it cannot what is left then. */
 function search(run: Run, token: string, breaches: readonly Finding[]): Partial<NearestPassing> {
   const isLocked = run.locked.has(token)
-  const ways = ownWays(run, token, breaches)
-  for (const way of isLocked ? [] : ways) {
-    const edits = tryPlaces(run, way, breaches)
-    if (edits !== undefined) return { outcome: 'found', edits, side: 'own' }
-  }
-  const conflict = isLocked ? undefined : conflictOf(run, ways)
-  for (const other of otherSides(run, token, breaches)) {
-    for (const way of ownWays(run, other, breaches)) {
-      const edits = tryPlaces(run, way, breaches)
-      if (edits === undefined) continue
-      return { outcome: 'found', edits, side: 'other', ...(conflict ? { conflict } : {}) }
-    }
-  }
-  return isLocked ? { outcome: 'locked' } : { outcome: 'none', ...(conflict ? { conflict } : {}) }
+  const ways = isLocked ? [] : ownWays(run, token, breaches)
+  const reserve = Math.floor(run.left / 2)
+  run.left -= reserve
+  const own = firstOf(run, ways, breaches)
+  run.left += reserve
+  if (own !== undefined) return { outcome: 'found', edits: own, side: 'own' }
+  const others = otherSides(run, token, breaches).flatMap((id) => ownWays(run, id, breaches))
+  const edits = firstOf(run, others, breaches)
+  const conflict = conflictOf(run, ways)
+  const why = conflict === undefined ? {} : { conflict }
+  if (edits !== undefined) return { outcome: 'found', edits, side: 'other', ...why }
+  return { outcome: isLocked ? 'locked' : 'none', ...why }
 }
 
 /**

@@ -3,7 +3,7 @@ import type { ColorPlace } from './color-place.ts'
 import { createColorProbe } from './color-probe.ts'
 import type { Evaluation } from './evaluation.ts'
 import type { Finding, SystemModel, Verdict, WaiverModel } from './model.ts'
-import { isGatingRow, nearestAt, type PlacedColor } from './nearest-at.ts'
+import { isGatingRow, NEAREST_BUDGET, nearestAt, type PlacedColor } from './nearest-at.ts'
 import { withColors } from './nearest-passing.ts'
 import { placeKey, placesOf, sidesOf } from './repair-places.ts'
 import { type RequirementConflict, requirementConflict } from './requirement-conflict.ts'
@@ -104,7 +104,7 @@ function searchPlace(
   }
   const { found, evaluations, isStopped } = nearestAt(run.evaluation, place, {
     waivers: run.waivers,
-    budget: run.left,
+    budget: Math.min(run.left, NEAREST_BUDGET),
     isAsked: (row) => isGatingRow(row) && !free.has(row.finding.identity),
   })
   run.left -= evaluations
@@ -198,7 +198,10 @@ function createConflictSearch(run: Run) {
     const key = placeKey(place)
     if (known.has(key) || run.left <= 0) return known.get(key)
     const probe = createColorProbe(run.evaluation, place, { waivers: run.waivers })
-    const { conflict, evaluations } = requirementConflict(run.evaluation, probe, isGatingRow)
+    const { conflict, evaluations } = requirementConflict(run.evaluation, probe, {
+      isAsked: isGatingRow,
+      budget: run.left,
+    })
     run.left -= evaluations
     run.spent += evaluations
     known.set(key, conflict)

@@ -137,17 +137,20 @@ function conflictOf(probe: ColorProbe, members: readonly Sampled[]): Requirement
 /**
  * Why no colour of a place's hue passes: the fewest requirements that no sampled colour meets together (exactly so up
  * to three of them, beyond that none of those named could be left out).
- * @returns the conflict, none where a sample does pass; and the colours tried for it
+ * @param budget evaluations; where the samples need more, there is no answer
+ * @returns the conflict, none where a sample does pass; and the evaluations spent on it
  */
 export function requirementConflict(
   before: Evaluation,
   probe: ColorProbe,
-  isAsked: (row: ProbeRow) => boolean,
+  asked: { readonly isAsked: (row: ProbeRow) => boolean; readonly budget: number },
 ): { readonly conflict?: RequirementConflict; readonly evaluations: number } {
+  const { isAsked, budget } = asked
   const colors = sampledColors(probe.present)
+  const evaluations = colors.length * probe.weight
+  if (evaluations > budget) return { evaluations: 0 }
   const sampled = sampleRequirements(before, { probe, colors, isAsked })
   const chosen = smallestDisjoint(sampled.map(({ met }) => met))
-  const evaluations = colors.length
   if (chosen === undefined) return { evaluations }
   return {
     conflict: conflictOf(

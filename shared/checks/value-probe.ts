@@ -27,6 +27,8 @@ export interface ValueProbe {
   reaches(token: string, offset: number): boolean
   /** Ids of tokens with a value that can move. */
   readonly tokens: readonly string[]
+  /** Values that one colour computes. */
+  readonly count: number
   /** Sets the colour, computes what hangs on it, and answers the faults that it makes. */
   set(color: Oklch): readonly ModelFault[]
   /** How far ground and ink of a theme that can move lie too near: required over measured, at least 0. */
@@ -144,6 +146,7 @@ export function createValueProbe(
     reaches: (id, offset) =>
       reached.has(graph.tokenAt.get(id)! * graph.parents.length * STATE_COUNT + offset),
     tokens: [...rows.keys()].filter((at) => rows[at]).map((at) => model.tokens[at]!.id),
+    count: order.length + 1,
     set(color) {
       const resolvedColor = toResolvedColor(color)
       pass.directions.clear()
