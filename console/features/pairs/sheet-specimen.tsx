@@ -77,14 +77,13 @@ function Word({ word, href, link }: { word: SheetWord; href: string; link: RowLi
           style={{ backgroundColor: word.color }}
         />
       ) : (
-        // A specimen of somebody's colours, seen as they are: what is to be read stands in the name of the link.
+        // A picture of somebody's colours, short of their line or not: what is to be read is the link's name.
         <span
           aria-hidden="true"
+          data-specimen={word.text}
           className={shape === 'link-in-text' ? 'underline' : ''}
           style={{ color: word.color, fontSize: size, fontWeight: weight }}
-        >
-          {word.text}
-        </span>
+        />
       )}
       <span aria-hidden="true" className="sheet-name">
         {nameOf(word)}
