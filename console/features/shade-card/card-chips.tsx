@@ -40,6 +40,7 @@ export const CardChips = memo(function CardChips(props: CardChipsProps) {
     grid.current?.querySelector<HTMLElement>(`[data-chip="${next.row} ${next.column}"]`)?.focus()
   }
 
+  /** Only a pointer that moves looks: a page that moves under one that rests does not. */
   function draw(event: PointerEvent, chip: CardChip, place: Place) {
     onLook(chip)
     if (event.type === 'pointerdown') {
@@ -127,7 +128,7 @@ function ChipButton({
       onClick={onPress}
       onFocus={onFocus}
       onPointerDown={onPointer}
-      onPointerOver={onPointer}
+      onPointerMove={onPointer}
       className="absolute focus-visible:z-1"
       style={boxOf(place, geometry)}
     />
