@@ -7,7 +7,7 @@ export function BreachPlaces({ system }: { system: string }) {
     <SubNavigation
       label="Breaches"
       places={[
-        { href: paths.breaches(system), text: 'Breach log' },
+        { href: paths.breaches(system), text: 'The log' },
         { href: paths.sightings(system), text: 'Seen in CI' },
       ]}
     />

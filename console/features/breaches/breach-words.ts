@@ -1,4 +1,4 @@
-import { formatDay } from '#console/lib/format.ts'
+import { formatDay, startSentence } from '#console/lib/format.ts'
 import type { BreachEventWire, BreachWire } from '#shared/contracts/breaches.contract.ts'
 
 const CLOSED: { readonly [reason in NonNullable<BreachWire['closingReason']>]: string } = {
@@ -12,15 +12,18 @@ const CLOSED: { readonly [reason in NonNullable<BreachWire['closingReason']>]: s
 
 /** `resolved, fixed` */
 export function closingInWords(breach: BreachWire): string {
-  if (isMetByGroup(breach)) return 'resolved, its group passes'
+  if (breach.metBy !== undefined) return `resolved, ${standInWords(breach)}`
   return breach.closingReason === undefined
     ? 'resolved'
     : `resolved, ${CLOSED[breach.closingReason]}`
 }
 
-/** Resolved though still under its line: another member of its group meets the one it has. */
-function isMetByGroup({ closingReason, ratio, required }: BreachWire): boolean {
-  return closingReason === 'fixed' && ratio < required
+/** Resolved though still under its line: `met by focus.inner`, the member of its group that meets the one it has. */
+function standInWords({ metBy, background }: BreachWire): string {
+  if (metBy === undefined) return 'met by its group'
+  return metBy.background === background
+    ? `met by ${metBy.foreground}`
+    : `met by ${metBy.foreground} on ${metBy.background}`
 }
 
 /** `27 Nov, r212` */
@@ -69,8 +72,8 @@ export function eventInWords(event: BreachEventWire, breach: BreachWire): string
   const person = event.assignee?.name ?? 'somebody'
   if (event.kind === 'assigned') return `Assigned to ${person}`
   if (event.kind === 'unassigned') return `Taken off ${person}`
-  if (event.kind === 'resolved' && event.ratio < event.required && isMetByGroup(breach)) {
-    return 'Its group passes'
+  if (event.kind === 'resolved' && event.ratio < event.required && breach.metBy !== undefined) {
+    return startSentence(standInWords(breach))
   }
   const closed = event.kind === 'resolved' && breach.closingReason
   return closed && closed !== 'fixed' ? `Closed, ${CLOSED[closed]}` : EVENTS[event.kind]
