@@ -44,12 +44,12 @@ interface Box {
 
 /** Width of the coarsest boxes, in lightness and chroma. */
 const COARSE = 0.02
-/** Boxes are halved this often: to 0.00125. */
-const HALVINGS = 4
+/** Boxes are halved this often: to 0.0006. */
+const HALVINGS = 5
 /** The logarithm of a ratio changes by less than this over a distance of 1 in OKLCH, derived values included. */
-const STEEPEST = 10
+const STEEPEST = 14
 /** The cost changes by less than this over a distance of 1, derived values included. */
-const COSTLIEST = 2
+const COSTLIEST = 3
 /** Half a byte in OKLCH lightness, by the lightness from which on it is so little. */
 const HALF_BYTES = [
   [0.25, 0.002],

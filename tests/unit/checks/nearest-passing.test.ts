@@ -74,7 +74,8 @@ it('answers a colour as near as brute force finds, passing in a full check', () 
       expect(asked.filter((identity) => breaches.has(identity))).toEqual([])
       tally.found++
     }),
-    { numRuns: 70 },
+    // The search is no proof: the same systems on every run, more of them by hand.
+    { numRuns: 70, seed: 20261201 },
   )
   for (const [what, seen] of Object.entries(tally)) expect(seen, what).toBeGreaterThan(10)
 }, 180_000)
@@ -162,7 +163,20 @@ it('answers the bound of text on a ground and under white: 20.25, more than whit
 
 it('answers a stop where the budget runs out, with the best so far', () => {
   const stopped = nearestPassing(evaluate(grey('#999999')), 'text', { budget: 30 })
-  expect(stopped).toMatchObject({ isStopped: true, evaluations: 30 })
+  expect(stopped.isStopped).toBe(true)
+  expect(stopped.evaluations).toBeLessThanOrEqual(30)
+})
+
+it('answers heavier colours as more evaluations: one for each hundred values and findings', () => {
+  const tokens = Array.from({ length: 300 }, (_, at) => token(`t${at}`, '{text}'))
+  const model = grey('#999999')
+  const heavy = evaluate({ ...model, tokens: [...model.tokens, ...tokens] })
+  const place = { token: 'text', theme: 'light' }
+  // The token, its 300 followers and its one finding.
+  expect(createColorProbe(heavy, place).weight).toBe(4)
+  expect(createColorProbe(evaluate(model), place).weight).toBe(1)
+  const alone = nearestAt(evaluate(model), place).evaluations
+  expect(nearestAt(heavy, place).evaluations).toBe(4 * alone)
 })
 
 it('leaves a waived finding short only where passing is not free', () => {
