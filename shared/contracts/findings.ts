@@ -46,6 +46,9 @@ export const findingSchema = z
     state: pairStateSchema,
     use: useSchema,
     ratio: ratioSchema,
+    srgbRatio: ratioSchema
+      .optional()
+      .meta({ description: "WCAG's own measure, where the ratio on P3 luminance decides" }),
     required: z.number().min(0).max(21),
     basis: basisSchema,
     outcome: outcomeSchema,

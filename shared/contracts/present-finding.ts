@@ -17,6 +17,7 @@ export function presentFinding(finding: Finding, names: ModelNames): FindingWire
     state: `${foregroundState}/${backgroundState}`,
     use: finding.use,
     ratio: finding.ratio,
+    ...(finding.basis === 'p3' ? { srgbRatio: finding.ratios.srgb } : {}),
     required: finding.required,
     basis: finding.basis,
     outcome: finding.outcome,

@@ -59,6 +59,12 @@ const OWN: readonly Said[] = [
     short: 'A pair meets what WCAG asks of it, and not the higher ratio that is set for it.',
   },
   {
+    id: 'display-p3',
+    name: 'DisplayP3',
+    short:
+      "A pair falls short by WCAG's ratio on P3 luminance, outside its definition, and meets it on sRGB.",
+  },
+  {
     id: 'disabled-floor',
     name: 'DisabledFloor',
     short: "A disabled component, which WCAG exempts, is under the design system's own floor.",
@@ -109,7 +115,10 @@ const criterionOf = (use: Use, required: number): Criterion => {
 /** What decides which rule a finding belongs to. */
 export interface Ruled {
   readonly use: Use
+  /** The one that decides. */
   readonly ratio: number
+  /** WCAG's own measure, where the ratio on P3 luminance decides. */
+  readonly srgbRatio?: number | undefined
   readonly required: number
   readonly outcome: Outcome
   readonly reason?: string | undefined
@@ -119,12 +128,14 @@ const FALLS_SHORT: readonly Outcome[] = ['breach', 'waived', 'known']
 
 /**
  * The rule that a finding belongs to: the criterion that asks for its ratio, or the system's own wish where
- * the criterion is met, or exempts.
+ * the criterion is met by WCAG's own measure, or exempts.
  * @see https://www.w3.org/TR/WCAG22/
  */
-export function ruleIdOf({ use, ratio, required, outcome, reason }: Ruled): string {
+export function ruleIdOf({ use, ratio, srgbRatio, required, outcome, reason }: Ruled): string {
   if (reason === 'disabled-floor') return 'disabled-floor'
   const criterion = criterionOf(use, required)
-  const isMet = ratio >= criterion.ratio || required < criterion.ratio
-  return FALLS_SHORT.includes(outcome) && isMet ? 'pair-minimum' : criterion.id
+  if (!FALLS_SHORT.includes(outcome)) return criterion.id
+  if (srgbRatio !== undefined && srgbRatio >= required) return 'display-p3'
+  const isMet = (srgbRatio ?? ratio) >= criterion.ratio || required < criterion.ratio
+  return isMet ? 'pair-minimum' : criterion.id
 }

@@ -76,12 +76,15 @@ const OUTCOME_TEXT: Readonly<Partial<Record<Outcome, string>>> = {
 }
 
 const remarksOn = (finding: CheckedFinding): string[] => {
-  const { outcome, basis, reason, tight, gating, waiver } = finding
+  const { outcome, basis, srgbRatio, reason, tight, gating, waiver } = finding
   const said = OUTCOME_TEXT[outcome]
   return [
     ...(said === undefined ? [] : [said]),
     ...(waiver === undefined ? [] : [`A waiver allows it until ${waiver.endsAt}.`]),
     ...(basis === 'p3' ? ["WCAG's ratio on P3 luminance, outside its definition."] : []),
+    ...(srgbRatio === undefined
+      ? []
+      : [`By WCAG's own measure, on sRGB, it is ${truncateRatio(srgbRatio, 4)}:1.`]),
     ...(reason === undefined ? [] : [`Reason: ${reason.replaceAll('-', ' ')}.`]),
     ...(tight ? ['One level of a translucent layer would flip it.'] : []),
     ...(gating ? [] : ['Its theme only reports.']),

@@ -79,7 +79,21 @@ describe('createCheck', () => {
     })
   })
 
-  it('keeps the fingerprint of a finding across a rename', async () => {
+  it('answers the ratio that WCAG defines beside the one on P3 luminance that decides', async () => {
+    const wide = await createSampleSystem(test)
+    await wide.patchSettings({ p3: true, p3Gates: true })
+    await wide.addToken('beacon', 'color(display-p3 1 0 0)')
+    await wide.addPair({ foreground: 'beacon', background: 'paper', use: 'text' })
+    await wide.addPair({ foreground: 'ink', background: 'paper', use: 'text' })
+    const { findings } = await wide.check({}, '?findings=all')
+    const [red, black] = findings
+    expect(red).toMatchObject({ foreground: 'beacon', basis: 'p3' })
+    expect(red?.srgbRatio).toBeGreaterThan(red?.ratio ?? 21)
+    expect(black).toMatchObject({ foreground: 'ink', basis: 'srgb' })
+    expect(black).not.toHaveProperty('srgbRatio')
+  })
+
+  it('keeps the fingerprint of a finding across a rename and another threshold', async () => {
     const renamed = await createSampleSystem(test)
     await renamed.addToken('soft', '#aaaaaa')
     await renamed.addPair({ foreground: 'soft', background: 'paper', use: 'text' })
@@ -87,6 +101,9 @@ describe('createCheck', () => {
     await renamed.editToken('soft', { name: 'softer' })
     const after = await renamed.check()
     expect(after.findings[0]).toEqual({ ...before.findings[0], foreground: 'softer' })
+    await renamed.patchSettings({ level: 'AAA' })
+    const [stricter] = (await renamed.check()).findings
+    expect(stricter).toEqual({ ...after.findings[0], required: 7 })
   })
 
   it('answers advisories by name', async () => {

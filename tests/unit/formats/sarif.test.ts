@@ -72,6 +72,16 @@ describe('the rule of a finding', () => {
     expect(ruleOf({ use: 'focus-change', required: 2, ratio: 1.5 })).toBe('pair-minimum')
   })
 
+  it('answers no criterion where the ratio on P3 luminance is short and the one of WCAG is not', () => {
+    const p3 = { basis: 'p3', required: 4.5, ratio: 4.4 } as const
+    expect(ruleOf({ ...p3, srgbRatio: 4.6 })).toBe('display-p3')
+    expect(ruleOf({ ...p3, srgbRatio: 4.5 })).toBe('display-p3')
+    expect(ruleOf({ ...p3, srgbRatio: 4.49 })).toBe('WCAG-1.4.3')
+    expect(ruleOf({ ...p3, required: 6, srgbRatio: 5 })).toBe('pair-minimum')
+    expect(ruleOf({ ...p3, required: 6, srgbRatio: 6.1 })).toBe('display-p3')
+    expect(ruleOf({ ...p3, outcome: 'pass', ratio: 5, srgbRatio: 6 })).toBe('WCAG-1.4.3')
+  })
+
   it("answers no criterion to what WCAG exempts and the system's floor does not", () => {
     expect(ruleOf({ required: 2, ratio: 1.5, reason: 'disabled-floor' })).toBe('disabled-floor')
   })
@@ -103,6 +113,9 @@ describe('a result', () => {
   it('answers where a measure is outside of WCAG’s definition, and what else bears on it', () => {
     const { text } = resultOf({ basis: 'p3', tight: true, gating: false }).message
     expect(text).toContain("WCAG's ratio on P3 luminance, outside its definition.")
+    expect(resultOf({ basis: 'p3', srgbRatio: 4.61239 }).message.text).toContain(
+      "WCAG's ratio on P3 luminance, outside its definition. By WCAG's own measure, on sRGB, it is 4.6123:1.",
+    )
     expect(text).toContain('One level of a translucent layer would flip it.')
     expect(text).toContain('Its theme only reports.')
   })
