@@ -25,8 +25,11 @@ const groupsOf = (breaches: readonly FindingWire[]): FindingWire[][] => {
   return [...groups.values()].sort((a, b) => worst(a) - worst(b))
 }
 
+const onSrgb = ({ srgbRatio }: FindingWire): string =>
+  srgbRatio === undefined ? '' : `, ${truncateRatio(srgbRatio, 4)} in sRGB`
+
 const remarksOn = (finding: FindingWire): string[] => [
-  ...(finding.basis === 'p3' ? ['measured in Display P3'] : []),
+  ...(finding.basis === 'p3' ? [`measured in Display P3${onSrgb(finding)}`] : []),
   ...(finding.reason ? [finding.reason.replaceAll('-', ' ')] : []),
   ...(finding.tight ? ['one level of a translucent layer would flip it'] : []),
   ...(finding.gating ? [] : ['its theme only reports']),
@@ -80,6 +83,20 @@ const countsText = ({ counts }: CheckWire): string =>
     ].join(', '),
   )
 
+/** What the check left behind for its branch; nothing where it did not say which. */
+const loggedText = ({ source, logged }: CheckWire): string[] => {
+  if (logged === undefined) return []
+  const { seen, opened, resolved } = logged
+  const place = `${source?.repository}, ${source?.branch}${logged.protected ? ' (protected)' : ''}`
+  const followed = [
+    `${countOf(opened, 'breach', 'breaches')} opened`,
+    `${countOf(resolved, 'breach', 'breaches')} resolved`,
+  ]
+  const isFollowed = logged.protected || opened > 0 || resolved > 0
+  const said = [countOf(seen, 'sighting', 'sightings'), ...(isFollowed ? followed : [])]
+  return [`Logged for ${place}: ${said.join(', ')}.`]
+}
+
 /**
  * The check as a build log shows it: verdict, a table of breaches (furthest short first), counts, engine.
  * Colour only ever doubles what the text says. Nothing from the wire reaches the terminal unstripped.
@@ -99,6 +116,7 @@ export function reportOf(check: CheckWire, system: string, surface: Surface): st
           `${capital(countOf(check.advisories.length, 'advisory', 'advisories'))} besides; the json and sarif formats list them.`,
         ]
       : []),
+    ...loggedText(check).flatMap((text) => folded(plain(text), surface.columns)),
     ...folded(`Engine ${plain(version)}, ${plain(gamutMap)}, ${plain(ruleSet)}.`, surface.columns),
     'Contrast is one criterion; this is no verdict of conformity.',
   ]

@@ -68,10 +68,25 @@ describe('the report', () => {
   })
 
   it('answers what else bears on a breach', () => {
-    const told = finding({ basis: 'p3', reason: 'backdrop-unknown', tight: true, gating: false })
+    const said = { reason: 'backdrop-unknown', tight: true, gating: false } as const
+    const told = finding({ basis: 'p3', srgbRatio: 4.56789, ...said })
     const text = reportOf(check([told]), 'x', monochrome).replace(/\n {4}/g, ' ')
-    expect(text).toContain('measured in Display P3; backdrop unknown;')
+    expect(text).toContain('measured in Display P3, 4.5678 in sRGB; backdrop unknown;')
     expect(text).toContain('its theme only reports')
+  })
+
+  it('answers what the log took of a branch, and nothing without one', () => {
+    const source = { repository: 'lark/quay', branch: 'main' }
+    const followed = { protected: true, seen: 12, opened: 2, resolved: 0 }
+    const text = reportOf(check([finding()], { source, logged: followed }), 'x', monochrome)
+    expect(text).toContain(
+      '\nLogged for lark/quay, main (protected): twelve sightings, two breaches opened,\nno breaches resolved.\n',
+    )
+    const passing = { protected: false, seen: 1, opened: 0, resolved: 0 }
+    const other = { ...source, branch: 'fog\u001b[31m' }
+    const kept = reportOf(check([finding()], { source: other, logged: passing }), 'x', monochrome)
+    expect(kept).toContain('\nLogged for lark/quay, fog: one sighting.\n')
+    expect(reportOf(check([]), 'x', monochrome)).not.toContain('Logged')
   })
 
   it('calls for truecolor samples where there is colour, and keeps the words', () => {
