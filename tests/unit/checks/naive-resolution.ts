@@ -8,12 +8,11 @@ import type {
   ThemeRule,
   TokenModel,
 } from '#shared/checks/model.ts'
-import { mappedChroma } from '#shared/color/gamut-map.ts'
 import type { Oklch } from '#shared/color/oklch.ts'
-import { renderColor } from '#shared/color/render.ts'
 import { naiveRatio, paintAll } from './naive-contrast.ts'
+import { naiveMappedChroma, naiveRendering } from './naive-rendering.ts'
 
-/** Resolution written again from DEVELOPERS.md: slow, for models without faults, sharing colour arithmetic only. */
+/** Resolution written again from DEVELOPERS.md: slow, for models without faults, sharing nothing with the engine but types. */
 const ORDER: readonly DerivedState[] = ['hover', 'active', 'focus', 'disabled']
 const clamp = (x: number) => Math.max(0, Math.min(1, x))
 const L = (color: Oklch) => color.l ?? 0
@@ -201,7 +200,7 @@ export class NaiveSystem {
     } else {
       preferred = Math.sign(l - ref) * (towards!.direction === 'away' ? 1 : -1)
     }
-    const chroma = (lightness: number) => mappedChroma(lightness, rest.c ?? 0, rest.h ?? 0)
+    const chroma = (lightness: number) => naiveMappedChroma(lightness, rest.c ?? 0, rest.h ?? 0)
     const room = (sign: number) => {
       const to = l + sign * S
       if (!(0 <= to && to <= 1)) return false
@@ -258,9 +257,9 @@ export class NaiveSystem {
     { theirs, ours }: Record<'theirs' | 'ours', Side>,
   ): Oklch {
     const ratio = (color: Oklch, side: Side) => {
-      const under = [side.ground, side.ref].map(renderColor)
+      const under = [side.ground, side.ref].map(naiveRendering)
       return naiveRatio(
-        paintAll([...under, renderColor(color)], 'srgb'),
+        paintAll([...under, naiveRendering(color)], 'srgb'),
         paintAll(under, 'srgb'),
         'srgb',
       )

@@ -1,5 +1,5 @@
 import type { PairModel, State, SystemModel } from '#shared/checks/model.ts'
-import { type RenderedColor, renderColor } from '#shared/color/render.ts'
+import type { RenderedColor } from '#shared/color/render.ts'
 import {
   type Basis,
   type Bytes,
@@ -8,6 +8,7 @@ import {
   naiveRatio,
   paintAll,
 } from './naive-contrast.ts'
+import { naiveRendering } from './naive-rendering.ts'
 import { NaiveSystem } from './naive-resolution.ts'
 
 const REQUIRED = {
@@ -98,7 +99,7 @@ export function naiveFindings(model: SystemModel): NaiveFinding[] {
       .filter(({ id }) => !pair.themes || pair.themes.includes(id))
       .flatMap((theme) =>
         combinations(system, pair).map(([fs, bs]) => {
-          const at = (id: string, s: State) => renderColor(system.R(id, theme.id, s))
+          const at = (id: string, s: State) => naiveRendering(system.R(id, theme.id, s))
           const isUnknown = pair.backdrop === 'unknown'
           const backdrop = pair.backdrop === 'unknown' ? [] : pair.backdrop
           const below = isUnknown ? [] : [theme.ground, ...backdrop].map((id) => at(id, 'rest'))
