@@ -1,12 +1,14 @@
 import { useSuspenseQuery } from '@tanstack/react-query'
 import { useEffect, useRef } from 'react'
-import { type LoaderFunctionArgs, useParams } from 'react-router-dom'
+import { Link, type LoaderFunctionArgs, useParams } from 'react-router-dom'
+import { paths } from '#console/app/paths.ts'
 import { memberQueries } from '#console/features/members/members.queries.ts'
 import { pairTitle } from '#console/features/pairs/pair-words.ts'
 import { pairQueries } from '#console/features/pairs/pairs.queries.ts'
 import { systemQueries } from '#console/features/systems/systems.queries.ts'
 import { tokenQueries } from '#console/features/tokens/tokens.queries.ts'
 import { queryClient } from '#console/lib/query-client.ts'
+import { NothingHere } from '#console/ui/page-states.tsx'
 import { ApiError } from '#shared/client/client.ts'
 import { useEvaluation } from './evaluation.ts'
 import { OpenedPair } from './opened-pair.tsx'
@@ -41,7 +43,15 @@ export function Component() {
     lead(element === null || foreground === undefined ? undefined : { name: foreground, element })
     return () => lead(undefined)
   }, [lead, foreground])
-  if (pair === undefined) throw new ApiError(404, undefined)
+  if (pair === undefined) {
+    return (
+      <NothingHere title="This pair is declared no longer.">
+        <Link to={paths.pairs(system)} className="word-woad">
+          To the pairs that are
+        </Link>
+      </NothingHere>
+    )
+  }
   return (
     <>
       <title>{`${pairTitle(pair)} · ${system} · Dyewright`}</title>
