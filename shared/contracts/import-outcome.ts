@@ -1,5 +1,5 @@
 import * as z from 'zod'
-import { stateSchema } from './fields.ts'
+import { slugSchema, stateSchema } from './fields.ts'
 import {
   advisorySchema,
   countsSchema,
@@ -8,6 +8,7 @@ import {
   engineSchema,
   findingExample,
   findingSchema,
+  hexSchema,
   verdictSchema,
 } from './findings.ts'
 
@@ -33,6 +34,10 @@ const tallySchema = z
 /** The members of an item that differ, as its own address gives them. */
 const membersSchema = z.record(z.string(), z.unknown())
 
+/** By theme and state, as `hexes` of the ledger view has its two themes. */
+const shownColorsSchema = z.record(slugSchema, z.record(slugSchema, hexSchema))
+const groundsSchema = z.record(slugSchema, hexSchema)
+
 export const importChangeSchema = z
   .strictObject({
     item: z.enum(['token', 'pair', 'theme', 'distinct-set', 'rules', 'settings', 'other']),
@@ -40,6 +45,16 @@ export const importChangeSchema = z
     name: z.string().meta({ description: 'As it is called afterwards' }),
     before: membersSchema.optional().meta({ description: 'Absent of what is added' }),
     after: membersSchema.optional().meta({ description: 'Absent of what is removed' }),
+    colors: z
+      .strictObject({
+        before: shownColorsSchema.optional(),
+        after: shownColorsSchema.optional(),
+      })
+      .optional()
+      .meta({
+        description:
+          'Of a token: what it comes to in each state, in the base theme and in the first of opposite polarity',
+      }),
   })
   .meta({
     id: 'ImportChange',
@@ -85,6 +100,9 @@ export const importSchema = z
         .min(0)
         .meta({ description: 'Derived colours that the file left as they were' }),
     }),
+    grounds: z
+      .strictObject({ before: groundsSchema, after: groundsSchema })
+      .meta({ description: 'The grounds of the themes that colours are shown in' }),
     changes: z.array(importChangeSchema).max(MOST_LISTED),
     notes: z.array(importNoteSchema).max(MOST_LISTED),
     weakens: z
@@ -134,6 +152,10 @@ export const importExample = {
     distinctSets: none,
     derivedAgain: 0,
   },
+  grounds: {
+    before: { light: '#f7f9fb', dark: '#0b1722' },
+    after: { light: '#f7f9fb', dark: '#0b1722' },
+  },
   changes: [
     {
       item: 'token',
@@ -141,6 +163,10 @@ export const importExample = {
       name: 'action.board.fill',
       before: { value: { colorSpace: 'oklch', components: [0.551, 0.128, 243], alpha: 1 } },
       after: { value: { colorSpace: 'oklch', components: [0.6, 0.128, 243], alpha: 1 } },
+      colors: {
+        before: { light: { rest: '#1273b1' }, dark: { rest: '#3d95d4' } },
+        after: { light: { rest: '#2283c1' }, dark: { rest: '#3d95d4' } },
+      },
     },
   ],
   notes: [],

@@ -14,8 +14,14 @@ type Members = Readonly<Record<string, unknown>>
 type Kind = ImportChangeWire['item']
 type Tally = ImportWire['counts']['tokens']
 
+/** An item that differs; its id on the sides that have it. */
+export interface ItemChange {
+  readonly id?: string
+  readonly wire: ImportChangeWire
+}
+
 export interface ImportChanges {
-  readonly changes: readonly ImportChangeWire[]
+  readonly changes: readonly ItemChange[]
   readonly counts: Omit<ImportWire['counts'], 'derivedAgain'>
 }
 
@@ -97,9 +103,9 @@ function itemChanges<Item extends Identified>(
   item: Kind,
   before: Listed<Item>,
   after: Listed<Item>,
-): { readonly changes: ImportChangeWire[]; readonly tally: Tally } {
+): { readonly changes: ItemChange[]; readonly tally: Tally } {
   const standing = new Map(before.items.map((one) => [one.id, one]))
-  const changes: ImportChangeWire[] = []
+  const changes: ItemChange[] = []
   const tally = { added: 0, edited: 0, removed: 0, unchanged: 0 }
   for (const next of after.items) {
     const old = standing.get(next.id)
@@ -111,22 +117,24 @@ function itemChanges<Item extends Identified>(
     const name = after.nameOf(next)
     const shown = after.show(next)
     tally[old ? 'edited' : 'added'] += 1
-    if (old) {
-      changes.push({ item, operation: 'edited', name, ...difference(before.show(old), shown) })
-    } else changes.push({ item, operation: 'added', name, after: shown })
+    const wire: ImportChangeWire = old
+      ? { item, operation: 'edited', name, ...difference(before.show(old), shown) }
+      : { item, operation: 'added', name, after: shown }
+    changes.push({ id: next.id, wire })
   }
   for (const old of standing.values()) {
     tally.removed += 1
-    changes.push({ item, operation: 'removed', name: before.nameOf(old), before: before.show(old) })
+    const [name, shown] = [before.nameOf(old), before.show(old)]
+    changes.push({ id: old.id, wire: { item, operation: 'removed', name, before: shown } })
   }
   return { changes, tally }
 }
 
-function wholeChange(item: Kind, before: Members, after: Members): ImportChangeWire[] {
+function wholeChange(item: Kind, before: Members, after: Members): ItemChange[] {
   const moved = difference(before, after)
   return Object.keys({ ...moved.before, ...moved.after }).length === 0
     ? []
-    : [{ item, operation: 'edited', name: item, ...moved }]
+    : [{ wire: { item, operation: 'edited', name: item, ...moved } }]
 }
 
 /** The members that differ, on both sides. */

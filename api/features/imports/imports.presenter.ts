@@ -4,7 +4,8 @@ import { verdictOf } from '#shared/checks/verdict.ts'
 import type { Weakening } from '#shared/checks/weakening-kinds.ts'
 import { type ImportWire, MOST_LISTED } from '#shared/contracts/import-outcome.ts'
 import { namesIn, presentAdvisory, presentFinding } from '#shared/contracts/present-finding.ts'
-import { importChanges } from './import-changes.rules.ts'
+import { importChanges, type ItemChange } from './import-changes.rules.ts'
+import { type ShownColors, shownColors } from './import-colors.rules.ts'
 import type { ImportFile } from './import-file.ts'
 
 /** A head before and after an import. */
@@ -30,6 +31,8 @@ export function presentImport(imported: Imported): ImportWire {
   const names = namesIn(after.evaluation.resolved)
   const { changes, counts } = importChanges(before.model, after.model)
   const verdict = verdictOf(after.evaluation, { include: 'not-pass' })
+  const shown = [before, after].map(({ evaluation }) => shownColors(evaluation.resolved))
+  const [shownBefore, shownAfter] = shown as [ShownColors, ShownColors]
   const more: Record<string, number> = {}
   const cut = <Item>(list: string, items: readonly Item[]): Item[] => {
     if (items.length > MOST_LISTED) more[list] = items.length - MOST_LISTED
@@ -40,7 +43,8 @@ export function presentImport(imported: Imported): ImportWire {
     mode,
     written,
     counts: { ...counts, derivedAgain: file.derivedAgain },
-    changes: cut('changes', changes),
+    grounds: { before: shownBefore.grounds, after: shownAfter.grounds },
+    changes: cut('changes', changes).map((change) => withColors(change, shownBefore, shownAfter)),
     notes: cut('notes', file.notes),
     weakens: cut('weakens', imported.weakens).map(({ code, detail }) => ({ code, detail })),
     effect,
@@ -53,4 +57,17 @@ export function presentImport(imported: Imported): ImportWire {
     },
   }
   return Object.keys(more).length === 0 ? answer : { ...answer, more }
+}
+
+function withColors(
+  { id, wire }: ItemChange,
+  before: ShownColors,
+  after: ShownColors,
+): ImportWire['changes'][number] {
+  if (wire.item !== 'token' || id === undefined) return wire
+  const colors = {
+    ...(wire.before === undefined ? {} : { before: before.of(id) }),
+    ...(wire.after === undefined ? {} : { after: after.of(id) }),
+  }
+  return { ...wire, colors }
 }

@@ -1,5 +1,6 @@
 import type { Finding } from '#shared/checks/model.ts'
 import { colorOf } from '#shared/checks/resolved.ts'
+import { stripThemes } from '#shared/checks/strip-themes.ts'
 import { type TokenStanding, standingOf } from '#shared/checks/token-standing.ts'
 import { verdictOf } from '#shared/checks/verdict.ts'
 import type { StandingWire, StripTokenWire } from '#shared/contracts/tokens.contract.ts'
@@ -26,21 +27,17 @@ interface Marking {
 /** Reads the whole ledger of a system in one pass over its findings. */
 export function presentLedger(system: MeasuredSystem): Ledger {
   const { index, evaluation } = system
+  const { resolved } = evaluation
   const standings = standingOf(evaluation)
   const marking = markingOf(verdictOf(evaluation, { include: 'not-pass' }).findings)
-  const [light, dark] = stripThemes(system)
+  const themes = stripThemes(resolved)
   return {
     standing: (id) => presentStanding(system, { id, standing: standings.get(id), marking }),
     strip: (id) => {
-      const hexes = [light, dark].flatMap((theme) => {
-        if (theme === undefined) return []
-        const { rendered } = colorOf(evaluation.resolved, {
-          token: id,
-          theme: theme.id,
-          state: 'rest',
-        })
-        return [[theme.key, hexOf(rendered)]]
-      })
+      const hexes = themes.map(({ id: theme, key }) => [
+        key,
+        hexOf(colorOf(resolved, { token: id, theme, state: 'rest' }).rendered),
+      ])
       return {
         name: index.names.tokenName(id),
         hexes: Object.fromEntries(hexes),
@@ -49,19 +46,6 @@ export function presentLedger(system: MeasuredSystem): Ledger {
       }
     },
   }
-}
-
-/** The base theme, and the first whose ground and ink stand the other way round. */
-function stripThemes({ index, evaluation }: MeasuredSystem) {
-  const { themes } = index.model
-  const isDark = themes.map(({ id, ground, ink }) => {
-    const [on, of] = [ground, ink].map(
-      (token) => colorOf(evaluation.resolved, { token, theme: id, state: 'rest' }).oklch.l ?? 0,
-    )
-    return (on ?? 0) < (of ?? 0)
-  })
-  const opposite = isDark.findIndex((dark) => dark !== isDark[0])
-  return [themes[0], opposite < 0 ? undefined : themes[opposite]]
 }
 
 function markingOf(findings: readonly Finding[]): Marking {

@@ -58,6 +58,24 @@ describe('merge', () => {
     expect(Object.keys(answer.changes[0]?.after ?? {})).toEqual(['value'])
   })
 
+  it('answers what a token comes to on both sides, as the strip shows it, and the grounds', async () => {
+    const system = await createSampleSystem(test)
+    await system.addToken('link', '#0000cc', { states: ['hover'] })
+    const ledger = async (name: string) => {
+      const { body } = await system.maintainer.get(`${system.url}/tokens/${name}`).expect(200)
+      const { light } = body.resolved
+      return { light: { rest: light.rest.hex, ...(light.hover && { hover: light.hover.hex }) } }
+    }
+    const before = await ledger('link')
+    const file = { link: dtcgHex('#0000aa'), mark: dtcgHex('#112233') }
+    const answer = await imported(system, file)
+    const [edited, added] = answer.changes
+    expect(edited?.colors).toEqual({ before, after: await ledger('link') })
+    expect(added?.colors).toEqual({ after: { light: { rest: '#112233' } } })
+    expect(answer.grounds.after).toEqual({ light: (await ledger('paper')).light.rest })
+    expect(answer.grounds.before).toEqual(answer.grounds.after)
+  })
+
   it('leaves states, overrides and rules that the file does not give', async () => {
     const system = await createSampleSystem(test)
     await system.addToken('link', '#0000cc', {
