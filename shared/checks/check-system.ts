@@ -1,7 +1,7 @@
 import { advisoriesOf } from './advisories.ts'
 import { meetAnyOf } from './any-of.ts'
 import type { Checked, Evaluation, PairMeasure, Subject } from './evaluation.ts'
-import { measurePair } from './measure-pair.ts'
+import { createPairMeasuring } from './measure-pair.ts'
 import type { Advisory, ContrastKind, PairModel, SystemModel } from './model.ts'
 import { dependentsOf, resolveSystem } from './resolve-system.ts'
 import type { ResolvedSystem } from './resolved.ts'
@@ -48,7 +48,7 @@ export function toAdvisories(resolved: ResolvedSystem): Map<string, readonly Adv
 /** Measures every pair of a resolved system. */
 export function evaluateSystem(resolved: ResolvedSystem): Evaluation {
   const { pairs, themes } = resolved.model
-  const measures: readonly PairMeasure[] = pairs.map((pair) => measurePair(resolved, pair))
+  const measures: readonly PairMeasure[] = pairs.map(createPairMeasuring(resolved))
   return {
     resolved,
     measures,

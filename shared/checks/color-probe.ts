@@ -1,7 +1,7 @@
 import type { Oklch } from '#shared/color/oklch.ts'
 import { type ColorPlace, placeValue, presentColor } from './color-place.ts'
 import type { Evaluation } from './evaluation.ts'
-import { gatingRatio, isWide } from './measure-pair.ts'
+import { gatingRatio, isWide } from './pair-requirements.ts'
 import type { ModelFault, SystemSettings, WaiverModel } from './model.ts'
 import { type ProbedFinding, type ProbeRow, type ProbeRows, toProbeRows } from './probe-rows.ts'
 import { recheck } from './recheck.ts'
@@ -9,8 +9,6 @@ import { type MeasuredStack, stackRatio, toUnderlay } from './stack-ratio.ts'
 import { createValueProbe, type ValueProbe } from './value-probe.ts'
 
 const VALUES_AN_EVALUATION = 100
-
-const UNMOVED = { foreground: 0, background: 0 }
 
 /** What a row comes to while a colour is tried: nothing to say, a breach, or one that a waiver covers. */
 export const PROBED_PASS = 0
@@ -96,9 +94,9 @@ function createMeasuring(settings: SystemSettings): (sides: Sides) => number {
     stack.background = background
     stack.underlay = sides.underlay.value
     stack.isLaidOn = isLaidOn
-    const srgb = stackRatio(stack, 'srgb', UNMOVED)
+    const srgb = stackRatio(stack, 'srgb')
     if (!settings.p3 || !settings.p3Gates || !isWide(stack)) return srgb
-    return gatingRatio(srgb, stackRatio(stack, 'p3', UNMOVED), settings)
+    return gatingRatio(srgb, stackRatio(stack, 'p3'), settings)
   }
 }
 

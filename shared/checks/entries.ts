@@ -1,17 +1,8 @@
-import { formatHex } from '#shared/color/format-color.ts'
-import type { RenderedColor } from '#shared/color/render.ts'
 import type { Evaluation, PairMeasure, Subject } from './evaluation.ts'
+import { createFindingWriter } from './finding-writer.ts'
 import type { Judge, Judgement } from './judgement.ts'
-import {
-  identityOfRow,
-  reachOfRow,
-  requiredOfRow,
-  statesOfRow,
-  themeOfRow,
-} from './measured-row.ts'
+import { identityOfRow, reachOfRow } from './measured-row.ts'
 import type { Finding, Outcome } from './model.ts'
-import { stateAt } from './model-graph.ts'
-import { STATE_COUNT } from './resolved.ts'
 
 /** Strictest first: what an entry made of several findings answers. */
 const STRICTNESS: readonly Outcome[] = ['breach', 'waived', 'known', 'pass', 'exempt']
@@ -67,45 +58,8 @@ export function visitEntries(
   }
 }
 
-function hexOf(color: RenderedColor): string {
-  return formatHex(color.r, color.g, color.b, color.a)
-}
-
 /** Writes an entry out as a finding. */
 export function toFinding(evaluation: Evaluation, entry: Entry): Finding {
-  const { measure, row, judgement } = entry
-  const { pair, kind } = measure
-  const theme = themeOfRow(evaluation, measure, row)
-  const states = statesOfRow(measure, row)
-  const { resolved } = evaluation
-  const first = resolved.themes.get(theme.id)! * STATE_COUNT
-  const rendered = (token: string, state: number) =>
-    hexOf(resolved.tokens.get(token)!.cells[first + state]!.color.rendered)
-  const srgb = measure.srgb[row]!
-  const p3 = measure.p3[row] ?? Number.NaN
-  const { waiver, reason, outcome } = judgement
-  return {
-    foreground: pair.foreground,
-    background: pair.background,
-    theme: theme.id,
-    foregroundState: states.foreground,
-    backgroundState: states.background,
-    use: pair.use,
-    kind,
-    ratio: measure.ratio[row]!,
-    required: requiredOfRow(evaluation, measure, row),
-    basis: measure.ratio[row] === srgb ? 'srgb' : 'p3',
-    ratios: Number.isNaN(p3) ? { srgb } : { srgb, p3 },
-    outcome,
-    ...(reason === undefined ? {} : { reason }),
-    ...(measure.tight[row] === 1 && reason !== 'any-of' ? { tight: true } : {}),
-    gating: theme.gating,
-    rendered: {
-      foreground: rendered(pair.foreground, stateAt(states.foreground)),
-      background: rendered(pair.background, stateAt(states.background)),
-    },
-    ...(waiver ? { waiver: { id: waiver.id, endsAt: waiver.endsAt } } : {}),
-    pairs: entry.declared.map((declared) => declared.pair.id),
-    identity: identityOfRow(evaluation, measure, row),
-  }
+  const { measure, row, judgement, declared } = entry
+  return createFindingWriter(evaluation)(measure, row, judgement, declared)
 }

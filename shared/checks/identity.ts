@@ -21,24 +21,23 @@ function written(id: string): string {
   return id.replace(SEPARATORS, encodeURIComponent)
 }
 
+/** What all findings of a pair in one theme share of their identity: all of it but the states. */
+export function identityInTheme(
+  subject: Omit<FindingSubject, 'foregroundState' | 'backgroundState'>,
+): string {
+  const { foreground, background, backdrop, ground, kind, theme } = subject
+  const under =
+    backdrop === 'unknown'
+      ? '?'
+      : (backdrop.length === 0 ? [ground] : backdrop).map(written).join('+')
+  return `${written(foreground)}/${written(background)}/${under}/${kind}/${written(theme)}`
+}
+
 /**
  * The identity of a finding as printable text,
  * `foreground/background/backdrop+…/kind/theme/foregroundState/backgroundState`: an unknown backdrop is `?`, the
  * default one the ground. It serves as the fingerprint, and is stable over renames and thresholds.
  */
 export function identityOf(subject: FindingSubject): string {
-  const { backdrop } = subject
-  const under =
-    backdrop === 'unknown'
-      ? '?'
-      : (backdrop.length === 0 ? [subject.ground] : backdrop).map(written).join('+')
-  return [
-    written(subject.foreground),
-    written(subject.background),
-    under,
-    subject.kind,
-    written(subject.theme),
-    subject.foregroundState,
-    subject.backgroundState,
-  ].join('/')
+  return `${identityInTheme(subject)}/${subject.foregroundState}/${subject.backgroundState}`
 }

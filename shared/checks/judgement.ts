@@ -5,7 +5,7 @@ import {
   ROW_MET,
   ROW_UNDER_FLOOR,
 } from './evaluation.ts'
-import { exemptionOf } from './measure-pair.ts'
+import { exemptionOf } from './pair-requirements.ts'
 import {
   identityOfRow,
   placeOfRow,

@@ -1,5 +1,5 @@
 import { type Evaluation, type PairMeasure, ROW_SHORT, ROW_UNDER_FLOOR } from './evaluation.ts'
-import { exemptionOf, isLaidOn, requiredIn, thresholdOf } from './measure-pair.ts'
+import { exemptionOf, isLaidOn, requiredIn, thresholdOf } from './pair-requirements.ts'
 import { identityOfRow, placeOfRow, statesOfRow, themeOfRow } from './measured-row.ts'
 import type { ContrastKind, State, Use, WaiverModel } from './model.ts'
 import { type ResolvedCell, STATE_COUNT } from './resolved.ts'

@@ -9,6 +9,7 @@ import {
   STATE_COUNT,
 } from './resolved.ts'
 import { spanFaults } from './theme-faults.ts'
+import { lightOf } from './token-light.ts'
 import { namedTokens } from './value-edges.ts'
 import { passValues } from './value-pass.ts'
 
@@ -38,10 +39,12 @@ function completeRow(row: Row): readonly ResolvedCell[] {
 }
 
 function toResolvedToken(graph: ModelGraph, position: number, row: Row): ResolvedToken {
+  const cells = completeRow(row)
   return {
     token: graph.model.tokens[position]!,
     states: ['rest', ...graph.statesAt(position)],
-    cells: completeRow(row),
+    cells,
+    light: lightOf(cells),
   }
 }
 

@@ -2,6 +2,7 @@ import type { Oklch } from '#shared/color/oklch.ts'
 import type { RenderedColor } from '#shared/color/render.ts'
 import { STATES, type State, type SystemModel, type TokenModel } from './model.ts'
 import type { Provenance } from './provenance.ts'
+import type { TokenLight } from './token-light.ts'
 
 /** Number of states a token can have, rest included. */
 export const STATE_COUNT = STATES.length
@@ -27,6 +28,7 @@ export interface ResolvedToken {
   readonly states: readonly State[]
   /** By theme position × STATE_COUNT + state position; states that are not listed hold rest's cell. */
   readonly cells: readonly ResolvedCell[]
+  readonly light: TokenLight
 }
 
 /** A model with every value computed. Plain data: it can be posted to a worker. */

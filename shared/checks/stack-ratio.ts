@@ -11,6 +11,8 @@ export interface Underlay {
   readonly translucent: number
   /** Whether what can be seen of it leaves sRGB or is translucent. */
   readonly isWide: boolean
+  /** As it is painted in each basis; what is not known is not painted. */
+  readonly painted: { readonly [basis in Basis]: Readonly<Pixel> }
 }
 
 /** Two sides to measure against each other. Mutable: one object serves all rows of a pair. */
@@ -34,7 +36,14 @@ export function toUnderlay(layers: readonly RenderedColor[], isUnknown: boolean)
     translucent = translucentOver(layer, translucent)
     isWide = wideOver(layer, isWide)
   }
-  return { layers, isUnknown, translucent, isWide }
+  const painted = { srgb: paintedOf(layers, 'srgb'), p3: paintedOf(layers, 'p3') }
+  return { layers, isUnknown, translucent, isWide, painted }
+}
+
+function paintedOf(layers: readonly RenderedColor[], basis: Basis): Pixel {
+  const pixel = createPixel()
+  for (const layer of layers) paintLayer(pixel, layer, basis)
+  return pixel
 }
 
 /** Visible translucent layers, with one more laid on top. */
@@ -52,37 +61,61 @@ export function wideOver(layer: RenderedColor, below: boolean): boolean {
 const upper = createPixel()
 const lower = createPixel()
 
-function paintUnderlay(pixel: Pixel, underlay: Underlay, basis: Basis): void {
-  for (let at = 0; at < underlay.layers.length; at++) {
-    paintLayer(pixel, underlay.layers[at]!, basis)
-  }
-}
-
 /** Whether what is under the pair can be seen through it at all. */
 function showsUnderlay(stack: MeasuredStack): boolean {
   return stack.background.a < 255 || (!stack.isLaidOn && stack.foreground.a < 255)
 }
 
-/** The ratio of two sides in one basis, each moved by a number of levels on all channels. */
-export function stackRatio(
+function copyPixel(from: Readonly<Pixel>, to: Pixel): void {
+  to.r = from.r
+  to.g = from.g
+  to.b = from.b
+}
+
+/** Paints both sides into `upper` and `lower`. */
+function paintSides(stack: MeasuredStack, basis: Basis): void {
+  const under = stack.underlay.painted[basis]
+  copyPixel(under, lower)
+  paintLayer(lower, stack.background, basis)
+  copyPixel(stack.isLaidOn ? lower : under, upper)
+  paintLayer(upper, stack.foreground, basis)
+}
+
+/** The ratio of two sides in one basis. */
+export function stackRatio(stack: MeasuredStack, basis: Basis): number {
+  if (stack.underlay.isUnknown && showsUnderlay(stack)) return leastRatio(stack, basis, UNMOVED)
+  paintSides(stack, basis)
+  return contrastRatio(luminanceOf(upper, basis), luminanceOf(lower, basis))
+}
+
+const UNMOVED = { foreground: 0, background: 0 }
+const moved = { foreground: 0, background: 0 }
+
+/**
+ * Writes the four ratios of two sides, each moved on all channels by a number of levels, down or up.
+ * @param by levels of each side, 0 or more
+ */
+export function writeMovedRatios(
   stack: MeasuredStack,
   basis: Basis,
-  levels: { readonly foreground: number; readonly background: number },
-): number {
-  if (stack.underlay.isUnknown && showsUnderlay(stack)) return leastRatio(stack, basis, levels)
-  paintUnderlay(lower, stack.underlay, basis)
-  upper.r = lower.r
-  upper.g = lower.g
-  upper.b = lower.b
-  paintLayer(lower, stack.background, basis)
-  if (stack.isLaidOn) {
-    upper.r = lower.r
-    upper.g = lower.g
-    upper.b = lower.b
+  by: { readonly foreground: number; readonly background: number },
+  out: Float64Array,
+): void {
+  if (stack.underlay.isUnknown && showsUnderlay(stack)) {
+    for (let corner = 0; corner < 4; corner++) {
+      moved.foreground = corner & 1 ? by.foreground : -by.foreground
+      moved.background = corner & 2 ? by.background : -by.background
+      out[corner] = leastRatio(stack, basis, moved)
+    }
+    return
   }
-  paintLayer(upper, stack.foreground, basis)
-  return contrastRatio(
-    luminanceOf(upper, basis, levels.foreground),
-    luminanceOf(lower, basis, levels.background),
-  )
+  paintSides(stack, basis)
+  const over = luminanceOf(upper, basis, -by.foreground)
+  const overUp = luminanceOf(upper, basis, by.foreground)
+  const under = luminanceOf(lower, basis, -by.background)
+  const underUp = luminanceOf(lower, basis, by.background)
+  out[0] = contrastRatio(over, under)
+  out[1] = contrastRatio(overUp, under)
+  out[2] = contrastRatio(over, underUp)
+  out[3] = contrastRatio(overUp, underUp)
 }

@@ -1,6 +1,7 @@
 import { ENGINE_STAMP } from './engine.ts'
-import { toFinding, visitEntries } from './entries.ts'
+import { visitEntries } from './entries.ts'
 import type { Evaluation } from './evaluation.ts'
+import { createFindingWriter } from './finding-writer.ts'
 import { createJudge, type JudgementOptions } from './judgement.ts'
 import { themeOfRow } from './measured-row.ts'
 import type { Finding, Outcome, Verdict } from './model.ts'
@@ -20,6 +21,7 @@ export function verdictOf(evaluation: Evaluation, options: VerdictOptions = {}):
   const findings: Finding[] = []
   const { include = 'all' } = options
   const judge = createJudge(evaluation, options)
+  const write = createFindingWriter(evaluation)
   let fails = false
   for (const subject of evaluation.subjects) {
     visitEntries(evaluation, subject, judge, (measure, row, judgement, entry) => {
@@ -27,9 +29,7 @@ export function verdictOf(evaluation: Evaluation, options: VerdictOptions = {}):
       counts[outcome]++
       if (outcome === 'breach' && themeOfRow(evaluation, measure, row).gating) fails = true
       if (include === 'none' || (include === 'not-pass' && outcome === 'pass')) return
-      findings.push(
-        toFinding(evaluation, entry ?? { measure, row, judgement, declared: [measure] }),
-      )
+      findings.push(write(measure, row, judgement, entry?.declared))
     })
   }
   return {

@@ -1,4 +1,4 @@
-import { isLaidOn } from './measure-pair.ts'
+import { isLaidOn } from './pair-requirements.ts'
 import { LEVELS, type PairModel, STATES, type SystemModel, type ThemeModel } from './model.ts'
 import type { ResolvedSystem } from './resolved.ts'
 import { requiredRatio } from './uses.ts'

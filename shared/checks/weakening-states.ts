@@ -1,4 +1,4 @@
-import { exemptionOf } from './measure-pair.ts'
+import { exemptionOf } from './pair-requirements.ts'
 import { type PairModel, STATES, type State, type SystemSettings } from './model.ts'
 import { combinationsOf } from './pair-states.ts'
 import { type ResolvedSystem, STATE_COUNT } from './resolved.ts'
