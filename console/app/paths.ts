@@ -7,6 +7,7 @@ export const paths = {
   systems: () => '/systems',
   tokens: (system: string, search = '') => `/systems/${segment(system)}/tokens${search}`,
   token: (system: string, name: string) => `/systems/${segment(system)}/tokens/${segment(name)}`,
+  importFile: (system: string) => `/systems/${segment(system)}/import`,
   pairs: (system: string, search = '') => `/systems/${segment(system)}/pairs${search}`,
   pair: (system: string, id: string) => `/systems/${segment(system)}/pairs/${segment(id)}`,
   newPair: (system: string, search = '') => `/systems/${segment(system)}/new-pair${search}`,

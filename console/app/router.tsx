@@ -37,6 +37,11 @@ const systemPages: RouteObject[] = [
     ErrorBoundary: PageTrouble,
   },
   {
+    path: 'import',
+    lazy: () => import('#console/routes/import-page.tsx'),
+    ErrorBoundary: PageTrouble,
+  },
+  {
     path: 'pairs',
     lazy: () => import('#console/routes/pairs-page.tsx'),
     ErrorBoundary: PageTrouble,

@@ -1,6 +1,7 @@
 import { useSuspenseQuery } from '@tanstack/react-query'
 import { useMemo, useState } from 'react'
 import {
+  Link,
   type LoaderFunctionArgs,
   Outlet,
   useMatch,
@@ -67,6 +68,8 @@ export function Component() {
   )
   const context = useMemo<FrameContext>(() => ({ lead, view: setView }), [])
   const isInSettings = useIsIn(SETTINGS)
+  const isAmongTokens = useIsIn(TOKENS)
+  const takesFiles = useIsIn(TAKING_FILES)
   const isAmongPairs = useIsIn(PAIRS)
   const isAmongBreaches = useIsIn(BREACHES)
   const token = useMatch('/systems/:system/tokens/:name')
@@ -93,7 +96,12 @@ export function Component() {
         <Navigation
           label={settings.key}
           places={[
-            { href: paths.tokens(system), text: 'Tokens', count: settings.counts.tokens },
+            {
+              href: paths.tokens(system),
+              text: 'Tokens',
+              count: settings.counts.tokens,
+              holdsPage: isAmongTokens,
+            },
             {
               href: paths.pairs(system),
               text: 'Pairs',
@@ -108,7 +116,13 @@ export function Component() {
             },
             { href: paths.settings(system), text: 'Settings', holdsPage: isInSettings },
           ]}
-        />
+        >
+          {takesFiles && (
+            <Link to={paths.importFile(system)} className="word">
+              Import a file
+            </Link>
+          )}
+        </Navigation>
         <main id="content" tabIndex={-1} className="outline-none">
           <Outlet context={context} />
         </main>
@@ -118,6 +132,9 @@ export function Component() {
 }
 
 const SETTINGS = new Set(['settings', 'themes', 'new-theme', 'rules', 'members', 'keys'])
+const TOKENS = new Set(['import'])
+/** Pages beside which the way to an import stands. */
+const TAKING_FILES = new Set(['tokens', 'settings'])
 const BREACHES = new Set(['breaches', 'sightings'])
 const PAIRS = new Set(['pairs', 'pair-sheet', 'new-pair'])
 

@@ -41,7 +41,7 @@ export function Component() {
   const rows = useMemo(() => rowsOf(tokens, measured.data), [tokens, measured.data])
   const chosen = useMemo(() => chosenRows(rows, filter), [rows, filter])
   const field = useFindField()
-  if (tokens.length === 0) return <NoTokenYet />
+  if (tokens.length === 0) return <NoTokenYet importHref={paths.importFile(system)} />
   return (
     <>
       <title>{`Tokens of ${system} · Dyewright`}</title>

@@ -10,6 +10,7 @@ export const PLACES = [
   'systems',
   'tokens',
   'token',
+  'import',
   'pairs',
   'pair',
   'new pair',
@@ -48,6 +49,7 @@ const FIXED: Readonly<Record<Exclude<PlaceName, 'opened breach' | 'pair'>, Place
     title: 'action.board.fill',
     last: 'Its pairs',
   },
+  import: { path: `${SYSTEM}/import`, title: 'larkhaven', last: 'Import a file' },
   pairs: { path: `${SYSTEM}/pairs?order=short`, title: 'larkhaven' },
   'new pair': {
     path: `${SYSTEM}/new-pair?foreground=text.muted&background=chart.paper`,

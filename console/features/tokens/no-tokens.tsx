@@ -6,10 +6,13 @@ import { NothingHere } from '#console/ui/page-states.tsx'
 import type { NearNames } from './ledger-rows.ts'
 
 /** A system before its first token. */
-export function NoTokenYet() {
+export function NoTokenYet({ importHref }: { importHref: string }) {
   return (
     <NothingHere title="This ledger has no token yet.">
-      Tokens arrive over the API: one at a time, or a whole file. The API reference shows both.
+      <Link to={importHref} className="word-woad font-medium">
+        Import a file
+      </Link>
+      , or send tokens over the API: one at a time, or all of them.
     </NothingHere>
   )
 }
