@@ -1,6 +1,6 @@
 // @ts-check
 import { createHash } from 'node:crypto'
-import { existsSync, readFileSync, writeFileSync } from 'node:fs'
+import { existsSync, lstatSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { setTimeout as delay } from 'node:timers/promises'
 import { holdLock, LOCKS } from '#scripts/start/lock.mjs'
@@ -26,6 +26,7 @@ export async function ensurePackages({ serving }) {
   try {
     if (isInstalled()) return 'installed by another process'
     if (!serving) await requireNoService()
+    unlinkPackages()
     // NODE_ENV=production would leave out what the build needs.
     await npm(['ci', '--include=dev', '--no-audit', '--no-fund', '--prefer-offline', ...RETRIES])
     writeFileSync(STAMP, lockDigest())
@@ -41,6 +42,12 @@ async function takeInstalling() {
     if (lock.holder === undefined) return lock
     await delay(500)
   }
+}
+
+/** npm empties the folder that a link leads to, which is another copy's. */
+function unlinkPackages() {
+  const folder = join(ROOT, 'node_modules')
+  if (lstatSync(folder, { throwIfNoEntry: false })?.isSymbolicLink()) rmSync(folder)
 }
 
 /** Taking packages away under a running service would break it. */

@@ -19,7 +19,6 @@ import {
 /** What a test of another user, a disk or a network of its own takes. */
 const isRoot = process.getuid?.() === 0
 const NOBODY = 65_534
-const WITHOUT_NETWORK = ['unshare', '--net', 'sh', '-c', 'ip link set lo up; exec "$0" "$@"']
 
 let copy: ProjectCopy
 const running: Start[] = []
@@ -92,77 +91,6 @@ describe('npm start after one that broke off', () => {
   })
 })
 
-describe('the packages', () => {
-  const INSTALL = `import { ensurePackages } from '#scripts/start/packages.mjs'
-    console.log(await ensurePackages({ serving: false }))`
-
-  /** Two of the project's own packages, from its own lock file: enough to be interrupted in. */
-  function fewPackages(): void {
-    rmSync(join(copy.folder, 'node_modules'), { recursive: true })
-    const dependencies = { typescript: '5.9.3', picocolors: '1.1.1' }
-    edit('package.json', (manifest) => ({ ...manifest, dependencies, devDependencies: {} }))
-    edit('package-lock.json', (lock) => ({
-      ...lock,
-      packages: {
-        '': { ...lock.packages[''], dependencies, devDependencies: {} },
-        ...Object.fromEntries(
-          Object.keys(dependencies).map((name) => {
-            const path = `node_modules/${name}`
-            return [path, { ...lock.packages[path], dev: undefined }]
-          }),
-        ),
-      },
-    }))
-  }
-
-  test('leaves them whole after an installation was killed, and one of two at once waits', async () => {
-    fewPackages()
-    const killed = spawn(process.execPath, ['--input-type=module', '-e', INSTALL], {
-      cwd: copy.folder,
-      stdio: 'ignore',
-      detached: true,
-    })
-    const started = join(copy.folder, 'node_modules/typescript')
-    await until(() => existsSync(started))
-    process.kill(-killed.pid!, 'SIGKILL')
-    await once(killed, 'exit')
-    expect(existsSync(join(copy.folder, 'node_modules/.dyewright-lock'))).toBe(false)
-    const both = await Promise.all([runNode(INSTALL), runNode(INSTALL)])
-    expect(both.map(({ said }) => said.trim()).toSorted()).toEqual([
-      'installed',
-      'installed by another process',
-    ])
-    const listed = copy.shell('npm ls --all && node -e "require(\'typescript\')"')
-    expect(listed.status).toBe(0)
-  })
-
-  test.runIf(isRoot)(
-    'refuses in one line without a network, and needs none once they are there',
-    async () => {
-      const up = begin({ through: WITHOUT_NETWORK })
-      await untilSaid(up, READY)
-      await stop(up)
-      fewPackages()
-      const refused = begin({
-        through: WITHOUT_NETWORK,
-        env: { npm_config_cache: join(copy.folder, '.data/empty-cache') },
-      })
-      expect(await exitOf(refused.child)).toBe(1)
-      expect(refused.output()).toContain(
-        'The network does not reach the packages. They are fetched once: connect, then run this again.',
-      )
-    },
-  )
-
-  test('refuses another Node in one line', async () => {
-    edit('package.json', (manifest) => ({ ...manifest, engines: { node: '>=99.1' } }))
-    const refused = begin()
-    expect(await exitOf(refused.child)).toBe(1)
-    expect(refused.output()).toContain(`Node >=99.1 is needed; this is ${process.version}.`)
-    expect(refused.output()).not.toContain('    at ')
-  })
-})
-
 describe.runIf(isRoot)('the machine', () => {
   test('refuses in one line on a full disk, and starts once there is room', async () => {
     const data = join(copy.folder, '.data')
@@ -191,7 +119,7 @@ describe.runIf(isRoot)('the machine', () => {
   })
 
   test('answers the line that installs a program where that takes root', async () => {
-    const refused = await runNode(installing('dyw-absent', 'dyw-package'), AS_NOBODY)
+    const refused = await copy.runNode(installing('dyw-absent', 'dyw-package'), AS_NOBODY)
     expect(refused.code).toBe(1)
     expect(refused.said).toContain(
       'sudo apt-get update && sudo apt-get install -y --no-install-recommends dyw-package',
@@ -203,7 +131,7 @@ describe.runIf(isRoot)('the machine', () => {
     const lock = spawn('perl', ['-e', HOLD_DPKG], { stdio: ['ignore', 'pipe', 'inherit'] })
     try {
       await Promise.race([once(lock.stdout, 'data'), once(lock, 'exit').then(() => expect.fail())])
-      const installed = runNode(installing('dyw-probe', tinyPackage(folder)))
+      const installed = copy.runNode(installing('dyw-probe', tinyPackage(folder)))
       await until(() => installed.soFar().includes('Another package run holds the lock of dpkg'))
       lock.kill('SIGKILL')
       expect(await installed).toMatchObject({ code: 0 })
@@ -245,25 +173,6 @@ function tinyPackage(folder: string): string {
   return file
 }
 
-function runNode(script: string, through: readonly string[] = []) {
-  const [program = '', ...args] = [
-    ...through,
-    process.execPath,
-    '--input-type=module',
-    '-e',
-    script,
-  ]
-  const child = spawn(program, args, { cwd: copy.folder, stdio: ['ignore', 'pipe', 'pipe'] })
-  let said = ''
-  for (const stream of [child.stdout, child.stderr]) {
-    stream.setEncoding('utf8').on('data', (text) => {
-      said += text
-    })
-  }
-  const ended = once(child, 'close').then(() => ({ code: child.exitCode, said }))
-  return Object.assign(ended, { soFar: () => said })
-}
-
 /** A process under a pid of our choice: the kernel is told which one it gave last. */
 async function sleeperWithPid(pid: number) {
   for (let tries = 0; tries < 200; tries += 1) {
@@ -288,10 +197,4 @@ async function until(isSo: () => boolean): Promise<void> {
 
 function ownerOf(pid: number): number {
   return Number(/^Uid:\s+(\d+)/m.exec(readFileSync(`/proc/${pid}/status`, 'utf8'))?.[1])
-}
-
-// biome-ignore lint/suspicious/noExplicitAny: the shape of npm's two files is npm's
-function edit(file: string, change: (content: any) => unknown): void {
-  const path = join(copy.folder, file)
-  writeFileSync(path, JSON.stringify(change(JSON.parse(readFileSync(path, 'utf8'))), null, 2))
 }

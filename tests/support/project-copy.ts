@@ -24,6 +24,10 @@ export interface StartOptions {
   readonly through?: readonly string[]
 }
 
+type NodeRun = Promise<{ readonly code: number | null; readonly said: string }> & {
+  soFar(): string
+}
+
 /** A copy of the project as it is, so that a service running in this folder is left alone. */
 export interface ProjectCopy {
   readonly folder: string
@@ -32,6 +36,8 @@ export interface ProjectCopy {
   /** 0 where nobody listens. */
   statusOf(path: string): Promise<number>
   shell(command: string): ReturnType<typeof spawnSync>
+  /** Runs a module of the copy's to its end; `soFar` is what it has said until now. */
+  runNode(script: string, through?: readonly string[]): NodeRun
   remove(): void
 }
 
@@ -51,6 +57,7 @@ export async function copyProject(): Promise<ProjectCopy> {
     start: (options) => start(folder, port, options),
     statusOf: (path) => statusOf(`${url}${path}`),
     shell: (command) => shell(folder, command),
+    runNode: (script, through) => runNode(folder, script, through),
     remove: () => rmSync(folder, { recursive: true, force: true }),
   }
 }
@@ -119,4 +126,23 @@ function shell(folder: string, command: string) {
     encoding: 'utf8',
     env: { ...process.env, PATH: `${node}:${process.env.PATH}` },
   })
+}
+
+function runNode(folder: string, script: string, through: readonly string[] = []): NodeRun {
+  const [program = '', ...args] = [
+    ...through,
+    process.execPath,
+    '--input-type=module',
+    '-e',
+    script,
+  ]
+  const child = spawn(program, args, { cwd: folder, stdio: ['ignore', 'pipe', 'pipe'] })
+  let said = ''
+  for (const stream of [child.stdout, child.stderr]) {
+    stream.setEncoding('utf8').on('data', (text) => {
+      said += text
+    })
+  }
+  const ended = once(child, 'close').then(() => ({ code: child.exitCode, said }))
+  return Object.assign(ended, { soFar: () => said })
 }
