@@ -50,6 +50,9 @@ async function setUp() {
   await step('Node', (say) => say(checkNodeVersion()))
   await step('Packages', async (say) => say(await ensurePackages({ serving: false })))
   await step('MariaDB', async (say) => say(await ensureMariadb()))
+  await step('Little CMS', async (say) =>
+    say(await ensurePrograms({ programs: ['transicc'], packages: ['liblcms2-utils'] })),
+  )
   if (isCheck) return
   await step('Chromium', async (say) =>
     say(await ensurePrograms({ programs: ['chromium'], packages: ['chromium'] })),
