@@ -1,7 +1,7 @@
-import { deltaE2000, labOfBytes } from '#shared/color/difference.ts'
+import { areApartInLightness, deltaE2000, labOfBytes } from '#shared/color/difference.ts'
 import type { RenderedColor } from '#shared/color/render.ts'
 import { sameOklch } from './color-arithmetic.ts'
-import { createPixel, paintLayer } from './layers.ts'
+import { createPixel, luminanceOf, type Pixel, paintLayer } from './layers.ts'
 import { stateAt } from './model-graph.ts'
 import type { Advisory, State } from './model.ts'
 import type { Provenance } from './provenance.ts'
@@ -65,12 +65,23 @@ function isAsRest(provenance: Provenance): boolean {
   return lightness === 0 && chroma === 1 && hue === 0 && alpha === 1
 }
 
-const pixel = createPixel()
+/** Whether one colour cannot be told from another, both laid on a ground. */
+function isAlike(ground: RenderedColor, first: RenderedColor, second: RenderedColor): boolean {
+  if (first === second) return true
+  paintOn(ground, first, upper)
+  paintOn(ground, second, lower)
+  const [y1, y2] = [luminanceOf(upper, 'srgb'), luminanceOf(lower, 'srgb')]
+  if (areApartInLightness(y1, y2, VISIBLE_DIFFERENCE)) return false
+  const lab = labOfBytes(upper.r, upper.g, upper.b)
+  return deltaE2000(lab, labOfBytes(lower.r, lower.g, lower.b)) < VISIBLE_DIFFERENCE
+}
 
-function labOn(ground: RenderedColor, color: RenderedColor) {
+const upper = createPixel()
+const lower = createPixel()
+
+function paintOn(ground: RenderedColor, color: RenderedColor, pixel: Pixel): void {
   paintLayer(pixel, ground, 'srgb')
   paintLayer(pixel, color, 'srgb')
-  return labOfBytes(pixel.r, pixel.g, pixel.b)
 }
 
 function invisibleStates(
@@ -79,18 +90,14 @@ function invisibleStates(
   theme: number,
 ): readonly State[] {
   const { ground } = resolved.model.themes[theme]!
-  const under = resolved.tokens.get(ground)!.cells[theme * STATE_COUNT]!.color.rendered
-  const cellOf = (state: State) => token.cells[theme * STATE_COUNT + stateAt(state)]!
-  const states = token.states.filter((state) => {
+  const first = theme * STATE_COUNT
+  const under = resolved.tokens.get(ground)!.cells[first]!.color.rendered
+  const rest = token.cells[first]!.color.rendered
+  return token.states.filter((state) => {
     if (state === 'rest') return false
-    const end = endOfAliases(resolved, token, theme * STATE_COUNT + stateAt(state))
-    return !isAsRest(end.cell.provenance)
-  })
-  if (states.length === 0) return []
-  const rest = labOn(under, cellOf('rest').color.rendered)
-  return states.filter((state) => {
-    const lab = labOn(under, cellOf(state).color.rendered)
-    return deltaE2000(rest, lab) < VISIBLE_DIFFERENCE
+    const offset = first + stateAt(state)
+    if (!isAlike(under, rest, token.cells[offset]!.color.rendered)) return false
+    return !isAsRest(endOfAliases(resolved, token, offset).cell.provenance)
   })
 }
 

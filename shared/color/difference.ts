@@ -1,5 +1,6 @@
 import { differenceCiede2000 } from 'culori/fn'
 import { toLibraryLab65 } from './color-library.ts'
+import { cieLightness } from './luminance.ts'
 import type { Oklch } from './oklch.ts'
 
 /** CIE Lab with white D65. */
@@ -35,6 +36,23 @@ export function deltaEOk(first: Oklch, second: Oklch): number {
  */
 export function deltaE2000(first: LabD65, second: LabD65): number {
   return ciede2000({ mode: 'lab65', ...first }, { mode: 'lab65', ...second })
+}
+
+/** CIEDE2000 divides a difference of L* by at most this: S_L where the mean is black or white. */
+const MOST_LIGHTNESS_WEIGHT = 1 + (0.015 * 50 ** 2) / Math.sqrt(20 + 50 ** 2)
+/** More than WCAG's printed coefficients can move L* by. */
+const LIGHTNESS_MARGIN = 0.25
+
+/**
+ * Tells of two sRGB colours whether their lightness alone keeps them a CIEDE2000 apart: what chroma and hue add is
+ * never negative. Much quicker than the difference itself.
+ * @param first WCAG relative luminance, 0 to 1; `second` alike.
+ * @returns false where only the difference itself can tell
+ * @see https://doi.org/10.1002/col.20070
+ */
+export function areApartInLightness(first: number, second: number, deltaE: number): boolean {
+  const distance = Math.abs(cieLightness(first) - cieLightness(second))
+  return distance > deltaE * MOST_LIGHTNESS_WEIGHT + LIGHTNESS_MARGIN
 }
 
 /**

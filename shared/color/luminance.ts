@@ -40,3 +40,13 @@ export function contrastRatio(y1: number, y2: number): number {
   const ratio = y1 > y2 ? (y1 + 0.05) / (y2 + 0.05) : (y2 + 0.05) / (y1 + 0.05)
   return Math.min(ratio, 21)
 }
+
+/**
+ * Converts a relative luminance to CIE lightness.
+ * @param luminance 0 to 1
+ * @returns L* from 0 to 100, unrounded
+ * @see https://www.w3.org/TR/css-color-4/#color-conversion-code XYZ_to_Lab
+ */
+export function cieLightness(luminance: number): number {
+  return luminance > 216 / 24389 ? 116 * Math.cbrt(luminance) - 16 : (24389 / 27) * luminance
+}
