@@ -74,7 +74,11 @@ function encode(v: number): number {
   return Math.sign(v) * (1.055 * Math.abs(v) ** (1 / 2.4) - 0.055)
 }
 
+/** Up to this chroma hue is powerless, and the colour a grey: https://www.w3.org/TR/css-color-4/#ok-lab */
+const POWERLESS = 0.000004
+
 function oklabOf(l: number, c: number, h: number): Triple {
+  if (c <= POWERLESS) return [l, 0, 0]
   const angle = (h * Math.PI) / 180
   return [l, c * Math.cos(angle), c * Math.sin(angle)]
 }
