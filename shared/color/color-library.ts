@@ -1,4 +1,5 @@
 import {
+  type Color,
   converter,
   modeA98,
   modeHsl,
@@ -38,8 +39,13 @@ for (const mode of [
   registerMode(mode)
 }
 
+type CssRgbMode = 'rgb' | 'lrgb' | 'p3' | 'a98' | 'prophoto'
+type CssOtherMode = 'xyz50' | 'xyz65' | 'hsl' | 'hwb' | 'lab' | 'lch' | 'oklab' | 'oklch'
+/** What CSS text can be once it is read: the spaces that CSS Color 4 writes, as the library holds them. */
+export type ParsedColor = Extract<Color, { mode: CssRgbMode | CssOtherMode }>
+
 /** Reads CSS text with the library's grammar; it throws on a term it does not know. */
-export const parseWithLibrary = parse
+export const parseWithLibrary = (text: string) => parse(text) as ParsedColor | undefined
 /** Converts a library colour to OKLCH, unrounded. */
 export const toLibraryOklch = converter('oklch')
 /** Converts a library colour to CIE Lab with white D65, unrounded. */

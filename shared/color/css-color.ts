@@ -1,5 +1,5 @@
-import { type Color, colorsNamed } from 'culori/fn'
-import { parseWithLibrary } from './color-library.ts'
+import { colorsNamed } from 'culori/fn'
+import { type ParsedColor, parseWithLibrary } from './color-library.ts'
 import type { ColorSpace, Components, SpacedColor } from './to-oklch.ts'
 
 /** A colour as CSS wrote it, or in one sentence why it is none. */
@@ -70,7 +70,6 @@ function readKeyword(css: string): CssReading {
 }
 
 function readFunction(css: string, name: string, body: string): CssReading {
-  if (Object.hasOwn(NOT_FIXED, name)) return refused(NOT_FIXED[name]!)
   if (/^\s*from\b/.test(body)) return refused('A relative colour (from …) is not a fixed colour.')
   const space = name === 'color' ? SPACES_OF_COLOR[SPACE.exec(body)?.[1] ?? ''] : spaceOf(name)
   if (!space) {
@@ -131,7 +130,12 @@ function unit(component: number | null): number | null {
   return component === null ? null : Math.min(1, Math.max(0, component))
 }
 
-function spaced(color: Color, space: ColorSpace, alphaIsMissing: boolean, name = ''): CssReading {
+function spaced(
+  color: ParsedColor,
+  space: ColorSpace,
+  alphaIsMissing: boolean,
+  name = '',
+): CssReading {
   const components = clamped(componentsOf(color), name)
   return {
     ok: true,
@@ -139,7 +143,7 @@ function spaced(color: Color, space: ColorSpace, alphaIsMissing: boolean, name =
   }
 }
 
-function componentsOf(color: Color): Components {
+function componentsOf(color: ParsedColor): Components {
   switch (color.mode) {
     case 'hsl':
       return [present(color.h), percent(color.s), percent(color.l)]
@@ -160,8 +164,6 @@ function componentsOf(color: Color): Components {
     case 'a98':
     case 'prophoto':
       return [present(color.r), present(color.g), present(color.b)]
-    default:
-      throw new TypeError(`No CSS color has the mode ${color.mode}.`)
   }
 }
 

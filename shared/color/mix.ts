@@ -186,7 +186,7 @@ export function mixColors(first: SpacedColor, second: SpacedColor, mixing: Mixin
       return turned(between(from, fixedHue(from, turned(b), hue), part))
     }
     if (alpha === null || alpha === 0) return between(a, b, part)
-    return between(a * (alphas.first ?? 1), b * (alphas.second ?? 1), part) / alpha
+    return between(a * alphas.first!, b * alphas.second!, part) / alpha
   }
   return { space, components: [component(0), component(1), component(2)], alpha }
 }

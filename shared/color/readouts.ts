@@ -133,7 +133,7 @@ export function readoutsOf(color: Oklch): Readouts {
     xyzD65: [xyz65.x, xyz65.y, xyz65.z],
     xyzD50: [xyz50.x, xyz50.y, xyz50.z],
     lab: [lab.l, lab.a, lab.b],
-    lch: [lch.l, lch.c, isGrey ? null : (lch.h ?? null)],
+    lch: [lch.l, lch.c, isGrey || lch.h === undefined ? null : lch.h],
     lms: lmsOf(linear.r, linear.g, linear.b),
     shipped: shippedOf(color),
     css: formatOklch(color),
