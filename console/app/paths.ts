@@ -12,6 +12,7 @@ export const paths = {
   pair: (system: string, id: string) => `/systems/${segment(system)}/pairs/${segment(id)}`,
   newPair: (system: string, search = '') => `/systems/${segment(system)}/new-pair${search}`,
   pairSheet: (system: string, search = '') => `/systems/${segment(system)}/pair-sheet${search}`,
+  coverage: (system: string) => `/systems/${segment(system)}/coverage`,
   breaches: (system: string, search = '') => `/systems/${segment(system)}/breaches${search}`,
   breach: (system: string, id: string, search = '') =>
     `/systems/${segment(system)}/breaches/${segment(id)}${search}`,

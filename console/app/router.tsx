@@ -62,6 +62,11 @@ const systemPages: RouteObject[] = [
     ErrorBoundary: PageTrouble,
   },
   {
+    path: 'coverage',
+    lazy: () => import('#console/routes/coverage-page.tsx'),
+    ErrorBoundary: PageTrouble,
+  },
+  {
     path: 'breaches/:id?',
     lazy: () => import('#console/routes/breaches-page.tsx'),
     ErrorBoundary: PageTrouble,

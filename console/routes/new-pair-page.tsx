@@ -4,6 +4,7 @@ import { type LoaderFunctionArgs, useNavigate, useParams, useSearchParams } from
 import { paths } from '#console/app/paths.ts'
 import { EffectOnVerdicts } from '#console/features/checks/effect-list.tsx'
 import { memberQueries } from '#console/features/members/members.queries.ts'
+import { readPairAddress } from '#console/features/pairs/pair-address.ts'
 import { EMPTY_PAIR } from '#console/features/pairs/pair-draft.ts'
 import { declarePair, pairQueries } from '#console/features/pairs/pairs.queries.ts'
 import { systemQueries } from '#console/features/systems/systems.queries.ts'
@@ -37,10 +38,7 @@ export function Component() {
   const [search] = useSearchParams()
   const { data: settings } = useSuspenseQuery(systemQueries.one(system))
   const { data: evaluation } = useEvaluation(system, settings.head.revision)
-  const [start] = useState(() => ({
-    foreground: search.get('foreground') ?? '',
-    background: search.get('background') ?? '',
-  }))
+  const [start] = useState(() => readPairAddress(search))
   const edit = usePairEdit({ id: NEW_PAIR, standing: EMPTY_PAIR }, evaluation, start)
   const names = useModelNames(system)
   return (

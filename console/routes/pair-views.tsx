@@ -3,7 +3,7 @@ import { Link } from 'react-router-dom'
 import { paths } from '#console/app/paths.ts'
 import { SubNavigation } from '#console/ui/sub-navigation.tsx'
 
-/** The two ways to look at the pairs, and the way to declare one. */
+/** The ways to look at the pairs and at what they leave out, and the way to declare one. */
 export function PairViews({ system, children }: { system: string; children?: ReactNode }) {
   return (
     <div className="flex flex-wrap items-end justify-between gap-x-28 gap-y-4 print:hidden">
@@ -12,6 +12,7 @@ export function PairViews({ system, children }: { system: string; children?: Rea
         places={[
           { href: paths.pairs(system), text: 'Table' },
           { href: paths.pairSheet(system), text: 'Sheet' },
+          { href: paths.coverage(system), text: 'Coverage' },
         ]}
       />
       <div className="flex flex-wrap items-center gap-x-22 gap-y-4 pb-2">
