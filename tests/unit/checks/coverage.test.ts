@@ -31,3 +31,11 @@ it('answers the same text for pairs that measure the same, whatever they ask and
     expect(measuredBy({ ...one, ...(members as object) })).not.toBe(measuredBy(one))
   }
 })
+
+it('answers what lies under no known backdrop by its sides, and a pair on a token that is gone', () => {
+  const tokens = ['a', 'b', 'c'].map((id) => token(id, '#777777'))
+  const unknown = pair('a', 'b', { backdrop: 'unknown' })
+  expect(uncoveredTokens({ tokens, pairs: [unknown] }).map(({ id }) => id)).toEqual(['c'])
+  const gone = pair('a', 'gone')
+  expect(uncoveredTokens({ tokens, pairs: [gone] }).map(({ id }) => id)).toEqual(['b', 'c'])
+})

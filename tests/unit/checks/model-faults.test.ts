@@ -8,6 +8,35 @@ import { evaluate, faultsOf, hexAt } from './reading.ts'
 const codes = (model: SystemModel) => faultsOf(model).map(({ code }) => code)
 
 describe('faults', () => {
+  it('refuses a theme whose parent is missing, and reads it from the base', () => {
+    const dusk = theme('dusk', { from: 'gone' })
+    const model = system({ themes: [theme('light'), dusk] })
+    const set = model.tokens.map((own) => ({ ...own, values: { dusk: { rest: own.value } } }))
+    expect(faultsOf({ ...model, tokens: set })).toEqual([
+      {
+        code: 'reference-missing',
+        detail: 'Theme dusk derives from gone, which is missing',
+        theme: 'dusk',
+      },
+    ])
+  })
+
+  it('leaves a state or a field of a rule that is there without a value', () => {
+    const plain = token('a', '#777777', { states: ['hover'] })
+    const holes = {
+      ...plain,
+      values: { dark: { rest: undefined, hover: undefined } },
+      rules: { states: { hover: { lightness: undefined, chroma: 0.5 } } },
+    } as unknown as typeof plain
+    const given = { ...plain, rules: { states: { hover: { chroma: 0.5 } } } }
+    const model = system({ tokens: [holes] })
+    expect(codes(model)).toEqual([])
+    const meant = system({ tokens: [given] })
+    for (const place of ['a', 'a hover', 'a dark hover']) {
+      expect(hexAt(model, place)).toBe(hexAt(meant, place))
+    }
+  })
+
   it('refuses a cycle, naming its path once', () => {
     const model = system({ tokens: [token('a', '{b}'), token('b', '{c}'), token('c', '{a}')] })
     const faults = faultsOf(model)

@@ -34,6 +34,24 @@ it('answers what a derivation adds and multiplies', () => {
   )
 })
 
+it('answers the state that a derivation follows', () => {
+  const a = token('a', '#777777', { states: ['hover'] })
+  const dimmed = { kind: 'derived', token: 'a', alpha: 0.8 } as const
+  const t = { ...token('t', '#000000', { states: ['hover'] }), value: dimmed }
+  expect(textOf(system({ tokens: [a, t] }), 't')).toBe('from {a}, alpha × 0.8')
+  expect(
+    describeProvenance(
+      {
+        from: 'derived',
+        token: 'a',
+        state: 'hover',
+        adjustment: { lightness: 0, chroma: 1, hue: 0, alpha: 1 },
+      },
+      (id) => id,
+    ),
+  ).toBe('from {a} hover')
+})
+
 it('answers the step of a state rule with what it was taken from, and its factors', () => {
   const states = ['hover', 'active', 'focus', 'disabled'] as const
   const text = (color: string, hover: object, place: string) =>

@@ -36,3 +36,9 @@ it('answers nothing where no member does', () => {
   const pairs = RING.pairs.filter(({ foreground }) => foreground !== 'inner')
   expect(standIns({ ...RING, pairs })[0]).toEqual(['outer breach', undefined])
 })
+
+it('answers nothing for a finding of a theme that the system has no longer', () => {
+  const evaluation = evaluate(RING)
+  const [finding] = verdictOf(evaluation).findings
+  expect(standInFor(evaluation, { ...finding!, theme: 'gone' })).toBeUndefined()
+})

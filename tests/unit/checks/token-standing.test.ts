@@ -96,3 +96,10 @@ it('leaves findings that another member of their group stands in for out of the 
   })
   expect(standingOf(bands).get('inner')).not.toHaveProperty('lowest')
 })
+
+it('answers a pair of a token on itself once, and nothing for a token in no pair', () => {
+  const own = evaluate({ ...model, pairs: [pair('sand', 'sand')] })
+  expect(standingOf(own).get('sand')).toMatchObject({ pairs: 1, breaches: 1, mark: 'breach' })
+  expect(findingsOf(own, 'sand').map(({ as }) => as)).toEqual(['foreground'])
+  expect(findingsOf(own, 'alone')).toEqual([])
+})

@@ -1,7 +1,10 @@
 import { describe, expect, it } from 'vitest'
 import type { SystemEdits } from '#shared/checks/edits.ts'
 import type { SystemModel } from '#shared/checks/model.ts'
+import { weakeningsBetween } from '#shared/checks/weakening.ts'
+import { createTokenNames } from '#shared/checks/weakening-kinds.ts'
 import { pair, system, token } from './model-builder.ts'
+import { resolve } from './reading.ts'
 import { BASE, judge } from './weakened.ts'
 
 // Which edits weaken is the product's own rule; no published source.
@@ -80,5 +83,52 @@ describe('states of tokens', () => {
     })
     const fill = token('fill', '#888888', { states: ['hover', 'active', 'focus'] })
     expect(judge(model, { tokens: { put: [fill] } }).said).toEqual([])
+  })
+
+  it('leaves a pair that is new, and one that is exempt in every state', () => {
+    const model = system({
+      tokens: [token('label', '#999999', { states: ['hover'] }), token('fill', '#888888')],
+      pairs: [pair('label', 'fill', { exempt: { kind: 'logotype', reason: 'mark' } })],
+    })
+    const put = [token('label', '#999999'), token('new', '#ffffff')]
+    const edits = { tokens: { put }, pairs: { put: [pair('label', 'new')] } }
+    expect(judge(model, edits).said).toEqual([])
+    const inactive = { kind: 'inactive', reason: 'greyed' } as const
+    const floored = {
+      ...model,
+      settings: { ...model.settings, disabledFloor: 2 },
+      pairs: [pair('label', 'fill', { exempt: inactive })],
+    }
+    expect(judge(floored, edits).said).toEqual(['states-changed states'])
+  })
+
+  it('answers five pairs that are measured no longer, and how many more there are', () => {
+    const grounds = Array.from({ length: 7 }, (_, at) => token(`g${at}`, '#ffffff'))
+    const model = system({
+      tokens: [token('label', '#555555', { states: ['hover'] }), ...grounds],
+      pairs: grounds.map(({ id }) => pair('label', id)),
+    })
+    const { found } = judge(model, { tokens: { put: [token('label', '#555555')] } })
+    expect(found).toHaveLength(1)
+    expect(found[0]!.detail).toBe(
+      `With the states of label, ${[0, 1, 2, 3, 4].map((at) => `label on g${at} in hover`).join('; ')}; ` +
+        'and 2 more is measured no longer',
+    )
+  })
+
+  it('answers nothing between a system and itself, and what else moved where no token did', () => {
+    const before = resolve(BASE)
+    expect(weakeningsBetween(before, before)).toEqual([])
+    const strict = {
+      ...before.model,
+      settings: { ...before.model.settings, level: 'AAA' as const },
+    }
+    const found = weakeningsBetween({ ...before, model: strict }, before)
+    expect(found.map(({ code }) => code)).toEqual(['level-lowered'])
+  })
+
+  it('answers a token that neither system has by its id', () => {
+    const nameOf = createTokenNames(resolve(BASE), resolve(system()))
+    expect([nameOf('grey'), nameOf('gone')]).toEqual(['grey', 'gone'])
   })
 })
