@@ -1,6 +1,6 @@
 import type { PairModel, ThemeModel } from './model.ts'
 import { combinationsOf } from './pair-states.ts'
-import type { ResolvedSystem } from './resolved.ts'
+import { type ResolvedSystem, statesOf } from './resolved.ts'
 import { effectiveLevel, requiredRatio } from './uses.ts'
 import { createPairTitles, type Weakening } from './weakening-kinds.ts'
 import { tokensOfOtherStates } from './weakening-states.ts'
@@ -70,7 +70,7 @@ function newStandIns(members: readonly PairModel[], { before, after, standing }:
       const covered =
         isOld && stoodBefore.anyOf === was.anyOf ? meetingPlaces(before, stoodBefore) : NOWHERE
       const covers = meetingPlaces(after, other)
-      const isNew = [...(placesNow.get(member) ?? NOWHERE)].some(
+      const isNew = [...placesNow.get(member)!].some(
         (place) => own.has(place) && covers.has(place) && !covered.has(place),
       )
       return isNew ? [{ member, other }] : []
@@ -92,14 +92,15 @@ const meetingPlaces = (system: ResolvedSystem, pair: PairModel): ReadonlySet<str
   })
 
 function placesWhere(
-  { model, tokens }: ResolvedSystem,
+  system: ResolvedSystem,
   pair: PairModel,
   holds: (theme: ThemeModel) => boolean,
 ): ReadonlySet<string> {
-  const foreground = tokens.get(pair.foreground)?.states ?? []
-  const background = tokens.get(pair.background)?.states ?? []
-  const combinations = combinationsOf(pair, { foreground, background })
-  const themes = model.themes.filter(
+  const combinations = combinationsOf(pair, {
+    foreground: statesOf(system, pair.foreground),
+    background: statesOf(system, pair.background),
+  })
+  const themes = system.model.themes.filter(
     (theme) => (pair.themes?.includes(theme.id) ?? true) && holds(theme),
   )
   return new Set(themes.flatMap(({ id }) => combinations.map((state) => `${id} ${state}`)))

@@ -57,7 +57,7 @@ function themeWeakenings({ before, after }: Models): Weakening[] {
   if (before.themes === after.themes) return []
   const standing = new Map(after.themes.map((theme) => [theme.id, theme]))
   const nameOf = (id: string) =>
-    [...after.tokens, ...before.tokens].find((token) => token.id === id)?.name ?? id
+    [...after.tokens, ...before.tokens].find((token) => token.id === id)!.name
   return before.themes.flatMap((was): Weakening[] => {
     const item = { kind: 'theme', id: was.id } as const
     const is = standing.get(was.id)
