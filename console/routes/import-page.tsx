@@ -5,6 +5,7 @@ import { FileField } from '#console/features/imports/file-field.tsx'
 import { ImportDecision } from '#console/features/imports/import-decision.tsx'
 import {
   contentOf,
+  type GivenContent,
   mayBringThemes,
   pastedFile,
   readGivenFile,
@@ -65,7 +66,7 @@ export function Component() {
       <h2 className="pt-18 text-28 font-semibold">Import a file</h2>
       <p className="mt-4 mb-18 max-w-720 text-ink-soft">
         Design tokens, a resolver file whose contexts become themes, or the custom properties of a
-        style sheet; 8 MiB and 20,000 tokens at most. Nothing is written until it was tried.
+        style sheet; 8&nbsp;MiB and 20,000 tokens at most. Nothing is written until it was tried.
       </p>
       <form onSubmit={submit} className="border-b border-ink pb-18">
         <FileField
@@ -83,6 +84,7 @@ export function Component() {
         />
         <ImportSentence
           options={options}
+          kind={kindOf(content)}
           isNamingSpan={content?.ok === true && mayBringThemes(content.content)}
           onChange={(next) => {
             run.forget()
@@ -95,18 +97,23 @@ export function Component() {
           messageFault={messageFault}
           doing={run.doing}
           mayTry={content?.ok === true && who.is('maintainer')}
-          obstacle={isBusy ? undefined : obstacle}
+          obstacle={obstacle}
           onTry={() => send(true)}
         />
+        {run.error !== null && <RefusedImport error={run.error} />}
       </form>
       <div aria-live="polite">
-        {run.error !== null && <RefusedImport error={run.error} />}
         {run.job !== undefined && <JobProgress job={run.job} />}
         {isBusy && run.job === undefined && <Waiting>Reading the file</Waiting>}
       </div>
       {outcome !== undefined && !isBusy && <ImportedSection system={system} outcome={outcome} />}
     </>
   )
+}
+
+function kindOf(content: GivenContent | undefined): 'document' | 'sheet' | undefined {
+  if (content?.ok !== true) return undefined
+  return typeof content.content === 'string' ? 'sheet' : 'document'
 }
 
 /** How the file is read and which work is looked at, as the address says it. */
@@ -126,7 +133,7 @@ function useAddress() {
 /** Why it cannot be imported just now, in a sentence or two. */
 function useObstacle(
   system: string,
-  { kept, isTried, outcome }: ReturnType<typeof useImportRun>,
+  { kept, doing, isTried, outcome }: ReturnType<typeof useImportRun>,
   isReadable: boolean | undefined,
 ): string | undefined {
   const { data: settings } = useSuspenseQuery(systemQueries.one(system))
@@ -134,6 +141,8 @@ function useObstacle(
   if (!who.is('maintainer')) return `Importing takes a maintainer.${who.oneOf('maintainer')}`
   if (kept.given === undefined) return 'Choose a file or paste one first.'
   if (isReadable !== true) return 'It cannot be read as it stands.'
+  if (doing === 'importing') return undefined
+  if (doing === 'trying') return 'It is being tried.'
   if (!isTried || outcome === undefined) return 'Try it first: it shows what would change.'
   if (outcome.changes.length === 0) return 'There is nothing to import.'
   if (settings.writeMode === 'review') return 'This system takes edits by review only.'

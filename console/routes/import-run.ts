@@ -43,7 +43,8 @@ export function useImportRun(
   })
   const job = useQuery({ ...jobQueries.one(system, jobId ?? ''), enabled: jobId !== null })
   const running = jobId === null ? undefined : job.data
-  const isWritten = running?.result?.written === true
+  const imported = running?.kind === 'import' ? running.result : undefined
+  const isWritten = imported?.written === true
   // biome-ignore lint/correctness/useExhaustiveDependencies: once for each work that ends in a revision
   useEffect(() => {
     if (!isWritten) return
@@ -51,7 +52,7 @@ export function useImportRun(
     void readAgain()
   }, [isWritten, jobId])
   const direct = sending.data?.kind === 'done' ? sending.data.outcome : undefined
-  const outcome = jobId === null ? direct : running?.result
+  const outcome = jobId === null ? direct : imported
   return {
     kept,
     keep,

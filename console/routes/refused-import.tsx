@@ -13,18 +13,18 @@ export function RefusedImport({ error }: { error: Error }) {
   }))
   const refusal = writeRefusal(error)
   const more = problem?.more ?? 0
-  if (faults.some(({ place }) => place !== '')) {
+  if (problem !== undefined && faults.length > 0) {
     const count = countOf(faults.length + more, 'fault')
+    const hasPlaces = faults.some(({ place }) => place !== '')
+    const title = hasPlaces
+      ? `Nothing is imported: the file has ${count}.`
+      : `Nothing is imported: ${problem.title.charAt(0).toLowerCase()}${problem.title.slice(1)}.`
+    // Names of tokens begin some of these sentences: they stay as they are written.
+    const details = faults.map(({ detail }) => ({ pointer: '', detail: `${detail}.` }))
     return (
       <>
-        <RefusedWrite
-          refusal={{
-            ...refusal,
-            title: `Nothing is imported: ${count}. ${refusal.title}`,
-            faults: [],
-          }}
-        />
-        <FaultList faults={faults} more={more} />
+        <RefusedWrite refusal={{ ...refusal, title, faults: hasPlaces ? [] : details }} />
+        {hasPlaces && <FaultList faults={faults} more={more} />}
       </>
     )
   }

@@ -177,9 +177,15 @@ function Member({ member, before, after }: ChangedMember) {
   return (
     <span className="block break-words">
       {member !== 'value' && <span className="text-ink-soft">{member} </span>}
-      {before !== undefined && <span className={after ? '' : 'line-through'}>{before}</span>}
-      {before !== undefined && after !== undefined && <Arrow />}
-      {after}
+      {before !== undefined && (
+        <span className={after === undefined ? 'line-through' : ''}>{before}</span>
+      )}
+      {after !== undefined && (
+        <span className="inline-block max-w-full break-words">
+          {before !== undefined && <Arrow />}
+          {after}
+        </span>
+      )}
     </span>
   )
 }

@@ -16,8 +16,15 @@ const UNTOLD = new Set(['id', 'name', 'position', 'etag'])
 const UNSAID = new Set(['', 'false'])
 
 /** What of an item an import adds, edits or removes, member by member. */
-export function changedMembers({ operation, before, after }: ImportChangeWire): ChangedMember[] {
-  const sides = [before, after].map((members) => new Map(leavesOf(members ?? {}, [])))
+export function changedMembers({
+  item,
+  operation,
+  before,
+  after,
+}: ImportChangeWire): ChangedMember[] {
+  const sides = [before, after].map(
+    (members = {}) => new Map(leavesOf((item === 'other' && members.document) || members, [])),
+  )
   const [then = new Map<string, string>(), now = new Map<string, string>()] = sides
   const isEdited = operation === 'edited'
   return [...new Set([...then.keys(), ...now.keys()])].flatMap((member) => {
@@ -57,9 +64,9 @@ const ITEM_WORDS = {
 
 const OPERATION_WORDS = { added: 'added', edited: 'changed', removed: 'removed' } as const
 
-/** `token, added` */
-export const changeInWords = ({ item, operation }: ImportChangeWire): string =>
-  `${ITEM_WORDS[item]}, ${OPERATION_WORDS[operation]}`
+/** `token, added`; what there is one of says its kind by its name. */
+export const changeInWords = ({ item, operation, name }: ImportChangeWire): string =>
+  item === name ? OPERATION_WORDS[operation] : `${ITEM_WORDS[item]}, ${OPERATION_WORDS[operation]}`
 
 /** What an item is called; what there is one of by its kind. */
 export const changeName = ({ item, name }: ImportChangeWire): string =>

@@ -19,8 +19,8 @@ export function FaultList({ faults, more }: { faults: readonly FileFault[]; more
         <tbody>
           {faults.map(({ place, detail }) => (
             <tr key={`${place} ${detail}`}>
-              <td className="row-start py-6! pr-16! align-top! break-all">
-                <span className="font-medium">{place === '' ? 'the whole' : place}</span>
+              <td className="row-start py-6! pr-16! align-top!">
+                <span className="font-medium break-all">{place === '' ? 'the whole' : place}</span>
                 <span className="hidden break-words @max-[620px]:block">{detail}</span>
               </td>
               <td className="py-6! align-top! break-words @max-[620px]:hidden">{detail}</td>

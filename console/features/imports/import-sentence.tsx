@@ -18,10 +18,13 @@ const HYPHENS = [
 /** How a file is read, as sentences. */
 export function ImportSentence({
   options,
+  kind,
   isNamingSpan,
   onChange,
 }: {
   options: ImportOptions
+  /** Of the file in hand, where it can be read. */
+  kind: 'document' | 'sheet' | undefined
   /** Whether themes may come that the file does not say ground and ink of. */
   isNamingSpan: boolean
   onChange: (options: ImportOptions) => void
@@ -36,21 +39,31 @@ export function ImportSentence({
           options={MODES}
           onChange={(mode) => onChange({ ...options, mode })}
         />
-        . Colours written as text of hexadecimal digits{' '}
-        <Choice
-          label="Hexadecimal text"
-          value={options.legacyHex ? 'true' : 'false'}
-          options={HEX}
-          onChange={(legacyHex) => onChange({ ...options, legacyHex: legacyHex === 'true' })}
-        />
-        . In a style sheet --action-board is the token{' '}
-        <Choice
-          label="Names in a style sheet"
-          value={options.hyphensAsDots ? 'true' : 'false'}
-          options={HYPHENS}
-          onChange={(dots) => onChange({ ...options, hyphensAsDots: dots === 'true' })}
-        />
-        .
+        .{' '}
+        {kind !== 'sheet' && (
+          <>
+            Colours written as text of hexadecimal digits{' '}
+            <Choice
+              label="Hexadecimal text"
+              value={options.legacyHex ? 'true' : 'false'}
+              options={HEX}
+              onChange={(legacyHex) => onChange({ ...options, legacyHex: legacyHex === 'true' })}
+            />
+            .{' '}
+          </>
+        )}
+        {kind !== 'document' && (
+          <>
+            In a style sheet <span className="whitespace-nowrap">--action-board</span> is the token{' '}
+            <Choice
+              label="Names in a style sheet"
+              value={options.hyphensAsDots ? 'true' : 'false'}
+              options={HYPHENS}
+              onChange={(dots) => onChange({ ...options, hyphensAsDots: dots === 'true' })}
+            />
+            .
+          </>
+        )}
       </p>
       {isNamingSpan && (
         <div className="mt-12 flex flex-wrap items-end gap-x-28 gap-y-12">

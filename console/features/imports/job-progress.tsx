@@ -14,8 +14,8 @@ export function JobProgress({ job: { progress } }: { job: JobWire }) {
   const done = STAGES.reduce((sum, [stage]) => sum + progress[stage], 0)
   const part = total === 0 ? 0 : Math.min(1, done / (total * STAGES.length))
   return (
-    <div className="mt-22 border-t border-ink pt-14 pb-24">
-      <h2 className="text-16 font-semibold">{figure(total)} tokens are being read in</h2>
+    <div className="pt-22 pb-24">
+      <h2 className="text-16 font-semibold">{figure(total)} tokens are being read</h2>
       <p className="mt-2 max-w-560 text-ink-soft">
         This goes on whether or not you stay. The address of this page leads back to it.
       </p>
