@@ -55,7 +55,7 @@ function spotsOf(issue: Issue, input: unknown, base: Path): Spot[] {
     case 'invalid_key':
       return issue.issues.map((inner) => ({ path, detail: detailOf(inner, String(path.at(-1))) }))
     case 'invalid_element':
-      return issue.issues.flatMap((inner) => spotsOf(inner, input, path))
+      return leadingIssues(issue.issues).flatMap((inner) => spotsOf(inner, input, path))
     default:
       return [{ path, detail: detailOf(issue, valueAt(input, path)) }]
   }
@@ -69,7 +69,7 @@ function spotsOf(issue: Issue, input: unknown, base: Path): Spot[] {
 function unionSpots(branches: readonly Issue[][], input: unknown, path: Path): Spot[] {
   const fitting = branches.filter((issues) => !issues.some(refusesWhole))
   const best = fitting
-    .map((issues) => issues.flatMap((issue) => spotsOf(issue, input, path)))
+    .map((issues) => leadingIssues(issues).flatMap((issue) => spotsOf(issue, input, path)))
     .sort((a, b) => unknownIn(a) - unknownIn(b) || a.length - b.length)[0]
   if (best !== undefined) return best
   const value = valueAt(input, path)
@@ -112,7 +112,22 @@ const detailOf = (issue: Issue, value: unknown): string => {
   if (issue.code === 'invalid_value') {
     return `Expected ${issue.values.map((one) => JSON.stringify(one)).join(' or ')}`
   }
-  return issue.message.replace(/^Invalid (?:input|string): /, 'Not usable: ')
+  if (issue.code === 'too_small' || issue.code === 'too_big') return boundOf(issue)
+  return issue.message
+}
+
+const UNITS: Readonly<Record<string, string>> = { string: 'character', array: 'item' }
+
+/** Where the contract has no words of its own for a bound, the bound. */
+function boundOf(issue: z.core.$ZodIssueTooSmall | z.core.$ZodIssueTooBig): string {
+  if (!/^Too (?:small|big):/.test(issue.message)) return issue.message
+  const isLeast = issue.code === 'too_small'
+  const bound = isLeast ? issue.minimum : issue.maximum
+  const [within, beyond] = isLeast ? ['at least', 'more than'] : ['at most', 'less than']
+  const relation = issue.exact ? 'exactly' : issue.inclusive === false ? beyond : within
+  const unit = UNITS[issue.origin]
+  const counted = unit === undefined ? '' : ` ${unit}${Number(bound) === 1 ? '' : 's'}`
+  return `Expected ${relation} ${bound}${counted}`
 }
 
 /** A value that was taken for a list of one stands for its element too. */

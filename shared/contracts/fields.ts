@@ -8,7 +8,7 @@ export const slugSchema = z
   .string()
   .min(1)
   .max(63)
-  .regex(/^[a-z0-9]+(-[a-z0-9]+)*$/)
+  .regex(/^[a-z0-9]+(-[a-z0-9]+)*$/, 'Expected lower-case letters, digits and single hyphens')
   .meta({ description: 'Lower-case letters, digits and single hyphens', example: 'larkhaven' })
 
 const NAME_PATTERN = /^(?![$])[^.{}\p{Cc}]+(\.(?:\$root|(?![$])[^.{}\p{Cc}]+))*$/u
@@ -34,7 +34,7 @@ export const tokenNameSchema = z
 
 export const aliasSchema = z
   .string()
-  .regex(/^\{[^{}]{1,255}\}$/)
+  .regex(/^\{[^{}]{1,255}\}$/, 'Expected a token name in braces, such as {sand.1}')
   .meta({ description: 'A token name in braces', example: '{sand.1}' })
 
 export const stateSchema = z.enum(STATES).meta({ id: 'State', example: 'hover' })
@@ -44,9 +44,10 @@ export const idSchema = z.string().min(1).max(64).meta({ example: 'tok_01jd5w7k2
 export const instantSchema = z.iso
   .datetime({ offset: false, precision: 3 })
   .meta({ description: 'RFC 3339, UTC', example: '2026-11-24T09:12:00.000Z' })
+const NO_MOMENT = 'Expected a day or an instant of RFC 3339, such as 2026-11-24'
 /** A moment in a query: a whole day stands for its beginning, UTC. */
 export const momentSchema = z
-  .union([z.iso.date(), z.iso.datetime({ offset: true })])
+  .union([z.iso.date(NO_MOMENT), z.iso.datetime({ offset: true, error: NO_MOMENT })])
   .transform((text) => new Date(text))
   .meta({
     type: 'string',
@@ -90,7 +91,7 @@ export const dtcgColorSchema = z
     alpha: z.number().min(0).max(1).optional(),
     hex: z
       .string()
-      .regex(/^#[0-9a-fA-F]{6}$/)
+      .regex(/^#[0-9a-fA-F]{6}$/, 'Expected # and six hexadecimal digits')
       .optional(),
   })
   .meta({

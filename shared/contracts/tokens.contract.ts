@@ -57,7 +57,7 @@ export const deprecationSchema = z
   .strictObject({
     reason: z.string().trim().min(1).max(500).optional(),
     replacement: tokenNameSchema.optional(),
-    sunset: z.iso.date().optional(),
+    sunset: z.iso.date('Expected a day, such as 2026-11-24').optional(),
   })
   .meta({ id: 'Deprecation', example: { reason: 'Renamed', replacement: 'action.board.fill' } })
 
