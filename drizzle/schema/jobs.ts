@@ -4,12 +4,14 @@ import { apiKeys } from './keys.ts'
 import { systems } from './systems.ts'
 import { users } from './users.ts'
 
-/** How far a job is, in tokens. */
+/** How far a job is, in tokens; a search also says how many evaluations it has made, of how many. */
 export interface JobProgress {
   readonly total: number
   readonly read: number
   readonly resolved: number
   readonly measured: number
+  readonly evaluations?: number
+  readonly budget?: number
 }
 
 /** Why a job ended without a result: a refusal as it would have been answered. */
@@ -28,7 +30,7 @@ export const jobs = mysqlTable(
     systemId: idColumn('system_id')
       .notNull()
       .references(() => systems.id, RESTRICT),
-    kind: mysqlEnum('kind', ['import', 'repair-plan', 'check']).notNull(),
+    kind: mysqlEnum('kind', ['import', 'repair-plan', 'check', 'nearest-passing']).notNull(),
     callerUserId: idColumn('caller_user_id').references(() => users.id, RESTRICT),
     callerKeyId: idColumn('caller_key_id').references(() => apiKeys.id, RESTRICT),
     /** Of the request that asked for it: finds its line in the log. */

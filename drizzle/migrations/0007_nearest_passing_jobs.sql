@@ -1,0 +1,1 @@
+ALTER TABLE `jobs` MODIFY COLUMN `kind` enum('import','repair-plan','check','nearest-passing') NOT NULL;
