@@ -2,23 +2,32 @@ import { advisoriesOf } from './advisories.ts'
 import { meetAnyOf } from './any-of.ts'
 import type { Checked, Evaluation, PairMeasure, Subject } from './evaluation.ts'
 import { createPairMeasuring } from './measure-pair.ts'
-import type { Advisory, ContrastKind, PairModel, SystemModel } from './model.ts'
+import type { PairModel, SystemModel } from './model.ts'
 import { dependentsOf, resolveSystem } from './resolve-system.ts'
 import type { ResolvedSystem } from './resolved.ts'
 import { kindOf } from './uses.ts'
 
 /** Gathers the pairs whose findings can share an identity, in the order of their first. */
-export function toSubjects(pairs: readonly PairModel[]): Subject[] {
-  type Draft = { foreground: string; background: string; kind: ContrastKind; members: number[] }
-  const drafts = new Map<string, Draft>()
+export function toSubjects(
+  pairs: readonly PairModel[],
+): Pick<Evaluation, 'subjects' | 'subjectOf'> {
+  type Draft = Subject & { readonly members: number[] }
+  const subjects: Draft[] = []
+  const subjectOf: number[] = []
+  const known = new Map<string, number>()
   for (const [position, { foreground, background, use }] of pairs.entries()) {
     const kind = kindOf(use)
     const key = `${kind} ${foreground.length} ${foreground} ${background}`
-    const draft = drafts.get(key)
-    if (draft) draft.members.push(position)
-    else drafts.set(key, { foreground, background, kind, members: [position] })
+    let at = known.get(key)
+    if (at === undefined) {
+      at = subjects.length
+      known.set(key, at)
+      subjects.push({ foreground, background, kind, members: [] })
+    }
+    subjects[at]!.members.push(position)
+    subjectOf.push(at)
   }
-  return [...drafts.values()]
+  return { subjects, subjectOf }
 }
 
 /** By token id, the positions of the pairs that show it. */
@@ -35,16 +44,6 @@ export function toPairsOf(pairs: readonly PairModel[]): Map<string, readonly num
   return pairsOf
 }
 
-/** Advisories by token id, tokens without any left out. */
-export function toAdvisories(resolved: ResolvedSystem): Map<string, readonly Advisory[]> {
-  const advisories = new Map<string, readonly Advisory[]>()
-  for (const [id, token] of resolved.tokens) {
-    const found = advisoriesOf(resolved, token)
-    if (found.length > 0) advisories.set(id, found)
-  }
-  return advisories
-}
-
 /** Measures every pair of a resolved system. */
 export function evaluateSystem(resolved: ResolvedSystem): Evaluation {
   const { pairs, themes } = resolved.model
@@ -52,9 +51,9 @@ export function evaluateSystem(resolved: ResolvedSystem): Evaluation {
   return {
     resolved,
     measures,
-    subjects: toSubjects(pairs),
+    ...toSubjects(pairs),
     anyOf: meetAnyOf(measures, themes.length),
-    advisories: toAdvisories(resolved),
+    advisories: resolved.tokens.rows.map((token) => advisoriesOf(resolved, token)),
     dependents: dependentsOf(resolved),
     pairsOf: toPairsOf(pairs),
   }

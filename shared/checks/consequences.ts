@@ -1,7 +1,7 @@
-import { type Entry, toFinding, visitEntries } from './entries.ts'
+import { visitEntries } from './entries.ts'
 import type { Evaluation, Subject } from './evaluation.ts'
+import { createFindingWriter, type FindingWriter } from './finding-writer.ts'
 import { createJudge, type Judge, type JudgementOptions } from './judgement.ts'
-import { identityOfRow } from './measured-row.ts'
 import type { Finding } from './model.ts'
 
 /** One finding that an edit moves; absent where it was not, or is no longer, measured. */
@@ -16,6 +16,12 @@ export interface Consequence {
 interface Side {
   readonly evaluation: Evaluation
   readonly judge: Judge
+  readonly write: FindingWriter
+}
+
+function toSide(evaluation: Evaluation, options: JudgementOptions): Side {
+  const judge = createJudge(evaluation, options)
+  return { evaluation, judge, write: createFindingWriter(evaluation) }
 }
 
 function subjectKey(subject: Subject): string {
@@ -47,10 +53,23 @@ function isSameBytes(first: Uint8Array | undefined, second: Uint8Array | undefin
 
 /** Groups in which a different set of places is met now. */
 function movedGroups(before: Evaluation, after: Evaluation): Set<string> {
+  if (before.anyOf === after.anyOf) return new Set()
   const names = new Set([...before.anyOf.keys(), ...after.anyOf.keys()])
   return new Set(
     [...names].filter((name) => !isSameBytes(before.anyOf.get(name), after.anyOf.get(name))),
   )
+}
+
+/** The subjects of a measurement that is not the same on both sides, where all else is. */
+function* remeasuredSubjects(before: Evaluation, after: Evaluation): Generator<Subject> {
+  const seen = new Set<number>()
+  for (let at = 0; at < after.measures.length; at++) {
+    if (before.measures[at] === after.measures[at]) continue
+    const subject = after.subjectOf[at]!
+    if (seen.has(subject)) continue
+    seen.add(subject)
+    yield after.subjects[subject]!
+  }
 }
 
 /** Whether a theme's findings can differ though nothing measured does. */
@@ -74,14 +93,14 @@ function isUntouched(
   return true
 }
 
-function entriesOf(side: Side, subject: Subject | undefined): Map<string, Entry> {
-  const entries = new Map<string, Entry>()
-  if (subject === undefined) return entries
+function findingsOf(side: Side, subject: Subject | undefined): Map<string, Finding> {
+  const findings = new Map<string, Finding>()
+  if (subject === undefined) return findings
   visitEntries(side.evaluation, subject, side.judge, (measure, row, judgement, merged) => {
-    const entry = merged ?? { measure, row, judgement, declared: [measure] }
-    entries.set(identityOfRow(side.evaluation, measure, row), entry)
+    const finding = side.write(measure, row, judgement, merged?.declared)
+    findings.set(finding.identity, finding)
   })
-  return entries
+  return findings
 }
 
 function isMoved(before: Finding | undefined, after: Finding | undefined): boolean {
@@ -105,14 +124,12 @@ function compareSubject(
   sides: { readonly before: Side; readonly after: Side },
   [earlier, later]: readonly [Subject | undefined, Subject | undefined],
 ): Consequence[] {
-  const before = entriesOf(sides.before, earlier)
-  const after = entriesOf(sides.after, later)
+  const before = findingsOf(sides.before, earlier)
+  const after = findingsOf(sides.after, later)
   const consequences: Consequence[] = []
   for (const identity of new Set([...before.keys(), ...after.keys()])) {
-    const was = before.get(identity)
-    const is = after.get(identity)
-    const first = was && toFinding(sides.before.evaluation, was)
-    const second = is && toFinding(sides.after.evaluation, is)
+    const first = before.get(identity)
+    const second = after.get(identity)
     if (!isMoved(first, second)) continue
     consequences.push({
       identity,
@@ -141,15 +158,21 @@ export function consequences(
   options: JudgementOptions = {},
 ): Consequence[] {
   const sides = {
-    before: { evaluation: before, judge: createJudge(before, options) },
-    after: { evaluation: after, judge: createJudge(after, options) },
+    before: toSide(before, options),
+    after: toSide(after, options),
   }
   const moved = movedGroups(before, after)
   const canSkip = areThemesSame(before, after)
   const found: Consequence[] = []
-  for (const pair of matchedSubjects(before, after)) {
-    if (canSkip && isUntouched(sides, pair, moved)) continue
-    found.push(...compareSubject(sides, pair))
+  if (canSkip && before.subjects === after.subjects && moved.size === 0) {
+    for (const subject of remeasuredSubjects(before, after)) {
+      found.push(...compareSubject(sides, [subject, subject]))
+    }
+  } else {
+    for (const pair of matchedSubjects(before, after)) {
+      if (canSkip && isUntouched(sides, pair, moved)) continue
+      found.push(...compareSubject(sides, pair))
+    }
   }
   return found.toSorted(
     (a, b) => ORDER.indexOf(a.newly) - ORDER.indexOf(b.newly) || reach(a) - reach(b),

@@ -44,21 +44,23 @@ export interface Subject {
 }
 
 /**
- * Everything measured of a system, before waivers and comparison. Immutable plain data: it can be kept,
- * posted to a worker, and shares what did not change with the evaluation that it was re-checked from.
+ * Everything measured of a system, before waivers and comparison. Immutable: it can be kept, and shares what did not
+ * change with the evaluation that it was re-checked from.
  */
 export interface Evaluation {
   readonly resolved: ResolvedSystem
   /** In the order of `model.pairs`. */
   readonly measures: readonly PairMeasure[]
   readonly subjects: readonly Subject[]
+  /** By position in `measures`: the position of its subject. */
+  readonly subjectOf: readonly number[]
   /**
    * By name of an `anyOf` group, 1 where a member meets its own requirement:
    * (theme position × STATE_COUNT + foreground state) × STATE_COUNT + background state.
    */
   readonly anyOf: ReadonlyMap<string, Uint8Array>
-  /** By token id; tokens without any are left out. */
-  readonly advisories: ReadonlyMap<string, readonly Advisory[]>
+  /** By token position. */
+  readonly advisories: readonly (readonly Advisory[])[]
   /** By token id: tokens whose values or rules name it; what all hangs on, ground and ink, is left out. */
   readonly dependents: ReadonlyMap<string, readonly string[]>
   /** By token id: positions in `measures` of the pairs with it as foreground, background or backdrop. */

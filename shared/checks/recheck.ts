@@ -4,7 +4,7 @@ import { checkSystem, toPairsOf, toSubjects } from './check-system.ts'
 import { applyEdits, type SystemEdits } from './edits.ts'
 import type { Checked, Evaluation, PairMeasure } from './evaluation.ts'
 import { measurePair } from './measure-pair.ts'
-import type { Advisory, PairModel, SystemModel } from './model.ts'
+import type { PairModel, SystemModel } from './model.ts'
 import { dependentsOf, resolveAgain } from './resolve-system.ts'
 import type { ResolvedSystem, ResolvedToken } from './resolved.ts'
 import { coversName } from './rule-scopes.ts'
@@ -120,13 +120,15 @@ function advisoriesAgain(
   previous: Evaluation,
   resolved: ResolvedSystem,
   touched: ReadonlySet<string>,
-): ReadonlyMap<string, readonly Advisory[]> {
-  const advisories = new Map(previous.advisories)
+): Evaluation['advisories'] {
+  const before = previous.resolved.positions
+  const advisories =
+    resolved.positions === before
+      ? [...previous.advisories]
+      : resolved.tokens.rows.map(({ token: { id } }) => previous.advisories[before.get(id) ?? -1]!)
   for (const id of touched) {
-    advisories.delete(id)
     const token = resolved.tokens.get(id)
-    const found = token === undefined ? [] : advisoriesOf(resolved, token)
-    if (found.length > 0) advisories.set(id, found)
+    if (token) advisories[resolved.positions.get(id)!] = advisoriesOf(resolved, token)
   }
   return advisories
 }
@@ -172,7 +174,7 @@ function exposedPairs(previous: Evaluation, model: SystemModel, edits: SystemEdi
  */
 export function recheck(previous: Evaluation, edits: SystemEdits): Checked {
   const before = previous.resolved
-  const model = applyEdits(before.model, edits)
+  const model = applyEdits(before.model, edits, before.positions)
   if (touchesAll(edits)) return checkSystem(model)
   const touched = withDependents(previous, editedTokens(before.model, edits))
   for (const theme of model.themes) {
@@ -194,7 +196,9 @@ export function recheck(previous: Evaluation, edits: SystemEdits): Checked {
     evaluation: {
       resolved,
       measures: measured.measures,
-      subjects: arePairsSame ? previous.subjects : toSubjects(model.pairs),
+      ...(arePairsSame
+        ? { subjects: previous.subjects, subjectOf: previous.subjectOf }
+        : toSubjects(model.pairs)),
       anyOf: anyOfAgain(previous, resolved, measured),
       advisories: advisoriesAgain(previous, resolved, touched),
       dependents: movesReferences(previous, edits) ? dependentsOf(resolved) : previous.dependents,

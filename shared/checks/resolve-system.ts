@@ -10,6 +10,7 @@ import {
 } from './resolved.ts'
 import { spanFaults } from './theme-faults.ts'
 import { lightOf } from './token-light.ts'
+import { TokenRows } from './token-rows.ts'
 import { namedTokens } from './value-edges.ts'
 import { passValues } from './value-pass.ts'
 
@@ -65,11 +66,9 @@ export function resolveSystem(model: SystemModel): Resolution {
   const pass = passValues(graph, all, noKnownRow)
   faults.push(...pass.faults, ...spansOf(graph, pass.rows))
   if (faults.length > 0) return { ok: false, faults }
-  const tokens = new Map<string, ResolvedToken>()
-  for (const [position, token] of model.tokens.entries()) {
-    tokens.set(token.id, toResolvedToken(graph, position, pass.rows[position]!))
-  }
   const { themeAt: themes, tokenAt: positions } = graph
+  const rows = pass.rows.map((row, position) => toResolvedToken(graph, position, row!))
+  const tokens = new TokenRows(positions, rows)
   return { ok: true, resolved: { model, themes, positions, tokens } }
 }
 
@@ -132,13 +131,14 @@ export function resolveAgain(
   if (editFaults(graph, { tokens: touched, pairs: again.pairs }).length > 0) return undefined
   const pass = passValues(graph, positions, (position) => knownAt(position)!.cells)
   if (pass.faults.length > 0) return undefined
-  const tokens = new Map(previous.tokens)
-  for (const id of again.tokens) if (!graph.tokenAt.has(id)) tokens.delete(id)
+  const rows = again.hasSameTokens
+    ? [...previous.tokens.rows]
+    : model.tokens.map(({ id }) => previous.tokens.get(id)!) // What is new is filled in below.
   for (const [at, position] of positions.entries()) {
-    const { id } = touched[at]!
     const resolved = toResolvedToken(graph, position, pass.rows[position]!)
-    const before = previous.tokens.get(id)
-    tokens.set(id, before ? keepSameColors(resolved, before) : resolved)
+    const before = previous.tokens.get(touched[at]!.id)
+    rows[position] = before ? keepSameColors(resolved, before) : resolved
   }
+  const tokens = new TokenRows(graph.tokenAt, rows)
   return { model, themes: graph.themeAt, positions: graph.tokenAt, tokens }
 }

@@ -3,6 +3,7 @@ import type { RenderedColor } from '#shared/color/render.ts'
 import { STATES, type State, type SystemModel, type TokenModel } from './model.ts'
 import type { Provenance } from './provenance.ts'
 import type { TokenLight } from './token-light.ts'
+import type { TokenRows } from './token-rows.ts'
 
 /** Number of states a token can have, rest included. */
 export const STATE_COUNT = STATES.length
@@ -31,7 +32,7 @@ export interface ResolvedToken {
   readonly light: TokenLight
 }
 
-/** A model with every value computed. Plain data: it can be posted to a worker. */
+/** A model with every value computed. */
 export interface ResolvedSystem {
   readonly model: SystemModel
   /** Position of each theme id in `model.themes`. */
@@ -39,7 +40,7 @@ export interface ResolvedSystem {
   /** Position of each token id in `model.tokens`. */
   readonly positions: ReadonlyMap<string, number>
   /** By token id, in ledger order. */
-  readonly tokens: ReadonlyMap<string, ResolvedToken>
+  readonly tokens: TokenRows
 }
 
 /** A value as it is read out. */

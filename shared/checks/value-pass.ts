@@ -18,9 +18,15 @@ interface Walk extends ValuePass {
   readonly rows: ((ResolvedCell | undefined)[] | undefined)[]
   /** Nodes a token. */
   readonly width: number
+  /** By token position: 1 + its place among those that are computed, 0 for any other. */
+  readonly slots: Int32Array
+  /** By slot and offset. */
   readonly progress: Uint8Array
-  readonly plans: (ValuePlan | undefined)[]
+  /** By slot. */
   readonly largest: (LargestStep | undefined)[]
+  /** The path from a root to where the walk stands, and the plans of those of its nodes that are open. */
+  readonly stack: number[]
+  readonly plans: (ValuePlan | undefined)[]
   readonly faults: ModelFault[]
   readonly reported: Set<string>
 }
@@ -31,13 +37,19 @@ function placeOf(walk: Walk, node: number): ValuePlace {
   const themes = graph.parents.length
   const token = Math.floor(row / themes)
   const state = STATES[node % STATE_COUNT]!
-  return { node, token, theme: row % themes, state, largest: walk.largest[token] }
+  return { node, token, theme: row % themes, state, largest: walk.largest[walk.slots[token]!] }
+}
+
+/** Where the progress of a node is kept; below 0 for one that is known already. */
+function progressAt(walk: Walk, node: number): number {
+  const offset = node % walk.width
+  return (walk.slots[(node - offset) / walk.width]! - 1) * walk.width + offset
 }
 
 /** Reports a cycle once, whatever the themes and states it appears in. */
-function reportCycle(walk: Walk, stack: readonly number[], back: number): void {
+function reportCycle(walk: Walk, back: number): void {
   const { model } = walk.graph
-  const open = stack.filter((node) => walk.progress[node] === OPEN)
+  const open = walk.stack.filter((node) => walk.progress[progressAt(walk, node)] === OPEN)
   const places = [...open.slice(open.indexOf(back)), back].map((node) => placeOf(walk, node))
   // A theme that computes its ground from its ground has not set it: that is a fault of its own.
   if (places.some((place) => place.state === 'rest' && isRoleUnset(walk.graph, place))) return
@@ -71,36 +83,50 @@ function reportDepth(walk: Walk, place: ValuePlace): void {
   })
 }
 
-/** Opens a node: plans it and puts what it needs on the stack. */
-function openNode(walk: Walk, stack: number[], place: ValuePlace): void {
+function push(walk: Walk, node: number): void {
+  walk.stack.push(node)
+  walk.plans.push(undefined)
+}
+
+/** Opens the node on top: plans it and puts what it needs above it. */
+function openNode(walk: Walk, place: ValuePlace): void {
   const { graph, progress } = walk
   const plan = planValue(graph, graph.model.tokens[place.token]!, place)
-  walk.plans[place.node] = plan
-  progress[place.node] = OPEN
+  walk.plans[walk.plans.length - 1] = plan
+  progress[progressAt(walk, place.node)] = OPEN
   for (const needed of edgesOf(graph, plan, place)) {
-    if (needed < 0 || progress[needed] === DONE) continue
-    if (walk.rows[Math.floor(needed / walk.width)] === undefined) continue // Known already.
-    if (progress[needed] === OPEN) reportCycle(walk, stack, needed)
-    else stack.push(needed)
+    if (needed < 0) continue
+    const at = progressAt(walk, needed)
+    if (at < 0 || progress[at] === DONE) continue
+    if (progress[at] === OPEN) reportCycle(walk, needed)
+    else push(walk, needed)
   }
 }
 
+/** Takes the node on top away: all that it needs is there. */
+function closeNode(walk: Walk, place: ValuePlace): void {
+  const plan = walk.plans.pop()!
+  walk.stack.pop()
+  const cell = computeValue(walk, plan, place)
+  walk.progress[progressAt(walk, place.node)] = DONE
+  walk.rows[place.token]![place.node % walk.width] = cell
+  if (cell !== undefined && cell.aliasDepth > ALIAS_LIMIT) reportDepth(walk, place)
+}
+
 function walkFrom(walk: Walk, root: number): void {
-  const stack = [root]
+  const { stack, plans, progress } = walk
+  push(walk, root)
   while (stack.length > 0) {
     const node = stack.at(-1)!
-    if (walk.progress[node] === UNSEEN) {
-      openNode(walk, stack, placeOf(walk, node))
-      continue
+    const done = progress[progressAt(walk, node)]
+    if (done === DONE) {
+      stack.pop()
+      plans.pop()
+    } else {
+      const place = placeOf(walk, node)
+      if (done === UNSEEN) openNode(walk, place)
+      if (stack.at(-1) === node) closeNode(walk, place)
     }
-    stack.pop()
-    if (walk.progress[node] === DONE) continue
-    const place = placeOf(walk, node)
-    const cell = computeValue(walk, walk.plans[node]!, place)
-    walk.progress[node] = DONE
-    walk.plans[node] = undefined
-    walk.rows[place.token]![node % walk.width] = cell
-    if (cell !== undefined && cell.aliasDepth > ALIAS_LIMIT) reportDepth(walk, place)
   }
 }
 
@@ -113,18 +139,26 @@ function nodesOf(graph: ModelGraph, token: number): number[] {
   )
 }
 
-function createWalk(graph: ModelGraph, knownRow: ValuePass['knownRow']): Walk {
+function createWalk(
+  graph: ModelGraph,
+  asked: readonly number[],
+  knownRow: ValuePass['knownRow'],
+): Walk {
   const width = graph.parents.length * STATE_COUNT
   const tokens = graph.model.tokens.length
+  const slots = new Int32Array(tokens)
+  for (const [at, token] of asked.entries()) slots[token] = at + 1
   return {
     graph,
     rows: new Array(tokens),
     knownRow,
     width,
     directions: new Map(),
-    progress: new Uint8Array(tokens * width),
-    plans: new Array(tokens * width),
-    largest: new Array(tokens),
+    slots,
+    progress: new Uint8Array(asked.length * width),
+    largest: new Array(asked.length + 1),
+    stack: [],
+    plans: [],
     faults: [],
     reported: new Set(),
   }
@@ -141,17 +175,17 @@ export function passValues(
   tokens: readonly number[],
   knownRow: ValuePass['knownRow'],
 ): { readonly rows: ValuePass['rows']; readonly faults: readonly ModelFault[] } {
-  const walk = createWalk(graph, knownRow)
+  const walk = createWalk(graph, tokens, knownRow)
   for (const token of tokens) {
     const model = graph.model.tokens[token]!
     walk.rows[token] = new Array(walk.width).fill(undefined)
-    walk.largest[token] = largestStep(graph.statesAt(token), (state) =>
+    walk.largest[walk.slots[token]!] = largestStep(graph.statesAt(token), (state) =>
       graph.rules.stateRuleOf(model, state),
     )
   }
   for (const token of tokens) {
     for (const node of nodesOf(graph, token)) {
-      if (walk.progress[node] === UNSEEN) walkFrom(walk, node)
+      if (walk.progress[progressAt(walk, node)] === UNSEEN) walkFrom(walk, node)
     }
   }
   return { rows: walk.rows, faults: walk.faults }

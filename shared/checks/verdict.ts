@@ -36,16 +36,9 @@ export function verdictOf(evaluation: Evaluation, options: VerdictOptions = {}):
     verdict: fails ? 'fail' : 'pass',
     counts,
     findings,
-    advisories: advisoriesInOrder(evaluation),
+    advisories: evaluation.advisories.flat(),
     engine: ENGINE_STAMP,
   }
-}
-
-function advisoriesInOrder(evaluation: Evaluation): Verdict['advisories'] {
-  if (evaluation.advisories.size === 0) return []
-  return evaluation.resolved.model.tokens.flatMap(
-    (token) => evaluation.advisories.get(token.id) ?? [],
-  )
 }
 
 /** The breaches of a verdict by identity, as `known` for another verdict that is compared with it. */
