@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, expect, it } from 'vitest'
 import { contracts } from '#shared/contracts/contracts.ts'
+import type { Contract } from '#shared/contracts/route.ts'
 import { createTestApp, TEST_SYSTEM, type TestApp } from '#tests/support/app.ts'
 import { call, roleHolds } from '#tests/support/guards.ts'
 
@@ -26,10 +27,13 @@ beforeAll(async () => {
   const made = await maintainer.post(`${own}/pairs`).send(pair).expect(201)
   const key = await maintainer.post(`${own}/keys`).send({ name: 'x', scopes: ['themes:read'] })
   const check = await maintainer.post(`${own}/checks`).send({}).expect(200)
+  const set = { name: 'Deck and ink', tokens: ['deck', 'ink'] }
+  const distinct = await maintainer.post(`${own}/distinct-sets`).send(set).expect(201)
   const breaches = await maintainer.get(`${own}/breaches`).expect(200)
   ids.set('pairs', made.body.id)
   ids.set('keys', key.body.id)
   ids.set('checks', check.body.id)
+  ids.set('distinct-sets', distinct.body.id)
   ids.set('breaches', breaches.body.items[0].id)
   ids.set('jobs', await addJob())
 })
@@ -51,9 +55,16 @@ const ITEM = /\{(id|name|theme)\}/
 const items = contracts.filter(({ path }) => path.includes('{system}') && ITEM.test(path))
 const cases = items.map((contract) => [contract.operationId, contract] as const)
 
-const paramsOf = (feature: string, system: string) => ({
+/** An item that is not there would be absent everywhere. */
+function idFor({ feature, path }: Contract): string {
+  const id = ids.get(feature)
+  if (id === undefined && path.includes('{id}')) throw new Error(`No item of ${feature} was made`)
+  return id ?? ''
+}
+
+const paramsOf = (contract: Contract, system: string) => ({
   system,
-  id: ids.get(feature) ?? '',
+  id: idFor(contract),
   name: 'action.board.fill',
   theme: 'light',
 })
@@ -61,9 +72,7 @@ const paramsOf = (feature: string, system: string) => ({
 it.each(cases.filter(([, { method }]) => method === 'GET'))(
   '%s answers in the system of the item',
   async (_, contract) => {
-    await call(test.people.maintainer, contract, paramsOf(contract.feature, TEST_SYSTEM)).expect(
-      200,
-    )
+    await call(test.people.maintainer, contract, paramsOf(contract, TEST_SYSTEM)).expect(200)
   },
 )
 
@@ -74,7 +83,7 @@ it.each(cases.filter(([, { precondition }]) => precondition !== 'create'))(
     const { body } = await call(
       roleHolds('maintainer', contract.access) ? maintainer : lead,
       contract,
-      paramsOf(contract.feature, 'elsewhere'),
+      paramsOf(contract, 'elsewhere'),
     )
     expect(body).toMatchObject({ status: 404, type: '/problems/not-found' })
   },
