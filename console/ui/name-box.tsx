@@ -4,6 +4,14 @@ import { ComboBox, Input, Label, ListBox, ListBoxItem, Popover } from 'react-ari
 /** Enough to see that there are more: typing narrows them. */
 const MOST_OFFERED = 60
 
+/** What is written in the field, and the value that it was written over. */
+interface Typing {
+  readonly written: string | undefined
+  readonly over: string
+  /** Handed on already, and not the value yet. */
+  readonly isTaken: boolean
+}
+
 /** One name of many: written, or taken from the list that what is written narrows. */
 export function NameBox({
   label,
@@ -31,20 +39,29 @@ export function NameBox({
   onChange: (name: string) => void
   className?: string
 }) {
-  const [written, setWritten] = useState<string>()
+  const nothingTyped = { written: undefined, over: value, isTaken: false }
+  const [{ written, over, isTaken }, setTyping] = useState<Typing>(nothingTyped)
+  // What was taken stands in the field until it has become the value: an address moves a little later.
+  if (over !== value) setTyping(nothingTyped)
   const text = written ?? value
   const offered = useMemo(() => offeredNames(names, written), [names, written])
   const faultId = useId()
+  const write = (next: string, isTaken = false) =>
+    setTyping({ written: next === value ? undefined : next, over: value, isTaken })
   const take = (name: string) => {
-    setWritten(undefined)
+    write(name, true)
     if (name !== value) onChange(name)
+  }
+  const leave = () => {
+    if (written !== undefined && !isTaken) take(written.trim())
+    setTyping(nothingTyped)
   }
   return (
     <ComboBox
       items={offered}
       inputValue={text}
       value={names.includes(value) ? value : null}
-      onInputChange={(next) => setWritten(next === value ? undefined : next)}
+      onInputChange={(next) => write(next)}
       onChange={(key) => key !== null && take(String(key))}
       isDisabled={isDisabled}
       menuTrigger="focus"
@@ -59,7 +76,7 @@ export function NameBox({
         placeholder={placeholder}
         aria-invalid={fault !== undefined}
         aria-describedby={fault === undefined ? undefined : faultId}
-        onBlur={() => written !== undefined && take(written.trim())}
+        onBlur={leave}
         className="line-input mt-2 h-30 w-full font-medium"
       />
       {fault !== undefined && (
