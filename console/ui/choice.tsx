@@ -26,7 +26,7 @@ export function Choice<Value extends string>({
       className="inline-block max-w-full min-w-0"
     >
       <Button className="group inline-flex max-w-full items-baseline border-b border-woad font-medium text-woad data-[focus-visible]:outline-2">
-        <SelectValue className="truncate" />
+        <SelectValue className="min-w-0 text-start" />
         <Chevron />
       </Button>
       <Popover offset={6} className="min-w-(--trigger-width) border border-ink bg-ground">
