@@ -11,7 +11,7 @@ import type { FindingWire } from '#shared/contracts/findings.ts'
 import { listRevisions } from '#shared/contracts/revisions.contract.ts'
 import { emailOf, NARROW, watchedConsole } from '#tests/support/console-page.ts'
 import { type MeasuredHead, measureHead, measureWith } from '#tests/support/measured-head.ts'
-import { type Answers, claimedFigures, findingsOn } from '#tests/support/ratio-claims.ts'
+import { type Answers, claimedFigures, cut, findingsOn } from '#tests/support/ratio-claims.ts'
 import { type RatioPlace, readRatios } from '#tests/support/screen-ratios.ts'
 
 const TOKEN = 'sea.7'
@@ -98,6 +98,10 @@ async function choose(page: Page, choice: string, option: string): Promise<void>
   await page.getByRole('button', { name: choice }).click()
   await page.getByRole('option', { name: option, exact: true }).click()
 }
+
+/** How a breach ended, on which day, and the lowest that it had come to, as its row says it. */
+const endingIn = (words: string, lowest: string) =>
+  new RegExp(`^${words} \\d{1,2} [A-Z][a-z]+, lowest ${lowest.replace('.', '\\.')}$`)
 
 const NUMBERS = 'None One Two Three Four Five Six Seven Eight Nine Ten Eleven Twelve'.split(' ')
 
@@ -191,7 +195,8 @@ describe('a maintainer at the console', () => {
     await page.getByText(`Passed again in revision ${mendingRevision?.number}`).waitFor()
     await page.getByText(/Ines Marrow: As light as its pairs allow$/).waitFor()
     const row = page.getByRole('row').filter({ has: page.getByRole('link', { expanded: true }) })
-    await row.getByRole('cell', { name: 'resolved, fixed', exact: true }).waitFor()
+    const lowest = cut(linkBreach(mended).lowestRatio)
+    await row.getByRole('cell', { name: endingIn('resolved, fixed', lowest) }).waitFor()
     await expectRatios(page, ['breaches', 'history', 'steps'], {
       head: mended,
       events: await eventsOf(page),
