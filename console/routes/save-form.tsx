@@ -7,15 +7,18 @@ import { mayDo } from '#console/features/session/session.queries.ts'
 import { systemQueries } from '#console/features/systems/systems.queries.ts'
 import type { KeptTrial } from '#console/features/tokens/kept-trial.ts'
 import { valueInWords } from '#console/features/tokens/present-value.ts'
-import { SavedNote, SaveLine } from '#console/features/tokens/save-line.tsx'
-import { saveFaults, SaveRefusal } from '#console/features/tokens/save-refusal.tsx'
+import { SavedNote } from '#console/features/checks/saved-note.tsx'
 import { saveToken } from '#console/features/tokens/tokens.queries.ts'
 import type { TrialReading } from '#console/features/tokens/trial.ts'
 import { type PresentColor, TrialFields } from '#console/features/tokens/trial-fields.tsx'
 import { isRefusal } from '#console/lib/api.ts'
 import { queryClient } from '#console/lib/query-client.ts'
+import { faultAt, writeRefusal } from '#console/lib/refusal.ts'
+import { DecisionLine } from '#console/ui/decision-line.tsx'
+import { TwoVersions } from '#console/ui/two-versions.tsx'
 import type { TokenWire } from '#shared/contracts/tokens.contract.ts'
 import { useMe } from './account-items.tsx'
+import { RefusedWrite } from './refused-write.tsx'
 
 interface SaveFormProps {
   readonly system: string
@@ -49,7 +52,7 @@ export function SaveForm(props: SaveFormProps) {
       }
     },
   })
-  const faults = saveFaults(saving.error)
+  const refusal = saving.isError ? writeRefusal(saving.error) : undefined
   const save = () => {
     if (obstacle !== undefined || saving.isPending) return
     saving.mutate({ system, name: token.name, etag: token.etag, value: text.trim(), message })
@@ -65,33 +68,41 @@ export function SaveForm(props: SaveFormProps) {
     onText(next)
   }
 
+  const putBack = () => {
+    saving.reset()
+    onPutBack()
+  }
+
   return (
     <form onSubmit={submit} className="border-b border-ink pb-18">
       <TrialFields
         text={text}
         reading={reading}
         present={present}
-        fault={faults.value}
+        fault={faultAt(refusal, '/value')}
         onText={takeText}
       />
-      <SaveLine
+      <DecisionLine
         message={message}
         onMessage={setMessage}
-        fault={faults.message}
-        isTried={isTried}
+        messageFault={faultAt(refusal, '/message')}
+        isEdited={isTried}
         isSaving={saving.isPending}
         obstacle={obstacle}
-        onPutBack={() => {
-          saving.reset()
-          onPutBack()
-        }}
+        onPutBack={putBack}
       />
-      {saving.isError && (
-        <SaveRefusal
-          error={saving.error}
-          now={valueInWords(token, base)}
+      {refusal?.kind === 'changed' && (
+        <TwoVersions
+          title="Somebody has saved this token since you opened it. What you typed is kept, and is measured against what is there now."
+          rows={[{ member: 'Colour', now: valueInWords(token, base), yours: text.trim() }]}
+          onKeepYours={save}
+          onTakeTheirs={putBack}
+        />
+      )}
+      {refusal !== undefined && refusal.kind !== 'changed' && (
+        <RefusedWrite
+          refusal={refusal}
           signIn={<SignInAgain kept={{ token: token.id, text, message }} />}
-          onAgain={save}
         />
       )}
       {saving.isSuccess && <SavedNote saved={saving.data} />}
@@ -103,9 +114,12 @@ export function SaveForm(props: SaveFormProps) {
 function SignInAgain({ kept }: { kept: KeptTrial }) {
   const { pathname, search } = useLocation()
   return (
-    <Link to={paths.signIn(pathname + search)} state={{ kept }} className="word-woad">
-      Sign in and come back to it
-    </Link>
+    <>
+      What you typed is kept.{' '}
+      <Link to={paths.signIn(pathname + search)} state={{ kept }} className="word-woad">
+        Sign in and come back to it
+      </Link>
+    </>
   )
 }
 

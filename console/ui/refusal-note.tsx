@@ -20,7 +20,7 @@ export function RefusalNote({
           ))}
         </ul>
       )}
-      {children !== undefined && <div className="mt-4">{children}</div>}
+      {children !== undefined && children !== false && <div className="mt-4">{children}</div>}
     </div>
   )
 }

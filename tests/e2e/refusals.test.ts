@@ -144,11 +144,16 @@ describe('an edit that is not taken', () => {
     await messageField(page).fill('Second')
     await saveButton(page).click()
     const alert = page.getByRole('alert')
-    await alert.getByText('The token has changed since you opened it.').waitFor()
-    expect(await alert.textContent()).toContain('oklch(0.52 0.11 150)')
+    await alert.getByText('Somebody has saved this token since you opened it.').waitFor()
+    const versions = alert.getByRole('table', { name: 'Both versions' })
+    expect(await versions.locator('tbody td').allInnerTexts()).toEqual([
+      'Colour',
+      'oklch(0.52 0.11 150)',
+      'oklch(0.48 0.1 150)',
+    ])
     expect(await colorField(page).inputValue()).toBe('oklch(0.48 0.1 150)')
     expect(await messageField(page).inputValue()).toBe('Second')
-    await alert.getByRole('button', { name: 'Save it all the same' }).click()
+    await alert.getByRole('button', { name: 'Save yours over it' }).click()
     await page.getByText(/^Saved as revision \d+\.$/).waitFor()
     expect((await other(getToken, { params })).body.value).toMatchObject({
       components: [0.48, 0.1, 150],
