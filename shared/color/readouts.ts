@@ -17,8 +17,13 @@ import { LINEAR_SRGB_TO_LMS } from './matrices.ts'
 import type { Oklch } from './oklch.ts'
 import { type RenderedColor, renderColor } from './render.ts'
 
-/** Three numbers; `null` where a component has no meaning for the colour. */
+/** Three numbers; `null` where a component has no meaning for the colour, or is more than a double holds. */
 export type Reading = readonly [number | null, number | null, number | null]
+
+const held = (component: number | undefined): number | null =>
+  component !== undefined && Number.isFinite(component) ? component : null
+
+const reading = (x?: number, y?: number, z?: number): Reading => [held(x), held(y), held(z)]
 
 /** One colour in every space. Nothing is rounded. */
 export interface Readouts {
@@ -101,11 +106,11 @@ function shippedOf(color: Oklch): Readouts['shipped'] {
 
 function lmsOf(r: number, g: number, b: number): Reading {
   const m = LINEAR_SRGB_TO_LMS
-  return [
+  return reading(
     m[0] * r + m[1] * g + m[2] * b,
     m[3] * r + m[4] * g + m[5] * b,
     m[6] * r + m[7] * g + m[8] * b,
-  ]
+  )
 }
 
 /**
@@ -126,14 +131,14 @@ export function readoutsOf(color: Oklch): Readouts {
   const isGrey = source.c <= ACHROMATIC
   return {
     oklch: [color.l, color.c, color.h],
-    oklab: [oklab.l, oklab.a, oklab.b],
-    srgb: [srgb.r, srgb.g, srgb.b],
-    linearSrgb: [linear.r, linear.g, linear.b],
-    displayP3: [p3.r, p3.g, p3.b],
-    xyzD65: [xyz65.x, xyz65.y, xyz65.z],
-    xyzD50: [xyz50.x, xyz50.y, xyz50.z],
-    lab: [lab.l, lab.a, lab.b],
-    lch: [lch.l, lch.c, isGrey || lch.h === undefined ? null : lch.h],
+    oklab: reading(oklab.l, oklab.a, oklab.b),
+    srgb: reading(srgb.r, srgb.g, srgb.b),
+    linearSrgb: reading(linear.r, linear.g, linear.b),
+    displayP3: reading(p3.r, p3.g, p3.b),
+    xyzD65: reading(xyz65.x, xyz65.y, xyz65.z),
+    xyzD50: reading(xyz50.x, xyz50.y, xyz50.z),
+    lab: reading(lab.l, lab.a, lab.b),
+    lch: reading(lch.l, lch.c, isGrey ? undefined : lch.h),
     lms: lmsOf(linear.r, linear.g, linear.b),
     shipped: shippedOf(color),
     css: formatOklch(color),

@@ -6,7 +6,9 @@ const three = (description: string) =>
   z
     .array(z.union([z.number(), z.null()]))
     .length(3)
-    .meta({ description: `${description}; null where a component means nothing` })
+    .meta({
+      description: `${description}; null where a component means nothing or is more than a number holds`,
+    })
 
 const lumaSchema = (standard: string) =>
   z.strictObject({ luma: z.number(), pb: z.number(), pr: z.number() }).meta({

@@ -53,6 +53,16 @@ describe('convertColor', () => {
     expect(body.errors[0].pointer).toBe('/color')
   })
 
+  it.each([
+    ['a text', 'oklch(0.5 1e308 20)'],
+    ['an object', { colorSpace: 'oklch', components: [0.5, 1e308, 20] }],
+  ])('answers a chroma that other spaces cannot hold, as %s', async (_, color) => {
+    const { body } = await post({ color }).expect(200)
+    expect(body.oklch).toEqual([0.5, 1e308, 20])
+    expect(body.lab).toEqual([null, null, null])
+    expect(body.shipped.gamut).toBe('beyond')
+  })
+
   it('refuses an object out of its range, with where', async () => {
     const color = { colorSpace: 'oklch', components: [1.2, -1, 400] }
     const { body } = await post({ color }).expect(422)

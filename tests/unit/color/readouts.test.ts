@@ -99,4 +99,16 @@ describe('readouts', () => {
     expect([oklch[2], lch[2], shipped.hsl[0], shipped.hwb[0]]).toEqual([null, null, null, null])
     expect(css).toBe('oklch(0.5 0 none)')
   })
+
+  it('leaves out what no number holds, of a chroma that CSS bounds nowhere', () => {
+    // CSS Color 4, 9.4: chroma is "theoretically unbounded".
+    for (const text of ['oklch(0.5 1e308 20)', 'oklch(0.5 1e100 20)', 'oklch(1 1e308 296)']) {
+      const { shipped, css: _, ...spaces } = readoutsOf(colorOf(text))
+      for (const part of Object.values(spaces).flat()) {
+        expect(part === null || Number.isFinite(part)).toBe(true)
+      }
+      expect(spaces.lch[1]).toBeNull()
+      expect(shipped.gamut).toBe('beyond')
+    }
+  })
 })
