@@ -2,7 +2,7 @@ import { EXEMPTIONS, type PairModel, type SystemModel, USES } from '#shared/chec
 import type { Oklch } from '#shared/color/oklch.ts'
 import { renderColor } from '#shared/color/render.ts'
 import { pair, system, theme, token, value } from './model-builder.ts'
-import { naiveRatio } from './naive-contrast.ts'
+import { naiveRatio, paintAll } from './naive-contrast.ts'
 import type { Dice } from './random-system.ts'
 
 const GROUNDS = [
@@ -23,14 +23,14 @@ function anyColor(dice: Dice): Oklch {
   }
 }
 
-/** Moved in lightness until its ratio on an opaque colour is within a hair of a threshold, where there is such a lightness. */
-function aimed(dice: Dice, under: Oklch): Oklch {
-  const color = { ...anyColor(dice), alpha: 1 }
-  const { r, g, b } = renderColor(under)
-  const wanted = dice.pick(WANTED)
+/** Moved in lightness until its ratio on an opaque colour is within a hair of a threshold, where that can be. */
+function aimed(dice: Dice, under: Oklch, alpha: number, aim?: number): Oklch {
+  const color = { ...anyColor(dice), alpha }
+  const below = renderColor(under)
+  const wanted = aim ?? dice.pick(WANTED)
   const ratio = (l: number) => {
-    const over = renderColor({ ...color, l })
-    return naiveRatio([over.r, over.g, over.b], [r, g, b], 'srgb')
+    const over = paintAll([below, renderColor({ ...color, l })], 'srgb')
+    return naiveRatio(over, [below.r, below.g, below.b], 'srgb')
   }
   let [short, far] = [under.l ?? 0, dice.chance(0.5) ? 1 : 0]
   for (let n = 0; n < 14; n++) {
@@ -39,6 +39,22 @@ function aimed(dice: Dice, under: Oklch): Oklch {
     else short = middle
   }
   return { ...color, l: dice.chance(0.5) ? far : short }
+}
+
+/** Translucent text on opaque grounds, a hair from 4.5: what a screen's rounding may turn over. */
+export function tightPairs(dice: Dice, count: number): SystemModel {
+  const model = randomPairs(dice, count)
+  const backgrounds = new Map<string, Oklch>()
+  const tokens = model.tokens.map((one) => {
+    const at = one.id.slice(1)
+    if (!/^[fb]\d+$/.test(one.id)) return one
+    const under = backgrounds.get(at) ?? { ...anyColor(dice), alpha: 1 }
+    backgrounds.set(at, under)
+    const color = one.id.startsWith('b') ? under : aimed(dice, under, 0.3 + dice.next() * 0.6, 4.5)
+    return { ...one, value: { kind: 'color', color } as const }
+  })
+  const pairs = model.pairs.map(({ foreground, background }) => pair(foreground, background))
+  return { ...model, tokens, pairs }
 }
 
 function declaration(dice: Dice, at: number, backdrops: readonly string[]): PairModel {
@@ -62,7 +78,7 @@ export function randomPairs(dice: Dice, count: number): SystemModel {
   const pairs = Array.from({ length: count }, (_, at) => {
     const isAimed = dice.chance(0.4)
     const under = isAimed ? { ...anyColor(dice), alpha: 1 } : anyColor(dice)
-    const over = isAimed ? aimed(dice, under) : anyColor(dice)
+    const over = isAimed ? aimed(dice, under, dice.chance(0.7) ? 1 : dice.next()) : anyColor(dice)
     tokens.push(colored(`f${at}`, over), colored(`b${at}`, under))
     return declaration(dice, at, backdrops)
   })
