@@ -175,15 +175,15 @@ function Members({ change }: { change: ImportChangeWire }) {
 
 function Member({ member, before, after }: ChangedMember) {
   return (
-    <span className="block break-words">
-      {member !== 'value' && <span className="text-ink-soft">{member} </span>}
+    <span className="flex flex-wrap items-baseline break-words">
+      {member !== 'value' && <span className="mr-6 text-ink-soft">{member}</span>}
       {before !== undefined && (
         <span className={after === undefined ? 'line-through' : ''}>{before}</span>
       )}
       {after !== undefined && (
-        <span className="inline-block max-w-full break-words">
+        <span className="inline-flex max-w-full min-w-0 items-baseline">
           {before !== undefined && <Arrow />}
-          {after}
+          <span className="min-w-0 break-words">{after}</span>
         </span>
       )}
     </span>
