@@ -6,6 +6,7 @@ import { breachesByTheme } from '#console/features/checks/breaches-by-theme.ts'
 import { themeRuleInWords } from '#console/features/rules/rule-words.ts'
 import { systemQueries } from '#console/features/systems/systems.queries.ts'
 import { derivationOrder } from '#console/features/themes/derivation.ts'
+import { FetchHead } from '#console/features/themes/fetch-head.tsx'
 import { ThemesTable } from '#console/features/themes/themes-table.tsx'
 import { themeQueries } from '#console/features/themes/themes.queries.ts'
 import { tokenQueries } from '#console/features/tokens/tokens.queries.ts'
@@ -30,7 +31,7 @@ export function Component() {
   const { data: evaluation } = useEvaluation(system, settings.head.revision)
   const breaches = useMemo(() => evaluation && breachesByTheme(evaluation), [evaluation])
   const [base] = themes
-  if (base === undefined) return <NoTheme />
+  if (base === undefined) return <NoTheme system={system} />
   return (
     <>
       <title>{`Themes of ${system} · Dyewright`}</title>
@@ -55,14 +56,19 @@ export function Component() {
         levelInWords={({ level }) => level ?? settings.level}
         breachesIn={({ id }) => breaches && (breaches.get(id) ?? 0)}
       />
+      <FetchHead system={system} themes={themes} origin={window.location.origin} />
     </>
   )
 }
 
-function NoTheme() {
+function NoTheme({ system }: { system: string }) {
   return (
     <NothingHere title="This system has no theme yet.">
-      The first theme is its base; it comes with the first import, or by the API.
+      The first theme is its base; it comes with{' '}
+      <Link to={paths.importFile(system)} className="word-woad">
+        a file that holds themes
+      </Link>
+      , or by the API.
     </NothingHere>
   )
 }
