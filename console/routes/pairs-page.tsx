@@ -17,6 +17,7 @@ import { PairTable } from '#console/features/pairs/pair-table.tsx'
 import { pairQueries } from '#console/features/pairs/pairs.queries.ts'
 import { systemQueries } from '#console/features/systems/systems.queries.ts'
 import { themeQueries } from '#console/features/themes/themes.queries.ts'
+import { breachSide } from '#console/features/tokens/strip-bands.ts'
 import { TokenCell } from '#console/features/tokens/token-cell.tsx'
 import { tokenQueries } from '#console/features/tokens/tokens.queries.ts'
 import { whereInWords } from '#console/lib/finding-words.ts'
@@ -24,6 +25,7 @@ import { queryClient } from '#console/lib/query-client.ts'
 import { WordButton } from '#console/ui/button.tsx'
 import { NothingHere, Trouble } from '#console/ui/page-states.tsx'
 import { countOf } from '#shared/checks/finding-words.ts'
+import type { Finding } from '#shared/checks/model.ts'
 import { useEvaluation } from './evaluation.ts'
 import { useModelNames } from './model-names.ts'
 import { PairViews } from './pair-views.tsx'
@@ -135,26 +137,31 @@ function FramedPairs({
   )
 }
 
-/** A token's cell by its name. */
+/** A token's cell by its name, cut on the sides of the themes in which these findings breach. */
 function useTokenCells(system: string) {
   const { data: tokens } = useSuspenseQuery(tokenQueries.ledger(system))
-  const { shown, bands } = useStripBands(system)
+  const { data: themes } = useSuspenseQuery(themeQueries.all(system))
+  const { shown } = useStripBands(system)
   const byName = useMemo(() => new Map(tokens.map((token) => [token.name, token])), [tokens])
-  const breaches = useMemo(() => new Map(bands.map(({ name, breach }) => [name, breach])), [bands])
   return useCallback(
-    (name: string) => {
+    (name: string, findings: readonly Finding[] = []) => {
       const token = byName.get(name)
-      return token === undefined || shown === undefined ? null : (
+      if (token === undefined || shown === undefined) return null
+      const breaching = new Set(
+        findings.filter(({ outcome }) => outcome === 'breach').map(({ theme }) => theme),
+      )
+      const keys = themes.filter(({ id }) => breaching.has(id)).map(({ key }) => key)
+      return (
         <TokenCell
           name={name}
           resolved={token.resolved}
           shown={shown}
-          breach={breaches.get(name)}
+          breach={breachSide(keys, themes, shown)}
           size="line"
         />
       )
     },
-    [byName, breaches, shown],
+    [byName, themes, shown],
   )
 }
 

@@ -16,8 +16,8 @@ export interface ThemeColumn {
 
 export interface PairRowParts {
   readonly href: (id: string) => string
-  /** How a token looks, lying down. */
-  readonly cellOf: (token: string) => ReactNode
+  /** How a token of a pair looks, lying down; cut where the pair itself breaches. */
+  readonly cellOf: (token: string, findings: readonly Finding[] | undefined) => ReactNode
   /** Where a finding is measured, in words. */
   readonly whereOf: (finding: Finding) => string
   /** The row took focus: the strip's leader runs to it. */
@@ -38,7 +38,7 @@ export function PairRow({
   link: RowLinkProps
 }) {
   const navigate = useNavigate()
-  const { pair, lowest } = row
+  const { pair, lowest, findings } = row
   return (
     <tr
       data-opens
@@ -62,7 +62,7 @@ export function PairRow({
           {pair.foreground}
         </Link>
       </td>
-      <td className="@max-[1060px]:hidden">{cellOf(pair.foreground)}</td>
+      <td className="@max-[1060px]:hidden">{cellOf(pair.foreground, findings)}</td>
       <td className="text-ink-soft @max-[820px]:hidden">
         {pair.relation === 'inside' ? 'inside' : 'with'}
       </td>
@@ -71,7 +71,7 @@ export function PairRow({
           {pair.background}
         </span>
       </td>
-      <td className="@max-[1060px]:hidden">{cellOf(pair.background)}</td>
+      <td className="@max-[1060px]:hidden">{cellOf(pair.background, findings)}</td>
       <td className="@max-[940px]:hidden">
         <span className="block truncate pr-8 pl-14">{wordsOfUse(pair.use)}</span>
       </td>
