@@ -3,6 +3,7 @@ import { type ModelGraph, stateAt } from './model-graph.ts'
 import type { State } from './model.ts'
 import type { Provenance } from './provenance.ts'
 import { type ResolvedCell, type ResolvedColor, STATE_COUNT } from './resolved.ts'
+import { type SharedProvenance, sharedByState, sharedByTheme } from './shared-provenance.ts'
 import { applyStateRule, type StepDirection, stepDirection } from './state-rule.ts'
 import { applyThemeRule, type ThemeSide, type ThemeSpan } from './theme-rule.ts'
 import { isKept, matchReferences, type ValuePlace } from './value-edges.ts'
@@ -20,6 +21,8 @@ export interface ValuePass {
   knownRow(token: number): readonly ResolvedCell[]
   /** By token position × themes + theme position. */
   readonly directions: Map<number, StepDirection>
+  /** Absent: provenances are not shared. */
+  readonly shared?: SharedProvenance
 }
 
 /** A value computed before; undefined where it hangs on a missing or cyclic reference. */
@@ -70,6 +73,8 @@ function sideOf(
   return ground && ink && reference ? { ground, ink, reference } : undefined
 }
 
+const KEPT = { kind: 'keep' } as const
+
 function ruleByTheme(
   pass: ValuePass,
   plan: Extract<ValuePlan, { kind: 'theme-rule' }>,
@@ -79,7 +84,7 @@ function ruleByTheme(
   const parent = graph.parents[place.theme]!
   const before = cellAt(pass, place.token, parent, place.state)
   if (before === undefined) return undefined
-  const rule = isKept(graph, plan, place) ? { kind: 'keep' as const } : plan.rule
+  const rule = isKept(graph, plan, place) ? KEPT : plan.rule
   let span: ThemeSpan | undefined
   if (rule.kind !== 'keep' && rule.kind !== 'shift') {
     const against =
@@ -92,7 +97,8 @@ function ruleByTheme(
   }
   const { color, short } = applyThemeRule(before.color, rule, span)
   const theme = graph.model.themes[place.theme]!.id
-  const provenance: Provenance = { from: 'theme-rule', theme, rule, ...(short ? { short } : {}) }
+  const told = { from: 'theme-rule', theme, rule, ...(short ? { short } : {}) } as const
+  const provenance = pass.shared ? sharedByTheme(pass.shared, rule, told) : told
   return { color, provenance, aliasDepth: 0 }
 }
 
@@ -124,7 +130,9 @@ function ruleByState(
   const direction = plan.rule.lightness === 0 ? undefined : directionOf(pass, rest, place)
   if (plan.rule.lightness !== 0 && direction === undefined) return undefined
   const { state, rule } = plan
-  return { ...applyStateRule(rest, { state, rule, direction }), aliasDepth: 0 }
+  const { color, provenance: told } = applyStateRule(rest, { state, rule, direction })
+  const provenance = pass.shared ? sharedByState(pass.shared, rule, told) : told
+  return { color, provenance, aliasDepth: 0 }
 }
 
 /** Computes one value once everything that it is computed from is there; undefined where that is broken. */

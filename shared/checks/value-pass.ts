@@ -1,6 +1,7 @@
 import { isRoleUnset, type ModelGraph, stateAt } from './model-graph.ts'
 import { type ModelFault, STATES } from './model.ts'
 import { type ResolvedCell, STATE_COUNT } from './resolved.ts'
+import { createSharedProvenance } from './shared-provenance.ts'
 import { type LargestStep, largestStep } from './state-rule.ts'
 import { computeValue, type ValuePass } from './value-computation.ts'
 import { edgesOf, type ValuePlace } from './value-edges.ts'
@@ -154,6 +155,7 @@ function createWalk(
     knownRow,
     width,
     directions: new Map(),
+    shared: createSharedProvenance(),
     slots,
     progress: new Uint8Array(asked.length * width),
     largest: new Array(asked.length + 1),
