@@ -17,6 +17,8 @@ export interface NearestPassingOptions {
   readonly locked?: ReadonlySet<string>
   /** Evaluations, at most. */
   readonly budget?: number
+  /** Called after each search with the evaluations so far. */
+  readonly onSpent?: (evaluations: number) => void
 }
 
 /** What came of a search. */
@@ -43,6 +45,7 @@ interface Run {
   readonly evaluation: Evaluation
   readonly waivers: readonly WaiverModel[]
   readonly locked: ReadonlySet<string>
+  readonly onSpent: (evaluations: number) => void
   left: number
   spent: number
   isStopped: boolean
@@ -97,6 +100,7 @@ function tryPlaces(
     run.left -= evaluations
     run.spent += evaluations
     run.isStopped ||= isStopped
+    run.onSpent(run.spent)
     if (found === undefined) return undefined
     edits.push(found)
     evaluation = withColors(evaluation, [found])
@@ -206,10 +210,11 @@ export function nearestPassing(
   token: string,
   options: NearestPassingOptions = {},
 ): NearestPassing {
-  const { waivers = [], locked = new Set(), budget = NEAREST_BUDGET } = options
+  const { waivers = [], locked = new Set(), budget = NEAREST_BUDGET, onSpent = () => {} } = options
   const model = evaluation.resolved.tokens.get(token)?.token
   if (model === undefined) throw new TypeError(`No token ${token}`)
-  const run: Run = { evaluation, waivers, locked, left: budget, spent: 0, isStopped: false }
+  const count = { left: budget, spent: 0, isStopped: false }
+  const run: Run = { evaluation, waivers, locked, onSpent, ...count }
   const reach = reachOf(evaluation, setPlaces(evaluation, model))
   const breaches = gatingBreaches(evaluation, waivers).filter(({ identity }) => reach.has(identity))
   const result =

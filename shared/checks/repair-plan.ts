@@ -2,6 +2,7 @@ import { checkSystem } from './check-system.ts'
 import type { ColorPlace } from './color-place.ts'
 import { createColorProbe } from './color-probe.ts'
 import type { Evaluation } from './evaluation.ts'
+import { createKeptSearches, type KeptSearches } from './kept-searches.ts'
 import type { Finding, SystemModel, Verdict, WaiverModel } from './model.ts'
 import { isGatingRow, NEAREST_BUDGET, nearestAt, type PlacedColor } from './nearest-at.ts'
 import { withColors } from './nearest-passing.ts'
@@ -20,6 +21,8 @@ export interface RepairPlanOptions {
   readonly locked?: ReadonlySet<string>
   /** Evaluations, at most. */
   readonly budget?: number
+  /** Called after each search with the evaluations so far. */
+  readonly onSpent?: (evaluations: number) => void
 }
 
 /** One change of a plan. */
@@ -51,6 +54,8 @@ export interface RepairPlan {
 interface Run {
   readonly waivers: readonly WaiverModel[]
   readonly locked: ReadonlySet<string>
+  readonly onSpent: (evaluations: number) => void
+  readonly searches: KeptSearches
   evaluation: Evaluation
   left: number
   spent: number
@@ -98,19 +103,23 @@ function searchPlace(
   place: ColorPlace,
   free: ReadonlySet<string>,
 ): PlacedColor | undefined {
+  const known = free.size === 0 ? run.searches.find(place) : undefined
+  if (known !== undefined) return known ?? undefined
   if (run.left <= 0) {
     run.isStopped = true
     return undefined
   }
-  const { found, evaluations, isStopped } = nearestAt(run.evaluation, place, {
+  const search = nearestAt(run.evaluation, place, {
     waivers: run.waivers,
     budget: Math.min(run.left, NEAREST_BUDGET),
     isAsked: (row) => isGatingRow(row) && !free.has(row.finding.identity),
   })
-  run.left -= evaluations
-  run.spent += evaluations
-  run.isStopped ||= isStopped
-  return found
+  run.left -= search.evaluations
+  run.spent += search.evaluations
+  run.isStopped ||= search.isStopped
+  run.onSpent(run.spent)
+  if (free.size === 0 && !search.isStopped) run.searches.keep(place, search)
+  return search.found
 }
 
 /** Of the places that mend equally many breaches, the one that costs least. */
@@ -149,6 +158,7 @@ function step(run: Run, edits: RepairEdit[], chosen: PlacedColor): boolean {
   const isWorse = [...after].some((identity) => !before.has(identity))
   const mends = [...before].filter((identity) => !after.has(identity))
   if (isWorse || mends.length === 0) return false
+  run.searches.forget(run.evaluation, chosen.place)
   run.evaluation = evaluation
   edits.push({ ...chosen, mends })
   return true
@@ -204,6 +214,7 @@ function createConflictSearch(run: Run) {
     })
     run.left -= evaluations
     run.spent += evaluations
+    run.onSpent(run.spent)
     known.set(key, conflict)
     return conflict
   }
@@ -238,8 +249,10 @@ function modelWith(evaluation: Evaluation, edits: readonly PlacedColor[]): Syste
  * @param options.budget evaluations, default 60,000; the plan says where it stopped early
  */
 export function repairPlan(evaluation: Evaluation, options: RepairPlanOptions = {}): RepairPlan {
-  const { waivers = [], locked = new Set(), budget = REPAIR_BUDGET } = options
-  const run: Run = { waivers, locked, evaluation, left: budget, spent: 0, isStopped: false }
+  const { waivers = [], locked = new Set(), budget = REPAIR_BUDGET, onSpent = () => {} } = options
+  const searches = createKeptSearches()
+  const count = { left: budget, spent: 0, isStopped: false }
+  const run: Run = { waivers, locked, onSpent, searches, evaluation, ...count }
   const breachesBefore = gatingBreaches(run).length
   const edits = withoutNeedless(run, evaluation, collectEdits(run))
   const checked = checkSystem(modelWith(evaluation, edits))
