@@ -24,7 +24,10 @@ export interface UsableToken {
   }
 }
 
-function undeclared(foreground: string, background: string): PairModel {
+/** Where the two are to be together; absent members: everywhere. */
+export type StandingPlace = Pick<PairModel, 'themes' | 'states'>
+
+function undeclared(foreground: string, background: string, place: StandingPlace): PairModel {
   return {
     id: '',
     foreground,
@@ -32,6 +35,7 @@ function undeclared(foreground: string, background: string): PairModel {
     use: 'text',
     relation: 'inside',
     backdrop: [],
+    ...place,
   }
 }
 
@@ -61,16 +65,21 @@ function lowestRow(measure: PairMeasure): number {
 /**
  * Which tokens may stand on a background, for which use, in every theme and state: disabled ones, which WCAG exempts,
  * left out. In ledger order, without the background itself.
+ * @param place themes by id, and states of both sides, as a pair has them: rest is always in
  * @throws TypeError when the system has no such token
  */
-export function usableOn({ resolved }: Evaluation, background: string): UsableToken[] {
+export function usableOn(
+  { resolved }: Evaluation,
+  background: string,
+  place: StandingPlace = {},
+): UsableToken[] {
   const { model, tokens } = resolved
   if (!tokens.has(background)) throw new TypeError(`No token ${background}`)
   if (model.themes.length === 0) return []
   return model.tokens
     .filter(({ id }) => id !== background)
     .map(({ id }) => {
-      const measure = measurePair(resolved, undeclared(id, background))
+      const measure = measurePair(resolved, undeclared(id, background, place))
       const row = lowestRow(measure)
       const states = statesOfRow(measure, row)
       const theme = measure.themes[Math.floor(row / measure.combinations.length)]!
