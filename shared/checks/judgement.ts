@@ -30,6 +30,7 @@ export interface Judgement {
   readonly waiver?: WaiverModel
 }
 
+const BREACH: Judgement = { outcome: 'breach' }
 const PASS: Judgement = { outcome: 'pass' }
 const PASS_ANY_OF: Judgement = { outcome: 'pass', reason: 'any-of' }
 const PASS_UNKNOWN: Judgement = { outcome: 'pass', reason: 'backdrop-unknown' }
@@ -105,6 +106,7 @@ export function createJudge(evaluation: Evaluation, options: JudgementOptions = 
     if (waiver !== undefined) return { outcome: 'waived', ...why, waiver }
     const before = known?.get(identityOfRow(evaluation, measure, row))
     const isKnown = before !== undefined && measure.ratio[row]! >= before
+    if (!isKnown && reason === undefined) return BREACH
     return { outcome: isKnown ? 'known' : 'breach', ...why }
   }
 }

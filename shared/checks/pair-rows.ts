@@ -128,7 +128,8 @@ export function fillRows(measure: PairMeasure, sources: RowSources): void {
   for (let at = 0; at < themes.length; at++) {
     const first = themes[at]! * STATE_COUNT
     const required = measure.required[at]!
-    if (required !== measure.required[at - 1]) aims = aimsOf(measure, required, settings)
+    if (at === 0 || required !== measure.required[at - 1])
+      aims = aimsOf(measure, required, settings)
     let stack: MeasuredStack | undefined
     for (let place = 0; place < combinations.length; place++) {
       const combination = combinations[place]!
