@@ -14,6 +14,7 @@ import { createIdempotencyStore } from './platform/idempotency/idempotency-store
 import { createLogger } from './platform/logger.ts'
 import { createPasswords } from './platform/passwords.ts'
 import { createRateCounter } from './platform/rate-limit/rate-counter.ts'
+import { createRepairLanes } from './repair-lanes.ts'
 import { mountAll } from './routes.ts'
 import { createServices, type Platform, type Services } from './services.ts'
 
@@ -54,7 +55,11 @@ export function compose(composition: Composition): Service {
   })
   mountAll(router, services)
   const app = createApp({ config, router, platform, files })
-  return { app, services, platform, close: () => platform.database.close() }
+  const close = async () => {
+    await platform.repairLanes.close()
+    await platform.database.close()
+  }
+  return { app, services, platform, close }
 }
 
 function createPlatform(config: Config, given: Partial<Platform>): Platform {
@@ -70,6 +75,7 @@ function createPlatform(config: Config, given: Partial<Platform>): Platform {
     writeGuards: WRITE_GUARDS,
     idempotencyGuards: IDEMPOTENCY_GUARDS,
     rateCounter: createRateCounter(database),
+    repairLanes: createRepairLanes(),
     ...given,
     transact: joinEnclosing(transact),
     database: { ...database, db: followEnclosing(database.db) },

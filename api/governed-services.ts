@@ -30,7 +30,7 @@ interface Reach {
 
 /** Wires what a revision governs, around the one head and the one write. */
 export function createGovernedServices(
-  { newId, database, writeGuards }: Platform,
+  { newId, database, writeGuards, repairLanes }: Platform,
   { reads, transact, findAccess, jobs }: Reach,
 ) {
   const heads = createHeadsService({ heads: reads.heads, versions: reads.versions })
@@ -45,6 +45,7 @@ export function createGovernedServices(
   })
   const begins = createHeadBeginService()
   const coverage = createCoverageService({ heads, reads })
+  const repair = createRepairService({ heads, jobs, lanes: repairLanes })
   return {
     heads,
     breaches,
@@ -57,11 +58,12 @@ export function createGovernedServices(
     distinctSets: createDistinctSetsService({ heads, writes, newId }),
     themes: createThemesService({ heads, writes, newId }),
     rules: createRulesService({ heads, writes }),
-    repair: createRepairService({ heads }),
+    repair,
     imports: createImportsService({ heads, writes, jobs, newId }),
     checks: createChecksService({
       heads,
       reads: createChecksReads(database.db),
+      repair,
       sightings,
       coverage,
       transact,

@@ -16,6 +16,7 @@ import type { NewId } from './platform/ids.ts'
 import type { Logger } from './platform/logger.ts'
 import type { RateCounter } from './platform/rate-limit/rate-counter.ts'
 import type { Passwords } from './platform/passwords.ts'
+import type { RepairLanes } from './repair-lanes.ts'
 import { createRepositories, createTransactOver } from './repositories.ts'
 
 /** The outside world, as services reach it. */
@@ -33,6 +34,7 @@ export interface Platform {
   readonly idempotencyGuards: IdempotencyGuards
   /** The database's own counter, unless a test counts otherwise on purpose. */
   readonly rateCounter: RateCounter
+  readonly repairLanes: RepairLanes
 }
 
 /** Wires every use case to the world. */

@@ -34,6 +34,7 @@ const SOURCES = [
 /** Server-side programs: packages stay outside, in node_modules. */
 const PROGRAMS = {
   'api/server': 'api/server.ts',
+  'api/repair-worker': 'api/repair-worker.ts',
   'drizzle/migrate': 'drizzle/migrate.ts',
   'demo/accounts': 'scripts/demo/accounts.ts',
   'demo/seed': 'scripts/demo/seed.ts',

@@ -13,6 +13,7 @@ import {
 } from './findings.ts'
 import { pairInputSchema } from './pairs.contract.ts'
 import { READ_PROBLEMS, WRITE_PROBLEMS } from './problems.ts'
+import { conflictSchema, placedColorSchema } from './repair-outcome.ts'
 import { defineContract } from './route.ts'
 import { sarifLogSchema } from './sarif-log.ts'
 
@@ -91,6 +92,27 @@ const loggedSchema = z
     description: 'What the check left behind; only where its source names repository and branch',
   })
 
+/** A finding of a check, with what was asked for beside it. */
+export const checkFindingSchema = findingSchema
+  .extend({
+    nearest: placedColorSchema.optional().meta({
+      description:
+        'The nearest colour with which it passes, and all else that hangs on that token; those of one check pass together',
+    }),
+    unmended: z
+      .strictObject({
+        reason: z.enum(['locked', 'conflict', 'budget']).meta({
+          description:
+            'locked: no side of it may move; conflict: no colour of a hue meets all it must; budget: not searched, or not to the end',
+        }),
+        conflict: conflictSchema.optional(),
+      })
+      .optional()
+      .meta({ description: 'Why there is no nearest colour, where one was asked for' }),
+  })
+  .meta({ id: 'CheckFinding', description: 'One pair in one theme and state, measured' })
+export type CheckFindingWire = z.infer<typeof checkFindingSchema>
+
 const summary = {
   id: idSchema,
   number: z.int().min(1).meta({ description: 'Counts up within the system' }),
@@ -111,7 +133,7 @@ export type CheckSummaryWire = z.infer<typeof checkSummarySchema>
 export const checkSchema = z
   .strictObject({
     ...summary,
-    findings: z.array(findingSchema),
+    findings: z.array(checkFindingSchema),
     advisories: z.array(advisorySchema),
     distinctSets: z
       .array(distinctMeasureSchema)
@@ -153,6 +175,17 @@ const alternatives = [
 
 const findingsQuery = z.strictObject({
   findings: z.enum(['short', 'all']).default('short').meta({ description: 'short: all but pass' }),
+  nearest: z
+    .enum(['true', 'false'])
+    .default('false')
+    .transform((text) => text === 'true')
+    .meta({
+      description:
+        'true: each gating breach says the nearest colour with which it passes, or why there is none; the 20 furthest short are searched',
+      type: 'string',
+      enum: ['true', 'false'],
+      default: 'false',
+    }),
 })
 
 export const createCheck = defineContract({

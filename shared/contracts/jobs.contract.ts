@@ -2,10 +2,8 @@ import * as z from 'zod'
 import { idSchema, instantSchema, systemParams } from './fields.ts'
 import { importSchema } from './import-outcome.ts'
 import { problemSchema, READ_PROBLEMS } from './problems.ts'
+import { nearestPassingSchema, repairPlanSchema } from './repair-outcome.ts'
 import { defineContract } from './route.ts'
-
-/** Work that can outlast its request. */
-export const JOB_KINDS = ['import', 'repair-plan', 'check'] as const
 
 const tokensDone = z.int().min(0)
 
@@ -15,24 +13,36 @@ export const jobProgressSchema = z
     read: tokensDone,
     resolved: tokensDone,
     measured: tokensDone,
+    evaluations: z.int().min(0).optional().meta({ description: 'Of a search: colours tried' }),
+    budget: z.int().min(0).optional().meta({ description: 'Of a search: the most it may try' }),
   })
-  .meta({ id: 'JobProgress', description: 'How far it is, in tokens' })
+  .meta({ id: 'JobProgress', description: 'How far it is, in tokens; a search also in colours' })
+
+const job = {
+  id: idSchema,
+  state: z.enum(['running', 'done', 'failed']),
+  progress: jobProgressSchema,
+  problem: problemSchema.optional().meta({
+    description: 'Where it failed: the refusal that would have been answered; nothing was done',
+  }),
+  createdAt: instantSchema,
+  finishedAt: z.union([instantSchema, z.null()]),
+}
+const resultOf = <Outcome extends z.ZodType>(outcome: Outcome) =>
+  outcome.optional().meta({
+    description: 'Once it is done: what would have been answered at once',
+  })
 
 export const jobSchema = z
-  .strictObject({
-    id: idSchema,
-    kind: z.enum(JOB_KINDS),
-    state: z.enum(['running', 'done', 'failed']),
-    progress: jobProgressSchema,
-    result: importSchema.optional().meta({
-      description: 'Once it is done: what would have been answered at once',
+  .discriminatedUnion('kind', [
+    z.strictObject({ ...job, kind: z.literal('import'), result: resultOf(importSchema) }),
+    z.strictObject({ ...job, kind: z.literal('repair-plan'), result: resultOf(repairPlanSchema) }),
+    z.strictObject({
+      ...job,
+      kind: z.literal('nearest-passing'),
+      result: resultOf(nearestPassingSchema),
     }),
-    problem: problemSchema.optional().meta({
-      description: 'Where it failed: the refusal that would have been answered; nothing was done',
-    }),
-    createdAt: instantSchema,
-    finishedAt: z.union([instantSchema, z.null()]),
-  })
+  ])
   .meta({ id: 'Job', description: 'Long work and how far it is. It is kept for 7 days' })
 export type JobWire = z.infer<typeof jobSchema>
 

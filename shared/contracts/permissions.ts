@@ -51,7 +51,7 @@ export const ROLE_PERMISSIONS = {
 export const ADMIN_PERMISSIONS = ['systems:create', 'members:write'] as const
 
 export const SCOPE_PERMISSIONS = {
-  'themes:read': ['system:read', 'themes:read', 'tokens:read'],
+  'themes:read': ['system:read', 'themes:read', 'tokens:read', 'jobs:read-own'],
   'checks:write': ['checks:write', 'checks:read-own', 'jobs:read-own'],
   'tokens:write': ['tokens:read', 'tokens:write', 'jobs:read-own'],
 } as const satisfies Record<Scope, readonly string[]>

@@ -1,7 +1,9 @@
 import * as z from 'zod'
-import { dtcgColorSchema, slugSchema, stateSchema, systemParams } from './fields.ts'
-import { countsSchema, findingSchema, hexSchema, ratioSchema, verdictSchema } from './findings.ts'
-import { WRITE_PROBLEMS } from './problems.ts'
+import { slugSchema, stateSchema, systemParams } from './fields.ts'
+import { pairStateSchema, ratioSchema } from './findings.ts'
+import { jobExample, jobSchema } from './jobs.contract.ts'
+import { READ_PROBLEMS, WRITE_PROBLEMS } from './problems.ts'
+import { nearestPassingSchema, placedExample, repairPlanSchema } from './repair-outcome.ts'
 import { defineContract } from './route.ts'
 
 const budgetSchema = (most: number, fallback: number) =>
@@ -12,55 +14,9 @@ const budgetSchema = (most: number, fallback: number) =>
     default: fallback,
   })
 
-/** A colour to be set in a place; nothing is written by asking. */
-export const placedColorSchema = z
-  .strictObject({
-    token: z.string(),
-    theme: slugSchema,
-    state: stateSchema,
-    source: z
-      .boolean()
-      .meta({ description: 'Whether this is the value of the token, no override' }),
-    color: dtcgColorSchema.meta({ description: 'In OKLCH, unrounded' }),
-    hex: hexSchema,
-    deltaEOk: z.number().meta({
-      description: 'The largest difference over themes and states, as both ship',
-    }),
-  })
-  .meta({ id: 'PlacedColor' })
-
-const requirementSchema = z.strictObject({
-  asks: z.enum(['finding', 'theme-span', 'distinct-set']),
-  foreground: z.string().optional(),
-  background: z.string().optional(),
-  theme: slugSchema.optional(),
-  state: z.string().optional(),
-  required: z.number().optional(),
-  fingerprint: z.string().optional(),
-  lightness: z
-    .array(z.strictObject({ from: z.number(), to: z.number() }))
-    .meta({ description: 'OKLCH lightness at which it is met, at the present chroma and hue' }),
+const tokenParams = systemParams.extend({
+  name: z.string().min(1).max(255).meta({ example: 'action.board.fill' }),
 })
-
-export const conflictSchema = z
-  .strictObject({
-    requirements: z.array(requirementSchema),
-    bound: z.strictObject({ needed: z.number(), available: ratioSchema }).optional().meta({
-      description:
-        'Of two with the colour between: the ratios multiplied, and what the other sides have to each other',
-    }),
-  })
-  .meta({ id: 'Conflict', description: 'The fewest requirements that no colour of the hue meets' })
-
-const placedExample = {
-  token: 'action.board.fill',
-  theme: 'light',
-  state: 'rest',
-  source: true,
-  color: { colorSpace: 'oklch', components: [0.551, 0.128, 243], alpha: 1 },
-  hex: '#1478b6',
-  deltaEOk: 0.034,
-} as const
 
 export const nearestPassing = defineContract({
   operationId: 'nearestPassing',
@@ -69,25 +25,13 @@ export const nearestPassing = defineContract({
   feature: 'repair',
   summary: 'The least change of colour after which every finding that hangs on a token passes',
   description:
-    'Hue and alpha are kept, locked tokens stay. Cheapest first: an override in the breaching theme, the source, an override a theme, the other side of the pairs. Nothing is written.',
-  params: systemParams.extend({
-    name: z.string().min(1).max(255).meta({ example: 'action.board.fill' }),
-  }),
+    'Hue and alpha are kept, locked tokens stay. Cheapest first: an override in the breaching theme, the source, an override a theme, the other side of the pairs. Nothing is written. Long work is answered with 202 and a job.',
+  params: tokenParams,
   body: z.strictObject({ budget: budgetSchema(50_000, 8000) }).meta({ id: 'AskNearestPassing' }),
   bodyExample: {},
   success: {
     status: 200,
-    body: z
-      .strictObject({
-        outcome: z.enum(['passing', 'found', 'none', 'locked']),
-        edits: z.array(placedColorSchema),
-        side: z.enum(['own', 'other']).optional().meta({ description: 'Whose colour moves' }),
-        breaches: z.array(findingSchema),
-        conflict: conflictSchema.optional(),
-        evaluations: z.int(),
-        stopped: z.boolean().meta({ description: 'Whether the budget ran out' }),
-      })
-      .meta({ id: 'NearestPassing' }),
+    body: nearestPassingSchema,
     example: {
       outcome: 'found',
       edits: [placedExample],
@@ -97,6 +41,7 @@ export const nearestPassing = defineContract({
       stopped: false,
     },
   },
+  deferred: { body: jobSchema, example: { ...jobExample, kind: 'nearest-passing' } },
   problems: WRITE_PROBLEMS,
   access: 'tokens:read',
 })
@@ -108,32 +53,13 @@ export const planRepair = defineContract({
   feature: 'repair',
   summary: 'A few changes of colour after which nothing gating breaches, or as little as can be',
   description:
-    'Checked in full before it is answered. Says what it leaves, and why. Nothing is written.',
+    'Checked in full before it is answered. Says what it leaves, and why. Nothing is written. Long work is answered with 202 and a job.',
   params: systemParams,
   body: z.strictObject({ budget: budgetSchema(200_000, 40_000) }).meta({ id: 'AskRepairPlan' }),
   bodyExample: {},
   success: {
     status: 200,
-    body: z
-      .strictObject({
-        edits: z.array(
-          placedColorSchema.extend({
-            mends: z.array(z.string()).meta({ description: 'Fingerprints of breaches' }),
-          }),
-        ),
-        left: z.array(
-          z.strictObject({
-            finding: findingSchema,
-            reason: z.enum(['locked', 'conflict', 'budget']),
-            conflict: conflictSchema.optional(),
-          }),
-        ),
-        breachesBefore: z.int().meta({ description: 'Gating ones' }),
-        after: z.strictObject({ verdict: verdictSchema, counts: countsSchema }),
-        evaluations: z.int(),
-        stopped: z.boolean().meta({ description: 'Whether the budget ran out' }),
-      })
-      .meta({ id: 'RepairPlan' }),
+    body: repairPlanSchema,
     example: {
       edits: [{ ...placedExample, mends: [] }],
       left: [],
@@ -146,6 +72,55 @@ export const planRepair = defineContract({
       stopped: false,
     },
   },
+  deferred: { body: jobSchema, example: { ...jobExample, kind: 'repair-plan' } },
   problems: WRITE_PROBLEMS,
   access: 'tokens:read',
+})
+
+const standingUseSchema = z.enum(['text', 'large-text', 'non-text'])
+
+export const listUsableOn = defineContract({
+  operationId: 'listUsableOn',
+  method: 'GET',
+  path: '/v1/systems/{system}/tokens/{name}/usable-on',
+  feature: 'repair',
+  summary: 'Which tokens may stand on this one, and for what',
+  description:
+    'Measured as a foreground within a container, declared or not, on the ground of each theme. A use is listed where its ratio is reached in every theme and state asked about; disabled ones, of which WCAG asks nothing, are left out. In the order of the ledger.',
+  params: tokenParams,
+  query: z.strictObject({
+    theme: slugSchema.optional().meta({ description: 'In this theme alone' }),
+    state: stateSchema
+      .optional()
+      .meta({ description: 'In this state of either, and at rest; absent: in all of theirs' }),
+    use: standingUseSchema.optional().meta({ description: 'Only what may stand for this use' }),
+  }),
+  success: {
+    status: 200,
+    body: z.strictObject({
+      items: z.array(
+        z
+          .strictObject({
+            token: z.string(),
+            uses: z.array(standingUseSchema),
+            lowest: z
+              .strictObject({ theme: slugSchema, state: pairStateSchema, ratio: ratioSchema })
+              .meta({ description: 'Where it has least' }),
+          })
+          .meta({ id: 'UsableToken' }),
+      ),
+    }),
+    example: {
+      items: [
+        {
+          token: 'text.rope',
+          uses: ['large-text', 'non-text'],
+          lowest: { theme: 'light', state: 'rest/hover', ratio: 3.8804 },
+        },
+      ],
+    },
+  },
+  problems: READ_PROBLEMS,
+  access: 'tokens:read',
+  conditional: true,
 })

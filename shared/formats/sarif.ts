@@ -1,6 +1,11 @@
 import type { Basis } from '#shared/checks/layers.ts'
 import type { Advisory, EngineStamp, Outcome } from '#shared/checks/model.ts'
-import { stateInWords, truncateRatio } from '#shared/checks/finding-words.ts'
+import {
+  type RepairAnswer,
+  repairInWords,
+  stateInWords,
+  truncateRatio,
+} from '#shared/checks/finding-words.ts'
 import type {
   SarifKind,
   SarifLevel,
@@ -12,7 +17,7 @@ import type {
 } from './sarif-log.ts'
 import { CAUTION, type Ruled, ruleIdOf, SARIF_RULES } from './sarif-rules.ts'
 
-interface CheckedFinding extends Ruled {
+interface CheckedFinding extends Ruled, RepairAnswer {
   readonly foreground: string
   readonly background: string
   readonly theme: string
@@ -78,6 +83,7 @@ const OUTCOME_TEXT: Readonly<Partial<Record<Outcome, string>>> = {
 const remarksOn = (finding: CheckedFinding): string[] => {
   const { outcome, basis, srgbRatio, reason, tight, gating, waiver } = finding
   const said = OUTCOME_TEXT[outcome]
+  const repair = repairInWords(finding)
   return [
     ...(said === undefined ? [] : [said]),
     ...(waiver === undefined ? [] : [`A waiver allows it until ${waiver.endsAt}.`]),
@@ -88,6 +94,7 @@ const remarksOn = (finding: CheckedFinding): string[] => {
     ...(reason === undefined ? [] : [`Reason: ${reason.replaceAll('-', ' ')}.`]),
     ...(tight ? ['One level of a translucent layer would flip it.'] : []),
     ...(gating ? [] : ['Its theme only reports.']),
+    ...(repair === undefined ? [] : [`${repair.charAt(0).toUpperCase()}${repair.slice(1)}.`]),
   ]
 }
 

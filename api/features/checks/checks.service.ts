@@ -3,13 +3,14 @@ import type { Caller, SystemAccess } from '#api/caller.ts'
 import { AppError } from '#api/errors.ts'
 import type { Seen, SightingsService } from '#api/features/breaches/sightings.service.ts'
 import type { CoverageService } from '#api/features/coverage/coverage.service.ts'
+import type { RepairService, Suggestion } from '#api/features/repair/repair.service.ts'
 import type { Head, HeadsService } from '#api/features/revisions/heads.service.ts'
 import { decodeCursor, encodeCursor } from '#api/paging.ts'
 import type { NewId } from '#api/platform/ids.ts'
 import type { Transact } from '#api/repositories.ts'
 import { measureDistinctSets } from '#shared/checks/distinct-measure.ts'
 import type { Evaluation } from '#shared/checks/evaluation.ts'
-import type { Verdict } from '#shared/checks/model.ts'
+import type { Finding, Verdict } from '#shared/checks/model.ts'
 import { breachRatios, verdictOf } from '#shared/checks/verdict.ts'
 import type { CheckWire, createCheck, listChecks } from '#shared/contracts/checks.contract.ts'
 import {
@@ -23,11 +24,12 @@ import { presentCheckSummary } from './checks.presenter.ts'
 import type { ChecksReads } from './checks.reads.ts'
 import type { CheckRow, NewCheckRow } from './checks.repository.ts'
 import { type KeptFindings, packFindings, unpackFindings } from './findings-archive.ts'
-import { judgeCandidate, measureCandidate } from './measure-candidate.rules.ts'
+import { judgingOf, measureCandidate } from './measure-candidate.rules.ts'
 
 export interface ChecksDeps {
   readonly heads: Pick<HeadsService, 'current'>
   readonly reads: ChecksReads
+  readonly repair: Pick<RepairService, 'mend'>
   readonly sightings: Pick<SightingsService, 'watch' | 'record'>
   readonly coverage: Pick<CoverageService, 'observe'>
   readonly transact: Transact<'checks' | 'heads' | 'breaches' | 'sightings' | 'coverage'>
@@ -42,7 +44,7 @@ const placeSchema = z.strictObject({ number: z.int().min(1) })
 
 /** Measures candidates against the head, and keeps what came out. */
 export function createChecksService(deps: ChecksDeps) {
-  const { heads, reads, sightings, coverage, transact, newId } = deps
+  const { heads, reads, repair, sightings, coverage, transact, newId } = deps
 
   async function found(system: SystemAccess, id: string) {
     const row = await reads.find(system.id, id)
@@ -62,12 +64,17 @@ export function createChecksService(deps: ChecksDeps) {
         const { code, ...options } = measured.refusal
         throw new AppError(code, options)
       }
-      const verdict = judgeCandidate(head, measured.evaluation, {
-        newOnly: body.newOnly,
-        waivers: [],
-        include: query.findings === 'all' ? 'all' : 'not-pass',
-      })
-      const findings = presentFindings(verdict, measured.evaluation)
+      const { evaluation, sent } = measured
+      const judging = judgingOf(head, { newOnly: body.newOnly, waivers: [] })
+      const include = query.findings === 'all' ? 'all' : 'not-pass'
+      const verdict = verdictOf(evaluation, { ...judging, include })
+      const ask = { ...judging, ...(sent ? { own: sent } : {}) }
+      const isMended = query.nearest && verdict.verdict === 'fail'
+      const findings = presentFindings(
+        verdict,
+        evaluation,
+        isMended ? await repair.mend(head, evaluation, ask) : undefined,
+      )
       const row = {
         ...rowOf(system, { head, verdict, source: body.source }),
         id: newId('chk'),
@@ -80,7 +87,7 @@ export function createChecksService(deps: ChecksDeps) {
         await checks.insert({ ...row, number })
         await coverage.observe(repositories, { system, head, ...observedIn(body) })
         if (watch === undefined) return
-        const seen = seenBy(row, { head, verdict, evaluation: measured.evaluation })
+        const seen = seenBy(row, { head, verdict, evaluation })
         await checks.setLogged(row.id, await sightings.record(repositories, watch, seen))
       })
       return { ...presentCheckSummary(await found(system, row.id)), ...findings }
@@ -116,10 +123,25 @@ const mayExempt = ({ role, caller }: SystemAccess): boolean =>
 const ownKeyOf = ({ ownOnly, caller }: SystemAccess): string | undefined =>
   ownOnly && caller.kind === 'key' ? caller.keyId : undefined
 
-function presentFindings(verdict: Verdict, { resolved }: Evaluation): KeptFindings {
+/** Not searched, or not to the end. */
+const UNSEARCHED: Suggestion = { unmended: { reason: 'budget' } }
+
+/** @param suggestions by fingerprint, where they were asked for */
+function presentFindings(
+  verdict: Verdict,
+  { resolved }: Evaluation,
+  suggestions?: ReadonlyMap<string, Suggestion>,
+): KeptFindings {
   const names = namesIn(resolved)
+  const suggestionFor = ({ outcome, gating, identity }: Finding): Suggestion =>
+    suggestions === undefined || outcome !== 'breach' || !gating
+      ? {}
+      : (suggestions.get(identity) ?? UNSEARCHED)
   return {
-    findings: verdict.findings.map((finding) => presentFinding(finding, names)),
+    findings: verdict.findings.map((finding) => ({
+      ...presentFinding(finding, names),
+      ...suggestionFor(finding),
+    })),
     advisories: verdict.advisories.map((advisory) => presentAdvisory(advisory, names)),
     distinctSets: measureDistinctSets(resolved).map((one) => presentDistinctMeasure(one, names)),
   }

@@ -1,5 +1,6 @@
 import type { Evaluation } from '#shared/checks/evaluation.ts'
-import type { ModelFault, Verdict, WaiverModel } from '#shared/checks/model.ts'
+import type { JudgementOptions } from '#shared/checks/judgement.ts'
+import type { ModelFault, WaiverModel } from '#shared/checks/model.ts'
 import { recheck } from '#shared/checks/recheck.ts'
 import { breachRatios, verdictOf } from '#shared/checks/verdict.ts'
 import {
@@ -19,7 +20,12 @@ export interface Compared {
 }
 
 export type Measured =
-  | { readonly ok: true; readonly evaluation: Evaluation }
+  | {
+      readonly ok: true
+      readonly evaluation: Evaluation
+      /** Ids of the tokens that were sent; absent where none were. */
+      readonly sent?: ReadonlySet<string>
+    }
   | { readonly ok: false; readonly refusal: Refusal }
 
 /** What the caller's role allows: to exempt the pairs that are sent along. */
@@ -39,7 +45,9 @@ export function measureCandidate(
   if (!read.ok || faults.length > 0) return refuseFaults(faults)
   if (Object.keys(read.edits).length === 0) return { ok: true, evaluation: head.evaluation }
   const checked = recheck(head.evaluation, read.edits)
-  if (checked.ok) return checked
+  const put = read.edits.tokens?.put
+  const sent = put === undefined ? {} : { sent: new Set(put.map(({ id }) => id)) }
+  if (checked.ok) return { ...checked, ...sent }
   const unresolved = checked.faults.map((fault) => faultOf(fault, read, head.index))
   return refuse('system-unresolvable', undefined, unresolved)
 }
@@ -74,19 +82,12 @@ function faultOf(
   }
 }
 
-export interface Judging {
-  readonly newOnly: boolean
-  readonly waivers: readonly WaiverModel[]
-  readonly include: 'all' | 'not-pass'
-}
-
-/** Judges a candidate; with `newOnly` against what the head has, under the same waivers. */
-export function judgeCandidate(
+/** With `newOnly` what the head has, under the same waivers, is known. */
+export function judgingOf(
   head: Compared,
-  candidate: Evaluation,
-  { newOnly, waivers, include }: Judging,
-): Verdict {
-  if (!newOnly) return verdictOf(candidate, { waivers, include })
+  { newOnly, waivers }: { readonly newOnly: boolean; readonly waivers: readonly WaiverModel[] },
+): JudgementOptions & { readonly waivers: readonly WaiverModel[] } {
+  if (!newOnly) return { waivers }
   const known = breachRatios(verdictOf(head.evaluation, { waivers, include: 'not-pass' }))
-  return verdictOf(candidate, { waivers, include, known })
+  return { waivers, known }
 }

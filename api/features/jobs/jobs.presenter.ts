@@ -5,14 +5,16 @@ import type { JobFound } from './jobs.repository.ts'
 export function presentJob(job: JobFound, problem: JobWire['problem']): JobWire {
   const { id, kind, progress, result, createdAt, finishedAt, leaseEndsAt, isAbandoned } = job
   const endedAt = isAbandoned ? leaseEndsAt : finishedAt
-  return {
+  const shown = {
     id,
     kind,
     state: isAbandoned ? 'failed' : job.state,
     progress,
-    ...(result === null ? {} : { result: JSON.parse(result) as JobWire['result'] }),
+    ...(result === null ? {} : { result: JSON.parse(result) as unknown }),
     ...(problem === undefined ? {} : { problem }),
     createdAt: createdAt.toISOString(),
     finishedAt: endedAt === null ? null : endedAt.toISOString(),
   }
+  // Its kind says what its result is: the work of that kind gave it.
+  return shown as JobWire
 }

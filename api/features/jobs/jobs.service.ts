@@ -17,6 +17,8 @@ export interface JobRequest {
   readonly requestId: string
   /** Tokens that the work is about. */
   readonly total: number
+  /** Work that writes nothing holds no transaction while it goes on. */
+  readonly isReadOnly?: boolean
 }
 
 /** Says how far the work is, and lets whatever else waits in this process have its turn. */
@@ -44,7 +46,7 @@ export function createJobsService(deps: JobsDeps) {
   return {
     /** Takes work on: it starts once the job is committed. */
     async start(
-      { system, kind, requestId, total }: JobRequest,
+      { system, kind, requestId, total, isReadOnly = false }: JobRequest,
       work: (report: Report) => Promise<object>,
     ): Promise<JobWire> {
       const id = newId('job')
@@ -56,7 +58,7 @@ export function createJobsService(deps: JobsDeps) {
         return jobs.find(system.id, id)
       })
       if (found === undefined) throw new TypeError('A job that was inserted is there')
-      afterCommit(() => void run(deps, { id, requestId, progress }, work))
+      afterCommit(() => void run(deps, { id, requestId, progress, isReadOnly }, work))
       return presentJob(found, problemIn(deps, found))
     },
 
@@ -97,6 +99,7 @@ const maySee = ({ ownOnly, caller }: SystemAccess, { callerKeyId }: JobFound): b
 interface Running {
   readonly id: string
   readonly requestId: string
+  readonly isReadOnly: boolean
   progress: JobProgress
 }
 
@@ -105,7 +108,7 @@ async function run(
   job: Running,
   work: (report: Report) => Promise<object>,
 ): Promise<void> {
-  const { enclosed, reads, logger } = deps
+  const { reads, logger } = deps
   const sign = setInterval(() => void keepAlive(deps, job), SIGN_OF_LIFE_MS)
   sign.unref()
   const report: Report = async (progress) => {
@@ -116,11 +119,12 @@ async function run(
     await new Promise((resolve) => setImmediate(resolve))
   }
   try {
-    await enclosed(async ({ jobs }) => {
+    const workThenFinish = async ({ jobs }: Pick<Repositories, 'jobs'>) => {
       const result = JSON.stringify(await work(report))
       clearInterval(sign)
       if (!(await jobs.finish(job.id, result, job.progress))) throw lost(LEASE_OVER)
-    })
+    }
+    await (job.isReadOnly ? workThenFinish(reads) : deps.enclosed(workThenFinish))
   } catch (error) {
     const refusal = refusalOf(error)
     if (PROBLEMS[refusal.code].status >= 500) {

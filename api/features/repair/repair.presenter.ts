@@ -2,14 +2,17 @@ import type { Evaluation } from '#shared/checks/evaluation.ts'
 import type { PlacedColor } from '#shared/checks/nearest-at.ts'
 import type { NearestPassing } from '#shared/checks/nearest-passing.ts'
 import type { RepairPlan } from '#shared/checks/repair-plan.ts'
+import type { UsableToken } from '#shared/checks/usable-on.ts'
 import type { RequirementConflict } from '#shared/checks/requirement-conflict.ts'
 import { formatHex } from '#shared/color/format-color.ts'
 import { renderColor } from '#shared/color/render.ts'
 import { namesIn, presentFinding } from '#shared/contracts/present-finding.ts'
-import type { nearestPassing, planRepair } from '#shared/contracts/repair.contract.ts'
+import type { CheckFindingWire } from '#shared/contracts/checks.contract.ts'
+import type { listUsableOn, nearestPassing, planRepair } from '#shared/contracts/repair.contract.ts'
 import type { AnswerOf } from '#shared/contracts/route.ts'
 import type { ModelNames } from '#shared/contracts/wire-values.ts'
 import { writeDtcgColor } from '#shared/formats/dtcg-color.ts'
+import type { Mended } from './mend-findings.rules.ts'
 
 type ConflictWire = NonNullable<AnswerOf<typeof nearestPassing>['conflict']>
 
@@ -82,5 +85,48 @@ export function presentPlan(evaluation: Evaluation, plan: RepairPlan): AnswerOf<
     after: { verdict: after.verdict, counts: after.counts },
     evaluations,
     stopped: isStopped,
+  }
+}
+
+/** What a finding is told of its repair. */
+export type Suggestion = Pick<CheckFindingWire, 'nearest' | 'unmended'>
+
+/** Each mended or searched breach by its fingerprint. */
+export function presentMended(
+  evaluation: Evaluation,
+  { edits, left }: Mended,
+): ReadonlyMap<string, Suggestion> {
+  const names = namesIn(evaluation.resolved)
+  const unmended = left.map(({ finding, reason, conflict }): [string, Suggestion] => [
+    finding.identity,
+    {
+      unmended: {
+        reason,
+        ...(conflict === undefined ? {} : { conflict: presentConflict(conflict, names) }),
+      },
+    },
+  ])
+  const mended = edits.flatMap((edit) => {
+    const nearest = presentPlaced(evaluation, edit)
+    return edit.mends.map((identity): [string, Suggestion] => [identity, { nearest }])
+  })
+  return new Map([...unmended, ...mended])
+}
+
+/** A token that may stand on another, by name. */
+export function presentUsable(
+  evaluation: Evaluation,
+  { token, uses, lowest }: UsableToken,
+): AnswerOf<typeof listUsableOn>['items'][number] {
+  const names = namesIn(evaluation.resolved)
+  const { theme, foregroundState, backgroundState, ratio } = lowest
+  return {
+    token: names.tokenName(token),
+    uses: [...uses],
+    lowest: {
+      theme: names.themeKey(theme),
+      state: `${foregroundState}/${backgroundState}`,
+      ratio,
+    },
   }
 }

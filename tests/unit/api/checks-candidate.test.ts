@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import {
   type Compared,
-  judgeCandidate,
+  judgingOf,
   measureCandidate,
 } from '#api/features/checks/measure-candidate.rules.ts'
 import { checkSystem } from '#shared/checks/check-system.ts'
@@ -277,9 +277,9 @@ describe('measureCandidate', () => {
   })
 })
 
-describe('judgeCandidate', () => {
+describe('judgingOf', () => {
   const judge = (body: unknown, newOnly: boolean) =>
-    judgeCandidate(head, measure(body), { newOnly, waivers: [], include: 'not-pass' })
+    verdictOf(measure(body), { ...judgingOf(head, { newOnly, waivers: [] }), include: 'not-pass' })
 
   it('answers a breach that the head has, and is no lower now, as known with newOnly', () => {
     expect(judge({}, false)).toMatchObject({ verdict: 'fail', counts: { breach: 1, known: 0 } })
