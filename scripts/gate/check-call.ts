@@ -51,7 +51,8 @@ export async function requestCheck(
       ...(plan.key === undefined ? {} : { authorization: `Bearer ${plan.key}` }),
     },
   })
-  const input = { params: { system: plan.system }, body: plan.body }
+  const query = { nearest: 'true' } as const
+  const input = { params: { system: plan.system }, query, body: plan.body }
   const answer: unknown = await withRetries(
     async () => {
       try {

@@ -1,6 +1,10 @@
-import { countOf, stateInWords, truncateRatio } from '#shared/checks/finding-words.ts'
-import type { CheckWire } from '#shared/contracts/checks.contract.ts'
-import type { FindingWire } from '#shared/contracts/findings.ts'
+import {
+  countOf,
+  repairInWords,
+  stateInWords,
+  truncateRatio,
+} from '#shared/checks/finding-words.ts'
+import type { CheckFindingWire, CheckWire } from '#shared/contracts/checks.contract.ts'
 import { sarifOf } from '#shared/formats/sarif.ts'
 import { painterFor } from './paint.ts'
 import { folded, plain } from './terminal-text.ts'
@@ -13,38 +17,46 @@ export interface Surface {
 
 const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)
 
-const shortfall = ({ ratio, required }: FindingWire): number => ratio / required
+const shortfall = ({ ratio, required }: CheckFindingWire): number => ratio / required
 
-const groupsOf = (breaches: readonly FindingWire[]): FindingWire[][] => {
-  const groups = new Map<string, FindingWire[]>()
+const groupsOf = (breaches: readonly CheckFindingWire[]): CheckFindingWire[][] => {
+  const groups = new Map<string, CheckFindingWire[]>()
   for (const finding of breaches) {
     const subject = JSON.stringify([finding.foreground, finding.background, finding.use])
     groups.set(subject, [...(groups.get(subject) ?? []), finding])
   }
-  const worst = (group: readonly FindingWire[]) => Math.min(...group.map(shortfall))
+  const worst = (group: readonly CheckFindingWire[]) => Math.min(...group.map(shortfall))
   return [...groups.values()].sort((a, b) => worst(a) - worst(b))
 }
 
-const onSrgb = ({ srgbRatio }: FindingWire): string =>
+const onSrgb = ({ srgbRatio }: CheckFindingWire): string =>
   srgbRatio === undefined ? '' : `, ${truncateRatio(srgbRatio, 4)} in sRGB`
 
-const remarksOn = (finding: FindingWire): string[] => [
+const remarksOn = (finding: CheckFindingWire): string[] => [
   ...(finding.basis === 'p3' ? [`measured in Display P3${onSrgb(finding)}`] : []),
   ...(finding.reason ? [finding.reason.replaceAll('-', ' ')] : []),
   ...(finding.tight ? ['one level of a translucent layer would flip it'] : []),
   ...(finding.gating ? [] : ['its theme only reports']),
 ]
 
+/** One edit mends most findings of a pair: it is said once. */
+const repairsOf = (group: readonly CheckFindingWire[]): string[] => [
+  ...new Set(group.map(repairInWords).filter((text) => text !== undefined)),
+]
+
 const MOST_THEME_COLUMNS = 10
 const STATE_COLUMNS = 'disabled on active'.length
 
-const tableOf = (breaches: readonly FindingWire[], { hasColor, columns }: Surface): string[] => {
+const tableOf = (
+  breaches: readonly CheckFindingWire[],
+  { hasColor, columns }: Surface,
+): string[] => {
   const paint = painterFor(hasColor)
   const widest = Math.max(5, ...breaches.map(({ theme }) => plain(theme).length))
   const themeColumns = Math.min(MOST_THEME_COLUMNS, widest)
   const lead = (theme: string, state: string) =>
     `  ${theme.padEnd(themeColumns)}  ${state.padEnd(STATE_COLUMNS)}`
-  const rowsOf = (finding: FindingWire): string[] => {
+  const rowsOf = (finding: CheckFindingWire): string[] => {
     const themes = folded(plain(finding.theme), themeColumns)
     const foreground = plain(finding.rendered.foreground)
     const background = plain(finding.rendered.background)
@@ -65,7 +77,8 @@ const tableOf = (breaches: readonly FindingWire[], { hasColor, columns }: Surfac
     const heading = folded(name, columns - 2).map((line, at) =>
       paint.strong(at ? `  ${line}` : line),
     )
-    return [...heading, ...group.flatMap(rowsOf)]
+    const repairs = repairsOf(group).flatMap((text) => folded(plain(text), columns - 4))
+    return [...heading, ...group.flatMap(rowsOf), ...repairs.map((line) => `    ${line}`)]
   })
   const head =
     `${lead('Theme', 'State')}    Ratio  Required  ${hasColor ? '     ' : ''}Colours`.trimEnd()
