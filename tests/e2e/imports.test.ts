@@ -172,6 +172,21 @@ describe('a replacement', () => {
   })
 })
 
+describe('the head as files', () => {
+  it('answers each theme in each format, and the whole system, from the themes page', async () => {
+    const page = await site.open('/systems/larkhaven/themes', { as: 'engineer' })
+    const links = page.getByRole('region', { name: 'Fetch' }).getByRole('link')
+    await links.first().waitFor()
+    const names = await links.allTextContents()
+    expect(names).toContain('resolver.json')
+    for (const theme of ['light', 'dark', 'kiosk']) expect(names).toContain(`${theme}.css`)
+    for (const link of await links.all()) {
+      const answer = await page.request.get((await link.getAttribute('href')) ?? '')
+      expect(answer.status(), (await link.textContent()) ?? '').toBe(200)
+    }
+  })
+})
+
 describe('a file of 20,000 tokens', () => {
   const many = (): object => {
     const groups: Record<string, Record<string, object>> = {}
