@@ -63,7 +63,7 @@ export function PairRow({
         </Link>
       </td>
       <td className="@max-[1060px]:hidden">{cellOf(pair.foreground, findings)}</td>
-      <td className="text-ink-soft @max-[820px]:hidden">
+      <td className="pl-8! text-ink-soft @max-[820px]:hidden">
         {pair.relation === 'inside' ? 'inside' : 'with'}
       </td>
       <td>

@@ -90,8 +90,11 @@ function ThemeRow({
           </Link>
           <span className="min-w-0 truncate text-ink-soft @max-[460px]:hidden">{theme.name}</span>
         </span>
-        <span className="-mt-4 mb-6 hidden pr-10 text-13 text-ink-soft @max-[700px]:block">
-          {words}
+        <span
+          className="-mt-4 mb-6 hidden pr-10 text-13 text-ink-soft @max-[700px]:block"
+          style={{ paddingLeft: depth * 18 }}
+        >
+          Its colours {words}
         </span>
       </td>
       <td>
