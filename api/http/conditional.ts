@@ -5,12 +5,21 @@ const STRONG = /(?:W\/)?"[\x21\x23-\x7e\x80-\uffff]*"/g
 
 const tagsIn = (field: string): string[] => field.match(STRONG) ?? []
 
-/** An `If-Match` field: strong comparison, a list of tags or `*`. @see https://www.rfc-editor.org/rfc/rfc9110#section-13.1.1 */
-export function readIfMatch(field: string | undefined): IfMatch | undefined {
+/**
+ * An `If-Match` field: strong comparison, a list of tags or `*`. An `If-None-Match` beside it holds as well, and is
+ * evaluated after it.
+ * @see https://www.rfc-editor.org/rfc/rfc9110#section-13.2.2
+ */
+export function readIfMatch(
+  field: string | undefined,
+  ifNoneMatch: string | undefined,
+): IfMatch | undefined {
   if (field === undefined) return undefined
-  if (field.trim() === '*') return { matches: () => true }
+  const isAny = field.trim() === '*'
   const tags = tagsIn(field).filter((tag) => !tag.startsWith('W/'))
-  return { matches: (etag) => tags.includes(etag) }
+  return {
+    matches: (etag) => (isAny || tags.includes(etag)) && !isUnmodified(ifNoneMatch, etag),
+  }
 }
 
 /**

@@ -67,9 +67,10 @@ export async function readValidBody(
 
 /** @throws {AppError} `precondition-required` */
 export function readPrecondition(contract: Contract, request: Request) {
-  const ifMatch = readIfMatch(request.headers['if-match'])
+  const ifNoneMatch = request.headers['if-none-match']
+  const ifMatch = readIfMatch(request.headers['if-match'], ifNoneMatch)
   const canCreate = contract.precondition === 'create'
-  const createOnly = canCreate && request.headers['if-none-match']?.trim() === '*'
+  const createOnly = canCreate && ifMatch === undefined && ifNoneMatch?.trim() === '*'
   if (contract.precondition !== undefined && ifMatch === undefined && !createOnly) {
     throw preconditionMissing(canCreate)
   }
