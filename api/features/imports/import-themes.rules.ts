@@ -113,21 +113,25 @@ const titleOf = (key: string) => key.charAt(0).toUpperCase() + key.slice(1).repl
 
 /**
  * A file of another making gives each theme's colours and knows no rules: what it leaves out of a theme is as in
- * the base, and ground and ink are set in each theme itself.
+ * the base, and ground and ink are set in each theme itself, also where the system has them and the file has not.
  */
 export function filledThemes(
   tokens: readonly GovernedToken[],
   themes: readonly GovernedTheme[],
-  given: Pick<ThemesOf, 'file' | 'identities'>,
+  given: Pick<ThemesOf, 'file' | 'identities'> & { readonly put: readonly GovernedToken[] },
 ): readonly GovernedToken[] {
   const { file, identities } = given
   if (file.isWhole || file.themes === undefined) return tokens
+  const spelt = new Set(given.put.map(({ id }) => id))
   const spoken = new Set(identities.themes.values())
   const derived = themes.filter((theme, at) => at > 0 && spoken.has(theme.id))
   return tokens.map((token) => {
     const missing = derived.filter(({ id, ground, ink, rule }) => {
-      const isNeeded = ground === token.id || ink === token.id || rule.kind !== 'keep'
-      return isNeeded && token.values[id]?.rest === undefined
+      const isRole = ground === token.id || ink === token.id
+      return (
+        (isRole || (spelt.has(token.id) && rule.kind !== 'keep')) &&
+        token.values[id]?.rest === undefined
+      )
     })
     if (missing.length === 0) return token
     const filled = missing.map(({ id }) => [id, { ...token.values[id], rest: token.value }])

@@ -62,14 +62,15 @@ function afterImport(
   const stand = new Set(themes.map(({ id }) => id))
   const goneThemes = new Set(model.themes.flatMap(({ id }) => (stand.has(id) ? [] : [id])))
   const items = { ...given, themes, goneThemes }
-  const put = filledThemes(tokensOf(given), themes, given)
+  const put = tokensOf(given)
+  const filled = filledThemes(merged(model, put, keeps), themes, { ...given, put })
   const distinctSets = distinctSetsOf(items)
   const remainder = remainderAfter(model.remainder, file, { keeps, names: reading.names })
   return {
     settings: file.settings ?? model.settings,
     ...rulesOf(items),
     themes,
-    tokens: merged(model, put, keeps).map((token) => tokenWithoutThemes(token, goneThemes)),
+    tokens: filled.map((token) => tokenWithoutThemes(token, goneThemes)),
     pairs: pairsOf(items),
     ...(distinctSets.length > 0 ? { distinctSets } : {}),
     ...(remainder === undefined ? {} : { remainder }),

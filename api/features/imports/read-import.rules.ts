@@ -117,19 +117,22 @@ function readForeignResolver(
   const faults = distinct([
     ...readings.flatMap((reading) => reading.faults),
     ...themeFaults(themes ?? []),
-    ...lackingInBase(readings),
   ])
   const [base] = readings
   if (faults.length > 0 || base === undefined) return { ok: false, faults }
   const names = new Set(base.tokens.map(({ name }) => name))
+  const lacking = lackingInBase(readings)
   return {
     ok: true,
     file: {
       isWhole: false,
-      tokens: withThemeValues(readings, themes ?? []),
+      tokens: withThemeValues([...base.tokens, ...lacking.tokens], {
+        readings,
+        themes: themes ?? [],
+      }),
       ...(themes ? { themes } : {}),
       remainder: remainderOf(base.document, (name) => names.has(name)),
-      notes: [...base.notes, ...others.map(leftOut)],
+      notes: [...base.notes, ...lacking.notes, ...others.map(leftOut)],
       derivedAgain: base.derivedAgain,
     },
   }
@@ -169,28 +172,35 @@ interface ContextReading extends TokensRead {
   readonly context: string | undefined
 }
 
-function lackingInBase([base, ...others]: readonly ContextReading[]): Fault[] {
-  if (base === undefined || base.faults.length > 0) return []
-  const names = new Set(base.tokens.map(({ name }) => name))
-  return others.flatMap(({ context, tokens }) =>
-    tokens
-      .filter(({ name }) => !names.has(name))
-      .map(({ name, pointer }) => ({
-        pointer,
-        detail: `${name} has a value in ${context} and none in ${base.context}, the base`,
-      })),
-  )
+/** A token has a value in every theme: where the base has none, it is as in the first context that has one. */
+function lackingInBase([base, ...others]: readonly ContextReading[]) {
+  const names = new Set(base?.tokens.map(({ name }) => name))
+  const tokens: FileToken[] = []
+  const notes: ImportNoteWire[] = []
+  for (const { context, tokens: there } of others) {
+    for (const token of there) {
+      const { name, pointer } = token
+      if (names.has(name)) continue
+      names.add(name)
+      tokens.push(token)
+      const detail = `${name} has no value in ${base?.context}, the base: there it is as in ${context}`
+      notes.push({ kind: 'converted', pointer, detail, token: name })
+    }
+  }
+  return { tokens, notes }
 }
 
 /** A theme sets what differs from the base. */
 function withThemeValues(
-  [base, ...others]: readonly ContextReading[],
-  [, ...themes]: readonly FileTheme[],
+  tokens: readonly FileToken[],
+  given: { readonly readings: readonly ContextReading[]; readonly themes: readonly FileTheme[] },
 ): FileToken[] {
+  const [, ...others] = given.readings
+  const [, ...themes] = given.themes
   const byTheme = others.map(
-    ({ tokens }) => new Map(tokens.map((token) => [token.name, token.value])),
+    (context) => new Map(context.tokens.map((token) => [token.name, token.value])),
   )
-  return (base?.tokens ?? []).map((token) => {
+  return tokens.map((token) => {
     const values: Record<string, FileValues> = {}
     themes.forEach(({ key }, at) => {
       const value = byTheme[at]?.get(token.name)

@@ -16,11 +16,17 @@ let system: SampleSystem
 beforeAll(async () => {
   test = await createTestApp()
   system = await createSampleSystem(test)
-  // A file of another making names neither ground nor ink: its themes stand on these.
   await test.createSystem('published')
+  await test.createSystem('spanned')
+  for (const [name, value] of Object.entries(SPAN)) {
+    await system.maintainer.post(`${SPANNED}/tokens`).send({ name, value }).expect(201)
+  }
 })
 afterAll(() => test.close())
 
+/** A file of another making names neither ground nor ink: its themes stand on these. */
+const SPAN = { paper: '#ffffff', ink: '#000000' }
+const SPANNED = '/v1/systems/spanned'
 const EMPTY = '/v1/systems/published'
 const dryRun = (url: string, document: object, query = '') =>
   system.maintainer.post(`${url}/imports?dryRun=true${query}`).send(document)
@@ -39,16 +45,13 @@ it.each(tokenFiles)('answers $file: $about', async ({ document }) => {
 })
 
 it.each(valid.cases.filter(({ file }) => file.endsWith('.resolver.json')))(
-  'answers $file: $about',
+  'answers $file on a ground and an ink that are named beside it: $about',
   async ({ document }) => {
-    const { status, body } = await dryRun(EMPTY, document)
-    // Sound as a file; what it lacks to be a system is said at its contexts, and nowhere else.
-    if (status === 200) return expect(body.changes.length).toBeGreaterThan(0)
-    expect(status).toBe(422)
-    for (const { pointer, detail } of body.errors) {
-      expect(pointer).toMatch(/^\/modifiers\/|^\/resolutionOrder\//)
-      expect(detail).toMatch(/query parameter|the base|the default does/)
-    }
+    const { body } = await dryRun(SPANNED, document, '&ground=paper&ink=ink').expect(200)
+    const { themes, tokens } = body.counts
+    expect(themes.added).toBeGreaterThan(1)
+    expect(tokens).toMatchObject({ removed: 0 })
+    expect(tokens.added).toBeGreaterThan(0)
   },
 )
 
