@@ -113,6 +113,8 @@ const detailOf = (issue: Issue, value: unknown): string => {
     return `Expected ${issue.values.map((one) => JSON.stringify(one)).join(' or ')}`
   }
   if (issue.code === 'too_small' || issue.code === 'too_big') return boundOf(issue)
+  if (issue.message === 'Invalid URL')
+    return 'Expected an absolute URL, such as https://ci.example/1'
   return issue.message
 }
 

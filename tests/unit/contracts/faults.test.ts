@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type * as z from 'zod'
+import { createCheck } from '#shared/contracts/checks.contract.ts'
 import { mixColor, rampColor } from '#shared/contracts/colors.contract.ts'
 import { createDistinctSet } from '#shared/contracts/distinct-sets.contract.ts'
 import { faultsOf } from '#shared/contracts/faults.ts'
@@ -50,6 +51,9 @@ describe('a text of another form', () => {
       '/values/A b Expected lower-case letters, digits and single hyphens',
       '/deprecated/sunset Expected a day, such as 2026-11-24',
     ])
+    expect(faultsIn(createCheck.body, { source: { pipelineUrl: 'run 7' } })).toContain(
+      '/source/pipelineUrl Expected an absolute URL, such as https://ci.example/1',
+    )
     const hex = { colorSpace: 'srgb', components: [0, 0, 0], hex: 'red' }
     expect(faultsIn(dtcgColorSchema, hex)).toEqual(['/hex Expected # and six hexadecimal digits'])
   })
