@@ -44,7 +44,7 @@ export function Component() {
   return (
     <>
       <title>{`New pair of ${system} · Dyewright`}</title>
-      <h2 className="pt-18 pb-12 text-28 font-semibold">A new pair</h2>
+      <h2 className="pt-18 pb-12 text-16 font-semibold">A new pair</h2>
       <DeclareForm system={system} edit={edit} />
       <div className="grid gap-x-44 full:grid-cols-2">
         <EffectOnVerdicts tried={edit.tried} names={names} />

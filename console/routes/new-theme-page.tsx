@@ -69,7 +69,7 @@ function NewTheme({ system, parent }: { system: string; parent: ThemeWire }) {
   const names = useModelNames(system)
   return (
     <>
-      <h2 className="pt-18 pb-12 text-28 font-semibold">A new theme</h2>
+      <h2 className="pt-18 pb-12 text-16 font-semibold">A new theme</h2>
       <NewThemeForm system={system} theme={edit.drafted} edit={edit} onKey={setKey} />
       <div className="grid gap-x-44 full:grid-cols-2">
         <EffectOnVerdicts
