@@ -1,5 +1,5 @@
-import { describe, expect, it } from 'vitest'
-import type { Finding, PairModel, SystemModel, WaiverModel } from '#shared/checks/model.ts'
+import { beforeAll, describe, expect, it } from 'vitest'
+import type { PairModel, SystemModel, WaiverModel } from '#shared/checks/model.ts'
 import { breachRatios, verdictOf } from '#shared/checks/verdict.ts'
 import { pair, system, theme, token } from './model-builder.ts'
 import { evaluate, findings } from './reading.ts'
@@ -15,16 +15,20 @@ function lightSystem(
 
 describe('waivers', () => {
   const model = lightSystem([pair('grey', 'ground')])
-  const [{ ratio }] = findings(model) as [Finding]
-  const waiver: WaiverModel = {
-    id: 'wai_1',
-    foreground: 'grey',
-    background: 'ground',
-    kind: 'text',
-    floorRatio: ratio,
-    required: 4.5,
-    endsAt: '2030-01-01T00:00:00.000Z',
-  }
+  let ratio = Number.NaN
+  let waiver: WaiverModel
+  beforeAll(() => {
+    ratio = findings(model)[0]!.ratio
+    waiver = {
+      id: 'wai_1',
+      foreground: 'grey',
+      background: 'ground',
+      kind: 'text',
+      floorRatio: ratio,
+      required: 4.5,
+      endsAt: '2030-01-01T00:00:00.000Z',
+    }
+  })
   const under = (more: Partial<WaiverModel>, of: SystemModel = model) =>
     findings(of, { waivers: [{ ...waiver, ...more }] })[0]!
 
@@ -77,7 +81,10 @@ describe('waivers', () => {
 describe('newOnly', () => {
   const at = (text: string) =>
     lightSystem([pair('grey', 'ground')], { tokens: [token('grey', text)] })
-  const known = breachRatios(verdictOf(evaluate(at('#8a8a8a'))))
+  let known: ReadonlyMap<string, number>
+  beforeAll(() => {
+    known = breachRatios(verdictOf(evaluate(at('#8a8a8a'))))
+  })
 
   it('answers known for a breach that was one before and is not lower now', () => {
     const verdict = verdictOf(evaluate(at('#888888')), { known })
