@@ -97,7 +97,7 @@ export const checkFindingSchema = findingSchema
   .extend({
     nearest: placedColorSchema.optional().meta({
       description:
-        'The nearest colour with which it passes, and all else that hangs on that token; those of one check pass together',
+        'The nearest colour with which it passes, and all else that hangs on that token, distinct sets not asked; those of one check pass together',
     }),
     unmended: z
       .strictObject({

@@ -100,7 +100,8 @@ export function createRepairService({ heads, jobs, lanes }: RepairDeps) {
       candidate: Evaluation,
       ask: Omit<MendAsk, 'locked' | 'budget' | 'onSpent'>,
     ): Promise<ReadonlyMap<string, Suggestion>> {
-      const { model } = candidate.resolved
+      // What passes a check: distinct sets gate nothing, and the candidate may have moved them itself.
+      const model = { ...candidate.resolved.model, distinctSets: [] }
       const options = { ...ask, locked: lockedIn(head), budget: MEND_BUDGET }
       return presentMended(
         candidate,

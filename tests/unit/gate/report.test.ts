@@ -3,7 +3,11 @@ import { createCheckCall, isCheck } from '#scripts/gate/check-call.ts'
 import { hasColor } from '#scripts/gate/paint.ts'
 import { jsonOf, reportOf } from '#scripts/gate/report.ts'
 import { folded, plain } from '#scripts/gate/terminal-text.ts'
-import { type CheckWire, createCheck } from '#shared/contracts/checks.contract.ts'
+import {
+  type CheckFindingWire,
+  type CheckWire,
+  createCheck,
+} from '#shared/contracts/checks.contract.ts'
 import type { FindingWire } from '#shared/contracts/findings.ts'
 
 const finding = (over: Partial<FindingWire> = {}): FindingWire => ({
@@ -36,6 +40,7 @@ const check = (findings: FindingWire[], over: Partial<CheckWire> = {}): CheckWir
   ...over,
 })
 const monochrome = { hasColor: false, columns: 80 }
+const wide = { hasColor: false, columns: 200 }
 
 describe('the report', () => {
   it('answers pair, theme, state, ratio, required, and both colours as text', () => {
@@ -49,6 +54,42 @@ describe('the report', () => {
     expect(text).toContain('Engine 1.0.0, css-color-4, wcag-2.2.')
     expect(text).toContain('Contrast is one criterion; this is no verdict of conformity.')
     expect(text).not.toContain('\u001b')
+  })
+
+  it('answers the nearest colour that passes once a pair, and why there is none', () => {
+    const nearest = {
+      token: 'action.board.fill',
+      theme: 'dark',
+      state: 'hover',
+      source: false,
+      color: { colorSpace: 'oklch', components: [0.5512, 0.1241, 243], alpha: 0.9 },
+      hex: '#1478b6e6',
+      deltaEOk: 0.03,
+    } as const
+    const said = (over: Partial<CheckFindingWire>) =>
+      reportOf(check([finding(over), finding({ ...over, state: 'focus/rest' })]), 'x', wide)
+        .split('\n')
+        .filter((line) => line.includes('passes: ') || line.includes('nothing passes'))
+        .map((line) => line.trim())
+    const color = 'oklch(0.5512 0.1241 243 / 0.9) #1478b6e6 for action.board.fill'
+    expect(said({ nearest })).toEqual([`the nearest that passes: ${color} in dark, hover`])
+    expect(said({ nearest: { ...nearest, source: true } })).toEqual([
+      `the nearest that passes: ${color}`,
+    ])
+    expect(said({ unmended: { reason: 'locked' } })).toEqual([
+      'nothing passes: what it hangs on is locked',
+    ])
+    const bound = { needed: 20.25, available: 11.37009 }
+    const conflict = { requirements: [], bound }
+    expect(said({ unmended: { reason: 'conflict', conflict } })).toEqual([
+      'nothing passes: the colours on its two sides have 11.3700 to each other, 20.25 is needed',
+    ])
+    expect(said({ unmended: { reason: 'conflict' } })).toEqual([
+      'nothing passes: no colour of its hue meets all it must',
+    ])
+    const unsearched = reportOf(check([finding({ unmended: { reason: 'budget' } })]), 'x', wide)
+    expect(unsearched).toContain('    the nearest that passes was not searched to the end\n')
+    expect(said({})).toEqual([])
   })
 
   it('answers the pair furthest short first', () => {
