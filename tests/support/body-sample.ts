@@ -92,6 +92,7 @@ const NAMES_TOKEN = /^(name|foreground|background|ground|ink|tokens?|backdrop|re
 const HOLDS_COLOR = /^(value|color|first|second|seed|rest|hover|active|focus|disabled)$/
 
 function sampleText({ example }: Schema, random: Random, name: string): unknown {
+  if (name === 'name' && random.chance(0.6)) return `made.${random.below(10_000)}`
   if (NAMES_TOKEN.test(name)) return random.pick(SOUND_NAMES)
   if (HOLDS_COLOR.test(name)) return random.pick(SOUND_COLORS)
   return example ?? random.pick(['light', 'dark', 'AA', 'Crew’s 💧', '2027-01-01'])

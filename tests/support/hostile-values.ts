@@ -52,7 +52,7 @@ export const HEADERS: readonly (readonly [name: string, value: string])[] = [
     (key) => ['Idempotency-Key', key] as const,
   ),
   ...['Bearer', 'Bearer x', 'Basic YTpi'].map((field) => ['Authorization', field] as const),
-  ['Cookie', 'dyewright=%00; dyewright'],
+  ['Cookie', 'dyewright=%00; other='],
   ['Origin', 'null'],
   ['Content-Encoding', 'gzip'],
   ['Range', 'bytes=-'],

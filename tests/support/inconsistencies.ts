@@ -18,8 +18,9 @@ const QUERIES: readonly (readonly [what: string, sql: string])[] = [
   ],
   [
     'a revision has no audit entry',
-    `select r.system_id from revisions r group by r.system_id
-     having count(*) > (select count(*) from audit_entries e where e.chain_id = r.system_id)`,
+    `select r.system_id, r.number from revisions r
+     where r.origin <> 'created' and not exists (select 1 from audit_entries e
+       where e.chain_id = r.system_id and json_value(e.details, '$.revision') = r.number)`,
   ],
   [
     'a breach number is missing',
