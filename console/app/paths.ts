@@ -13,6 +13,9 @@ export const paths = {
   newPair: (system: string, search = '') => `/systems/${segment(system)}/new-pair${search}`,
   pairSheet: (system: string, search = '') => `/systems/${segment(system)}/pair-sheet${search}`,
   coverage: (system: string) => `/systems/${segment(system)}/coverage`,
+  /** With the set that is opened in it, or `new`. */
+  distinctSets: (system: string, set?: string) =>
+    `/systems/${segment(system)}/distinct-sets${set === undefined ? '' : `?set=${segment(set)}`}`,
   breaches: (system: string, search = '') => `/systems/${segment(system)}/breaches${search}`,
   breach: (system: string, id: string, search = '') =>
     `/systems/${segment(system)}/breaches/${segment(id)}${search}`,

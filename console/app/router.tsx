@@ -67,6 +67,11 @@ const systemPages: RouteObject[] = [
     ErrorBoundary: PageTrouble,
   },
   {
+    path: 'distinct-sets',
+    lazy: () => import('#console/routes/distinct-sets-page.tsx'),
+    ErrorBoundary: PageTrouble,
+  },
+  {
     path: 'breaches/:id?',
     lazy: () => import('#console/routes/breaches-page.tsx'),
     ErrorBoundary: PageTrouble,

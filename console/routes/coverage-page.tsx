@@ -1,5 +1,4 @@
 import { useSuspenseQuery } from '@tanstack/react-query'
-import { useMemo } from 'react'
 import { type LoaderFunctionArgs, useParams } from 'react-router-dom'
 import { paths } from '#console/app/paths.ts'
 import { coverageQueries } from '#console/features/coverage/coverage.queries.ts'
@@ -9,11 +8,10 @@ import { writePairAddress } from '#console/features/pairs/pair-address.ts'
 import { wordsOfUse } from '#console/features/pairs/pair-words.ts'
 import { startSentence } from '#console/lib/format.ts'
 import { queryClient } from '#console/lib/query-client.ts'
-import { StripCell } from '#console/ui/strip-cell.tsx'
 import { countOf } from '#shared/checks/finding-words.ts'
 import type { CoverageWire } from '#shared/contracts/coverage.contract.ts'
 import { PairViews } from './pair-views.tsx'
-import { useStripBands } from './system-frame.tsx'
+import { useTokenCells } from './token-cells.tsx'
 
 export async function loader({ params: { system = '' } }: LoaderFunctionArgs) {
   await queryClient.ensureQueryData(coverageQueries.one(system))
@@ -24,7 +22,7 @@ export async function loader({ params: { system = '' } }: LoaderFunctionArgs) {
 export function Component() {
   const { system = '' } = useParams()
   const { data: coverage } = useSuspenseQuery(coverageQueries.one(system))
-  const cellOf = useCells(system)
+  const cellOf = useTokenCells(system)
   const { uncovered, observed } = coverage
   return (
     <>
@@ -53,22 +51,6 @@ export function Component() {
       )}
     </>
   )
-}
-
-function useCells(system: string) {
-  const { shown, bands } = useStripBands(system)
-  const byName = useMemo(() => new Map(bands.map((band) => [band.name, band])), [bands])
-  return (name: string) => {
-    const band = byName.get(name)
-    if (shown === undefined || band === undefined) return null
-    return (
-      <StripCell
-        label={`${name} in ${shown.light} and ${shown.dark}`}
-        light={{ ground: shown.grounds.light, rest: band.light }}
-        dark={{ ground: shown.grounds.dark, rest: band.dark }}
-      />
-    )
-  }
 }
 
 function uncoveredInWords({ tokens, uncovered }: CoverageWire): string {

@@ -13,6 +13,7 @@ export function PairViews({ system, children }: { system: string; children?: Rea
           { href: paths.pairs(system), text: 'Table' },
           { href: paths.pairSheet(system), text: 'Sheet' },
           { href: paths.coverage(system), text: 'Coverage' },
+          { href: paths.distinctSets(system), text: 'Distinct sets' },
         ]}
       />
       <div className="flex flex-wrap items-center gap-x-22 gap-y-4 pb-2">

@@ -136,7 +136,7 @@ const TOKENS = new Set(['import'])
 /** Pages beside which the way to an import stands. */
 const TAKING_FILES = new Set(['tokens', 'settings'])
 const BREACHES = new Set(['breaches', 'sightings'])
-const PAIRS = new Set(['pairs', 'pair-sheet', 'coverage', 'new-pair'])
+const PAIRS = new Set(['pairs', 'pair-sheet', 'coverage', 'new-pair', 'distinct-sets'])
 
 /** Whether the page stands under a place of the navigation, beside which it has a place of its own. */
 function useIsIn(places: ReadonlySet<string>): boolean {
