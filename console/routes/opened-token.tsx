@@ -2,7 +2,6 @@ import { useSuspenseQuery } from '@tanstack/react-query'
 import { type ReactNode, type Ref, useMemo, useState } from 'react'
 import { useLocation, useNavigate } from 'react-router-dom'
 import { themeQueries } from '#console/features/themes/themes.queries.ts'
-import type { ModelNames } from '#console/features/tokens/consequence-list.tsx'
 import { keptTrial } from '#console/features/tokens/kept-trial.ts'
 import { presentColor, presentText } from '#console/features/tokens/present-value.ts'
 import { ShipsTable } from '#console/features/tokens/ships-table.tsx'
@@ -12,6 +11,7 @@ import { readTrial } from '#console/features/tokens/trial.ts'
 import type { Evaluation } from '#shared/checks/evaluation.ts'
 import { findingsOf } from '#shared/checks/token-standing.ts'
 import type { TokenWire } from '#shared/contracts/tokens.contract.ts'
+import { useModelNames } from './model-names.ts'
 import { TokenMoves } from './token-moves.tsx'
 import { SaveForm } from './save-form.tsx'
 import { TitleWithCells } from './title-with-cells.tsx'
@@ -49,14 +49,7 @@ export function OpenedToken({
     () => evaluation && findingsOf(evaluation, token.id).map(({ finding }) => finding),
     [evaluation, token.id],
   )
-  const names = useMemo<ModelNames>(() => {
-    const tokenNames = new Map(tokens.map(({ id, name }) => [id, name]))
-    const themeKeys = new Map(themes.map(({ id, key }) => [id, key]))
-    return {
-      token: (id) => tokenNames.get(id) ?? id,
-      theme: (id) => themeKeys.get(id) ?? id,
-    }
-  }, [tokens, themes])
+  const names = useModelNames(system)
   const ships = themes.map(({ id, key, ground }) => ({
     id,
     key,

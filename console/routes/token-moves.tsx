@@ -1,6 +1,7 @@
 import { useMemo, useState } from 'react'
 import type { CardChip } from '#console/features/shade-card/card-cut.ts'
-import { ConsequenceList, type ModelNames } from '#console/features/tokens/consequence-list.tsx'
+import { ConsequenceList } from '#console/features/tokens/consequence-list.tsx'
+import type { ModelNames } from '#console/lib/finding-words.ts'
 import type { MovedGroups } from '#console/features/tokens/moved-lines.ts'
 import { TokenPairs } from '#console/features/tokens/token-pairs.tsx'
 import { useTokenFindings, useTried } from '#console/features/tokens/token-trial.ts'

@@ -1,5 +1,5 @@
 import { useMemo } from 'react'
-import type { EffectNames } from '#console/features/checks/effect-list.tsx'
+import type { ModelNames } from '#console/lib/finding-words.ts'
 import type { TriedEffect } from '#console/features/checks/tried-effect.ts'
 import { measuredLines } from '#console/features/pairs/measured-lines.ts'
 import { MeasuredList } from '#console/features/pairs/measured-list.tsx'
@@ -15,7 +15,7 @@ export function WouldMeasure({
 }: {
   id: string
   tried: TriedEffect
-  names: EffectNames
+  names: ModelNames
 }) {
   const evaluation = tried.kind === 'measured' ? tried.evaluation : undefined
   const findings = useMemo(

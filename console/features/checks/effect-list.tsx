@@ -1,19 +1,12 @@
-import { useState } from 'react'
-import { whereInWords } from '#console/lib/finding-words.ts'
+import { type ModelNames, whereInWords } from '#console/lib/finding-words.ts'
 import { startSentence } from '#console/lib/format.ts'
-import { WordButton } from '#console/ui/button.tsx'
+import { MovedPart } from '#console/ui/moved-part.tsx'
 import { OutcomeMark } from '#console/ui/outcome-mark.tsx'
 import { Trouble, Waiting } from '#console/ui/page-states.tsx'
 import { RatioMove } from '#console/ui/ratio-text.tsx'
 import { countInWords, countOf } from '#shared/checks/finding-words.ts'
 import { type Effect, EFFECT_PARTS, type EffectLine, passesByGroup } from './effect-lines.ts'
 import type { TriedEffect } from './tried-effect.ts'
-
-/** How names are read out of ids. */
-export interface EffectNames {
-  readonly token: (id: string) => string
-  readonly theme: (id: string) => string
-}
 
 /** What an edit would do to every verdict, before it is saved. */
 export function EffectOnVerdicts({
@@ -22,7 +15,7 @@ export function EffectOnVerdicts({
   unmoved = 'No verdict moves: every ratio stays as it is.',
 }: {
   tried: TriedEffect
-  names: EffectNames
+  names: ModelNames
   /** What to say where nothing moves. */
   unmoved?: string
 }) {
@@ -42,7 +35,7 @@ function Body({
   unmoved,
 }: {
   tried: TriedEffect
-  names: EffectNames
+  names: ModelNames
   unmoved: string
 }) {
   switch (tried.kind) {
@@ -81,7 +74,7 @@ function EffectList({
   unmoved,
 }: {
   effect: Effect
-  names: EffectNames
+  names: ModelNames
   unmoved: string
 }) {
   const { parts, exempt } = effect
@@ -93,14 +86,16 @@ function EffectList({
     <>
       <p className="mt-4">{sumInWords(effect, all)}</p>
       {EFFECT_PARTS.map((part) => (
-        <Moved
+        <MovedPart
           key={part}
           title={titleOf(effect, part)}
           lines={parts[part].lines}
-          names={names}
           isFirst={part === 'breaching'}
-          isGone={part === 'gone'}
-        />
+        >
+          {(line) => (
+            <EffectItem key={line.key} line={line} names={names} isGone={part === 'gone'} />
+          )}
+        </MovedPart>
       ))}
       {exempt > 0 && (
         <p className="mt-12 text-13">
@@ -137,55 +132,13 @@ function titleOf({ parts, goneBreaches }: Effect, part: keyof Effect['parts']): 
   }
 }
 
-const FIRST_SHOWN = 6
-
-function Moved({
-  title,
-  lines,
-  names,
-  isFirst,
-  isGone,
-}: {
-  title: string
-  lines: readonly EffectLine[]
-  names: EffectNames
-  isFirst: boolean
-  isGone: boolean
-}) {
-  const [isWhole, setWhole] = useState(false)
-  if (lines.length === 0 && !isFirst) return null
-  const shown = isWhole ? lines.slice(0, MOST_LINES) : lines.slice(0, FIRST_SHOWN)
-  return (
-    <section className="mt-16">
-      <h3
-        className={`pb-6 text-13 font-semibold ${isFirst ? 'double-line' : 'border-b border-ink'}`}
-      >
-        {title}
-      </h3>
-      <ul>
-        {shown.map((line) => (
-          <EffectItem key={line.key} line={line} names={names} isGone={isGone} />
-        ))}
-      </ul>
-      {!isWhole && shown.length < lines.length && (
-        <WordButton className="mt-10" onClick={() => setWhole(true)}>
-          {lines.length > MOST_LINES ? `The first ${MOST_LINES}` : 'All'} of {lines.length} lines
-        </WordButton>
-      )}
-    </section>
-  )
-}
-
-/** What no one reads to its end need not be drawn to it. */
-const MOST_LINES = 400
-
 function EffectItem({
   line,
   names,
   isGone,
 }: {
   line: EffectLine
-  names: EffectNames
+  names: ModelNames
   isGone: boolean
 }) {
   const { required, requiredBefore, outcome } = line

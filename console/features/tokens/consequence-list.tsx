@@ -1,92 +1,53 @@
 import { countInWords } from '#shared/checks/finding-words.ts'
-import { useState } from 'react'
-import { whereInWords } from '#console/lib/finding-words.ts'
+import { type ModelNames, whereInWords } from '#console/lib/finding-words.ts'
 import { startSentence } from '#console/lib/format.ts'
-import { WordButton } from '#console/ui/button.tsx'
+import { MovedPart } from '#console/ui/moved-part.tsx'
 import { OutcomeMark } from '#console/ui/outcome-mark.tsx'
 import type { MovedGroups, MovedLine } from './moved-lines.ts'
 import { JudgedRatio } from './judged-ratio.tsx'
 import { RelationPhrase } from './relation-phrase.tsx'
 
-/** How names are read out of ids. */
-export interface ModelNames {
-  readonly token: (id: string) => string
-  readonly theme: (id: string) => string
-}
-
 /** Every pair, state and theme that the trial moves, newly breaching first. */
 export function ConsequenceList({ moved, names }: { moved: MovedGroups; names: ModelNames }) {
   const { counts } = moved
+  const itemOf = (line: MovedLine) => <MovedItem key={line.key} line={line} names={names} />
   const all = counts.breaching + counts.passing + counts.stillBreaching + counts.stillPassing
   if (all + counts.exempt === 0) {
     return <p className="mt-8 text-ink-soft">Nothing moves: every ratio stays as it is.</p>
   }
   return (
     <>
-      <Moved
+      <MovedPart
         title={`${counts.breaching === 0 ? 'None' : startSentence(countInWords(counts.breaching))} newly breaching`}
         lines={moved.breaching}
-        names={names}
         isFirst
-      />
-      <Moved
+      >
+        {itemOf}
+      </MovedPart>
+      <MovedPart
         title={`${startSentence(countInWords(counts.passing))} newly passing`}
         lines={moved.passing}
-        names={names}
-      />
-      <Moved
+      >
+        {itemOf}
+      </MovedPart>
+      <MovedPart
         title={`${startSentence(countInWords(counts.stillBreaching))} still breaching`}
         lines={moved.stillBreaching}
-        names={names}
-      />
-      <Moved
+      >
+        {itemOf}
+      </MovedPart>
+      <MovedPart
         title={`${startSentence(countInWords(counts.stillPassing))} still passing, nearest to their line first`}
         lines={moved.stillPassing}
-        names={names}
-      />
+      >
+        {itemOf}
+      </MovedPart>
       {counts.exempt > 0 && (
         <p className="mt-12 text-end text-13">
           <OutcomeMark kind="exempt">{counts.exempt} exempt</OutcomeMark>
         </p>
       )}
     </>
-  )
-}
-
-const FIRST_SHOWN = 7
-
-function Moved({
-  title,
-  lines,
-  names,
-  isFirst = false,
-}: {
-  title: string
-  lines: readonly MovedLine[]
-  names: ModelNames
-  isFirst?: boolean
-}) {
-  const [isWhole, setWhole] = useState(false)
-  if (lines.length === 0 && !isFirst) return null
-  const shown = isWhole ? lines : lines.slice(0, FIRST_SHOWN)
-  return (
-    <section className="mt-16">
-      <h3
-        className={`pb-6 text-13 font-semibold ${isFirst ? 'double-line' : 'border-b border-ink'}`}
-      >
-        {title}
-      </h3>
-      <ul>
-        {shown.map((line) => (
-          <MovedItem key={line.key} line={line} names={names} />
-        ))}
-      </ul>
-      {shown.length < lines.length && (
-        <WordButton className="mt-10" onClick={() => setWhole(true)}>
-          All {lines.length} lines
-        </WordButton>
-      )}
-    </section>
   )
 }
 

@@ -1,6 +1,6 @@
 import { whereInWords } from '#console/lib/finding-words.ts'
 import { PairSample } from '#console/ui/pair-sample.tsx'
-import type { ModelNames } from './consequence-list.tsx'
+import type { ModelNames } from '#console/lib/finding-words.ts'
 import { JudgedRatio } from './judged-ratio.tsx'
 import type { PairStanding } from './pair-standings.ts'
 import { RelationPhrase } from './relation-phrase.tsx'
