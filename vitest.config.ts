@@ -10,7 +10,7 @@ export default defineConfig({
   test: {
     reporters: ['default', './tests/support/closing-line-reporter.ts'],
     projects: [
-      { test: { name: 'unit', include: ['tests/unit/**/*.test.{ts,tsx}'] } },
+      { test: { name: 'unit', include: ['tests/unit/**/*.test.{ts,tsx}'], testTimeout: 60_000 } },
       {
         test: {
           name: 'conformance',
