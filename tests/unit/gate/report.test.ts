@@ -8,9 +8,8 @@ import {
   type CheckWire,
   createCheck,
 } from '#shared/contracts/checks.contract.ts'
-import type { FindingWire } from '#shared/contracts/findings.ts'
 
-const finding = (over: Partial<FindingWire> = {}): FindingWire => ({
+const finding = (over: Partial<CheckFindingWire> = {}): CheckFindingWire => ({
   foreground: 'action.board.text',
   background: 'action.board.fill',
   theme: 'light',
@@ -25,7 +24,7 @@ const finding = (over: Partial<FindingWire> = {}): FindingWire => ({
   fingerprint: 'f',
   ...over,
 })
-const check = (findings: FindingWire[], over: Partial<CheckWire> = {}): CheckWire => ({
+const check = (findings: CheckFindingWire[], over: Partial<CheckWire> = {}): CheckWire => ({
   id: 'chk_1',
   number: 4413,
   verdict: findings.length > 0 ? 'fail' : 'pass',
@@ -57,7 +56,7 @@ describe('the report', () => {
   })
 
   it('answers the nearest colour that passes once a pair, and why there is none', () => {
-    const nearest = {
+    const nearest: NonNullable<CheckFindingWire['nearest']> = {
       token: 'action.board.fill',
       theme: 'dark',
       state: 'hover',
@@ -65,7 +64,7 @@ describe('the report', () => {
       color: { colorSpace: 'oklch', components: [0.5512, 0.1241, 243], alpha: 0.9 },
       hex: '#1478b6e6',
       deltaEOk: 0.03,
-    } as const
+    }
     const said = (over: Partial<CheckFindingWire>) =>
       reportOf(check([finding(over), finding({ ...over, state: 'focus/rest' })]), 'x', wide)
         .split('\n')
