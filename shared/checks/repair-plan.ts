@@ -206,7 +206,11 @@ function createConflictSearch(run: Run) {
   const known = new Map<string, RequirementConflict | undefined>()
   return (place: ColorPlace): RequirementConflict | undefined => {
     const key = placeKey(place)
-    if (known.has(key) || run.left <= 0) return known.get(key)
+    if (known.has(key)) return known.get(key)
+    if (run.left <= 0) {
+      run.isStopped = true
+      return undefined
+    }
     const probe = createColorProbe(run.evaluation, place, { waivers: run.waivers })
     const { conflict, evaluations } = requirementConflict(run.evaluation, probe, {
       isAsked: isGatingRow,
@@ -214,6 +218,8 @@ function createConflictSearch(run: Run) {
     })
     run.left -= evaluations
     run.spent += evaluations
+    // None: the samples cost more than is left.
+    run.isStopped ||= evaluations === 0
     run.onSpent(run.spent)
     known.set(key, conflict)
     return conflict
@@ -236,7 +242,7 @@ function leftBreach(
   )
   const conflict = reaching && conflictAt(reaching)
   if (conflict !== undefined) return { finding, reason: 'conflict', conflict }
-  return { finding, reason: run.isStopped || run.left <= 0 ? 'budget' : 'conflict' }
+  return { finding, reason: run.isStopped ? 'budget' : 'conflict' }
 }
 
 function modelWith(evaluation: Evaluation, edits: readonly PlacedColor[]): SystemModel {
@@ -256,6 +262,8 @@ export function repairPlan(evaluation: Evaluation, options: RepairPlanOptions = 
   const breachesBefore = gatingBreaches(run).length
   const edits = withoutNeedless(run, evaluation, collectEdits(run))
   const checked = checkSystem(modelWith(evaluation, edits))
+  // Each edit was read when it was made.
+  /* v8 ignore next -- @preserve */
   if (!checked.ok) throw new TypeError('A plan makes a system that cannot be read')
   run.evaluation = checked.evaluation
   const after = verdictOf(checked.evaluation, { waivers, include: 'not-pass' })

@@ -4,6 +4,7 @@ import type { PairModel, SystemModel, TokenModel } from '#shared/checks/model.ts
 import { isGatingRow, nearestAt } from '#shared/checks/nearest-at.ts'
 import { nearestColor } from '#shared/checks/nearest-color.ts'
 import { nearestPassing, withColors } from '#shared/checks/nearest-passing.ts'
+import { repairPlan } from '#shared/checks/repair-plan.ts'
 import { requirementConflict } from '#shared/checks/requirement-conflict.ts'
 import { verdictOf } from '#shared/checks/verdict.ts'
 import { parseColor } from '#shared/color/parse-color.ts'
@@ -117,6 +118,43 @@ describe('a conflict of requirements', () => {
     expect(requirementConflict(evaluation, probe, { ...asked, budget: 10 })).toEqual({
       evaluations: 0,
     })
+  })
+})
+
+describe('a repair plan', () => {
+  const tokens = (count: number) => [
+    token('label', '#ffffff'),
+    token('page', '#3a3a3a'),
+    ...Array.from({ length: count }, (_, at) => token(`fill${at}`, '#777777')),
+  ]
+  const locked = new Set(['label', 'page'])
+  const pairs = (count: number) =>
+    Array.from({ length: count }, (_, at) => [
+      pair('label', `fill${at}`),
+      pair(`fill${at}`, 'page'),
+    ]).flat()
+
+  it('answers a part of what cannot hold together, for each that moves alone', () => {
+    const distinctSets = [{ id: 'd', name: 'd', tokens: ['fill0', 'ink'] }]
+    const model = system({ themes: light, tokens: tokens(2), pairs: pairs(2) })
+    const plan = repairPlan(evaluate({ ...model, distinctSets }), { locked })
+    expect(plan.breachesBefore).toBe(4)
+    expect(plan.edits.map(({ place, mends }) => [place.token, mends.length])).toEqual([
+      ['fill0', 1],
+      ['fill1', 1],
+    ])
+    expect(plan.left.map(({ reason }) => reason)).toEqual(['conflict', 'conflict'])
+    expect(plan.isStopped).toBe(false)
+  })
+
+  it('answers a stop where what is left of the budget does not tell what conflicts', () => {
+    const model = system({ themes: light, tokens: tokens(1), pairs: pairs(1) })
+    const whole = repairPlan(evaluate(model), { locked })
+    expect(whole.left[0]).toMatchObject({ reason: 'conflict', conflict: expect.anything() })
+    const less = repairPlan(evaluate(model), { locked, budget: whole.evaluations - 1 })
+    expect(less).toMatchObject({ isStopped: true, left: [{ reason: 'budget' }] })
+    expect(less.left[0]).not.toHaveProperty('conflict')
+    expect(less.evaluations).toBeLessThan(whole.evaluations)
   })
 })
 
