@@ -4,7 +4,7 @@ import { defineConfig } from 'vitest/config'
 export default defineConfig({
   test: {
     include: [
-      'tests/unit/{api,checks,color,demo,formats}/**/*.test.ts',
+      'tests/unit/{api,checks,color,demo,formats,gate}/**/*.test.ts',
       'tests/conformance/*.test.ts',
     ],
     exclude: ['tests/conformance/{boundaries,openapi}.test.ts'],

@@ -161,7 +161,7 @@ function drawNearer(run: NearestRun, start: Oklch): void {
     const { l, c } = run.best!.color
     for (const across of [-1, 0, 1]) {
       for (const down of isGrey ? [0] : [-1, 0, 1]) {
-        const lightness = (l ?? 0) + across * step
+        const lightness = l! + across * step
         if (run.isSpent || lightness < 0 || lightness > 1) continue
         run.try(run.colorAt(lightness, Math.max(0, (c ?? 0) + down * step)))
       }

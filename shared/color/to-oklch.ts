@@ -90,7 +90,7 @@ function withinLightness(color: Oklch): OklchReading {
 }
 
 function isPowerlessLch(space: ColorSpace, chroma: number | null): boolean {
-  return space === 'lch' && (chroma ?? 0) <= POWERLESS_LCH_CHROMA
+  return space === 'lch' && chroma !== null && chroma <= POWERLESS_LCH_CHROMA
 }
 
 /** A colour of any space as the library takes it; what the library decodes otherwise is brought to XYZ. */

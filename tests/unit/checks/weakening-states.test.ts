@@ -102,6 +102,18 @@ describe('states of tokens', () => {
     expect(judge(floored, edits).said).toEqual(['states-changed states'])
   })
 
+  it('answers a background’s state that a link is measured in no longer', () => {
+    const model = system({
+      tokens: [token('link', '#2244aa'), token('row', '#dddddd', { states: ['hover'] })],
+      pairs: [pair('link', 'row', { use: 'link-in-text' })],
+    })
+    const put = [token('row', '#dddddd', { states: ['focus'] })]
+    const { found } = judge(model, { tokens: { put } })
+    expect(found.map(({ detail }) => detail)).toEqual([
+      'With the states of row, link on row in hover is measured no longer',
+    ])
+  })
+
   it('answers five pairs that are measured no longer, and how many more there are', () => {
     const grounds = Array.from({ length: 7 }, (_, at) => token(`g${at}`, '#ffffff'))
     const model = system({

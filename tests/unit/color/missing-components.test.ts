@@ -5,7 +5,7 @@ import type { Oklch } from '#shared/color/oklch.ts'
 import { parseColor } from '#shared/color/parse-color.ts'
 import { rampByRatio } from '#shared/color/ramp.ts'
 import { readoutsOf } from '#shared/color/readouts.ts'
-import type { SpacedColor } from '#shared/color/to-oklch.ts'
+import { oklchOf, type SpacedColor } from '#shared/color/to-oklch.ts'
 
 // CSS Color 4, 4.4: a missing component counts as 0 wherever a value is needed.
 const MISSING: Oklch = { l: null, c: null, h: null, alpha: 1 }
@@ -43,6 +43,12 @@ describe('a missing component', () => {
     expect(color.c).toBeNull()
     expect(ratio).toBeGreaterThanOrEqual(4.5)
     expect(new Set([rendered.r, rendered.g, rendered.b]).size).toBe(1)
+  })
+
+  it('answers a lightness that conversions took a hair outside 0 to 1 as 0 and 1', () => {
+    const at = (l: number) => oklchOf({ space: 'oklch', components: [l, 0, null], alpha: 1 })
+    expect([at(-0.00001), at(1.00001)]).toMatchObject([{ color: { l: 0 } }, { color: { l: 1 } }])
+    expect([at(-0.00002).ok, at(1.00002).ok]).toEqual([false, false])
   })
 
   it('answers lab, lch, hsl and hwb with none as with 0', () => {
