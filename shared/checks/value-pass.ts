@@ -8,7 +8,7 @@ import { edgesOf, type ValuePlace } from './value-edges.ts'
 import { planValue, type ValuePlan } from './value-plan.ts'
 
 /** Aliases followed one after another, at most. */
-const ALIAS_LIMIT = 32
+export const ALIAS_LIMIT = 32
 
 const UNSEEN = 0
 const OPEN = 1

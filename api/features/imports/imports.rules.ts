@@ -11,6 +11,7 @@ import type { ImportWire } from '#shared/contracts/import-outcome.ts'
 import type { Fault, ProblemCode } from '#shared/contracts/problems.ts'
 import type { Reading } from '#shared/contracts/wire-values.ts'
 import { canonicalJson } from '#shared/formats/canonical-json.ts'
+import { aliasesTooDeep } from './alias-depth.rules.ts'
 import type { ImportFile } from './import-file.ts'
 import { distinctSetsOf, pairsOf, rulesOf, usesLeft } from './import-items.rules.ts'
 import { type Identities, identify, type ItemIds } from './import-names.rules.ts'
@@ -37,10 +38,14 @@ export function decideImport(
   const reading: Reading = { names: identities.names, faults: [...identities.faults] }
   const after = afterImport(index, file, { identities, reading, options })
   if (reading.faults.length > 0) return refuseFaults(reading.faults)
+  const pointerOf = pointersIn(file, identities)
   const refusal =
-    exemptRefusal(index, after, options) ?? locked(index, after) ?? used(index, after, identities)
+    deepRefusal(after, pointerOf) ??
+    exemptRefusal(index, after, options) ??
+    locked(index, after) ??
+    used(index, after, identities)
   if (refusal) return refusal
-  return { ok: true, edits: editsTo(index.model, after), pointerOf: pointersIn(file, identities) }
+  return { ok: true, edits: editsTo(index.model, after), pointerOf }
 }
 
 interface Importing {
@@ -95,14 +100,27 @@ function merged(
 /** Names of a file are ids from here on, so that a rename moves nothing. */
 function remainderAfter(
   standing: string | undefined,
-  { remainder: { document, tokens } }: ImportFile,
+  { remainder }: ImportFile,
   { keeps, names }: { readonly keeps: boolean; readonly names: Reading['names'] },
 ): string | undefined {
-  const byId = Object.entries(tokens).map(([name, rest]) => [names.tokenId(name) ?? name, rest])
-  const own = { document, tokens: Object.fromEntries(byId) }
+  const byId = Object.entries(remainder.tokens).map(([name, rest]) => [
+    names.tokenId(name) ?? name,
+    rest,
+  ])
+  const own = { ...remainder, tokens: Object.fromEntries(byId) }
   const next = joinedRemainder(readRemainder(keeps ? standing : undefined), own)
   const isNew = canonicalJson(readRemainder(next)) !== canonicalJson(readRemainder(standing))
   return isNew ? next : standing
+}
+
+/** A theme resolves every token, and so counts its aliases; before there is one nothing does. */
+function deepRefusal({ themes, tokens }: GovernedSystem, pointerOf: PointerOf) {
+  if (themes.length > 0) return undefined
+  const faults = aliasesTooDeep(tokens).map((fault): Fault => {
+    const pointer = pointerOf(fault)
+    return { ...(pointer === undefined ? {} : { pointer }), detail: fault.detail, code: fault.code }
+  })
+  return refuseEach('system-unresolvable', faults)
 }
 
 function exemptRefusal(index: SystemIndex, after: GovernedSystem, { exempts }: ImportOptions) {
@@ -182,10 +200,12 @@ function itemEdits<Item extends { readonly id: string }>(
 
 const isSame = (a: unknown, b: unknown): boolean => a === b || canonicalJson(a) === canonicalJson(b)
 
-function pointersIn(file: ImportFile, { tokens, themes }: Identities) {
+type PointerOf = (fault: ModelFault) => string | undefined
+
+function pointersIn(file: ImportFile, { tokens, themes }: Identities): PointerOf {
   const ofTokens = new Map([...tokens].map(([{ pointer }, id]) => [id, pointer]))
   const ofThemes = new Map([...themes].map(([{ pointer }, id]) => [id, pointer]))
-  return ({ token, theme }: ModelFault): string | undefined =>
+  return ({ token, theme }) =>
     ofTokens.get(token ?? '') ?? ofThemes.get(theme ?? '') ?? (file.themes ? '' : undefined)
 }
 

@@ -118,6 +118,49 @@ describe('read and refused, with a pointer', () => {
   })
 })
 
+describe('before there is a theme', () => {
+  const chain = (from: number, to: number): [string, string][] =>
+    Array.from({ length: to - from + 1 }, (_, at): [string, string] => [
+      `c${from + at}`,
+      from + at === 0 ? color() : aliasOf(`c${from + at - 1}`),
+    ])
+  const send = (key: string, entries: readonly [string, string][], query = '') =>
+    system.maintainer
+      .post(`/v1/systems/${key}/imports${query}`)
+      .set('Content-Type', 'application/json')
+      .serialize(asIs)
+      .send(named(entries))
+  const pointersIn = (body: { errors: { pointer: string }[] }) =>
+    body.errors.map(({ pointer }) => pointer)
+
+  it('answers 32 aliases one after another, and refuses each token beyond by its place', async () => {
+    await test.createSystem('unthemed')
+    const { body } = await send('unthemed', chain(0, 34), '?dryRun=true').expect(422)
+    expect(body.type).toBe('/problems/system-unresolvable')
+    expect(pointersIn(body)).toEqual(['/c33', '/c34'])
+    await send('unthemed', chain(0, 32)).expect(200)
+    const { body: more } = await send('unthemed', chain(33, 33)).expect(422)
+    expect(pointersIn(more)).toEqual(['/c33'])
+  })
+
+  it('refuses 2,000 of them', async () => {
+    await test.createSystem('endless')
+    const { body } = await send('endless', chain(0, 2_000), '?dryRun=true').expect(422)
+    expect(pointersIn(body)).toContain('/c33')
+    expect(body.more).toBeGreaterThan(1_800)
+  })
+
+  it('refuses a circle that the file closes over what stands', async () => {
+    await test.createSystem('circle')
+    await send('circle', [
+      ['a', color()],
+      ['b', aliasOf('a')],
+    ]).expect(200)
+    const { body } = await send('circle', [['a', aliasOf('b')]]).expect(422)
+    expect(pointersIn(body)).toContain('/a')
+  })
+})
+
 describe('resolver files', () => {
   const resolver = (members: object) =>
     post(JSON.stringify({ version: '2025.10', ...members }), '?dryRun=true')
