@@ -22,9 +22,13 @@ export interface ResolverModifier {
 }
 
 /** One item of the resolution order, in the order of the file. */
-export type ResolverStep =
+export type ResolverStep = (
   | { readonly kind: 'set'; readonly name: string; readonly sources: readonly ResolverSource[] }
   | { readonly kind: 'modifier'; readonly modifier: ResolverModifier }
+) & {
+  /** The members that give no tokens, verbatim. */
+  readonly besides: JsonObject
+}
 
 /** What a resolver file says, before any document is put together. */
 export interface ResolverShape {
@@ -42,6 +46,10 @@ export function readResolverShape(file: JsonObject): ResolverShape {
   if (file.version !== '2025.10') {
     faults.push(fault('resolver-version', '/version', 'version is "2025.10".'))
   }
+  if (file.name !== undefined && typeof file.name !== 'string') {
+    faults.push(fault('document-shape', '/name', 'name is text.'))
+  }
+  faults.push(...wordFaults(file, ''))
   const setObjects = membersOf(file, 'sets', faults)
   const sets = new Map(
     setObjects.map(([name, set]) => [name, readSet(set, pointerTo('/sets', name), faults)]),
@@ -101,11 +109,37 @@ function membersOf(file: JsonObject, member: string, faults: DtcgFault[]): [stri
   }
   return Object.entries(holder).flatMap(([name, each]): [string, JsonObject][] => {
     const object = objectOf(each)
+    const pointer = pointerTo(`/${member}`, name)
+    faults.push(...(object ? wordFaults(object, pointer) : []))
     if (object) return [[name, object]]
-    faults.push(fault('document-shape', pointerTo(`/${member}`, name), 'Not an object.'))
+    faults.push(fault('document-shape', pointer, 'Not an object.'))
     return []
   })
 }
+
+/** What a file, a set or a modifier says of itself. */
+function wordFaults({ description, $extensions }: JsonObject, pointer: string): DtcgFault[] {
+  const faults: DtcgFault[] = []
+  if (description !== undefined && typeof description !== 'string') {
+    faults.push(
+      fault('description-type', pointerTo(pointer, 'description'), 'description is text.'),
+    )
+  }
+  if ($extensions !== undefined && !objectOf($extensions)) {
+    const at = pointerTo(pointer, '$extensions')
+    faults.push(fault('extensions-type', at, '$extensions is an object.'))
+  }
+  return faults
+}
+
+const READ_MEMBERS = { set: ['sources'], modifier: ['contexts', 'default'] }
+
+const besidesOf = (kind: ResolverStep['kind'], item: JsonObject, read: readonly string[]) =>
+  Object.fromEntries(
+    Object.entries(item).filter(
+      ([member]) => !READ_MEMBERS[kind].includes(member) && !read.includes(member),
+    ),
+  )
 
 function readSet(set: JsonObject, pointer: string, faults: DtcgFault[]): ResolverSource[] {
   if (Array.isArray(set.sources))
@@ -176,6 +210,7 @@ function readOrder(order: unknown, known: Known, faults: DtcgFault[]): ResolverS
   return order.flatMap((item: unknown, i): ResolverStep[] => {
     const pointer = `/resolutionOrder/${i}`
     const object = objectOf(item)
+    faults.push(...(object ? wordFaults(object, pointer) : []))
     const step =
       object && Object.hasOwn(object, '$ref')
         ? referredStep(object, pointer, known, faults)
@@ -207,7 +242,8 @@ function referredStep(
   // Members beside $ref override those of what it refers to.
   if (sources) {
     const own = Object.hasOwn(item, 'sources') ? readSet(item, pointer, faults) : sources
-    return { kind: 'set', name, sources: own }
+    const besides = besidesOf('set', { ...written(file.sets, name), ...item }, ['$ref'])
+    return { kind: 'set', name, sources: own, besides }
   }
   const modifier = kind === 'modifiers' ? modifiers.get(name) : undefined
   if (modifier) {
@@ -216,6 +252,7 @@ function referredStep(
     return {
       kind: 'modifier',
       modifier: overrides ? readModifier(name, whole, pointer, faults) : modifier,
+      besides: besidesOf('modifier', whole, ['$ref']),
     }
   }
   faults.push(fault('resolver-unresolved', at, `There is no ${quoted(name)} in ${kind}.`))
@@ -237,6 +274,8 @@ function inlineStep(
     faults.push(fault('resolver-inline', pointer, detail))
     return undefined
   }
-  if (item.type === 'set') return { kind: 'set', name, sources: readSet(item, pointer, faults) }
-  return { kind: 'modifier', modifier: readModifier(name, item, pointer, faults) }
+  const besides = besidesOf(item.type, item, ['name', 'type'])
+  return item.type === 'set'
+    ? { kind: 'set', name, sources: readSet(item, pointer, faults), besides }
+    : { kind: 'modifier', modifier: readModifier(name, item, pointer, faults), besides }
 }

@@ -32,6 +32,13 @@ export interface DtcgResolver {
     readonly contexts: readonly string[]
     readonly default?: string
   }[]
+  /** What the sets and modifiers of the order say of themselves, in that order. */
+  readonly steps: readonly {
+    readonly kind: 'set' | 'modifier'
+    readonly name: string
+    /** Members that give no tokens, verbatim; those beside a `$ref` in place of those it refers to. */
+    readonly besides: JsonObject
+  }[]
   /** How many choices there are: the product of the context counts. */
   readonly permutationCount: number
   /** The document of one choice; modifiers left out take their default. */
@@ -86,6 +93,11 @@ function createResolver(
       name,
       contexts: [...contexts.keys()],
       ...(chosen === undefined ? {} : { default: chosen }),
+    })),
+    steps: shape.order.map((step) => ({
+      kind: step.kind,
+      name: step.kind === 'set' ? step.name : step.modifier.name,
+      besides: step.besides,
     })),
     permutationCount,
     documentFor: (input) => {

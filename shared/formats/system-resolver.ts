@@ -37,6 +37,14 @@ export interface ResolverToken {
   readonly besides?: JsonObject
 }
 
+/** Members that are not ours, verbatim: of the file itself, of its set and of its modifiers. */
+export interface ResolverBesides {
+  readonly root?: JsonObject
+  readonly core?: JsonObject
+  readonly theme?: JsonObject
+  readonly state?: JsonObject
+}
+
 /** A system as a resolver file holds it. */
 export interface SystemResolver {
   /** Keys, the base first; none where there is no theme yet. */
@@ -47,6 +55,8 @@ export interface SystemResolver {
   readonly extension: JsonObject
   /** A document of what is no colour. */
   readonly remainder?: JsonObject
+  /** What belongs to a modifier that the file lacks is left out. */
+  readonly besides?: ResolverBesides
 }
 
 type Tree = Record<string, unknown>
@@ -58,7 +68,7 @@ type Tree = Record<string, unknown>
  * @see https://www.designtokens.org/tr/2025.10/resolver/
  */
 export function systemResolver(system: SystemResolver): JsonObject {
-  const { themes, states, tokens, remainder = {}, extension } = system
+  const { themes, states, tokens, remainder = {}, besides = {}, extension } = system
   const core = mergedDocument([remainder, treeOf(tokens.flatMap(coreEntries))])
   const [base = '', ...others] = themes
   const contexts = [base, ...others].map((key, at) => {
@@ -68,11 +78,12 @@ export function systemResolver(system: SystemResolver): JsonObject {
   const stateContexts = states.map((state) => [state, [treeOf(stateEntries(tokens, state))]])
   const modifiers = {
     ...(themes.length > 1
-      ? { [THEME]: { default: base, contexts: Object.fromEntries(contexts) } }
+      ? { [THEME]: { ...besides.theme, default: base, contexts: Object.fromEntries(contexts) } }
       : {}),
     ...(states.length > 0
       ? {
           [STATE]: {
+            ...besides.state,
             default: 'rest',
             contexts: Object.fromEntries([['rest', []], ...stateContexts]),
           },
@@ -80,14 +91,15 @@ export function systemResolver(system: SystemResolver): JsonObject {
       : {}),
   }
   return {
+    ...besides.root,
     version: '2025.10',
-    sets: { [CORE]: { sources: [core] } },
+    sets: { [CORE]: { ...besides.core, sources: [core] } },
     ...(Object.keys(modifiers).length > 0 ? { modifiers } : {}),
     resolutionOrder: [
       { $ref: `#/sets/${CORE}` },
       ...Object.keys(modifiers).map((name) => ({ $ref: `#/modifiers/${name}` })),
     ],
-    $extensions: { [EXTENSION]: extension },
+    $extensions: { ...objectOf(besides.root?.$extensions), [EXTENSION]: extension },
   }
 }
 

@@ -1,7 +1,7 @@
 import { isToken } from '#shared/formats/dtcg-document.ts'
 import { type JsonObject, objectOf } from '#shared/formats/dtcg-fault.ts'
 import { mergedDocument } from '#shared/formats/dtcg-merge.ts'
-import { EXTENSION } from '#shared/formats/system-resolver.ts'
+import { EXTENSION, type ResolverBesides } from '#shared/formats/system-resolver.ts'
 
 /** What files brought that the system does not hold. All of it comes back verbatim. */
 export interface Remainder {
@@ -9,6 +9,8 @@ export interface Remainder {
   readonly document: JsonObject
   /** Of colour tokens, by name in a file and by id in a system: the members that are not read. */
   readonly tokens: Readonly<Record<string, JsonObject>>
+  /** What a resolver file says of itself and its parts. */
+  readonly resolver?: ResolverBesides
 }
 
 /** The remainder as a system keeps it. */
@@ -19,8 +21,26 @@ export const readRemainder = (text: string | undefined): Remainder =>
 export function joinedRemainder(before: Remainder, after: Remainder): string | undefined {
   const document = mergedDocument([before.document, after.document])
   const tokens = { ...before.tokens, ...after.tokens }
-  const isEmpty = [document, tokens].every((part) => Object.keys(part).length === 0)
-  return isEmpty ? undefined : JSON.stringify({ document, tokens })
+  const resolver = joinedBesides(before.resolver, after.resolver)
+  const isEmpty = [document, tokens, resolver].every((part) => Object.keys(part).length === 0)
+  if (isEmpty) return undefined
+  const isPlain = Object.keys(resolver).length === 0
+  return JSON.stringify({ document, tokens, ...(isPlain ? {} : { resolver }) })
+}
+
+/** Member by member, and of extensions vendor by vendor: the newer one wins, the others stay. */
+function joinedBesides(before: ResolverBesides = {}, after: ResolverBesides = {}): ResolverBesides {
+  const joined = (['root', 'core', 'theme', 'state'] as const).flatMap((part) => {
+    const [old, own] = [before[part] ?? {}, after[part] ?? {}]
+    const $extensions = { ...objectOf(old.$extensions), ...objectOf(own.$extensions) }
+    const members = {
+      ...old,
+      ...own,
+      ...(Object.keys($extensions).length > 0 ? { $extensions } : {}),
+    }
+    return Object.keys(members).length > 0 ? [[part, members] as const] : []
+  })
+  return Object.fromEntries(joined)
 }
 
 /** Members of a token that are read into the system, and come back from there. */
@@ -84,7 +104,8 @@ function hasNone(value: unknown): boolean {
   )
 }
 
-function foreignExtensions(extensions: JsonObject): JsonObject | undefined {
+/** What other vendors say. */
+export function foreignExtensions(extensions: JsonObject): JsonObject | undefined {
   const others = Object.entries(extensions).filter(([vendor]) => vendor !== EXTENSION)
   return others.length === 0 ? undefined : Object.fromEntries(others)
 }

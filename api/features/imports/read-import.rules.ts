@@ -12,6 +12,7 @@ import { remainderOf } from './import-remainder.rules.ts'
 import { withColorObjects } from './legacy-hex.rules.ts'
 import { readOwnResolver } from './read-own-resolver.rules.ts'
 import { readStyleSheet } from './read-style-sheet.rules.ts'
+import { foreignBesides, ownBesides } from './resolver-besides.rules.ts'
 import { readTokens, TOO_MANY, type TokensRead } from './read-tokens.rules.ts'
 
 export type ImportReading =
@@ -77,7 +78,11 @@ function readResolver(document: JsonObject, options: ReadOptions): ImportReading
   const faults = [...(root.ok ? [] : root.faults), ...(read.ok ? [] : read.faults)]
   if (!root.ok || !read.ok) return { ok: false, faults }
   return root.said.isWhole
-    ? readOwnResolver(document, { said: root.said, stands: options.stands })
+    ? readOwnResolver(document, {
+        said: root.said,
+        stands: options.stands,
+        besides: ownBesides(document, read.resolver),
+      })
     : readForeignResolver(document, read.resolver, options)
 }
 
@@ -122,6 +127,7 @@ function readForeignResolver(
   if (faults.length > 0 || base === undefined) return { ok: false, faults }
   const names = new Set(base.tokens.map(({ name }) => name))
   const lacking = lackingInBase(readings)
+  const said = foreignBesides(document, resolver, modifier?.name)
   return {
     ok: true,
     file: {
@@ -131,8 +137,11 @@ function readForeignResolver(
         themes: themes ?? [],
       }),
       ...(themes ? { themes } : {}),
-      remainder: remainderOf(base.document, (name) => names.has(name)),
-      notes: [...base.notes, ...lacking.notes, ...others.map(leftOut)],
+      remainder: {
+        ...remainderOf(base.document, (name) => names.has(name)),
+        resolver: said.besides,
+      },
+      notes: [...base.notes, ...lacking.notes, ...others.map(leftOut), ...said.notes],
       derivedAgain: base.derivedAgain,
     },
   }

@@ -6,7 +6,14 @@ import { isToken } from '#shared/formats/dtcg-document.ts'
 import { type JsonObject, objectOf, pointerTo } from '#shared/formats/dtcg-fault.ts'
 import { mergedDocument } from '#shared/formats/dtcg-merge.ts'
 import { literalDigest } from '#shared/formats/literal-digest.ts'
-import { CORE, EXTENSION, STATE, stateGroup, THEME } from '#shared/formats/system-resolver.ts'
+import {
+  CORE,
+  EXTENSION,
+  type ResolverBesides,
+  STATE,
+  stateGroup,
+  THEME,
+} from '#shared/formats/system-resolver.ts'
 import type { RootSaid } from './import-extension.rules.ts'
 import type { FileToken, FileValue, FileValues } from './import-file.ts'
 import { originsOf } from './import-origins.rules.ts'
@@ -17,13 +24,17 @@ import { readTokens } from './read-tokens.rules.ts'
 interface OwnFile {
   readonly said: RootSaid
   readonly stands: (name: string) => boolean
+  readonly besides: ResolverBesides
 }
 
 /**
  * Reads a resolver file that this service wrote: sources and what is set stand in its set and its extensions;
  * every other colour was derived, and is again, unless somebody changed it in the file.
  */
-export function readOwnResolver(file: JsonObject, { said, stands }: OwnFile): ImportReading {
+export function readOwnResolver(
+  file: JsonObject,
+  { said, stands, besides }: OwnFile,
+): ImportReading {
   const core = mergedDocument(documentsAt(file, ['sets', CORE, 'sources']))
   const groups = new Set(STATES.map(stateGroup))
   const sources = Object.fromEntries(Object.entries(core).filter(([name]) => !groups.has(name)))
@@ -45,7 +56,7 @@ export function readOwnResolver(file: JsonObject, { said, stands }: OwnFile): Im
     file: {
       ...said,
       tokens: withOverrides(inLedgerOrder(read.tokens, said.ledger), changed.overrides),
-      remainder: remainderOf(sources, (name) => names.has(name)),
+      remainder: { ...remainderOf(sources, (name) => names.has(name)), resolver: besides },
       notes: [...read.notes, ...changed.notes, ...otherStates(file)],
       derivedAgain: read.derivedAgain + changed.derivedAgain,
     },

@@ -41,6 +41,7 @@ export function presentResolverFile(system: MeasuredSystem): string {
     tokens,
     extension: rootExtension(system.index),
     remainder: remainder.document,
+    ...(remainder.resolver === undefined ? {} : { besides: remainder.resolver }),
   })
   return `${JSON.stringify(document, undefined, 2)}\n`
 }

@@ -40,7 +40,7 @@ export function randomGoverned(dice: Dice, size = 11): GovernedSystem {
     tokens,
     pairs: differently(model.pairs.map((pair) => worded(dice, pair))),
     ...(sets.length > 0 ? { distinctSets: sets } : {}),
-    ...dice.maybe(0.6, () => ({ remainder: JSON.stringify(remainder(dice, tokens)) })),
+    ...dice.maybe(0.6, () => ({ remainder: JSON.stringify(remainder(dice, { tokens, themes })) })),
   }
 }
 
@@ -69,7 +69,7 @@ const differently = (pairs: readonly PairModel[]): PairModel[] =>
   pairs.map((pair, at) => ({ ...pair, product: `${pair.product ?? 'site'} ${at}` }))
 
 /** What a file brings that is no colour: other types, groups' own members, other vendors' words, a spelling. */
-function remainder(dice: Dice, tokens: readonly GovernedToken[]) {
+function remainder(dice: Dice, { tokens, themes }: Pick<GovernedSystem, 'tokens' | 'themes'>) {
   const [group = ''] = tokens[0]!.name.split('.')
   const owner = dice.pick(tokens)
   return {
@@ -80,5 +80,29 @@ function remainder(dice: Dice, tokens: readonly GovernedToken[]) {
       [group]: { $description: 'Of a group', $extensions: { 'org.example': 1 } },
     },
     tokens: { [owner.id]: { $extensions: { 'org.example': { note: 'kept' } }, hint: ['x', 1] } },
+    ...dice.maybe(0.7, () => ({
+      resolver: resolverParts(dice, {
+        theme: themes.length > 1,
+        state: tokens.some(({ states }) => states.length > 0),
+      }),
+    })),
+  }
+}
+
+/** What a resolver file says of itself, its set and those modifiers that there are. */
+function resolverParts(dice: Dice, has: { readonly theme: boolean; readonly state: boolean }) {
+  const said = { description: dice.pick(['By day', '{x}']), $extensions: { 'org.example': [1] } }
+  const root = {
+    $schema: 'https://example.org/resolver.json',
+    name: 'Quay',
+    $defs: { sets: [null, { $ref: '#/nowhere' }] },
+    'x~/y': 1,
+    ...said,
+  }
+  return {
+    root,
+    ...dice.maybe(0.5, () => ({ core: said })),
+    ...(has.theme ? dice.maybe(0.5, () => ({ theme: { ...said, order: 7 } })) : {}),
+    ...(has.state ? dice.maybe(0.5, () => ({ state: said })) : {}),
   }
 }

@@ -66,6 +66,7 @@ it('leaves a system as it is that takes its own file back', () => {
         model.tokens.map(({ name }) => name),
       )
       expect(JSON.parse(fileOf(made.model)!)).toEqual(JSON.parse(text))
+      expect(JSON.parse(made.model.remainder ?? '{}')).toEqual(JSON.parse(model.remainder ?? '{}'))
       const again = imported(made.model, text, () => 'never')
       expect(again.edits).toEqual({
         tokens: { put: [], remove: [] },
