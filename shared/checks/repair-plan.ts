@@ -242,6 +242,8 @@ function leftBreach(
   )
   const conflict = reaching && conflictAt(reaching)
   if (conflict !== undefined) return { finding, reason: 'conflict', conflict }
+  // The samples find what the search does; were they to find more, there would be no conflict to name.
+  /* v8 ignore next -- @preserve */
   return { finding, reason: run.isStopped ? 'budget' : 'conflict' }
 }
 

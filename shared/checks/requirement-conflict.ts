@@ -95,8 +95,8 @@ function intervalsOf(met: Uint8Array): LightnessInterval[] {
 
 /** The luminance that a row measures the moving colour against; undefined where both sides move or one shows through. */
 function otherLuminance(probe: ColorProbe, row: ProbeRow): number | undefined {
-  if (row.sides === undefined) return undefined
-  const { foreground, foregroundAt, background, backgroundAt } = row.sides
+  // Of two that cannot hold together each holds somewhere, so both move.
+  const { foreground, foregroundAt, background, backgroundAt } = row.sides!
   const { reaches } = probe.values
   const moves = {
     foreground: reaches(row.finding.foreground, foregroundAt),

@@ -81,10 +81,15 @@ describe('a conflict of requirements', () => {
       ...token('tint', '#000000'),
       value: { kind: 'derived', token: 'fill', lightness: 0.3 } as const,
     }
+    // White has 18 on fill up to a lightness of 0.2; fill has 3.3 to a tint lighter by 0.3 from 0.25 up.
     const along = conflictIn(
-      [label, tint, token('fill', '#ffffff')],
-      [pair('label', 'fill', { minimum: 4.5 }), pair('fill', 'tint', { minimum: 12 })],
+      [label, tint, token('fill', 'oklch(0.22 0 none)')],
+      [
+        pair('label', 'fill', { minimum: 18 }),
+        pair('fill', 'tint', { use: 'non-text', minimum: 3.3 }),
+      ],
     )
+    expect(along.requirements).toHaveLength(2)
     expect(along.bound).toBeUndefined()
   })
 

@@ -1,6 +1,11 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { countOf, stateInWords, truncateRatio } from '#shared/checks/finding-words.ts'
+import {
+  countOf,
+  repairInWords,
+  stateInWords,
+  truncateRatio,
+} from '#shared/checks/finding-words.ts'
 
 describe('truncateRatio', () => {
   it.each([
@@ -39,4 +44,39 @@ it('answers counts as words to twelve, then as figures', () => {
 it('answers a state by one word where both sides agree', () => {
   expect(['rest/rest', 'focus/focus'].map(stateInWords)).toEqual(['rest', 'focus'])
   expect(stateInWords('hover/rest')).toBe('hover on rest')
+})
+
+describe('a repair', () => {
+  const nearest = {
+    token: 'action.fill',
+    theme: 'dark',
+    state: 'rest' as const,
+    source: false,
+    color: {
+      colorSpace: 'oklch' as const,
+      components: [0.551, 0.128, 243] as [number, number, number],
+    },
+    hex: '#1478b6',
+  }
+
+  it('answers the color whole, with its alpha where it has one, and the place it is for', () => {
+    const passes = 'the nearest that passes: oklch(0.551 0.128 243'
+    expect(repairInWords({ nearest })).toBe(`${passes}) #1478b6 for action.fill in dark`)
+    expect(repairInWords({ nearest: { ...nearest, state: 'hover' } })).toBe(
+      `${passes}) #1478b6 for action.fill in dark, hover`,
+    )
+    const glass = { ...nearest, source: true, color: { ...nearest.color, alpha: 0.5 } }
+    expect(repairInWords({ nearest: glass })).toBe(`${passes} / 0.5) #1478b6 for action.fill`)
+  })
+
+  it('answers why nothing passes, and nothing where nobody asked', () => {
+    const words = (unmended: Parameters<typeof repairInWords>[0]['unmended']) =>
+      repairInWords({ unmended })
+    expect(words({ reason: 'locked' })).toContain('locked')
+    expect(words({ reason: 'budget' })).toContain('not searched to the end')
+    expect(words({ reason: 'conflict' })).toContain('no colour of its hue')
+    const bound = { needed: 20.25, available: 11.37159 }
+    expect(words({ reason: 'conflict', conflict: { bound } })).toMatch(/11\.3715 .* 20\.25/)
+    expect(words(undefined)).toBeUndefined()
+  })
 })

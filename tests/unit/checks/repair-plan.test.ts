@@ -58,6 +58,24 @@ it('answers plans that a full check confirms: nothing breaches but what is left,
   for (const [what, seen] of Object.entries(tally)) expect(seen, what).toBeGreaterThan(0)
 }, 180_000)
 
+// Systems in which a later edit makes an earlier one needless, and in which a step would bring a breach of its own.
+it.each([68, 106, 117])(
+  'answers no edit that is needless, and none that breaches anew: %i',
+  (seed) => {
+    const model = randomSystem(new Dice(seed), 3)
+    const plan = repairPlan(evaluate(model), { budget: 3000 })
+    const before = breachesAfter(model, { edits: [] })
+    const after = breachesAfter(model, plan)
+    expect(plan.edits.length).toBeGreaterThan(0)
+    expect(after.length).toBeLessThan(before.length)
+    expect(after.filter((identity) => !before.includes(identity))).toEqual([])
+    for (const edit of plan.edits) {
+      const edits = plan.edits.filter((other) => other !== edit)
+      expect(breachesAfter(model, { edits }).length).toBeGreaterThan(after.length)
+    }
+  },
+)
+
 const light = [theme('light')]
 
 it('answers one edit of the token on which most breaches hang', () => {
