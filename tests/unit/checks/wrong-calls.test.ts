@@ -21,7 +21,8 @@ describe('a wrong call', () => {
 
   it('refuses a lightness step without a direction, and a theme rule without its two themes', () => {
     const rest = read(grey, 'grey')
-    const rule = { lightness: 0.05, chroma: 1, hue: 0, alpha: 1, away: 'ground' } as const
+    const towards = { direction: 'away', reference: 'ground' } as const
+    const rule = { lightness: 0.05, chroma: 1, hue: 0, alpha: 1, towards }
     const step = { state: 'hover', rule, direction: undefined } as const
     expect(() => applyStateRule(rest, step)).toThrow(TypeError)
     expect(() => applyThemeRule(rest, { kind: 'mirror' }, undefined)).toThrow(TypeError)

@@ -1,5 +1,9 @@
 import { describe, expect, it } from 'vitest'
-import { closingInWords, eventInWords, isMeasured } from '#console/features/breaches/breach-words.ts'
+import {
+  closingInWords,
+  eventInWords,
+  isMeasured,
+} from '#console/features/breaches/breach-words.ts'
 import type { BreachEventWire, BreachWire } from '#shared/contracts/breaches.contract.ts'
 
 /** The outer ring of a focus on a button's fill: resolved, though still under its line where `metBy` says so. */

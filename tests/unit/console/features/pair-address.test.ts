@@ -4,12 +4,12 @@ import { readPairAddress, writePairAddress } from '#console/features/pairs/pair-
 const there = (search: string) => readPairAddress(new URLSearchParams(search))
 
 describe('the address of a pair that is to be declared', () => {
-  it.each([
+  it.each<Parameters<typeof writePairAddress>[0]>([
     { foreground: 'a b/c%', background: 'é&=' },
     { foreground: 'a', background: 'b', use: 'non-text', relation: 'together' },
     { foreground: 'a', background: 'b', use: 'text', backdrop: ['c', 'd'] },
     { foreground: 'a', background: 'b', backdrop: 'unknown' },
-  ] as const)('answers %j as it was written', (pair) => {
+  ])('answers %j as it was written', (pair) => {
     expect(there(writePairAddress(pair))).toEqual(pair)
   })
 
