@@ -8,7 +8,12 @@ import { hasTooMany, isResolver } from './import-effort.rules.ts'
 import { MOST_THEMES, tooManyThemes } from './import-themes.rules.ts'
 import type { FileTheme, FileToken, FileValues, ImportFile } from './import-file.ts'
 import { originsOf } from './import-origins.rules.ts'
-import { remainderOf } from './import-remainder.rules.ts'
+import {
+  joinedRemainder,
+  readRemainder,
+  type Remainder,
+  remainderOf,
+} from './import-remainder.rules.ts'
 import { withColorObjects } from './legacy-hex.rules.ts'
 import { readOwnResolver } from './read-own-resolver.rules.ts'
 import { readStyleSheet } from './read-style-sheet.rules.ts'
@@ -125,7 +130,6 @@ function readForeignResolver(
   ])
   const [base] = readings
   if (faults.length > 0 || base === undefined) return { ok: false, faults }
-  const names = new Set(base.tokens.map(({ name }) => name))
   const lacking = lackingInBase(readings)
   const said = foreignBesides(document, resolver, modifier?.name)
   return {
@@ -137,11 +141,14 @@ function readForeignResolver(
         themes: themes ?? [],
       }),
       ...(themes ? { themes } : {}),
-      remainder: {
-        ...remainderOf(base.document, (name) => names.has(name)),
-        resolver: said.besides,
-      },
-      notes: [...base.notes, ...lacking.notes, ...others.map(leftOut), ...said.notes],
+      remainder: { ...remainderIn(base), resolver: said.besides },
+      notes: [
+        ...base.notes,
+        ...lacking.notes,
+        ...others.map(leftOut),
+        ...said.notes,
+        ...besideBase(readings, themes ?? []),
+      ],
       derivedAgain: base.derivedAgain,
     },
   }
@@ -179,6 +186,28 @@ function themeFaults(themes: readonly FileTheme[]): Fault[] {
 
 interface ContextReading extends TokensRead {
   readonly context: string | undefined
+  readonly document: JsonObject
+}
+
+function remainderIn({ tokens, document }: ContextReading): Remainder {
+  const names = new Set(tokens.map(({ name }) => name))
+  return remainderOf(document, (name) => names.has(name))
+}
+
+/** Themes hold colours alone: of what is none, a system keeps what the base says. */
+function besideBase(
+  [base, ...others]: readonly ContextReading[],
+  [, ...themes]: readonly FileTheme[],
+): ImportNoteWire[] {
+  if (base === undefined || others.length === 0) return []
+  const kept = remainderIn(base)
+  const text = canonicalJson(kept)
+  return others.flatMap((other, at): ImportNoteWire[] => {
+    const both = readRemainder(joinedRemainder(kept, remainderIn(other)))
+    if (canonicalJson(both) === text) return []
+    const detail = `What is no colour is kept as in ${base.context}: what ${other.context} says otherwise is not`
+    return [{ kind: 'left-out', pointer: themes[at]?.pointer ?? '', detail }]
+  })
 }
 
 /** A token has a value in every theme: where the base has none, it is as in the first context that has one. */
