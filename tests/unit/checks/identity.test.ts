@@ -35,6 +35,23 @@ describe('identity', () => {
     ])
   })
 
+  it('answers the kind of every use: text, non-text, focus, link', () => {
+    const kinds = {
+      text: 'text',
+      'large-text': 'text',
+      'non-text': 'non-text',
+      'focus-adjacent': 'focus',
+      'focus-change': 'focus',
+      'link-in-text': 'link',
+    } as const
+    for (const [use, kind] of Object.entries(kinds)) {
+      const [one] = findings(
+        lightSystem([pair('grey', 'ground', { use: use as PairModel['use'] })]),
+      )
+      expect(one).toMatchObject({ kind, identity: `grey/ground/ground/${kind}/light/rest/rest` })
+    }
+  })
+
   it('answers findings that share one as one entry: the strictest, and there the furthest short', () => {
     const exempt = { kind: 'decorative' as const, reason: 'drawn' }
     const model = lightSystem([

@@ -96,12 +96,12 @@ describe('verdict', () => {
 
   it('answers all findings, those that do not pass, or none, with the same counts', () => {
     const evaluation = evaluate(lightSystem([pair('grey', 'ground'), pair('ink', 'ground')]))
-    const lengths = (['all', 'not-pass', 'none'] as const).map((include) => {
-      const { findings: written, counts } = verdictOf(evaluation, { include })
-      expect(counts).toMatchObject({ breach: 1, pass: 1 })
-      return written.length
+    const written = (['all', 'not-pass', 'none'] as const).map((include) => {
+      const verdict = verdictOf(evaluation, { include })
+      expect(verdict.counts).toMatchObject({ breach: 1, pass: 1 })
+      return verdict.findings.map(({ outcome }) => outcome)
     })
-    expect(lengths).toEqual([2, 1, 0])
+    expect(written).toEqual([['breach', 'pass'], ['breach'], []])
   })
 })
 
@@ -153,6 +153,12 @@ describe('exemptions', () => {
   it('answers a breach under the system’s floor for disabled, and exempt from it up', () => {
     const under = judged({ relation: 'together' }, 2.5)['disabled/disabled']
     expect(under).toEqual(['breach', 'disabled-floor'])
+    const settings = { disabledFloor: 2.5 }
+    const floored = findings(lightSystem([pair('label', 'fill')], { tokens: button, settings }))
+    expect(floored.map(({ required, reason }) => [required, reason])).toContainEqual([
+      2.5,
+      'disabled-floor',
+    ])
     expect(judged({ relation: 'together' }, 1.05)['disabled/disabled']).toEqual([
       'exempt',
       'disabled',

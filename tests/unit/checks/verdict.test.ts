@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { meetAnyOf } from '#shared/checks/any-of.ts'
+import { checkSystem } from '#shared/checks/check-system.ts'
 import type { Finding, PairModel, SystemModel } from '#shared/checks/model.ts'
 import { colorOf } from '#shared/checks/resolved.ts'
 import { breachRatios, verdictOf } from '#shared/checks/verdict.ts'
@@ -132,8 +133,11 @@ describe('entries', () => {
       expect(all).toHaveLength(1)
       expect(all[0]).toMatchObject({ required: 4.5, use: 'text', pairs: pairs.map(({ id }) => id) })
     }
-    const again = pair('grey', 'ground', { id: 'again', product: 'kiosk' })
-    expect(findings(light([small, again]))[0]!.pairs).toEqual(['small', 'again'])
+    const again = pair('grey', 'ground', { id: 'again', use: 'large-text', minimum: 4.5 })
+    expect(findings(light([small, again]))[0]).toMatchObject({
+      use: 'text',
+      pairs: ['small', 'again'],
+    })
   })
 
   it('answers breach before pass and exempt, pass before exempt, in either order', () => {
@@ -183,7 +187,19 @@ describe('an evaluation', () => {
       [0, 2],
       [2],
     ])
-    expect(pairsOf.has('grey')).toBe(false)
+    expect([...pairsOf.keys()].toSorted()).toEqual(['a', 'b', 'ground', 'ink', 'veil'])
+  })
+
+  it('answers every fault of a system that cannot be read, and no evaluation', () => {
+    const checked = checkSystem(light([pair('gone', 'ground'), pair('grey', 'lost')]))
+    expect(checked).toEqual({
+      ok: false,
+      faults: ['gone', 'lost'].map((id, at) => ({
+        code: 'reference-missing',
+        detail: `The pair refers to ${id}, which is missing`,
+        pair: ['gone on ground', 'grey on lost'][at],
+      })),
+    })
   })
 
   it('answers advisories in the order of the tokens, and none where there is none', () => {
@@ -225,7 +241,9 @@ describe('a group', () => {
 
   it('answers the groups that are asked for, or all', () => {
     const { measures } = evaluate(light([ring('pale'), ring('deep', { anyOf: 'b' })], { tokens }))
-    expect([...meetAnyOf(measures, 1).keys()]).toEqual(['ring', 'b'])
+    const [first] = measures
+    const ungrouped = { ...first!, pair: pair('pale', 'ground') }
+    expect([...meetAnyOf([...measures, ungrouped], 1).keys()]).toEqual(['ring', 'b'])
     expect([...meetAnyOf(measures, 1, new Set(['b'])).keys()]).toEqual(['b'])
   })
 

@@ -62,6 +62,26 @@ describe('waivers', () => {
     ).toBe('waived')
   })
 
+  it('answers waived in the states that the waiver names, and in no other', () => {
+    const states = ['hover', 'focus'] as const
+    const several = lightSystem([pair('grey', 'ground')], {
+      themes: [theme('light'), theme('kiosk')],
+      tokens: [
+        token('grey', '#8a8a8a', { states, rules: { states: { hover: { lightness: 0 } } } }),
+      ],
+    })
+    const waived = (more: Partial<WaiverModel>) =>
+      findings(several, { waivers: [{ ...waiver, floorRatio: 1, ...more }] })
+        .filter(({ outcome }) => outcome === 'waived')
+        .map((one) => `${one.theme} ${one.foregroundState}/${one.backgroundState}`)
+    expect(waived({ theme: 'kiosk', foregroundState: 'hover' })).toEqual(['kiosk hover/rest'])
+    expect(waived({ foregroundState: 'focus', backgroundState: 'rest' })).toEqual([
+      'light focus/rest',
+      'kiosk focus/rest',
+    ])
+    expect(waived({ theme: 'light' })).toHaveLength(3)
+  })
+
   it('answers a verdict of pass where every breach is waived', () => {
     const { verdict, counts } = verdictOf(evaluate(model), { waivers: [waiver] })
     expect([verdict, counts.waived, counts.breach]).toEqual(['pass', 1, 0])
