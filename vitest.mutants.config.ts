@@ -4,7 +4,7 @@ import { defineConfig } from 'vitest/config'
 export default defineConfig({
   test: {
     include: [
-      'tests/unit/checks/{identity,layers,outcomes,pair-states,stand-ins,token-standing,verdict,waivers}.test.ts',
+      'tests/unit/checks/{identity,layers,outcomes,pair-states,stack-ratio,stand-ins,token-standing,verdict,waivers}.test.ts',
       'tests/unit/color/{luminance,render}.test.ts',
     ],
   },
