@@ -118,7 +118,7 @@ export function Component() {
           ]}
         >
           {takesFiles && (
-            <Link to={paths.importFile(system)} className="word">
+            <Link to={paths.importFile(system)} className="word inline-block pt-4">
               Import a file
             </Link>
           )}
