@@ -5,7 +5,7 @@ export default defineConfig({
   test: {
     include: [
       'tests/unit/checks/{identity,layers,outcomes,pair-states,stack-ratio,stand-ins,token-standing,verdict,waivers}.test.ts',
-      'tests/unit/color/{luminance,render}.test.ts',
+      'tests/unit/color/{difference,luminance,render}.test.ts',
     ],
   },
 })

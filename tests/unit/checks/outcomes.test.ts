@@ -92,6 +92,7 @@ describe('verdict', () => {
   it('answers with the engine version, the gamut algorithm and the rule set', () => {
     const { engine } = verdictOf(evaluate(lightSystem([])))
     expect(engine).toEqual({ version: ENGINE_VERSION, gamutMap: GAMUT_MAP, ruleSet: RULE_SET })
+    expect(GAMUT_MAP).toBe('css-color-4-binary-search-local-minde')
   })
 
   it('answers all findings, those that do not pass, or none, with the same counts', () => {
@@ -139,6 +140,18 @@ describe('exemptions', () => {
     })
     // Together it is one component, disabled as a whole.
     expect(on({ relation: 'together' }).outcome).toBe('exempt')
+  })
+
+  it('leaves a resting link in a disabled background to its requirement, one component or not', () => {
+    const tokens = [GREY, token('row', '#ffffff', { states: ['disabled'] })]
+    for (const relation of ['together', 'inside'] as const) {
+      const link = pair('grey', 'row', { use: 'link-in-text', relation, minimum: 9 })
+      const all = findings(lightSystem([link], { tokens }))
+      expect(all.map(({ backgroundState, outcome }) => [backgroundState, outcome])).toEqual([
+        ['rest', 'breach'],
+        ['disabled', 'breach'],
+      ])
+    }
   })
 
   it('answers a declared exemption with its kind, measured all the same', () => {

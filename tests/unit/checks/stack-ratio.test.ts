@@ -1,12 +1,13 @@
 import { describe, expect, it } from 'vitest'
 import { ratioOn } from '#shared/checks/layers.ts'
 import type { PairModel, SystemModel } from '#shared/checks/model.ts'
+import { mappedChroma } from '#shared/color/gamut-map.ts'
 import type { Oklch } from '#shared/color/oklch.ts'
 import { parseColor } from '#shared/color/parse-color.ts'
 import { type RenderedColor, renderColor } from '#shared/color/render.ts'
 import { pair, system, theme, token } from './model-builder.ts'
 import { naiveRatio, paintAll } from './naive-contrast.ts'
-import { naiveRendering } from './naive-rendering.ts'
+import { naiveMappedChroma, naiveRendering } from './naive-rendering.ts'
 import { naiveFindings } from './naive-verdict.ts'
 import { emptyPairTally, holdPairs } from './pair-agreement.ts'
 import { findings } from './reading.ts'
@@ -40,6 +41,7 @@ const VEILS = {
   glass: 'rgb(20 60 200 / 0.5)',
   solid: 'oklch(0.5 0.25 30)',
 } as const
+const BOTH = { p3: true, p3Gates: true }
 
 const on = (pairs: readonly PairModel[], settings: { p3: boolean; p3Gates: boolean }) =>
   system({
@@ -64,7 +66,7 @@ describe('a stack of layers', () => {
   ])('answers every order of three veils on each other, $p3 $p3Gates', (settings) => {
     const ids = Object.keys(VEILS)
     const uses = ['text', 'link-in-text', 'non-text', 'focus-adjacent'] as const
-    const pairs = ids.flatMap((foreground, at) =>
+    const stacks = ids.flatMap((foreground, at) =>
       ids.map((background, next) =>
         pair(foreground, background, {
           use: uses[(at + next) % 4]!,
@@ -75,7 +77,32 @@ describe('a stack of layers', () => {
         }),
       ),
     )
-    expect(held(on(pairs, settings))).toHaveLength(36)
+    const all = held(on(stacks, settings))
+    expect(all).toHaveLength(36)
+    // The same with a minimum at, just under and just over each ratio: what a level moves has to flip the verdict.
+    for (const by of [0, -1e-9, 1e-9]) {
+      const aimed = stacks.flatMap((one, at) => {
+        const { ratio, required } = all[at]!
+        return ratio + by > required ? [{ ...one, minimum: ratio + by }] : []
+      })
+      const outcomes = held(on(aimed, settings)).map(({ outcome }) => outcome)
+      expect(new Set(outcomes)).toEqual(new Set([by > 0 ? 'breach' : 'pass']))
+    }
+  })
+
+  it('answers P3 and tightness by what can be seen, not by layers without opacity', () => {
+    const clear = token('clear', 'rgb(0 0 0 / 0)')
+    const base = on([], BOTH)
+    const one = (declared: PairModel) => {
+      const [finding] = held({ ...base, tokens: [...base.tokens, clear], pairs: [declared] })
+      return ['p3' in finding!.ratios, finding!.tight === true]
+    }
+    const unknown = { backdrop: 'unknown' } as const
+    expect(one(pair('clear', 'solid'))).toEqual([true, false])
+    expect(one(pair('clear', 'ink', { backdrop: ['glass'] }))).toEqual([false, false])
+    expect(one(pair('ink', 'clear', unknown))).toEqual([false, false])
+    expect(one(pair('ink', 'clear', { backdrop: ['glass'] }))[0]).toBe(true)
+    expect(one(pair('clear', 'clear', { use: 'focus-change' }))).toEqual([false, false])
   })
 
   it('answers the least over an unknown backdrop, on the basis that is lower, and what one level flips', () => {
@@ -88,19 +115,22 @@ describe('a stack of layers', () => {
       unknown('green', 'night', { use: 'focus-adjacent' }),
       unknown('ink', 'green'),
       unknown('glass', 'pale', { use: 'non-text' }),
+      unknown('glass', 'solid', { use: 'focus-adjacent' }),
+      unknown('glass', 'solid', { use: 'non-text' }),
     ]
-    const settings = { p3: true, p3Gates: true }
-    const all = held(on(pairs, settings))
+    const all = held(on(pairs, BOTH))
     expect(new Set(all.map(({ basis }) => basis))).toEqual(new Set(['srgb', 'p3']))
-    const aimed = all
-      .filter(({ ratio, required }) => ratio > required)
-      .map((one) => {
-        const of = pairs.find(({ id }) => id === one.pairs[0])!
-        return { ...of, minimum: one.ratio + 1e-9 }
+    for (const by of [1e-9, -1e-9]) {
+      const aimed = pairs.flatMap((of, at) => {
+        const { ratio, required } = all[at]!
+        return ratio + by > required ? [{ ...of, minimum: ratio + by }] : []
       })
-    const tight = held(on(aimed, settings))
-    expect(tight.length).toBeGreaterThan(1)
-    for (const one of tight) expect(one).toMatchObject({ outcome: 'breach', tight: true })
+      const tight = held(on(aimed, BOTH))
+      expect(tight.length).toBeGreaterThan(1)
+      for (const one of tight) {
+        expect(one).toMatchObject({ outcome: by > 0 ? 'breach' : 'pass', tight: true })
+      }
+    }
   })
 
   it('answers the ratio of a color on a reference on a ground, each seen through', () => {
@@ -132,5 +162,16 @@ describe('a rendered color', () => {
       gamuts.add(rendered.gamut)
     }
     expect(gamuts).toEqual(new Set(['srgb', 'p3', 'beyond']))
+  })
+
+  it('answers the chroma that a naive mapping leaves, to the last steps of the search', () => {
+    for (let at = 0; at < 200; at++) {
+      const [l, c, h] = [((at * 37) % 101) / 100, 0.02 + ((at * 17) % 41) / 100, (at * 47) % 360]
+      expect(mappedChroma(l, c, h)).toBeCloseTo(naiveMappedChroma(l, c, h), 9)
+    }
+    for (const l of [0, 1]) {
+      expect(mappedChroma(l, 0.3, 20)).toBeCloseTo(0, 6)
+      expect(mappedChroma(l, 0, 20)).toBe(0)
+    }
   })
 })

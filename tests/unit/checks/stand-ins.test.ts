@@ -3,7 +3,7 @@ import { standInFor } from '#shared/checks/any-of.ts'
 import type { PairModel, SystemModel } from '#shared/checks/model.ts'
 import { verdictOf } from '#shared/checks/verdict.ts'
 import { pair, system, token, value } from './model-builder.ts'
-import { evaluate } from './reading.ts'
+import { evaluate, findings } from './reading.ts'
 
 const RING = system({
   tokens: [token('outer', '#c0c0c0'), token('inner', '#333333'), token('core', '#000000')],
@@ -62,6 +62,31 @@ it('answers by theme and state: a member met elsewhere stands in for nothing', (
   expect(standInAt(model, 'pale light hover')).toEqual(carried)
   expect(standInAt(model, 'pale dark rest')).toEqual(carried)
   expect(standInAt(model, 'pale dark hover')).toEqual(['breach', undefined, undefined])
+})
+
+it('answers by the state of the background as well, in each theme', () => {
+  const panel = token('panel', '#8a8a8a', {
+    states,
+    values: {
+      light: { hover: value('#ffffff') },
+      dark: { rest: value('#8a8a8a'), hover: value('#101010') },
+    },
+  })
+  const at = (dark: string) => {
+    const mark = token('mark', '#777777', { values: { dark: { rest: value(dark) } } })
+    const other = token('other', '#8f8f8f', { values: { dark: { rest: value('#8f8f8f') } } })
+    const on = (id: string) => pair(id, 'panel', { use: 'non-text', anyOf: 'ring', minimum: 4 })
+    const model = system({ tokens: [panel, mark, other], pairs: [on('other'), on('mark')] })
+    return findings(model)
+      .filter(({ foreground }) => foreground === 'other')
+      .map((one) => `${one.theme} ${one.backgroundState} ${one.reason ?? one.outcome}`)
+  }
+  expect(at('#8f8f8f')).toEqual([
+    'light rest breach',
+    'light hover any-of',
+    'dark rest breach',
+    'dark hover pass',
+  ])
 })
 
 it('leaves a state that the member lacks to its own requirement', () => {

@@ -96,6 +96,17 @@ describe('rows', () => {
       tokens: [token('a', '#555555', { values: { dark: { rest: value('#aaaaaa') } } })],
       pairs: [pair('a', 'ground', { themes: ['dark'] }), pair('a', 'ground', { id: 'both' })],
     })
+    const steel = token('a', '#5f5f5f', { values: { dark: { rest: value('#8f8f8f') } } })
+    const level = {
+      light: { level: 'AAA' },
+      tokens: [steel],
+      pairs: [pair('a', 'ground')],
+    } as const
+    const outcomes = findings(system(level)).map((one) => [one.theme, one.outcome])
+    expect(outcomes).toEqual([
+      ['light', 'breach'],
+      ['dark', 'pass'],
+    ])
     const required = findings(model).map((one) => [one.theme, one.required, one.pairs.length])
     expect(required).toEqual([
       ['dark', 4.5, 2],
