@@ -1,16 +1,17 @@
 import { describe, expect, it } from 'vitest'
 import { ratioOn } from '#shared/checks/layers.ts'
+import { measurePair } from '#shared/checks/measure-pair.ts'
 import type { PairModel, SystemModel } from '#shared/checks/model.ts'
 import { mappedChroma } from '#shared/color/gamut-map.ts'
 import type { Oklch } from '#shared/color/oklch.ts'
 import { parseColor } from '#shared/color/parse-color.ts'
 import { type RenderedColor, renderColor } from '#shared/color/render.ts'
-import { pair, system, theme, token } from './model-builder.ts'
+import { pair, system, theme, token, value } from './model-builder.ts'
 import { naiveRatio, paintAll } from './naive-contrast.ts'
 import { naiveMappedChroma, naiveRendering } from './naive-rendering.ts'
 import { naiveFindings } from './naive-verdict.ts'
 import { emptyPairTally, holdPairs } from './pair-agreement.ts'
-import { findings } from './reading.ts'
+import { evaluate, findings } from './reading.ts'
 
 // The naive verdict and rendering are written from the specification alone and share no arithmetic with the engine.
 
@@ -88,6 +89,25 @@ describe('a stack of layers', () => {
       const outcomes = held(on(aimed, settings)).map(({ outcome }) => outcome)
       expect(new Set(outcomes)).toEqual(new Set([by > 0 ? 'breach' : 'pass']))
     }
+  })
+
+  it('answers each theme on its own ground and backdrop, with what is seen through them', () => {
+    const glass = token('glass', 'rgb(120 40 20 / 0.6)', { states: ['hover'] })
+    const sheet = token('sheet', 'rgb(250 250 250 / 0.4)', {
+      values: { dark: { rest: value('rgb(10 20 40 / 0.4)') } },
+    })
+    const pairs = [
+      pair('ink', 'glass'),
+      pair('glass', 'sheet', { use: 'non-text' }),
+      pair('glass', 'sheet', { id: 'on ink', use: 'focus-adjacent', backdrop: ['ink', 'sheet'] }),
+    ]
+    const model = system({ settings: BOTH, tokens: [glass, sheet], pairs })
+    const all = held(model)
+    expect(all).toHaveLength(2 * 3 * 2)
+    const [, , third] = pairs
+    expect([...measurePair(evaluate(model).resolved, third!).ratio]).toEqual(
+      all.filter(({ use }) => use === 'focus-adjacent').map(({ ratio }) => ratio),
+    )
   })
 
   it('answers P3 and tightness by what can be seen, not by layers without opacity', () => {
