@@ -152,6 +152,22 @@ describe('a repair plan', () => {
     expect(plan.isStopped).toBe(false)
   })
 
+  it('answers one conflict for all that hangs on the same place', () => {
+    const two = [token('label1', '#fefefe'), token('page1', '#3b3b3b')]
+    const more = [pair('label1', 'fill0'), pair('fill0', 'page1')]
+    const model = system({
+      themes: light,
+      tokens: [...tokens(1), ...two],
+      pairs: [...pairs(1), ...more],
+    })
+    const { left } = repairPlan(evaluate(model), {
+      locked: new Set([...locked, 'label1', 'page1']),
+    })
+    expect(left).toHaveLength(2)
+    expect(left[0]!.conflict).toBeDefined()
+    expect(left[1]!.conflict).toBe(left[0]!.conflict)
+  })
+
   it('answers a stop where what is left of the budget does not tell what conflicts', () => {
     const model = system({ themes: light, tokens: tokens(1), pairs: pairs(1) })
     const whole = repairPlan(evaluate(model), { locked })

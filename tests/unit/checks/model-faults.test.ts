@@ -45,6 +45,14 @@ describe('faults', () => {
     expect(faults[0]!.detail).toContain('a → b → c → a')
   })
 
+  it('refuses an edit that closes a cycle, with the fault of a full pass', () => {
+    const model = system({ tokens: [token('a', '{b}'), token('b', '#777777')] })
+    const edited = recheck(evaluate(model), { tokens: { put: [token('b', '{a}')] } })
+    const whole = system({ tokens: [token('a', '{b}'), token('b', '{a}')] })
+    expect(edited).toEqual({ ok: false, faults: faultsOf(whole) })
+    expect(codes(whole)).toEqual(['reference-cycle'])
+  })
+
   it('refuses a cycle that closes in one theme only, naming the theme', () => {
     const b = token('b', '#777', { values: { dark: { rest: value('{a}') } } })
     const faults = faultsOf(system({ tokens: [token('a', '{b}'), b] }))
